@@ -1,0 +1,1 @@
+export { InvalidInputError, type InputPlace, type InvalidInputCode } from './invalid-input-error'

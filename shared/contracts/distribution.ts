@@ -1,0 +1,168 @@
+import { z } from 'zod'
+import {
+  coordinateKindSchema,
+  coordinateUnitSchema,
+  idSchema,
+  numbersSchema,
+  personSchema,
+  timestampSchema,
+} from './common'
+
+export const MAX_FILE_BYTES = 20 * 1024 * 1024
+
+/** The file as it came, kept compressed on the server. */
+export const sourceFileSchema = z
+  .object({
+    name: z.string(),
+    size: z.number().int(),
+    sha256: z.string().regex(/^[0-9a-f]{64}$/),
+    uploadedBy: personSchema.nullable(),
+    uploadedAt: timestampSchema,
+  })
+  .meta({ id: 'SourceFile' })
+export type SourceFile = z.infer<typeof sourceFileSchema>
+
+const columnSchema = z.number().int().nonnegative()
+const samplesSchema = z.number().positive().max(1e15).nullable()
+
+/** How a text file is read as the distribution of one term (document version 1). Columns count from 0. */
+export const intakeSettingsSchema = z
+  .object({
+    version: z.literal(1),
+    kind: coordinateKindSchema,
+    unit: coordinateUnitSchema,
+    layout: z.enum(['centre', 'edges', 'samples']),
+    value: z.enum(['count', 'density', 'probability']),
+    /** `low` and `high` hold the same column unless the layout is edges. */
+    columns: z.object({ low: columnSchema, high: columnSchema, value: columnSchema }),
+    alreadyDivided: z.boolean(),
+    independentSamples: samplesSchema,
+  })
+  .meta({ id: 'IntakeSettings' })
+
+/** How a text file is read as the joint distribution of two terms (document version 1). */
+export const jointIntakeSettingsSchema = z
+  .object({
+    version: z.literal(1),
+    kinds: z.tuple([coordinateKindSchema, coordinateKindSchema]),
+    units: z.tuple([coordinateUnitSchema, coordinateUnitSchema]),
+    layout: z.enum(['grid', 'samples']),
+    value: z.enum(['count', 'density', 'probability']),
+    columns: z.object({ x: columnSchema, y: columnSchema, value: columnSchema }),
+    independentSamples: samplesSchema,
+  })
+  .meta({ id: 'JointIntakeSettings' })
+
+/** POST /api/terms/:termId/distributions, multipart: file, and this as the JSON field `settings`. */
+export const distributionUploadSchema = z
+  .object({ statePointId: idSchema, settings: intakeSettingsSchema })
+  .meta({ id: 'DistributionUpload' })
+export type DistributionUpload = z.infer<typeof distributionUploadSchema>
+
+/** PATCH /api/distributions/:distributionId: the number of independent samples the user states; null takes it back. */
+export const distributionUpdateSchema = z
+  .object({ independentSamples: samplesSchema })
+  .meta({ id: 'DistributionUpdate' })
+export type DistributionUpdate = z.infer<typeof distributionUpdateSchema>
+
+/** A stored distribution in internal units (nm, rad). */
+export const distributionSchema = z
+  .object({
+    id: idSchema,
+    termId: idSchema,
+    statePointId: idSchema,
+    kind: coordinateKindSchema,
+    edges: numbersSchema,
+    weights: numbersSchema,
+    content: z.enum(['count', 'density', 'probability']),
+    independentSamples: z.number().nullable(),
+    settings: intakeSettingsSchema,
+    notes: z.array(z.string()),
+    file: sourceFileSchema,
+    demo: z.boolean(),
+  })
+  .meta({ id: 'Distribution' })
+export type Distribution = z.infer<typeof distributionSchema>
+
+/** POST /api/mappings/:mappingId/joint-distributions, multipart: file, and this as the JSON field `settings`. */
+export const jointDistributionUploadSchema = z
+  .object({
+    firstTermId: idSchema,
+    secondTermId: idSchema,
+    statePointId: idSchema,
+    settings: jointIntakeSettingsSchema,
+  })
+  .meta({ id: 'JointDistributionUpload' })
+export type JointDistributionUpload = z.infer<typeof jointDistributionUploadSchema>
+
+export const decisionChoiceSchema = z
+  .enum(['joint', 'separate', 'change mapping'])
+  .meta({ id: 'DecisionChoice' })
+
+/** The numbers a verdict rested on when a decision was recorded. */
+export const verdictNumbersSchema = z
+  .object({
+    verdict: z.enum(['separable', 'borderline', 'joint', 'undecided']),
+    mutualInformation: z.number(),
+    nullMean: z.number(),
+    pValue: z.number(),
+    independentSamples: z.number().nullable(),
+  })
+  .meta({ id: 'VerdictNumbers' })
+export type VerdictNumbers = z.infer<typeof verdictNumbersSchema>
+
+/** PUT /api/joint-distributions/:jointDistributionId/decision; the server works out the verdict's numbers itself. */
+export const decisionWriteSchema = z
+  .object({
+    choice: decisionChoiceSchema,
+    reason: z.string().trim().min(3, 'Say in a few words why: it stays on record.').max(2000),
+  })
+  .meta({ id: 'DecisionWrite' })
+export type DecisionWrite = z.infer<typeof decisionWriteSchema>
+
+export const decisionSchema = z
+  .object({
+    choice: decisionChoiceSchema,
+    reason: z.string(),
+    decidedBy: personSchema.nullable(),
+    decidedAt: timestampSchema,
+    numbers: verdictNumbersSchema,
+  })
+  .meta({ id: 'Decision' })
+export type Decision = z.infer<typeof decisionSchema>
+
+/** Weights are row-major: index = x * ny + y. */
+export const jointDistributionSchema = z
+  .object({
+    id: idSchema,
+    mappingId: idSchema,
+    firstTermId: idSchema,
+    secondTermId: idSchema,
+    statePointId: idSchema,
+    kinds: z.tuple([coordinateKindSchema, coordinateKindSchema]),
+    xEdges: numbersSchema,
+    yEdges: numbersSchema,
+    weights: numbersSchema,
+    content: z.enum(['count', 'density', 'probability']),
+    independentSamples: z.number().nullable(),
+    settings: jointIntakeSettingsSchema,
+    notes: z.array(z.string()),
+    file: sourceFileSchema,
+    decision: decisionSchema.nullable(),
+    demo: z.boolean(),
+  })
+  .meta({ id: 'JointDistribution' })
+export type JointDistribution = z.infer<typeof jointDistributionSchema>
+
+/** GET /api/mappings/:mappingId/pairs?statePoint=: bond–angle pairs that share a bead, with what is known. */
+export const pairSchema = z
+  .object({
+    firstTermId: idSchema,
+    secondTermId: idSchema,
+    name: z.string(),
+    jointDistributionId: idSchema.nullable(),
+    numbers: verdictNumbersSchema.nullable(),
+    decision: decisionChoiceSchema.nullable(),
+  })
+  .meta({ id: 'Pair' })
+export type Pair = z.infer<typeof pairSchema>

@@ -1,0 +1,38 @@
+import { z } from 'zod'
+import type { InvalidInputCode } from '../errors'
+
+/** Codes the API adds to those of the core. */
+export type ApiCode =
+  | 'VALIDATION_FAILED'
+  | 'NOT_SIGNED_IN'
+  | 'SIGN_IN_FAILED'
+  | 'TOO_MANY_ATTEMPTS'
+  | 'CSRF_TOKEN_INVALID'
+  | 'FORBIDDEN'
+  | 'NOT_FOUND'
+  | 'CONFLICT'
+  | 'NAME_TAKEN'
+  | 'IN_USE'
+  | 'TERM_GONE'
+  | 'SET_UP_LINK_INVALID'
+  | 'PAYLOAD_TOO_LARGE'
+  | 'INTERNAL'
+  | 'UNAVAILABLE'
+
+export type ErrorCode = ApiCode | InvalidInputCode
+
+/** The one error shape of the API. `details` holds the current record of a conflict. */
+export const errorSchema = z
+  .object({
+    code: z.string(),
+    message: z.string(),
+    field: z.string().optional(),
+    line: z.number().int().optional(),
+    column: z.number().int().optional(),
+    position: z.number().int().optional(),
+    requestId: z.string().optional(),
+    issues: z.array(z.object({ field: z.string(), message: z.string() })).optional(),
+    details: z.unknown().optional(),
+  })
+  .meta({ id: 'Error' })
+export type ErrorBody = z.infer<typeof errorSchema>

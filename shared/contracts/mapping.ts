@@ -1,0 +1,120 @@
+import { z } from 'zod'
+import {
+  coordinateKindSchema,
+  idSchema,
+  nameSchema,
+  personSchema,
+  revisionSchema,
+  timestampSchema,
+} from './common'
+
+export const MAX_BEADS = 40
+export const MAX_BEAD_NAME_LENGTH = 2
+export const MAX_BEAD_TYPE_LENGTH = 8
+
+/** Where the bead sits: centre of mass, geometric centre, or on one atom. */
+export const siteSchema = z
+  .discriminatedUnion('rule', [
+    z.object({ rule: z.literal('mass') }),
+    z.object({ rule: z.literal('geometry') }),
+    z.object({ rule: z.literal('atom'), atom: z.number().int().nonnegative() }),
+  ])
+  .meta({ id: 'Site' })
+
+/** An atom of the repeat unit in a bead: `unit` is the offset along the chain (0 = the drawn unit). */
+export const beadAtomSchema = z
+  .object({
+    atom: z.number().int().nonnegative(),
+    weight: z.number().positive().max(1),
+    unit: z.number().int().min(-1).max(1),
+  })
+  .meta({ id: 'BeadAtom' })
+
+export const beadSchema = z
+  .object({
+    id: z.string().regex(/^[a-z0-9-]{1,36}$/),
+    /** The letters on the drawing. */
+    name: z.string().trim().min(1).max(MAX_BEAD_NAME_LENGTH),
+    /** Beads of one type share their potentials. */
+    type: z
+      .string()
+      .trim()
+      .min(1)
+      .max(MAX_BEAD_TYPE_LENGTH)
+      .regex(/^[A-Za-z0-9_+]+$/, 'A bead type is made of letters, digits, _ and +.'),
+    /** A word for people, such as backbone. */
+    label: z.string().trim().max(40),
+    /** Place in the order of bead colours, from 0. */
+    colour: z.number().int().min(0).max(7),
+    site: siteSchema,
+    atoms: z.array(beadAtomSchema).max(400),
+  })
+  .meta({ id: 'Bead' })
+
+/** The saved mapping: document version 1. */
+export const mappingDocumentSchema = z
+  .object({ version: z.literal(1), beads: z.array(beadSchema).max(MAX_BEADS) })
+  .meta({ id: 'MappingDocument' })
+
+/** A bead on the chain: which bead of the unit, in which unit. */
+export const placeSchema = z
+  .array(z.object({ bead: z.string(), unit: z.number().int() }))
+  .min(2)
+  .max(4)
+  .meta({ id: 'Place' })
+
+/** POST /api/polymers/:polymerId/mappings. Without a document the mapping starts without beads. */
+export const mappingCreateSchema = z
+  .object({ name: nameSchema, document: mappingDocumentSchema.default({ version: 1, beads: [] }) })
+  .meta({ id: 'MappingCreate' })
+export type MappingCreate = z.input<typeof mappingCreateSchema>
+
+/** PUT /api/mappings/:mappingId. 409 CONFLICT with the current mapping in `details` when the revision is not the current one. */
+export const mappingUpdateSchema = z
+  .object({ revision: revisionSchema, name: nameSchema, document: mappingDocumentSchema })
+  .meta({ id: 'MappingUpdate' })
+export type MappingUpdate = z.infer<typeof mappingUpdateSchema>
+
+export const mappingSchema = z
+  .object({
+    id: idSchema,
+    polymerId: idSchema,
+    name: z.string(),
+    document: mappingDocumentSchema,
+    revision: revisionSchema,
+    savedAt: timestampSchema,
+    savedBy: personSchema.nullable(),
+    /** Terms of this mapping, and how many of them have data at any state point. */
+    counts: z.object({ beads: z.number().int(), terms: z.number().int(), termsWithData: z.number().int() }),
+  })
+  .meta({ id: 'Mapping' })
+export type Mapping = z.infer<typeof mappingSchema>
+
+/** Facts only; "questioned" and "accepted" come from a reviewer and are added with reviews. */
+export const standingSchema = z.enum(['no data', 'data', 'inverted']).meta({ id: 'Standing' })
+export type Standing = z.infer<typeof standingSchema>
+
+/** A few points of a curve for the rail: ys from 0 to 1 over the coordinate's range. */
+export const silhouetteSchema = z
+  .object({ measured: z.array(z.number()), derived: z.array(z.number()).nullable() })
+  .meta({ id: 'Silhouette' })
+
+/**
+ * A term of a mapping at one state point. `types` in canonical direction; all places along the chain that carry this type
+ * sequence are pooled in it. A term whose beads are gone from the mapping stays while data stand on it, with `current` false.
+ */
+export const termSchema = z
+  .object({
+    id: idSchema,
+    mappingId: idSchema,
+    kind: coordinateKindSchema,
+    types: z.array(z.string()),
+    name: z.string(),
+    places: z.array(placeSchema),
+    current: z.boolean(),
+    standing: standingSchema,
+    silhouette: silhouetteSchema.nullable(),
+    distributionId: idSchema.nullable(),
+  })
+  .meta({ id: 'Term' })
+export type Term = z.infer<typeof termSchema>

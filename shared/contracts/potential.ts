@@ -1,0 +1,75 @@
+import { z } from 'zod'
+import {
+  angleUnitSchema,
+  energyUnitSchema,
+  idSchema,
+  lengthUnitSchema,
+  personSchema,
+  revisionSchema,
+  timestampSchema,
+} from './common'
+
+export const MIN_TABLE_ROWS = 10
+export const MAX_TABLE_ROWS = 20_000
+
+const smoothingSchema = z
+  .discriminatedUnion('mode', [
+    z.object({ mode: z.literal('auto'), criterion: z.enum(['likelihood', 'aic']) }),
+    z.object({ mode: z.literal('off') }),
+    z.object({ mode: z.literal('manual'), log10Lambda: z.number().min(-6).max(12) }),
+  ])
+  .meta({ id: 'SmoothingSettings' })
+
+/** Settings of an inversion (document version 1), in internal units (nm, rad, kJ/mol). null takes the default of the kind. */
+export const inversionSettingsSchema = z
+  .object({
+    version: z.literal(1),
+    jacobian: z.boolean(),
+    smoothing: smoothingSchema,
+    table: z.object({
+      rows: z.number().int().min(MIN_TABLE_ROWS).max(MAX_TABLE_ROWS),
+      low: z.number().nullable(),
+      high: z.number().nullable(),
+      cap: z.number().positive().nullable(),
+    }),
+  })
+  .meta({ id: 'InversionSettings' })
+
+/**
+ * PUT /api/terms/:termId/potential. `revision` is null for the first save and the current revision after; 409 CONFLICT with
+ * the stored potential in `details` when someone else saved in between.
+ */
+export const potentialSaveSchema = z
+  .object({ statePointId: idSchema, revision: revisionSchema.nullable(), settings: inversionSettingsSchema })
+  .meta({ id: 'PotentialSave' })
+export type PotentialSave = z.infer<typeof potentialSaveSchema>
+
+/** A saved inversion: settings and the hash of its input. The numbers follow from them by shared/inversion. */
+export const potentialSchema = z
+  .object({
+    id: idSchema,
+    termId: idSchema,
+    statePointId: idSchema,
+    distributionId: idSchema,
+    settings: inversionSettingsSchema,
+    /** SHA-256 of the distribution, temperature and file hash the inversion rests on. */
+    inputSha256: z.string(),
+    /** The stored distribution is no longer the one the inversion was saved with. */
+    stale: z.boolean(),
+    revision: revisionSchema,
+    savedBy: personSchema.nullable(),
+    savedAt: timestampSchema,
+  })
+  .meta({ id: 'StoredPotential' })
+export type StoredPotential = z.infer<typeof potentialSchema>
+
+/** Query of the table downloads: GET /api/terms/:termId/table and GET /api/mappings/:mappingId/tables.zip. */
+export const tableQuerySchema = z
+  .object({
+    statePoint: idSchema,
+    length: lengthUnitSchema.default('nm'),
+    angle: angleUnitSchema.default('degree'),
+    energy: energyUnitSchema.default('kJ/mol'),
+  })
+  .meta({ id: 'TableQuery' })
+export type TableQuery = z.input<typeof tableQuerySchema>

@@ -99,13 +99,17 @@ export const decisionChoiceSchema = z
   .enum(['joint', 'separate', 'change mapping'])
   .meta({ id: 'DecisionChoice' })
 
-/** The numbers a verdict rested on when a decision was recorded. */
+/**
+ * The numbers a verdict rests on, in nats: `mutualInformation` as it comes out on the verdict grid, and less the mean of
+ * the null tables. null where nobody said how many independent samples there are.
+ */
 export const verdictNumbersSchema = z
   .object({
     verdict: z.enum(['separable', 'borderline', 'joint', 'undecided']),
     mutualInformation: z.number(),
-    nullMean: z.number(),
-    pValue: z.number(),
+    mutualInformationCorrected: z.number().nullable(),
+    nullMean: z.number().nullable(),
+    pValue: z.number().nullable(),
     independentSamples: z.number().nullable(),
   })
   .meta({ id: 'VerdictNumbers' })

@@ -1,0 +1,36 @@
+import { resolve } from 'node:path'
+import { StartError } from './start-error.mjs'
+
+const DEFAULT_PORT = 4300
+
+/**
+ * The environment, checked.
+ *
+ * @returns {{ port: { number: number, given: boolean }, databaseUrl: string | null, dataFolder: string | null,
+ *   demo: 'on' | 'off' }}
+ */
+export function readSettings(environment) {
+  const databaseUrl = environment.DATABASE_URL || null
+  return {
+    port: readPort(environment.PORT),
+    databaseUrl,
+    dataFolder: environment.DATA_DIR ? resolve(environment.DATA_DIR) : null,
+    demo: readDemo(environment.DEMO, databaseUrl),
+  }
+}
+
+function readPort(text) {
+  if (!text) return { number: DEFAULT_PORT, given: false }
+  const number = Number(text)
+  if (!/^\d+$/.test(text) || number > 65535) {
+    throw new StartError(`PORT must be a whole number from 0 to 65535, not "${text}".`)
+  }
+  return { number, given: true }
+}
+
+/** The invented group goes into our own new database unless told otherwise, and never unasked into a given one. */
+function readDemo(text, databaseUrl) {
+  if (!text) return databaseUrl ? 'off' : 'on'
+  if (text !== 'on' && text !== 'off') throw new StartError(`DEMO must be "on" or "off", not "${text}".`)
+  return text
+}

@@ -16,6 +16,7 @@ export type InvalidInputCode =
   | 'NUMBER_NOT_FINITE'
   | 'DECIMAL_COMMA'
   | 'COLUMN_MISSING'
+  | 'COLUMNS_UNEQUAL'
   | 'COUNT_NEGATIVE'
   | 'BINS_NOT_ASCENDING'
   | 'BINS_OVERLAP'

@@ -55,6 +55,7 @@ export const beadSchema = z
 export const mappingDocumentSchema = z
   .object({ version: z.literal(1), beads: z.array(beadSchema).max(MAX_BEADS) })
   .meta({ id: 'MappingDocument' })
+export type MappingDocument = z.infer<typeof mappingDocumentSchema>
 
 /** A bead on the chain: which bead of the unit, in which unit. */
 export const placeSchema = z
@@ -62,6 +63,7 @@ export const placeSchema = z
   .min(2)
   .max(4)
   .meta({ id: 'Place' })
+export type Place = z.infer<typeof placeSchema>
 
 /** POST /api/polymers/:polymerId/mappings. Without a document the mapping starts without beads. */
 export const mappingCreateSchema = z

@@ -1,0 +1,27 @@
+import { Column, CreateDateColumn, Entity, PrimaryGeneratedColumn, Unique } from 'typeorm'
+
+/** A person. Belongs to groups by memberships. */
+@Entity('user')
+@Unique('UQ_user_email', ['email'])
+export class User {
+  @PrimaryGeneratedColumn('uuid', { primaryKeyConstraintName: 'PK_user' })
+  id!: string
+
+  /** In lower case. */
+  @Column('text')
+  email!: string
+
+  @Column('text')
+  name!: string
+
+  /** argon2id; null for a person of the demo, who signs in without a password. */
+  @Column('text', { name: 'password_hash', nullable: true, select: false })
+  passwordHash!: string | null
+
+  /** Invented: one of the demo's people. */
+  @Column('boolean', { default: false })
+  demo!: boolean
+
+  @CreateDateColumn({ name: 'created_at', type: 'timestamptz' })
+  createdAt!: Date
+}

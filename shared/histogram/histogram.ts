@@ -1,5 +1,6 @@
-/** What a coordinate is; it fixes the Jacobian, the internal unit and the domain. */
-export type CoordinateKind = 'bond' | 'angle' | 'dihedral'
+import type { CoordinateKind } from '../units'
+
+export type { CoordinateKind } from '../units'
 
 /** What the numbers of a histogram are: only counts carry noise that can be judged. */
 export type BinContent = 'count' | 'density' | 'probability'

@@ -1,0 +1,40 @@
+/** How λ is chosen: by marginal likelihood (Fellner–Schall update) or by Akaike's criterion. */
+export type SmoothingCriterion = 'likelihood' | 'aic'
+
+export type SmoothingSettings =
+  | { readonly mode: 'auto'; readonly criterion: SmoothingCriterion }
+  | { readonly mode: 'off' }
+  | { readonly mode: 'manual'; readonly log10Lambda: number }
+
+/** Extent of the table, internal units; null takes the default of the kind (`tableDomain`). */
+export interface TableSettings {
+  /** Number of rows, both ends included. */
+  readonly rows: number
+  readonly low: number | null
+  readonly high: number | null
+  /** Highest energy in kJ/mol, or null for none. */
+  readonly cap: number | null
+}
+
+/** Everything a user may choose about an inversion; stored with each result. */
+export interface InversionSettings {
+  readonly version: 1
+  /** Divide by the exact volume of each bin; off divides by its width only. */
+  readonly jacobian: boolean
+  readonly smoothing: SmoothingSettings
+  readonly table: TableSettings
+}
+
+/** What an inversion starts from unless the user says otherwise. */
+export const DEFAULT_INVERSION_SETTINGS: InversionSettings = {
+  version: 1,
+  jacobian: true,
+  smoothing: { mode: 'auto', criterion: 'likelihood' },
+  table: { rows: 1000, low: null, high: null, cap: null },
+}
+
+/** Limits that forms, contracts and the core all read. */
+export const SETTING_LIMITS = {
+  log10Lambda: { low: -6, high: 20 },
+  rows: { low: 2, high: 100_000 },
+} as const

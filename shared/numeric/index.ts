@@ -1,0 +1,1 @@
+export { quantileSorted } from './quantile'

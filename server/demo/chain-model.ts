@@ -1,0 +1,142 @@
+import type { Random } from '../../shared/numeric/random'
+import { createBoltzmannSampler, type BoltzmannSampler } from './boltzmann-sampler'
+import { CHAIN_POTENTIALS, CONFORMERS } from './chain-potentials'
+import { placeBead, weightedMean, type Point } from './geometry'
+
+/** Beads of the model: five per repeat unit, and H, the whole hexyl group, which is their mass-weighted S1, S2, S3. */
+export const MODEL_BEADS = ['B', 'E', 'S1', 'S2', 'S3', 'H'] as const
+export type ModelBead = (typeof MODEL_BEADS)[number]
+
+/** Positions of one repeat unit; a chain's first and last unit have a backbone bead only. */
+export type UnitPositions = Readonly<Partial<Record<ModelBead, Point>>>
+
+/** g/mol: C2H4, C2H4, C2H5 from the IUPAC abridged atomic weights (C 12.011, H 1.008). */
+const SIDE_MASSES = [28.054, 28.054, 29.062]
+
+/**
+ * Chance per frame that a coordinate is drawn anew; otherwise it stays. Each coordinate is then a Markov chain with the
+ * Boltzmann distribution and statistical inefficiency (2 − c)/c: 3 for a bond, 4 for an angle, 9 for a turn.
+ */
+const RENEWAL = { bond: 0.5, angle: 0.4, dihedral: 0.2 } as const
+
+type Coordinate = keyof typeof CHAIN_POTENTIALS
+
+/** The samplers of every coordinate at one temperature; made once, used for all chains. */
+export interface ChainModel {
+  readonly samplers: Readonly<Record<Coordinate, BoltzmannSampler>>
+  readonly conformers: readonly {
+    readonly population: number
+    readonly angleAtS1: BoltzmannSampler
+    readonly turnAtE: BoltzmannSampler
+  }[]
+}
+
+/** One chain that moves from frame to frame. */
+export interface Chain {
+  /** Draws the coordinates that are due anew and gives the beads in space, one entry per repeat unit. */
+  nextFrame(): readonly UnitPositions[]
+}
+
+interface UnitState {
+  /** +1 or −1, drawn once: the stereo centre of the backbone bead. */
+  readonly centre: 1 | -1
+  readonly coordinates: Record<Coordinate, number>
+  conformer: number
+  angleAtS1: number
+  turnAtE: number
+}
+
+/** @param thermalEnergy kT in kJ/mol */
+export function createChainModel(thermalEnergy: number): ChainModel {
+  const sampler = (potential: Parameters<typeof createBoltzmannSampler>[0]) =>
+    createBoltzmannSampler(potential, thermalEnergy)
+  const conformers = CONFORMERS.map(({ energy, angleAtS1, turnAtE }) => {
+    const parts = { angleAtS1: sampler(angleAtS1), turnAtE: sampler(turnAtE) }
+    const weight = Math.exp(-energy / thermalEnergy) * parts.angleAtS1.partition * parts.turnAtE.partition
+    return { ...parts, weight }
+  })
+  const total = conformers.reduce((sum, { weight }) => sum + weight, 0)
+  const samplers = Object.fromEntries(
+    Object.entries(CHAIN_POTENTIALS).map(([name, potential]) => [name, sampler(potential)]),
+  ) as Record<Coordinate, BoltzmannSampler>
+  return {
+    samplers,
+    conformers: conformers.map(({ weight, ...parts }) => ({ ...parts, population: weight / total })),
+  }
+}
+
+/** A chain in equilibrium from its first frame on, atactic, without excluded volume. */
+export function createChain(model: ChainModel, units: number, random: Random): Chain {
+  let states: UnitState[] | null = null
+  return {
+    nextFrame: () => {
+      states =
+        states === null
+          ? Array.from({ length: units }, () => drawUnit(model, random))
+          : states.map((state) => renewUnit(model, state, random))
+      return placeChain(states)
+    },
+  }
+}
+
+function drawUnit(model: ChainModel, random: Random): UnitState {
+  const coordinates = {} as Record<Coordinate, number>
+  for (const name of Object.keys(model.samplers) as Coordinate[]) {
+    coordinates[name] = model.samplers[name].draw(random)
+  }
+  const conformer = drawConformer(model, random)
+  return {
+    centre: random.uniform() < 0.5 ? 1 : -1,
+    coordinates,
+    conformer,
+    angleAtS1: model.conformers[conformer].angleAtS1.draw(random),
+    turnAtE: model.conformers[conformer].turnAtE.draw(random),
+  }
+}
+
+/** The conformer, its angle and its turn are one coordinate of three numbers and are drawn anew together. */
+function renewUnit(model: ChainModel, state: UnitState, random: Random): UnitState {
+  const fresh = drawUnit(model, random)
+  const coordinates = {} as Record<Coordinate, number>
+  for (const name of Object.keys(state.coordinates) as Coordinate[]) {
+    const due = random.uniform() < RENEWAL[CHAIN_POTENTIALS[name].kind]
+    coordinates[name] = (due ? fresh : state).coordinates[name]
+  }
+  const side = random.uniform() < RENEWAL.dihedral ? fresh : state
+  return { ...side, centre: state.centre, coordinates }
+}
+
+function drawConformer(model: ChainModel, random: Random): number {
+  let rest = random.uniform()
+  for (let i = 0; i < model.conformers.length - 1; i++) {
+    rest -= model.conformers[i].population
+    if (rest < 0) return i
+  }
+  return model.conformers.length - 1
+}
+
+function placeChain(states: readonly UnitState[]): UnitPositions[] {
+  const backbone: Point[] = []
+  states.forEach(({ coordinates }, i) => {
+    const { backboneBond, backboneAngle, backboneTurn } = coordinates
+    const a = backbone[i - 3] ?? [0, 1, 0]
+    const b = backbone[i - 2] ?? [-1, 0, 0]
+    const c = backbone[i - 1]
+    backbone.push(c === undefined ? [0, 0, 0] : placeBead(a, b, c, backboneBond, backboneAngle, backboneTurn))
+  })
+  return states.map((state, i) => {
+    const before = backbone[i - 1]
+    const after = backbone[i + 1]
+    if (before === undefined || after === undefined) return { B: backbone[i] }
+    return placeUnit(state, before, backbone[i], after)
+  })
+}
+
+function placeUnit(state: UnitState, before: Point, B: Point, after: Point): UnitPositions {
+  const q = state.coordinates
+  const E = placeBead(after, before, B, q.esterBond, q.esterAngle, state.centre * q.esterTurn)
+  const S1 = placeBead(before, B, E, q.firstSideBond, q.angleAtE, q.turnAtEsterBond)
+  const S2 = placeBead(B, E, S1, q.secondSideBond, state.angleAtS1, state.turnAtE)
+  const S3 = placeBead(E, S1, S2, q.thirdSideBond, q.angleAtS2, q.turnAtS1)
+  return { B, E, S1, S2, S3, H: weightedMean([S1, S2, S3], SIDE_MASSES) }
+}

@@ -1,5 +1,5 @@
-/** Order of a bond between two heavy atoms; 1.5 is an aromatic bond. */
-export type BondOrder = 1 | 1.5 | 2 | 3
+/** Order of a bond in one localised (Kekulé) structure. */
+export type BondOrder = 1 | 2 | 3
 
 /** How many atoms of each element, hydrogens included; fractions where atoms are shared between beads. */
 export type Composition = Readonly<Record<string, number>>
@@ -28,6 +28,8 @@ export interface RepeatUnitBond {
   readonly from: number
   readonly to: number
   readonly order: BondOrder
+  /** Part of an aromatic ring; `order` is then that of one of its localised structures. */
+  readonly aromatic: boolean
 }
 
 /** A repeat unit as `parseRepeatUnit` makes it: checked there, trusted afterwards. Plain data. */
@@ -43,7 +45,7 @@ export interface RepeatUnit {
   readonly attachments: readonly [head: number, tail: number]
   /** Order of the bond between two neighbouring units. */
   readonly linkOrder: BondOrder
-  /** The smallest rings, each as atom indices in ring order. */
+  /** For every bond in a ring the smallest ring through it, each once, as atom indices in ring order. */
   readonly rings: readonly (readonly number[])[]
   readonly composition: Composition
   /** Hill order, such as C9H16O2. */

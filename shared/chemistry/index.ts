@@ -1,0 +1,7 @@
+export { atomicWeight, isKnownElement } from './atomic-weights'
+export { MAX_HEAVY_ATOMS } from './check-attachments'
+export { composition, compositionMass, formulaParts, formulaText, type FormulaPart } from './composition'
+export { parseRepeatUnit } from './parse-repeat-unit'
+export { refineClasses } from './refine-classes'
+export type { BondOrder, Composition, RepeatUnit, RepeatUnitAtom, RepeatUnitBond } from './repeat-unit'
+export { neighbourLists } from './smiles-graph'

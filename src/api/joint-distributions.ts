@@ -1,0 +1,38 @@
+import type {
+  DecisionWrite,
+  JointDistribution,
+  JointDistributionUpload,
+  Pair,
+} from '@shared/contracts/distribution'
+import { apiUrl, http, uploadForm } from './http'
+
+/** Bond–angle pairs that share a bead, with what is known of each at one state point. */
+export const listPairs = async (mappingId: string, statePointId: string): Promise<Pair[]> =>
+  (await http.get<{ pairs: Pair[] }>(`/mappings/${mappingId}/pairs`, { query: { statePoint: statePointId } }))
+    .pairs
+
+export const storeJointDistribution = (
+  mappingId: string,
+  file: File,
+  upload: JointDistributionUpload,
+  signal?: AbortSignal,
+): Promise<JointDistribution> =>
+  http.post(`/mappings/${mappingId}/joint-distributions`, {
+    form: uploadForm(file, { settings: upload }),
+    signal,
+  })
+
+export const getJointDistribution = (jointDistributionId: string): Promise<JointDistribution> =>
+  http.get(`/joint-distributions/${jointDistributionId}`)
+
+export const deleteJointDistribution = (jointDistributionId: string): Promise<undefined> =>
+  http.delete(`/joint-distributions/${jointDistributionId}`)
+
+export const recordDecision = (
+  jointDistributionId: string,
+  decision: DecisionWrite,
+): Promise<JointDistribution> =>
+  http.put(`/joint-distributions/${jointDistributionId}/decision`, { json: decision })
+
+export const jointDistributionFileUrl = (jointDistributionId: string): string =>
+  apiUrl(`/joint-distributions/${jointDistributionId}/file`)

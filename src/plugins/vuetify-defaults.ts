@@ -1,0 +1,36 @@
+const field = { variant: 'underlined', density: 'compact', hideDetails: 'auto', color: 'primary' } as const
+
+/** How the library's parts look everywhere: flat, ruled, compact; the one main action is `flat` and `primary`. */
+export const vuetifyDefaults = {
+  global: { ripple: false },
+  VBtn: { variant: 'outlined', density: 'default', height: 34, elevation: 0, rounded: 'md' },
+  VCard: { variant: 'flat', elevation: 0, rounded: 0, color: 'transparent' },
+  VSheet: { elevation: 0, rounded: 0, color: 'transparent' },
+  VTextField: field,
+  VSelect: { ...field, menuIcon: '$dropdown' },
+  VAutocomplete: field,
+  VTextarea: field,
+  VNumberInput: { ...field, controlVariant: 'hidden' },
+  VRadio: { density: 'compact', color: 'primary' },
+  VRadioGroup: { density: 'compact', hideDetails: 'auto' },
+  VCheckbox: { density: 'compact', color: 'primary', hideDetails: true },
+  VSwitch: { density: 'compact', color: 'primary', inset: false, hideDetails: true },
+  VSlider: {
+    color: 'primary',
+    thumbSize: 14,
+    trackSize: 1,
+    trackFillColor: 'primary',
+    hideDetails: true,
+    thumbLabel: false,
+  },
+  VTable: { density: 'compact', hover: false },
+  VList: { density: 'compact', elevation: 0, rounded: 0, bgColor: 'transparent' },
+  VTabs: { color: 'primary', height: 40 },
+  VTab: { variant: 'text' },
+  VCardActions: { VBtn: { variant: 'outlined', slim: false } },
+  VDialog: { maxWidth: 420, scrim: true },
+  VMenu: { offset: 2 },
+  VTooltip: { openDelay: 400, location: 'bottom' },
+  VSnackbar: { location: 'bottom start', timeout: 8000, rounded: 'md', elevation: 0 },
+  VBtnToggle: { variant: 'outlined', density: 'compact', divided: true, rounded: 'md' },
+} as const

@@ -2,8 +2,8 @@ import { stopRunningPrograms } from './run-program.mjs'
 import { StartError } from './start-error.mjs'
 
 /**
- * Runs `work` until it ends or fails, or a signal asks to stop; then runs what it registered with `onStop`, last one first, and
- * ends the process: `codeAfterSignal` after a signal, 1 after a failure, else with the exit code that `work` returns.
+ * Runs `work` until it ends or fails, or we are asked to stop; then runs what it registered with `onStop`, last one first, and
+ * ends the process: `codeAfterSignal` when asked to, 1 after a failure, else with the exit code that `work` returns.
  *
  * `onStop` is to be called the moment something was started, so that a signal in the middle of the preparations stops it too.
  *
@@ -30,18 +30,26 @@ export async function runInForeground(work, { codeAfterSignal = 0 } = {}) {
     process.exit(exitCode)
   }
 
-  for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) {
-    process.on(signal, () => {
-      if (!stopping) console.log('\nStopping.')
-      void stop(codeAfterSignal)
-    })
+  function stopAsAsked() {
+    if (!stopping) console.log('\nStopping.')
+    void stop(codeAfterSignal)
   }
+
+  for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.on(signal, stopAsAsked)
+  onLossOfParent(stopAsAsked)
   try {
     await stop((await work((close) => closers.push(close))) ?? 0)
   } catch (error) {
     if (!stopping) report(error)
     await stop(1)
   }
+}
+
+/** npm runs us in a shell and passes SIGTERM to that shell alone; its end is all we see of it. */
+function onLossOfParent(tell) {
+  if (!process.env.npm_lifecycle_event) return
+  const parent = process.ppid
+  setInterval(() => process.ppid !== parent && tell(), 500).unref()
 }
 
 /** One plain line for what we foresaw, the whole error for what we did not. */

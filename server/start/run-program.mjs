@@ -1,5 +1,5 @@
 import { spawn } from 'node:child_process'
-import { closeSync, mkdtempSync, openSync, readFileSync, rmSync } from 'node:fs'
+import { closeSync, fstatSync, mkdtempSync, openSync, readSync, rmSync } from 'node:fs'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { StartError } from './start-error.mjs'
@@ -7,7 +7,7 @@ import { StartError } from './start-error.mjs'
 const running = new Set()
 
 /**
- * Runs a program to its end with its output in a file.
+ * Runs a program to its end with its output in a file (not a pipe: it may outlive us).
  *
  * @param options uid, gid, cwd, env as for spawn; `input` is its standard input; `uninterrupted` keeps it going when we are
  *   stopped (a package manager must not be cut short)
@@ -15,9 +15,7 @@ const running = new Set()
  */
 export async function runProgram(command, args, options = {}) {
   const { input = '', uninterrupted = false, ...spawnOptions } = options
-  const folder = mkdtempSync(join(tmpdir(), 'beadwright-'))
-  const file = join(folder, 'output')
-  const descriptor = openSync(file, 'a', 0o600)
+  const descriptor = openNameless()
   try {
     const child = spawn(command, args, {
       ...spawnOptions,
@@ -32,10 +30,9 @@ export async function runProgram(command, args, options = {}) {
       child.once('error', reject)
       child.once('close', resolve)
     }).finally(() => running.delete(child))
-    return { code, output: readFileSync(file, 'utf8') }
+    return { code, output: readAll(descriptor) }
   } finally {
     closeSync(descriptor)
-    rmSync(folder, { recursive: true, force: true })
   }
 }
 
@@ -54,4 +51,18 @@ export function stopRunningPrograms() {
 /** The last 30 lines of a text. */
 export function lastLines(text) {
   return text.trimEnd().split('\n').slice(-30).join('\n')
+}
+
+/** A file that has lost its name vanishes with the last process that holds it. */
+function openNameless() {
+  const folder = mkdtempSync(join(tmpdir(), 'beadwright-'))
+  const descriptor = openSync(join(folder, 'output'), 'a+', 0o600)
+  rmSync(folder, { recursive: true })
+  return descriptor
+}
+
+function readAll(descriptor) {
+  const content = Buffer.alloc(fstatSync(descriptor).size)
+  readSync(descriptor, content, 0, content.length, 0)
+  return content.toString()
 }

@@ -6,17 +6,24 @@ const DEFAULT_PORT = 4300
 /**
  * The environment, checked.
  *
- * @returns {{ port: { number: number, given: boolean }, databaseUrl: string | null, dataFolder: string | null,
- *   demo: 'on' | 'off' }}
+ * @returns {{ port: { number: number, given: boolean }, host: string, databaseUrl: string | null,
+ *   dataFolder: string | null, demo: 'on' | 'off' }}
  */
 export function readSettings(environment) {
   const databaseUrl = environment.DATABASE_URL || null
   return {
     port: readPort(environment.PORT),
+    host: environment.HOST || '127.0.0.1',
     databaseUrl,
     dataFolder: environment.DATA_DIR ? resolve(environment.DATA_DIR) : null,
     demo: readDemo(environment.DEMO, databaseUrl),
   }
+}
+
+/** Where a browser on this machine finds a server that listens on `host`. */
+export function localUrl(host, port) {
+  if (host === '0.0.0.0' || host === '::') return `http://127.0.0.1:${port}`
+  return `http://${host.includes(':') ? `[${host}]` : host}:${port}`
 }
 
 function readPort(text) {

@@ -11,7 +11,7 @@ import { ensurePackages } from './packages.mjs'
 import { ensurePostgres } from './postgres-programs.mjs'
 import { repository } from './repository.mjs'
 import { startServer, stopProcess } from './server-process.mjs'
-import { readSettings } from './settings.mjs'
+import { localUrl, readSettings } from './settings.mjs'
 import { StartError } from './start-error.mjs'
 import { step } from './step.mjs'
 import { waitUntil } from './wait-until.mjs'
@@ -40,13 +40,13 @@ await runInForeground(async (onStop) => {
   onStop(instance.release)
   if (instance.orphan) await stopProcess(instance.orphan)
 
-  const port = await choosePort(settings.port)
+  const port = await choosePort(settings)
   await ensurePackages(repository)
   await ensureBuilt(repository)
   const cluster = installed && (await openDatabase())
   const server = await step('Starting the server', () => openServer())
 
-  const url = `http://127.0.0.1:${server.port}`
+  const url = localUrl(settings.host, server.port)
   if (!(await waitUntil(() => isHealthy(url), { limit: 10_000, interval: 200 }))) {
     throw new StartError(
       `The server listens at ${url}, but does not reach its database. See ${logFile('server')}`,
@@ -103,10 +103,10 @@ await runInForeground(async (onStop) => {
 })
 
 /** A port that was asked for is taken as it is; the usual one gives way to the next. */
-async function choosePort({ number, given }) {
-  if (number === 0 || (await isPortFree(number))) return number
+async function choosePort({ port: { number, given }, host }) {
+  if (number === 0 || (await isPortFree(number, host))) return number
   if (given) throw new StartError(`Port ${number} is taken by another program: choose another with PORT.`)
-  const free = await nextFreePort(number + 1)
+  const free = await nextFreePort(number + 1, host)
   console.log(`Port ${number} is taken by another program; using ${free}.`)
   return free
 }

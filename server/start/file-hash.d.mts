@@ -1,0 +1,1 @@
+export function hashOfFiles(root: string, paths: readonly string[]): string

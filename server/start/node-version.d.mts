@@ -1,0 +1,1 @@
+export function nodeVersionProblem(version: string): string | null

@@ -1,0 +1,2 @@
+export function packagesAreCurrent(root: string): boolean
+export function ensurePackages(root: string): Promise<void>

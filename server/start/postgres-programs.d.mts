@@ -1,0 +1,6 @@
+export interface PostgresPrograms {
+  readonly folder: string
+  readonly major: number
+}
+export function findPostgres(): PostgresPrograms[]
+export function ensurePostgres(): Promise<PostgresPrograms[]>

@@ -35,6 +35,6 @@ export const DEFAULT_INVERSION_SETTINGS: InversionSettings = {
 
 /** Limits that forms, contracts and the core all read. */
 export const SETTING_LIMITS = {
-  log10Lambda: { low: -6, high: 20 },
+  log10Lambda: { low: -6, high: 25 },
   rows: { low: 2, high: 100_000 },
 } as const

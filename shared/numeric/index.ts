@@ -1,1 +1,5 @@
+export { bandedSolve, type BandedFactor, factorBanded, selectedInverse } from './banded-cholesky'
+export { notAKnotCurvatures, periodicCurvatures } from './cubic-spline'
+export { GAUSS_LEGENDRE } from './gauss-legendre'
 export { quantileSorted } from './quantile'
+export { pieceCurvature, pieceSlope, pieceValue, type SplinePiece } from './spline-piece'

@@ -1,0 +1,16 @@
+export type { Inversion, InvertedBins, SmoothingResult } from './inversion'
+export {
+  DEFAULT_INVERSION_SETTINGS,
+  type InversionSettings,
+  SETTING_LIMITS,
+  type SmoothingCriterion,
+  type SmoothingSettings,
+  type TableSettings,
+} from './inversion-settings'
+export { invert } from './invert'
+export type { Potential, PotentialTail } from './potential'
+export { potentialCurvature, potentialEnergy, potentialSlope } from './potential-energy'
+export { MINIMUM_FILLED_BINS } from './prepared-bins'
+export { regenerate } from './regenerate'
+export { tableDomain } from './table-domain'
+export type { Warning, WarningCode } from './warning'

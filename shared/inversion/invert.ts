@@ -1,0 +1,111 @@
+import { InvalidInputError } from '../errors'
+import { binCentroids, binMidpoints, binVolumes, type Histogram } from '../histogram'
+import { thermalEnergy } from '../units'
+import { buildPotential } from './build-potential'
+import type { Inversion, InvertedBins, SmoothingResult } from './inversion'
+import { type InversionSettings, SETTING_LIMITS, type SmoothingSettings } from './inversion-settings'
+import { inversionWarnings } from './inversion-warnings'
+import { type PreparedBins, prepareBins } from './prepared-bins'
+import { rawCurve } from './raw-curve'
+import { regenerate } from './regenerate'
+import { type FittedCurve, smoothCurve } from './smooth-curve'
+
+/**
+ * Boltzmann inversion of a histogram into a potential: U = −kT ln(n/V) with the exact volume V of each bin (Tschöp et al.,
+ * Acta Polym. 49 (1998) 61; Reith, Pütz, Müller-Plathe, J. Comput. Chem. 24 (2003) 1624), smoothed as a penalised Poisson
+ * log-density. Counts without a stated number of independent samples are taken as independent; a density or probability
+ * without it is inverted unsmoothed, whatever the settings ask for, with the warning SAMPLE_SIZE_UNKNOWN.
+ *
+ * @param histogram internal units
+ * @param temperature K
+ * @returns potential, evidence and warnings
+ * @throws {InvalidInputError} TEMPERATURE_INVALID; SETTING_INVALID with the field; TOO_FEW_BINS with fewer than 5 filled
+ *   bins; SINGULAR_SYSTEM when the counts do not determine a smooth curve
+ */
+export function invert(histogram: Histogram, temperature: number, settings: InversionSettings): Inversion {
+  const kT = thermalEnergy(temperature)
+  const { kind } = histogram
+  const { jacobian } = settings
+  checkSmoothing(settings.smoothing)
+  const bins = prepareBins(histogram, jacobian)
+  const fitted = fitCurve(histogram, temperature, bins, settings)
+  const { potential, minimum, constant } = buildPotential(fitted.curve)
+  const inversion = {
+    kind,
+    temperature,
+    jacobian,
+    settings,
+    bins: invertedBins(histogram, bins, fitted, jacobian, kT),
+    uncorrectedEnergies: rawEnergies(histogram.weights, binVolumes(kind, histogram.edges, false), kT),
+    potential,
+    rawOffset: fitted.leastRaw - constant,
+    regenerated: regenerate(kind, potential, histogram.edges, jacobian),
+    smoothing: smoothingResult(settings.smoothing, fitted),
+    minimum: { coordinate: minimum, energy: 0 },
+    independentSamples: bins.independentSamples,
+  }
+  return { ...inversion, warnings: inversionWarnings(inversion, bins, fitted) }
+}
+
+function checkSmoothing(smoothing: SmoothingSettings): void {
+  if (smoothing.mode !== 'manual') return
+  const { low, high } = SETTING_LIMITS.log10Lambda
+  if (smoothing.log10Lambda >= low && smoothing.log10Lambda <= high) return
+  throw new InvalidInputError('SETTING_INVALID', `log10 λ must lie between ${low} and ${high}.`, {
+    field: 'log10Lambda',
+  })
+}
+
+function fitCurve(
+  { kind }: Histogram,
+  temperature: number,
+  bins: PreparedBins,
+  { smoothing, jacobian }: InversionSettings,
+): FittedCurve {
+  if (smoothing.mode === 'off' || bins.independentSamples === null) return rawCurve(kind, temperature, bins)
+  const choice =
+    smoothing.mode === 'auto' ? { by: smoothing.criterion } : { log10Lambda: smoothing.log10Lambda }
+  return smoothCurve(kind, temperature, bins, jacobian, choice)
+}
+
+function invertedBins(
+  { kind, edges, weights }: Histogram,
+  bins: PreparedBins,
+  { curve, range: [first, end] }: FittedCurve,
+  jacobian: boolean,
+  kT: number,
+): InvertedBins {
+  const volumes = binVolumes(kind, edges, jacobian)
+  const { deviations } = curve
+  const deviationOf = (bin: number) => {
+    const place = bin + bins.added[0]
+    return deviations !== null && place >= first && place < end ? deviations[place - first] : NaN
+  }
+  return {
+    edges,
+    midpoints: binMidpoints(edges),
+    centroids: binCentroids(kind, edges, jacobian),
+    weights,
+    volumes,
+    rawEnergies: rawEnergies(weights, volumes, kT),
+    deviations: deviations && weights.map((_, bin) => deviationOf(bin)),
+  }
+}
+
+/** −kT ln(n/V) with least value 0; NaN for an empty bin. */
+function rawEnergies(weights: Float64Array, volumes: Float64Array, kT: number): Float64Array {
+  const energies = weights.map((weight, bin) => (weight > 0 ? -kT * Math.log(weight / volumes[bin]) : NaN))
+  const least = energies.reduce((lowest, energy) => (energy < lowest ? energy : lowest), Infinity)
+  return energies.map((energy) => energy - least)
+}
+
+function smoothingResult(smoothing: SmoothingSettings, { density }: FittedCurve): SmoothingResult {
+  const criterion = density !== null && smoothing.mode === 'auto' ? smoothing.criterion : null
+  return {
+    mode: density === null ? 'off' : smoothing.mode,
+    criterion,
+    lambda: density && 10 ** density.log10Lambda,
+    log10Lambda: density && density.log10Lambda,
+    effectiveDimension: density && density.effectiveDimension,
+  }
+}

@@ -1,0 +1,73 @@
+import { InvalidInputError } from '../errors'
+import { binCentroids, binMidpoints, binVolumes, type Histogram } from '../histogram'
+
+/** Fewest filled bins that an inversion accepts. */
+export const MINIMUM_FILLED_BINS = 5
+
+/** A histogram laid out for inversion; for a dihedral the bins fill the turn. */
+export interface PreparedBins {
+  readonly edges: Float64Array
+  readonly midpoints: Float64Array
+  readonly centroids: Float64Array
+  /** ∫ J dq, or widths with the Jacobian off; 0 for a bin that the histogram does not cover. */
+  readonly volumes: Float64Array
+  /** Effective counts: weights scaled to the number of independent samples, or to sum 1 where that is unknown. */
+  readonly counts: Float64Array
+  readonly independentSamples: number | null
+  /** Number of added bins before and after those of the histogram. */
+  readonly added: readonly [before: number, after: number]
+  /** First and last filled bin. */
+  readonly filled: readonly [first: number, last: number]
+}
+
+/**
+ * Lays a histogram out for inversion. The part of a turn that a dihedral histogram does not cover is divided into bins of
+ * its mean width without volume: not empty, but unobserved. Counts without a stated number of independent samples are
+ * taken as independent; a density or probability without it keeps null.
+ *
+ * @throws {InvalidInputError} TOO_FEW_BINS with fewer than 5 filled bins
+ */
+export function prepareBins(histogram: Histogram, jacobian: boolean): PreparedBins {
+  const { kind, weights, content } = histogram
+  const filledBins = weights.reduce((count, weight) => count + (weight > 0 ? 1 : 0), 0)
+  if (filledBins < MINIMUM_FILLED_BINS) {
+    throw new InvalidInputError(
+      'TOO_FEW_BINS',
+      `Only ${filledBins} of ${weights.length} bins hold data; at least ${MINIMUM_FILLED_BINS} are needed.`,
+    )
+  }
+  const total = weights.reduce((sum, weight) => sum + weight, 0)
+  const independentSamples = histogram.independentSamples ?? (content === 'count' ? total : null)
+  const scale = (independentSamples ?? 1) / total
+  const [before, after] = kind === 'dihedral' ? missingEdges(histogram.edges) : [[], []]
+  const edges = Float64Array.from([...before, ...histogram.edges, ...after])
+  const added = [before.length, after.length] as const
+  const counts = new Float64Array(edges.length - 1)
+  weights.forEach((weight, bin) => (counts[bin + added[0]] = weight * scale))
+  const volumes = binVolumes(kind, edges, jacobian)
+  volumes.fill(0, 0, added[0])
+  volumes.fill(0, volumes.length - added[1])
+  return {
+    edges,
+    midpoints: binMidpoints(edges),
+    centroids: binCentroids(kind, edges, jacobian),
+    volumes,
+    counts,
+    independentSamples,
+    added,
+    filled: [counts.findIndex((count) => count > 0), counts.findLastIndex((count) => count > 0)],
+  }
+}
+
+function missingEdges(edges: Float64Array): [number[], number[]] {
+  const [first, last] = [edges[0], edges[edges.length - 1]]
+  const width = (last - first) / (edges.length - 1)
+  const divide = (low: number, high: number) => {
+    const bins = Math.max(1, Math.round((high - low) / width))
+    return Array.from({ length: bins + 1 }, (_, edge) => low + ((high - low) * edge) / bins)
+  }
+  const before = first > -Math.PI ? divide(-Math.PI, first).slice(0, -1) : []
+  const after = last < Math.PI ? divide(last, Math.PI).slice(1) : []
+  if (after.length > 0) after[after.length - 1] = Math.PI
+  return [before, after]
+}

@@ -1,0 +1,106 @@
+import { InvalidInputError } from '../errors'
+
+/**
+ * L D Lᵀ of a symmetric positive definite matrix with p diagonals below the main one. Stored by rows: entry (i, i − k) of
+ * L stands at i·(p + 1) + k, and D at k = 0 (the unit diagonal of L is not stored).
+ */
+export interface BandedFactor {
+  readonly size: number
+  /** p, the number of diagonals below the main one. */
+  readonly halfBandwidth: number
+  readonly values: Float64Array
+}
+
+/**
+ * Factors a banded symmetric matrix in place, in size·p² operations.
+ *
+ * @param matrix lower band by rows, entry (i, i − k) at i·(p + 1) + k; entries left of the first column are ignored;
+ *   overwritten by the factor
+ * @throws {InvalidInputError} SINGULAR_SYSTEM with the row whose pivot is not above zero
+ */
+export function factorBanded(matrix: Float64Array, size: number, halfBandwidth: number): BandedFactor {
+  const stride = halfBandwidth + 1
+  for (let row = 0; row < size; row++) {
+    const start = row * stride
+    const reach = Math.min(halfBandwidth, row)
+    let pivot = matrix[start]
+    // From far to near, so that columns ascend. The row holds L·D first and is divided by D at the end.
+    for (let k = reach - 1; k >= 1; k--) {
+      const other = (row - k) * stride - k
+      let entry = matrix[start + k]
+      for (let far = reach; far > k; far--) entry -= matrix[start + far] * matrix[other + far]
+      matrix[start + k] = entry
+    }
+    for (let k = 1; k <= reach; k++) {
+      const entry = matrix[start + k]
+      const lower = entry / matrix[(row - k) * stride]
+      matrix[start + k] = lower
+      pivot -= entry * lower
+    }
+    if (!(pivot > 0)) {
+      throw new InvalidInputError('SINGULAR_SYSTEM', 'The data do not determine a smooth curve.', {
+        index: row,
+      })
+    }
+    matrix[start] = pivot
+  }
+  return { size, halfBandwidth, values: matrix }
+}
+
+/**
+ * Solves L D Lᵀ x = b in place.
+ *
+ * @param right b, length of the matrix; overwritten by x
+ */
+export function bandedSolve(
+  { size, halfBandwidth, values }: BandedFactor,
+  right: Float64Array,
+): Float64Array {
+  const stride = halfBandwidth + 1
+  for (let row = 0; row < size; row++) {
+    const reach = Math.min(halfBandwidth, row)
+    let sum = right[row]
+    for (let k = 1; k <= reach; k++) sum -= values[row * stride + k] * right[row - k]
+    right[row] = sum
+  }
+  for (let row = 0; row < size; row++) right[row] /= values[row * stride]
+  for (let row = size - 1; row >= 0; row--) {
+    const solved = right[row]
+    const reach = Math.min(halfBandwidth, row)
+    for (let k = 1; k <= reach; k++) right[row - k] -= values[row * stride + k] * solved
+  }
+  return right
+}
+
+/**
+ * The entries of the inverse that lie inside the band, without the rest of it, in size·p² operations
+ * (Takahashi, Fagan, Chen, Proc. 8th PICA Conf. (1973) 63; Erisman & Tinney, Commun. ACM 18 (1975) 177).
+ *
+ * @returns lower band of the inverse, laid out as the matrix
+ */
+export function selectedInverse({ size, halfBandwidth, values }: BandedFactor): Float64Array {
+  const stride = halfBandwidth + 1
+  const inverse = new Float64Array(size * stride)
+  for (let column = size - 1; column >= 0; column--) {
+    const reach = Math.min(halfBandwidth, size - 1 - column)
+    // Z(j, c) = −Σ_k L(k, c) Z(k, j) over the rows k below c; those Z lie in the band and are known.
+    for (let k = 1; k <= reach; k++) {
+      const row = column + k
+      let sum = 0
+      for (let j = 1; j <= reach; j++) {
+        const below = column + j
+        const known =
+          below >= row ? inverse[below * stride + below - row] : inverse[row * stride + row - below]
+        sum -= values[below * stride + j] * known
+      }
+      inverse[row * stride + k] = sum
+    }
+    let diagonal = 1 / values[column * stride]
+    for (let k = 1; k <= reach; k++) {
+      const entry = (column + k) * stride + k
+      diagonal -= values[entry] * inverse[entry]
+    }
+    inverse[column * stride] = diagonal
+  }
+  return inverse
+}

@@ -1,0 +1,6 @@
+export { type BinGeometry, effectiveVolumes } from './effective-volumes'
+export { identityBasis } from './identity-basis'
+export { type PenalisedFit, penalisedFit } from './penalised-fit'
+export { penalisedSystem, type PenalisedSystem } from './penalised-system'
+export { IDENTITY_BINS, type LambdaChoice, smoothCounts, type SmoothDensity } from './smooth-counts'
+export { splineBasis } from './spline-basis'

@@ -1,0 +1,134 @@
+import { type BandedFactor, factorBanded } from '../numeric'
+import type { SmoothingBasis } from './smoothing-basis'
+
+/**
+ * The matrix H = B′WB + λ D′D of a basis as a band. On a circle the coefficients are interleaved from both sides
+ * (0, n−1, 1, n−2, …), which turns the cyclic band into a plain one of twice the width, so that one solver serves both.
+ */
+export interface PenalisedSystem {
+  readonly basis: SmoothingBasis
+  readonly halfBandwidth: number
+  /** Place of each coefficient in the band. */
+  readonly places: Int32Array
+  /** D′D as a band. */
+  readonly penalty: Float64Array
+  /** Where products of basis functions of a bin are added: index bin · pairs + pair, pairs (j, k ≤ j) by rows. */
+  readonly slots: Int32Array
+}
+
+/** Lays out the band of a basis once; λ and weights come later. */
+export function penalisedSystem(basis: SmoothingBasis): PenalisedSystem {
+  const halfBandwidth = basis.periodic ? 6 : 3
+  const stride = halfBandwidth + 1
+  const { size, width } = basis
+  const places = Int32Array.from({ length: size }, (_, index) => {
+    if (!basis.periodic) return index
+    return 2 * index < size ? 2 * index : 2 * (size - 1 - index) + 1
+  })
+  const slot = (one: number, other: number) => {
+    const [a, b] = [places[one % size], places[other % size]]
+    return Math.max(a, b) * stride + Math.abs(a - b)
+  }
+  const penalty = new Float64Array(size * stride)
+  basis.penaltyStarts.forEach((start, row) => {
+    for (let j = 0; j < 4; j++) {
+      for (let k = 0; k <= j; k++) {
+        penalty[slot(start + j, start + k)] +=
+          basis.penaltyValues[row * 4 + j] * basis.penaltyValues[row * 4 + k]
+      }
+    }
+  })
+  const pairs = (width * (width + 1)) / 2
+  const slots = new Int32Array(basis.bins * pairs)
+  let next = 0
+  for (let bin = 0; bin < basis.bins; bin++) {
+    for (let j = 0; j < width; j++) {
+      for (let k = 0; k <= j; k++) slots[next++] = slot(basis.starts[bin] + j, basis.starts[bin] + k)
+    }
+  }
+  return { basis, halfBandwidth, places, penalty, slots }
+}
+
+/**
+ * Factors H = B′WB + λ D′D.
+ *
+ * @param weights W, one per bin
+ * @param lambda on the coefficients
+ * @throws {InvalidInputError} SINGULAR_SYSTEM when the weights do not determine the coefficients
+ */
+export function factorSystem(system: PenalisedSystem, weights: Float64Array, lambda: number): BandedFactor {
+  const { basis, penalty, slots, halfBandwidth } = system
+  const matrix = penalty.map((entry) => entry * lambda)
+  const { width, values, bins } = basis
+  let next = 0
+  for (let bin = 0; bin < bins; bin++) {
+    for (let j = 0; j < width; j++) {
+      const share = weights[bin] * values[bin * width + j]
+      for (let k = 0; k <= j; k++) matrix[slots[next++]] += share * values[bin * width + k]
+    }
+  }
+  return factorBanded(matrix, basis.size, halfBandwidth)
+}
+
+/**
+ * Variance of η at each bin from the inverse of H: b′ H⁻¹ b.
+ *
+ * @param inverse selected inverse of the factor of H
+ * @returns one per bin
+ */
+export function binVariances(system: PenalisedSystem, inverse: Float64Array): Float64Array {
+  const { width, values, bins } = system.basis
+  const variances = new Float64Array(bins)
+  let next = 0
+  for (let bin = 0; bin < bins; bin++) {
+    let sum = 0
+    for (let j = 0; j < width; j++) {
+      for (let k = 0; k <= j; k++) {
+        const product = values[bin * width + j] * values[bin * width + k] * inverse[system.slots[next++]]
+        sum += k === j ? product : 2 * product
+      }
+    }
+    variances[bin] = sum
+  }
+  return variances
+}
+
+/** η = Bβ at the midpoints. */
+export function binValues(
+  { width, values, starts, size, bins }: SmoothingBasis,
+  coefficients: Float64Array,
+): Float64Array {
+  const result = new Float64Array(bins)
+  for (let bin = 0; bin < bins; bin++) {
+    let sum = 0
+    for (let k = 0; k < width; k++) sum += values[bin * width + k] * coefficients[(starts[bin] + k) % size]
+    result[bin] = sum
+  }
+  return result
+}
+
+/** B′r: what a residual per bin asks of each coefficient. */
+export function projectBins(
+  { width, values, starts, size, bins }: SmoothingBasis,
+  residuals: Float64Array,
+): Float64Array {
+  const result = new Float64Array(size)
+  for (let bin = 0; bin < bins; bin++) {
+    for (let k = 0; k < width; k++)
+      result[(starts[bin] + k) % size] += values[bin * width + k] * residuals[bin]
+  }
+  return result
+}
+
+/** Third differences Dβ. */
+export function thirdDifferences(basis: SmoothingBasis, coefficients: Float64Array): Float64Array {
+  const { penaltyStarts, penaltyValues, size } = basis
+  const result = new Float64Array(penaltyStarts.length)
+  for (let row = 0; row < result.length; row++) {
+    let sum = 0
+    for (let k = 0; k < 4; k++)
+      sum += penaltyValues[row * 4 + k] * coefficients[(penaltyStarts[row] + k) % size]
+    result[row] = sum
+  }
+  return result
+}

@@ -1,0 +1,58 @@
+import type { SmoothingBasis } from './smoothing-basis'
+
+const STENCIL = [-1, 3, -3, 1]
+
+/**
+ * Cubic B-splines on equal segments (Eilers & Marx, Stat. Sci. 11 (1996) 89): for fine histograms, where third
+ * differences of thousands of single bins would lose all digits in double precision. λ stays per bin index:
+ * λ on coefficients = λ · (bin width / segment width)⁵, since both stand for the same multiple of ∫ (η‴)² dq.
+ *
+ * @param midpoints ascending, inside [low, high]
+ * @param low first edge of the fitted range
+ * @param high last edge of the fitted range; for a periodic basis low + period
+ * @param size number of coefficients, at least 7
+ */
+export function splineBasis(
+  midpoints: Float64Array,
+  low: number,
+  high: number,
+  periodic: boolean,
+  size: number,
+): SmoothingBasis {
+  const bins = midpoints.length
+  const segments = periodic ? size : size - 3
+  const segment = (high - low) / segments
+  const starts = new Int32Array(bins)
+  const values = new Float64Array(bins * 4)
+  for (let bin = 0; bin < bins; bin++) {
+    const position = (midpoints[bin] - low) / segment
+    const index = Math.min(segments - 1, Math.floor(position))
+    starts[bin] = index
+    values.set(cubicBSplines(position - index), bin * 4)
+  }
+  const rows = periodic ? size : size - 3
+  const penaltyValues = new Float64Array(rows * 4)
+  for (let row = 0; row < rows; row++) penaltyValues.set(STENCIL, row * 4)
+  return {
+    bins,
+    size,
+    periodic,
+    width: 4,
+    starts,
+    values,
+    penaltyStarts: Int32Array.from({ length: rows }, (_, row) => row),
+    penaltyValues,
+    lambdaScale: ((high - low) / bins / segment) ** 5,
+  }
+}
+
+/** The four uniform cubic B-splines that reach a segment, at share t of it; their sum is 1. */
+function cubicBSplines(t: number): [number, number, number, number] {
+  const u = 1 - t
+  return [
+    (u * u * u) / 6,
+    (3 * t * t * t - 6 * t * t + 4) / 6,
+    (3 * u * u * u - 6 * u * u + 4) / 6,
+    (t * t * t) / 6,
+  ]
+}

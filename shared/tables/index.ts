@@ -1,0 +1,7 @@
+export { tableDomain } from '../inversion'
+export { formatNumber, roundSignificant, SIGNIFICANT_DIGITS } from './format-number'
+export { formatRows, formatTable } from './format-table'
+export { makeTable } from './make-table'
+export type { Table, TableRow, TableUnits } from './table'
+export { type TableCommentInput, tableComments } from './table-comments'
+export { tableRows } from './table-rows'

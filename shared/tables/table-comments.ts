@@ -1,0 +1,109 @@
+import type { InversionSettings, SmoothingResult, Warning } from '../inversion'
+import { type CoordinateKind, unitWord } from '../units'
+import { formatNumber } from './format-number'
+import type { TableUnits } from './table'
+
+/** What the comment lines of a table state; null leaves a line out. All of it comes in as an argument. */
+export interface TableCommentInput {
+  /** True when the data are made up, as in the demo. */
+  readonly invented: boolean
+  readonly polymer: string | null
+  readonly mapping: string | null
+  /** Name of the term, e.g. 'B–E–H'; null when the file stands for none. */
+  readonly term: string | null
+  readonly kind: CoordinateKind
+  /** Beads in the order the coordinate is measured, e.g. 'B(0) E(0) H(0)'. */
+  readonly beadOrder: string | null
+  /** K */
+  readonly temperature: number
+  /** Anything else that names the state point, e.g. '1 bar, pure melt'. */
+  readonly statePoint: string | null
+  readonly units: TableUnits
+  readonly settings: InversionSettings
+  readonly smoothing: SmoothingResult
+  readonly independentSamples: number | null
+  readonly warnings: readonly Warning[]
+  /** Name and SHA-256 of the file the distribution came from. */
+  readonly input: { readonly name: string; readonly sha256: string } | null
+  /** SHA-256 of the rows as `formatRows` gives them. */
+  readonly rowsSha256: string
+  /** When the inversion was saved, e.g. '2025-03-14'; null writes none. */
+  readonly savedOn: string | null
+}
+
+const COORDINATES: Record<CoordinateKind, string> = {
+  bond: 'bond length: distance between the two beads',
+  angle: 'bond angle: internal angle at the middle bead, 180 deg is straight',
+  dihedral: 'dihedral: 0 is cis, 180 deg is trans, sign by the right-hand rule (IUPAC)',
+}
+
+const JACOBIANS: Record<CoordinateKind, string> = {
+  bond: 'divided by the exact volume of each bin, integral of r^2',
+  angle: 'divided by the exact volume of each bin, integral of sin(theta)',
+  dihedral: 'constant for a dihedral, bins divided by their width',
+}
+
+/**
+ * Comment lines of a table: what it is, what it was made from and how, and what it may be used for. Pure: the same
+ * arguments give the same lines.
+ *
+ * @returns lines without the leading '# ', in a fixed order, without line breaks
+ */
+export function tableComments(input: TableCommentInput): string[] {
+  const lines = [
+    input.invented && 'INVENTED data: made up for demonstration, not for use',
+    line('polymer', input.polymer),
+    line('mapping', input.mapping),
+    line('term', input.term),
+    line('coordinate', COORDINATES[input.kind]),
+    line('bead order', input.beadOrder),
+    line('state point', statePoint(input)),
+    line('units', unitSentence(input)),
+    line(
+      'Jacobian',
+      input.settings.jacobian ? JACOBIANS[input.kind] : 'off: bins divided by their width only',
+    ),
+    line('smoothing', smoothingSentence(input)),
+    line('cap', capSentence(input)),
+    line('input', input.input && `${input.input.name}, SHA-256 ${input.input.sha256}`),
+    line('rows', `SHA-256 ${input.rowsSha256}`),
+    line('saved', input.savedOn),
+    ...input.warnings.map((warning) => line('warning', `${warning.code}: ${warning.message}`)),
+    'Valid at this one state point only. Validate it in a simulation of your own before you rely on it.',
+  ]
+  return lines.filter((text) => text !== false).map((text) => text.replace(/\s+/g, ' ').trim())
+}
+
+function line(name: string, text: string | null | false): string | false {
+  return text !== null && text !== false && `${name}: ${text}`
+}
+
+function statePoint({ temperature, statePoint: rest }: TableCommentInput): string {
+  return `${formatNumber(temperature)} K${rest === null ? '' : `, ${rest}`}`
+}
+
+function unitSentence({ units }: TableCommentInput): string {
+  const [length, energy] = [unitWord(units.coordinateUnit), unitWord(units.energyUnit)]
+  return `coordinate in ${length}, energy in ${energy}, force = -dE/dcoordinate in ${energy} per ${length}`
+}
+
+function smoothingSentence({ smoothing, independentSamples }: TableCommentInput): string {
+  const samples =
+    independentSamples === null
+      ? 'number of independent samples unknown'
+      : `${formatNumber(independentSamples)} independent samples`
+  if (smoothing.log10Lambda === null || smoothing.effectiveDimension === null) return `none; ${samples}`
+  const choice =
+    smoothing.criterion === null
+      ? 'chosen by hand'
+      : `chosen by ${smoothing.criterion === 'aic' ? 'AIC' : 'marginal likelihood'}`
+  const dimension = formatNumber(Number(smoothing.effectiveDimension.toPrecision(3)))
+  return `log10 lambda ${smoothing.log10Lambda.toFixed(2)}, ${choice}; effective dimension ${dimension}; ${samples}`
+}
+
+function capSentence({ settings, units }: TableCommentInput): string | null {
+  if (settings.table.cap === null) return null
+  return `energies level off at ${formatNumber(settings.table.cap)} kJ/mol${
+    units.energyUnit === 'kJ/mol' ? '' : ` (shown in ${unitWord(units.energyUnit)})`
+  }`
+}

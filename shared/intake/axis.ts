@@ -98,8 +98,10 @@ function cutAtSeam(
     pieces.push({ low: start, high: to >= Math.PI - close ? Math.PI : to, source, share: 1 })
     return
   }
-  pieces.push({ low: start, high: Math.PI, source, share: (Math.PI - from) / width })
-  pieces.push({ low: -Math.PI, high: to - TURN, source, share: (to - Math.PI) / width })
+  // Nine digits are more than a file has, and they make half a bin exactly half.
+  const share = Math.round(((Math.PI - from) / width) * 1e9) / 1e9
+  pieces.push({ low: start, high: Math.PI, source, share })
+  pieces.push({ low: -Math.PI, high: to - TURN, source, share: 1 - share })
 }
 
 /** Lays sorted pieces side by side; a gap left by a grid over part of a 0…360° turn becomes empty bins. */

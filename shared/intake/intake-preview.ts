@@ -22,15 +22,17 @@ export interface IntakeError {
 
 /** What a file looks like under given or guessed settings, before anything is stored. */
 export interface IntakePreview<Settings, Result> {
-  /** As given, or guessed. */
-  readonly settings: Settings
+  /** As given, or guessed; null when the file has no columns to guess from. */
+  readonly settings: Settings | null
   /** Why the settings were guessed as they are; empty when they were given. */
   readonly reasons: readonly string[]
   /** What was clipped, merged, filled or inferred on the way to the histogram. */
   readonly notes: readonly string[]
   readonly firstLines: readonly PreviewLine[]
-  /** Names of the columns from the header, or null where there is none. */
-  readonly columnNames: readonly (string | null)[]
+  /** 0 when the file has no columns. */
+  readonly columnCount: number
+  /** Names of the columns from the header, or null when there is none that fits. */
+  readonly columnNames: readonly string[] | null
   readonly histogram: Result | null
   readonly error: IntakeError | null
 }

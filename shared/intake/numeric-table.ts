@@ -31,7 +31,7 @@ export interface NumericTable {
  *   of the first field that is no finite number
  */
 export function tableColumn(table: NumericTable, index: number, what: string): Float64Array {
-  const { columnCount, rowCount, values } = table
+  const { columnCount } = table
   if (index >= columnCount) {
     const have = columnCount === 1 ? 'one column' : `${columnCount} columns`
     throw new InvalidInputError(
@@ -45,9 +45,7 @@ export function tableColumn(table: NumericTable, index: number, what: string): F
   }
   const fault = table.faults[index]
   if (fault !== null) throw faultError(fault, index, what)
-  const column = new Float64Array(rowCount)
-  for (let row = 0; row < rowCount; row++) column[row] = values[row * columnCount + index]
-  return column
+  return rawColumn(table, index)
 }
 
 function faultError({ line, text }: ColumnFault, index: number, what: string): InvalidInputError {
@@ -74,4 +72,11 @@ function faultError({ line, text }: ColumnFault, index: number, what: string): I
     `${where}: ${found} stands where ${what} should be.`,
     place,
   )
+}
+
+/** One column as it was read, NaN where a field holds no number; for guessing, before anything is checked. */
+export function rawColumn({ columnCount, rowCount, values }: NumericTable, index: number): Float64Array {
+  const column = new Float64Array(rowCount)
+  for (let row = 0; row < rowCount; row++) column[row] = values[row * columnCount + index]
+  return column
 }

@@ -2,15 +2,13 @@ import { InvalidInputError } from '../errors'
 import { accumulate, binVolumes, createHistogram, sampleEdges } from '../histogram'
 import type { BinContent, Histogram } from '../histogram/histogram'
 import { axisInDomain } from './axis'
-import { coordinateValues } from './coordinate-values'
-import type { CoordinateRole } from './coordinate-values'
+import { distributionGrid } from './distribution-grid'
 import type { FileGrid } from './file-grid'
 import { fileWeights, independentSamplesOf } from './file-weights'
-import { gridFromCentres, tooManyBins } from './grid-from-centres'
-import { gridFromEdges } from './grid-from-edges'
+import { tooManyBins } from './grid-from-centres'
 import { MAX_BINS, MIN_FILLED_BINS } from './intake-settings'
 import type { IntakeSettings } from './intake-settings'
-import { tableColumn } from './numeric-table'
+import { mergeDoubledRows } from './merge-doubled'
 import type { NumericTable } from './numeric-table'
 import { readColumns } from './read-columns'
 import { readSamples } from './read-samples'
@@ -71,7 +69,7 @@ function fromSamples(table: NumericTable, settings: IntakeSettings): ReadResult<
 function fromBins(table: NumericTable, settings: IntakeSettings): ReadResult<Histogram> {
   const { kind, unit, value, columns } = settings
   if (table.rowCount > MAX_BINS) throw tooManyBins(table.rowCount)
-  const grid = settings.layout === 'centre' ? centreGrid(table, settings) : edgeGrid(table, settings)
+  const grid = distributionGrid(table, settings)
   const weights = fileWeights(table, columns.value, value)
   const masses = gridMasses(grid, weights, value)
   const axis = axisInDomain(kind, unit, grid)
@@ -79,19 +77,15 @@ function fromBins(table: NumericTable, settings: IntakeSettings): ReadResult<His
     source < 0 ? 0 : masses[source] * axis.shares[bin],
   )
   const notes = [...axis.notes]
-  let content = value
+  const content = settings.alreadyDivided && value === 'count' ? 'probability' : value
   if (settings.alreadyDivided) {
     const volumes = binVolumes(kind, axis.edges)
-    perBin.forEach(
-      (mass, bin) => (perBin[bin] = (mass * volumes[bin]) / (axis.edges[bin + 1] - axis.edges[bin])),
-    )
-    if (content === 'count') content = 'probability'
-    notes.push(
-      'The values were multiplied by the Jacobian, since the file was divided by it; what is left of counts carries no noise.',
-    )
+    perBin.forEach((mass, bin) => (perBin[bin] = (mass * volumes[bin]) / binWidth(axis.edges, bin)))
+    notes.push('The values were multiplied by the Jacobian, since the file was divided by it.')
+    if (value === 'count')
+      notes.push('Counts divided by a Jacobian are counts no more: read as a probability.')
   }
-  if (content === 'density')
-    perBin.forEach((mass, bin) => (perBin[bin] = mass / (axis.edges[bin + 1] - axis.edges[bin])))
+  if (content === 'density') perBin.forEach((mass, bin) => (perBin[bin] = mass / binWidth(axis.edges, bin)))
   const independentSamples = independentSamplesOf(content, perBin, settings.independentSamples)
   return {
     histogram: createHistogram({ kind, edges: axis.edges, weights: perBin, content, independentSamples }),
@@ -99,64 +93,16 @@ function fromBins(table: NumericTable, settings: IntakeSettings): ReadResult<His
   }
 }
 
-function coordinates(
-  table: NumericTable,
-  column: number,
-  role: CoordinateRole,
-  { kind, unit }: IntakeSettings,
-) {
-  const values = tableColumn(table, column, role === 'centre' ? 'a bin centre' : 'a bin edge')
-  return coordinateValues({ values, lines: table.lines, column, kind, unit }, role)
-}
-
-function centreGrid(table: NumericTable, settings: IntakeSettings): FileGrid {
-  const column = settings.columns.low
-  const centres = coordinates(table, column, 'centre', settings)
-  for (let row = 1; row < centres.length; row++) {
-    if (centres[row] <= centres[row - 1]) throw notAscending(table, row, column)
-  }
-  return gridFromCentres(settings.kind, settings.unit, centres)
-}
-
-function notAscending(table: NumericTable, row: number, column: number): InvalidInputError {
-  const line = table.lines[row]
-  const place = { line, column: column + 1 }
-  // "0,352" reads as two whole numbers, and the first of them hardly ever ascends.
-  if (table.separator === ',' && table.values.every(Number.isInteger)) {
-    return new InvalidInputError(
-      'DECIMAL_COMMA',
-      `Line ${line}: the bins do not ascend and every field is a whole number. If the commas are decimal commas, write ` +
-        'decimal points.',
-      place,
-    )
-  }
-  return new InvalidInputError(
-    'BINS_NOT_ASCENDING',
-    `Line ${line}, column ${column + 1}: the bin centre is not above the one before it.`,
-    place,
-  )
-}
-
-function edgeGrid(table: NumericTable, settings: IntakeSettings): FileGrid {
-  const lows = coordinates(table, settings.columns.low, 'edge', settings)
-  const highs = coordinates(table, settings.columns.high, 'edge', settings)
-  return gridFromEdges(settings.unit, lows, highs, table.lines)
-}
-
 /** What each bin of the file's grid holds: counts, or masses up to a common factor. */
 function gridMasses(grid: FileGrid, weights: Float64Array, value: BinContent): Float64Array {
   const masses = new Float64Array(grid.edges.length - 1)
   weights.forEach((weight, row) => (masses[grid.places[row]] += weight))
   if (value === 'density')
-    masses.forEach((density, bin) => (masses[bin] = density * (grid.edges[bin + 1] - grid.edges[bin])))
-  if (grid.doubled) mergeDoubled(masses, value)
+    masses.forEach((density, bin) => (masses[bin] = density * binWidth(grid.edges, bin)))
+  if (grid.doubled) mergeDoubledRows(masses, 1, value)
   return masses
 }
 
-/** One bin stated twice: equal values are repeated ones, different ones are halves of it. */
-function mergeDoubled(masses: Float64Array, value: BinContent): void {
-  const last = masses.length - 1
-  if (masses[last] === masses[0]) return
-  masses[0] += masses[last]
-  if (value === 'density') masses[0] /= 2
+function binWidth(edges: Float64Array, bin: number): number {
+  return edges[bin + 1] - edges[bin]
 }

@@ -3,15 +3,11 @@ import { accumulateJoint, createJointHistogram, sampleEdges } from '../histogram
 import type { JointHistogram } from '../histogram/joint-histogram'
 import { axisInDomain } from './axis'
 import type { Axis } from './axis'
-import { coordinateValues } from './coordinate-values'
-import type { FileGrid } from './file-grid'
 import { fileWeights, independentSamplesOf } from './file-weights'
-import { gridFromCentres, tooManyBins } from './grid-from-centres'
-import { MAX_BINS, MIN_FILLED_BINS } from './intake-settings'
+import { fillCells, sideGrid } from './joint-grid'
+import { MIN_FILLED_BINS } from './intake-settings'
 import type { JointIntakeSettings } from './intake-settings'
-import { distinctValues } from './distinct-values'
 import { mergeDoubledColumns, mergeDoubledRows } from './merge-doubled'
-import { tableColumn } from './numeric-table'
 import type { NumericTable } from './numeric-table'
 import { readColumns } from './read-columns'
 import type { ReadResult } from './read-histogram'
@@ -66,8 +62,8 @@ function fromPairs(table: NumericTable, settings: JointIntakeSettings): ReadResu
 
 function fromGrid(table: NumericTable, settings: JointIntakeSettings): ReadResult<JointHistogram> {
   const { kinds, units, columns, value } = settings
-  const x = gridOf(table, columns.x, 'first', settings, 0)
-  const y = gridOf(table, columns.y, 'second', settings, 1)
+  const x = sideGrid(table, columns.x, settings, 0)
+  const y = sideGrid(table, columns.y, settings, 1)
   checkCells(x.grid.edges.length, y.grid.edges.length)
   const weights = fileWeights(table, columns.value, value)
   const { cells, missing } = fillCells(table, x, y, weights)
@@ -91,55 +87,12 @@ function fromGrid(table: NumericTable, settings: JointIntakeSettings): ReadResul
   return { histogram, notes }
 }
 
-interface PlacedGrid {
-  grid: FileGrid
-  /** Bin of the grid for each row of the table. */
-  binOfRow: Int32Array
-}
-
-function gridOf(
-  table: NumericTable,
-  column: number,
-  which: string,
-  { kinds, units }: JointIntakeSettings,
-  side: 0 | 1,
-): PlacedGrid {
-  const values = tableColumn(table, column, `the bin centre of the ${which} coordinate`)
-  const [kind, unit] = [kinds[side], units[side]]
-  const { distinct, indices } = distinctValues(
-    coordinateValues({ values, lines: table.lines, column, kind, unit }, 'centre'),
-  )
-  if (distinct.length > MAX_BINS) throw tooManyBins(distinct.length)
-  const grid = gridFromCentres(kind, unit, distinct)
-  return { grid, binOfRow: indices.map((index) => grid.places[index]) }
-}
-
 function checkCells(nx: number, ny: number): void {
   if (nx * ny <= MAX_CELLS) return
   throw new InvalidInputError(
     'TOO_MANY_BINS',
     `A grid of ${nx} × ${ny} bins has more than ${MAX_CELLS} cells. Merge neighbouring bins.`,
   )
-}
-
-function fillCells(table: NumericTable, x: PlacedGrid, y: PlacedGrid, weights: Float64Array) {
-  const ny = y.grid.edges.length - 1
-  const cells = new Float64Array((x.grid.edges.length - 1) * ny)
-  const lineOf = new Int32Array(cells.length)
-  weights.forEach((weight, row) => {
-    const cell = x.binOfRow[row] * ny + y.binOfRow[row]
-    const line = table.lines[row]
-    if (lineOf[cell] > 0) {
-      throw new InvalidInputError(
-        'BINS_OVERLAP',
-        `Line ${line} states the cell of line ${lineOf[cell]} again.`,
-        { line },
-      )
-    }
-    lineOf[cell] = line
-    cells[cell] = weight
-  })
-  return { cells, missing: cells.length - weights.length }
 }
 
 /** Cells of the domain from cells of the file's grid; a bin cut at ±180° gives each piece its share. */

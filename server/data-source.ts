@@ -1,7 +1,10 @@
 import 'reflect-metadata'
 import { DataSource } from 'typeorm'
 import { entities } from './entities'
-import { migrations } from './migrations'
+import { Foundation1764547200000 } from './migrations/1764547200000-foundation'
+
+/** In the order of their time stamps. */
+const migrations = [Foundation1764547200000]
 
 /** Any number, the same for every server on one database: whoever holds this lock migrates. */
 const MIGRATION_LOCK = 4_300_100

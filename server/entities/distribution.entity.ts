@@ -53,6 +53,10 @@ export class Distribution {
   @Column('double precision', { array: true })
   silhouette!: number[]
 
+  /** Of the bins, what they stand for, and the file they came from. */
+  @Column('text', { name: 'content_sha256' })
+  contentSha256!: string
+
   /** Revision of the mapping when the file came in. */
   @Column('integer', { name: 'mapping_revision' })
   mappingRevision!: number

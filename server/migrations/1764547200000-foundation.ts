@@ -125,6 +125,7 @@ const TABLES = [
     "settings" jsonb NOT NULL,
     "notes" text array NOT NULL,
     "silhouette" double precision array NOT NULL,
+    "content_sha256" text NOT NULL,
     "mapping_revision" integer NOT NULL,
     "uploaded_at" TIMESTAMP WITH TIME ZONE NOT NULL,
     "uploaded_by" uuid,

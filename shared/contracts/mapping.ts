@@ -53,7 +53,13 @@ export const beadSchema = z
 
 /** The saved mapping: document version 1. */
 export const mappingDocumentSchema = z
-  .object({ version: z.literal(1), beads: z.array(beadSchema).max(MAX_BEADS) })
+  .object({
+    version: z.literal(1),
+    beads: z
+      .array(beadSchema)
+      .max(MAX_BEADS, `A mapping has at most ${MAX_BEADS} beads per repeat unit.`)
+      .refine((beads) => new Set(beads.map(({ id }) => id)).size === beads.length, 'Two beads have one id.'),
+  })
   .meta({ id: 'MappingDocument' })
 export type MappingDocument = z.infer<typeof mappingDocumentSchema>
 

@@ -1,0 +1,60 @@
+import { HttpError } from './http-error'
+
+/** Names that must be unique, by their constraint. */
+const TAKEN: Readonly<Record<string, { readonly message: string; readonly field: string }>> = {
+  UQ_polymer_name: { message: 'The group has a polymer of this name already.', field: 'name' },
+  UQ_mapping_name: { message: 'The polymer has a mapping of this name already.', field: 'name' },
+  UQ_user_email: { message: 'Someone has an account with this e-mail address already.', field: 'email' },
+}
+
+const UNREACHABLE = new Set(['ECONNREFUSED', 'ECONNRESET', 'ENOTFOUND', 'ETIMEDOUT', 'EPIPE'])
+
+const SAVED_MEANWHILE = 'Someone else changed this at the same moment. Load it again and repeat your change.'
+
+/**
+ * What an error of the database means to the person who asked, by its SQLSTATE; null for one that only a fault of ours
+ * explains.
+ */
+export function translatePostgresError(error: unknown): HttpError | null {
+  const { code, constraint } = postgresFields(error)
+  if (code === undefined) return isConnectionLost(error) ? unavailable() : null
+  if (code === '23505') {
+    const taken = TAKEN[constraint ?? '']
+    if (taken) return new HttpError('NAME_TAKEN', taken.message, { field: taken.field })
+    return new HttpError('CONFLICT', SAVED_MEANWHILE)
+  }
+  // A record that this one points to went away while it was being written.
+  if (code === '23503') return new HttpError('CONFLICT', SAVED_MEANWHILE)
+  if (code === '40001' || code === '40P01' || code === '55P03')
+    return new HttpError('CONFLICT', SAVED_MEANWHILE)
+  if (code === '22021' || code === '22P05') {
+    return new HttpError('VALIDATION_FAILED', 'The text holds a character that cannot be stored.')
+  }
+  // Connection lost, shutting down, starting up, database gone, too many connections.
+  if (/^(08|57P0|53)/.test(code) || code === '3D000' || UNREACHABLE.has(code)) return unavailable()
+  return null
+}
+
+function unavailable(): HttpError {
+  return new HttpError('UNAVAILABLE', 'The database cannot be reached at the moment. Try again in a minute.')
+}
+
+/** The driver's own error lies inside the one that TypeORM throws; several tries to connect lie in an AggregateError. */
+function postgresFields(error: unknown): { code?: string; constraint?: string } {
+  if (typeof error !== 'object' || error === null) return {}
+  const inner = (error as { driverError?: unknown }).driverError ?? error
+  const { code, constraint } = inner as { code?: unknown; constraint?: unknown }
+  return {
+    code: typeof code === 'string' ? code : undefined,
+    constraint: typeof constraint === 'string' ? constraint : undefined,
+  }
+}
+
+function isConnectionLost(error: unknown): boolean {
+  return (
+    error instanceof Error &&
+    /^(Connection terminated|timeout exceeded when trying to connect|Cannot use a pool after calling end|Driver not Connected)/i.test(
+      error.message,
+    )
+  )
+}

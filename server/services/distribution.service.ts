@@ -1,0 +1,170 @@
+import { type DataSource, type EntityManager, IsNull } from 'typeorm'
+import type {
+  Distribution as DistributionBody,
+  DistributionUpdate,
+  DistributionUpload,
+} from '../../shared/contracts/distribution'
+import { readHistogram } from '../../shared/intake'
+import { Distribution } from '../entities/distribution.entity'
+import { Group } from '../entities/group.entity'
+import { Potential } from '../entities/potential.entity'
+import { SourceFile } from '../entities/source-file.entity'
+import { Term } from '../entities/term.entity'
+import { HttpError, notFound } from '../errors/http-error'
+import { sha256 } from './hashes'
+import { contentSha256 } from './histograms'
+import type { Download, Member, UploadedFile } from './member'
+import { measuredSilhouette } from './silhouette'
+import { fileBody, packFile, textOf, unpackFile } from './source-files'
+import { findStatePoint, findTerm, lockTerm } from './term-context'
+
+/** Distributions of terms. The server reads each file itself: what a browser made of it does not count. */
+export class DistributionService {
+  constructor(private readonly dataSource: DataSource) {}
+
+  /**
+   * Reads a file as the distribution of a term at a state point and stores both. One that was there before is superseded.
+   *
+   * @throws {InvalidInputError} what the reader refuses, with line and column; nothing is stored then
+   * @throws {HttpError} NOT_FOUND; TERM_GONE; VALIDATION_FAILED when the settings are for another kind of term
+   */
+  async add(
+    { groupId, userId }: Member,
+    termId: string,
+    { statePointId, settings }: DistributionUpload,
+    file: UploadedFile,
+  ): Promise<DistributionBody> {
+    const { kind } = await findTerm(this.dataSource.manager, groupId, termId)
+    if (settings.kind !== kind) {
+      throw new HttpError(
+        'VALIDATION_FAILED',
+        `This term is a ${kind}; the file was read as a ${settings.kind}.`,
+        {
+          field: 'settings.kind',
+        },
+      )
+    }
+    const packed = await packFile(file)
+    const reading = readFile(file.bytes, packed.sha256, settings)
+    return this.dataSource.transaction(async (manager) => {
+      const { mapping } = await lockTerm(manager, groupId, termId)
+      await findStatePoint(manager, groupId, mapping.polymerId, statePointId, 'statePointId')
+      const now = new Date()
+      await manager.update(
+        Distribution,
+        { termId, statePointId, supersededAt: IsNull() },
+        { supersededAt: now },
+      )
+      const place = { groupId, termId, statePointId, mappingRevision: mapping.revision }
+      const upload = { uploadedAt: now, uploadedById: userId, supersededAt: null }
+      const { id } = await manager.save(Distribution, { ...place, ...reading, ...upload })
+      await manager.insert(SourceFile, { groupId, distributionId: id, jointDistributionId: null, ...packed })
+      return readDistribution(manager, groupId, { id })
+    })
+  }
+
+  /** The current distribution of a term at a state point. @throws {HttpError} NOT_FOUND when there is none */
+  current({ groupId }: Member, termId: string, statePointId: string): Promise<DistributionBody> {
+    return readDistribution(this.dataSource.manager, groupId, {
+      termId,
+      statePointId,
+      supersededAt: IsNull(),
+    })
+  }
+
+  /**
+   * States how many independent samples the distribution stands for, by reading the kept file again with that number.
+   *
+   * @throws {InvalidInputError} SETTING_INVALID when there are fewer counts than that
+   */
+  async update(
+    { groupId }: Member,
+    distributionId: string,
+    { independentSamples }: DistributionUpdate,
+  ): Promise<DistributionBody> {
+    return this.dataSource.transaction(async (manager) => {
+      const where = { id: distributionId, groupId }
+      const distribution = await manager.findOne(Distribution, { where, lock: { mode: 'pessimistic_write' } })
+      if (!distribution) throw notFound('distribution')
+      const file = await unpackFile(manager, groupId, { distributionId })
+      const settings = { ...distribution.settings, independentSamples }
+      await manager.update(Distribution, where, readFile(file.bytes, sha256(file.bytes), settings))
+      return readDistribution(manager, groupId, where)
+    })
+  }
+
+  /**
+   * Deletes the data of a term at a state point: the current distribution with those it superseded, their files and the
+   * potential that rests on them. One that was superseded goes alone.
+   */
+  async remove({ groupId }: Member, distributionId: string): Promise<void> {
+    await this.dataSource.transaction(async (manager) => {
+      const where = { id: distributionId, groupId }
+      const distribution = await manager.findOne(Distribution, { where, lock: { mode: 'pessimistic_write' } })
+      if (!distribution) throw notFound('distribution')
+      const { termId, statePointId, supersededAt } = distribution
+      if (supersededAt !== null) return void (await manager.delete(Distribution, where))
+      await manager.delete(Potential, { groupId, termId, statePointId })
+      await manager.delete(Distribution, { groupId, termId, statePointId })
+    })
+  }
+
+  /** The file as it came. */
+  file({ groupId }: Member, distributionId: string): Promise<Download> {
+    return unpackFile(this.dataSource.manager, groupId, { distributionId })
+  }
+}
+
+function readFile(bytes: Uint8Array, fileSha256: string, settings: DistributionBody['settings']) {
+  const { histogram, notes } = readHistogram(textOf(bytes), settings)
+  return {
+    edges: [...histogram.edges],
+    weights: [...histogram.weights],
+    content: histogram.content,
+    independentSamples: histogram.independentSamples,
+    settings,
+    notes: [...notes],
+    silhouette: measuredSilhouette(histogram),
+    contentSha256: contentSha256(histogram, fileSha256),
+  }
+}
+
+type Which =
+  | { readonly id: string }
+  | {
+      readonly termId: string
+      readonly statePointId: string
+      readonly supersededAt: ReturnType<typeof IsNull>
+    }
+
+async function readDistribution(
+  manager: EntityManager,
+  groupId: string,
+  which: Which,
+): Promise<DistributionBody> {
+  const distribution = await manager.findOne(Distribution, {
+    where: { ...which, groupId },
+    relations: { uploadedBy: true },
+  })
+  if (!distribution) throw notFound('distribution')
+  const { id, termId, statePointId, edges, weights, content, independentSamples, settings, notes } =
+    distribution
+  const [term, group] = [
+    await manager.findOneByOrFail(Term, { id: termId }),
+    await manager.findOneByOrFail(Group, { id: groupId }),
+  ]
+  return {
+    id,
+    termId,
+    statePointId,
+    kind: term.kind,
+    edges,
+    weights,
+    content,
+    independentSamples,
+    settings,
+    notes,
+    file: await fileBody(manager, groupId, { distributionId: id }, distribution),
+    demo: group.demo,
+  }
+}

@@ -1,0 +1,49 @@
+import type { DataSource } from 'typeorm'
+import { AccessService } from './access.service'
+import { DistributionService } from './distribution.service'
+import { GroupService } from './group.service'
+import { HealthService } from './health.service'
+import { JointDistributionService } from './joint-distribution.service'
+import { MappingService } from './mapping.service'
+import { PairService } from './pair.service'
+import { PolymerService } from './polymer.service'
+import { PotentialService } from './potential.service'
+import { SessionService } from './session.service'
+import { SetUpService } from './set-up.service'
+import { SettingService } from './setting.service'
+import { StatePointService } from './state-point.service'
+import { TableService } from './table.service'
+import { TermService } from './term.service'
+
+export type { Download, Member, UploadedFile } from './member'
+
+/** What the services are told beside the database. */
+export interface ServiceOptions {
+  /** The demo's people may sign in. */
+  readonly demo: boolean
+  /** Of the server, as /api/health tells it. */
+  readonly version: string
+}
+
+/** The rules of the house: everything routes, the start and the demo may ask for. */
+export function createServices(dataSource: DataSource, { demo, version }: ServiceOptions) {
+  const groups = new GroupService(dataSource)
+  return {
+    access: new AccessService(dataSource),
+    distributions: new DistributionService(dataSource),
+    groups,
+    health: new HealthService(dataSource, version),
+    jointDistributions: new JointDistributionService(dataSource),
+    mappings: new MappingService(dataSource),
+    pairs: new PairService(dataSource),
+    polymers: new PolymerService(dataSource),
+    potentials: new PotentialService(dataSource),
+    sessions: new SessionService(dataSource, demo),
+    settings: new SettingService(dataSource),
+    setUp: new SetUpService(dataSource, groups),
+    statePoints: new StatePointService(dataSource),
+    tables: new TableService(dataSource),
+    terms: new TermService(dataSource),
+  }
+}
+export type Services = ReturnType<typeof createServices>

@@ -1,0 +1,63 @@
+import { termName } from '../../shared/mapping'
+import { formatNumber } from '../../shared/tables'
+import { unitWord } from '../../shared/units'
+import type { Term } from '../entities/term.entity'
+import { statePointText, type TableFileUnits, type TableSource } from './table-file'
+
+/** What the README of an archive tells. */
+export interface ReadmeInput {
+  readonly source: Pick<TableSource, 'polymer' | 'mapping' | 'statePoint' | 'invented'>
+  readonly units: TableFileUnits
+  readonly files: readonly { readonly name: string; readonly term: Term; readonly warnings: number }[]
+  /** Terms without a table, and why. */
+  readonly missing: readonly { readonly term: Term; readonly reason: string }[]
+}
+
+/** The text that lies beside the tables of an archive and explains them to whoever did not make them. */
+export function writeReadme({ source, units, files, missing }: ReadmeInput): string {
+  const { polymer, mapping, statePoint } = source
+  const rest = statePointText(statePoint)
+  const [length, angle, energy] = [unitWord(units.length), unitWord(units.angle), unitWord(units.energy)]
+  return [
+    `Tables of bonded potentials: ${polymer.name}, mapping ${mapping.name}`,
+    '',
+    ...(source.invented ? ['INVENTED data: made up for demonstration, not for use.', ''] : []),
+    `Repeat unit   ${polymer.smiles} (${polymer.formula}, ${formatNumber(polymer.mass)} g/mol)`,
+    `Mapping       ${mapping.name}, revision ${mapping.revision}, ${mapping.document.beads.length} beads per repeat unit`,
+    `State point   ${formatNumber(statePoint.temperature)} K${rest === null ? '' : `, ${rest}`}`,
+    '',
+    'Files',
+    ...files.map(
+      ({ name, term, warnings }) =>
+        `  ${name}\n    ${term.kind} ${termName(term.types)}${warnings > 0 ? `; ${warnings} warning${warnings > 1 ? 's' : ''}, stated in the file` : ''}`,
+    ),
+    '',
+    ...(missing.length > 0
+      ? [
+          'Terms of the mapping without a table',
+          ...missing.map(({ term, reason }) => `  ${term.kind} ${termName(term.types)}: ${reason}`),
+          '',
+        ]
+      : ['Every term of the mapping has a table.', '']),
+    'Columns',
+    '  Each file has three columns, separated by blanks: coordinate, energy, force. Lines that start with # are comments.',
+    `  A bond is the distance between two beads in ${length}.`,
+    `  An angle is the internal angle at the middle bead in ${angle}: ${units.angle === 'degree' ? '180' : 'pi'} is straight.`,
+    `  A dihedral is in ${angle}: 0 is cis, ${units.angle === 'degree' ? '180' : 'pi'} is trans, its sign follows the right-hand rule (IUPAC).`,
+    `  Energies are in ${energy}; the least energy of each curve is 0.`,
+    `  A force is minus the derivative of the energy by the coordinate: in ${energy} per ${length} for a bond, in ${energy} per`,
+    `  ${angle} for an angle or a dihedral. Check which angle unit your program expects the force to be per.`,
+    ...(units.energy === 'kT'
+      ? [`  kT is taken at ${formatNumber(statePoint.temperature)} K, the temperature of the state point.`]
+      : []),
+    '',
+    'What they are good for',
+    '  Each table is a Boltzmann inversion of one measured distribution, divided by the Jacobian unless its comments say',
+    '  otherwise. It is valid at this one state point. Terms that are correlated, and terms that meet at one bead, may count the',
+    '  same preference twice: run a chain on the tables and compare its distributions with the measured ones before you rely',
+    '  on them.',
+    '',
+    '  The checksum in each file is the SHA-256 of its rows, without the comment lines.',
+    '',
+  ].join('\n')
+}

@@ -10,18 +10,14 @@ const MISFIT_DEVIATIONS = 6
 /** Smaller misses in the energy do not matter even where they are significant, in kT. */
 const MISFIT_ENERGY = 0.1
 
-/** Doubts about the curve: bridged gaps, smoothing at its limit, a curve that misses the data. */
+/** Doubts about the curve: bridged gaps, a curve that misses the data. */
 export function curveWarnings(
   inversion: Omit<Inversion, 'warnings'>,
   bins: PreparedBins,
   fitted: FittedCurve,
   kT: number,
 ): Warning[] {
-  return [
-    ...bridgedGaps(inversion, bins, fitted),
-    ...smoothingAtLimit(inversion, fitted),
-    ...missedData(bins, fitted, kT),
-  ]
+  return [...bridgedGaps(inversion, bins, fitted), ...missedData(bins, fitted, kT)]
 }
 
 function bridgedGaps(
@@ -38,20 +34,6 @@ function bridgedGaps(
       code: 'GAPS_BRIDGED',
       message: `Without smoothing, ${empty} empty ${empty === 1 ? 'bin' : 'bins'} between filled ones got a straight line; a barrier there would be higher.`,
       action: 'Smooth the curve, or merge bins until none between filled ones is empty.',
-    },
-  ]
-}
-
-function smoothingAtLimit(
-  { settings, smoothing }: Omit<Inversion, 'warnings'>,
-  { density }: FittedCurve,
-): Warning[] {
-  if (density?.atLimit !== true || settings.smoothing.mode !== 'manual') return []
-  return [
-    {
-      code: 'SMOOTHING_AT_LIMIT',
-      message: `log10 λ = ${settings.smoothing.log10Lambda} is beyond what these data can tell from a fully stiff curve; ${smoothing.log10Lambda} was used.`,
-      action: 'Nothing, if a fully stiff curve was meant; otherwise choose a smaller λ.',
     },
   ]
 }

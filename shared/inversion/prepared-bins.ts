@@ -4,6 +4,9 @@ import { binCentroids, binMidpoints, binVolumes, type Histogram } from '../histo
 /** Fewest filled bins that an inversion accepts. */
 export const MINIMUM_FILLED_BINS = 5
 
+/** Files of expected counts hold fractions down to 1e-20; this many effective counts at an end say nothing. */
+const NO_COUNT = 1e-6
+
 /** A histogram laid out for inversion; for a dihedral the bins fill the turn. */
 export interface PreparedBins {
   readonly edges: Float64Array
@@ -55,8 +58,16 @@ export function prepareBins(histogram: Histogram, jacobian: boolean): PreparedBi
     counts,
     independentSamples,
     added,
-    filled: [counts.findIndex((count) => count > 0), counts.findLastIndex((count) => count > 0)],
+    filled: filledRange(counts, independentSamples === null ? 0 : NO_COUNT),
   }
+}
+
+/** First and last bin that hold data: outer bins are left out while their counts add up to no more than `negligible`. */
+function filledRange(counts: Float64Array, negligible: number): [number, number] {
+  let [first, last] = [0, counts.length - 1]
+  for (let sum = counts[first]; sum <= negligible; sum += counts[first]) first += 1
+  for (let sum = counts[last]; sum <= negligible; sum += counts[last]) last -= 1
+  return [first, last]
 }
 
 function missingEdges(edges: Float64Array): [number[], number[]] {

@@ -1,4 +1,5 @@
 export { bandedSolve, type BandedFactor, factorBanded, selectedInverse } from './banded-cholesky'
+export { type BandedRows, factorRows } from './banded-rows'
 export { notAKnotCurvatures, periodicCurvatures } from './cubic-spline'
 export { GAUSS_LEGENDRE } from './gauss-legendre'
 export { quantileSorted } from './quantile'

@@ -2,8 +2,8 @@ import { type PenalisedFit, penalisedFit } from './penalised-fit'
 import type { PenalisedSystem } from './penalised-system'
 import { penaltyNullity } from './smoothing-basis'
 
-/** Above this share of the mean expected count per bin doubles lose the weights beside λ; the curve is stiff by then. */
-const STIFFEST = 1e12
+/** λ beside the mean expected count per coefficient that no histogram needs: the curve is stiff long before. */
+const STIFFEST = 1e18
 const SOFTEST_LOG = -6
 /** A curve this close to the stiff limit in effective dimension is there: more λ moves nothing. */
 const STIFF_DIMENSION = 0.02
@@ -17,8 +17,8 @@ export interface ChosenFit {
   readonly fit: PenalisedFit
 }
 
-/** log₁₀ of the largest λ per bin index that still computes to good digits. */
-export function stiffestLog(system: PenalisedSystem, counts: Float64Array): number {
+/** log₁₀ of the largest λ per bin index that is tried. */
+function stiffestLog(system: PenalisedSystem, counts: Float64Array): number {
   const total = counts.reduce((sum, count) => sum + count, 0)
   return Math.log10((STIFFEST * total) / system.basis.size / system.basis.lambdaScale)
 }
@@ -96,7 +96,9 @@ export function lambdaByAic(
     log10Lambda,
     fit: penalisedFit(system, counts, volumes, 10 ** log10Lambda, from?.fit.coefficients ?? null),
   })
-  let best = start === null ? scan(tryAt, firstLog(counts), highest) : tryAt(start.log10Lambda, start)
+  const nullity = penaltyNullity(system.basis)
+  let best =
+    start === null ? scan(tryAt, firstLog(counts), highest, nullity) : tryAt(start.log10Lambda, start)
   for (let step = AIC_STEP / 2; step > LOG_TOLERANCE; step /= 2) {
     const low = tryAt(Math.max(best.log10Lambda - step, SOFTEST_LOG), best)
     const high = tryAt(Math.min(best.log10Lambda + step, highest), best)
@@ -109,13 +111,15 @@ function scan(
   tryAt: (log10Lambda: number, from: ChosenFit | null) => ChosenFit,
   first: number,
   highest: number,
+  nullity: number,
 ): ChosenFit {
   let best = tryAt(Math.min(first, highest), null)
   for (const towards of [1, -1]) {
     let here = best
     for (;;) {
       const target = here.log10Lambda + towards * AIC_STEP
-      if (target > highest || target < SOFTEST_LOG) break
+      const stiff = here.fit.effectiveDimension - nullity < STIFF_DIMENSION
+      if (target > highest || target < SOFTEST_LOG || (stiff && towards > 0)) break
       here = tryAt(target, here)
       best = lesser(best, here)
       // Local ripples are passed; a criterion this much above the best does not come back.

@@ -1,4 +1,4 @@
-import { type BandedFactor, factorBanded } from '../numeric'
+import { type BandedFactor, type BandedRows, factorBanded, factorRows } from '../numeric'
 import type { SmoothingBasis } from './smoothing-basis'
 
 /**
@@ -14,7 +14,19 @@ export interface PenalisedSystem {
   readonly penalty: Float64Array
   /** Where products of basis functions of a bin are added: index bin · pairs + pair, pairs (j, k ≤ j) by rows. */
   readonly slots: Int32Array
+  /** The rows of D and B one by one, laid out when first asked for: only the stiff case needs them. */
+  readonly stackedRows: () => StackedRows
 }
+
+/** The rows of D and of B together, in the order of their first place. */
+interface StackedRows {
+  readonly rows: BandedRows
+  /** Which row each one is: r for row r of D, −1 − i for bin i. */
+  readonly origins: Int32Array
+}
+
+/** Above this ratio of λ to the mean weight per coefficient the weights would lose half their digits beside λ D′D. */
+const STIFF = 1e7
 
 /** Lays out the band of a basis once; λ and weights come later. */
 export function penalisedSystem(basis: SmoothingBasis): PenalisedSystem {
@@ -46,7 +58,36 @@ export function penalisedSystem(basis: SmoothingBasis): PenalisedSystem {
       for (let k = 0; k <= j; k++) slots[next++] = slot(basis.starts[bin] + j, basis.starts[bin] + k)
     }
   }
-  return { basis, halfBandwidth, places, penalty, slots }
+  let stacked: StackedRows | null = null
+  const stackedRows = () => (stacked ??= stackRows(basis, places, stride))
+  return { basis, halfBandwidth, places, penalty, slots, stackedRows }
+}
+
+function stackRows(
+  { size, width, starts, values, penaltyStarts, penaltyValues, bins }: SmoothingBasis,
+  places: Int32Array,
+  stride: number,
+): StackedRows {
+  const origins = [
+    ...Array.from(penaltyStarts.keys()),
+    ...Array.from({ length: bins }, (_, bin) => -1 - bin),
+  ].map((origin) => {
+    const [start, count] = origin < 0 ? [starts[-1 - origin], width] : [penaltyStarts[origin], 4]
+    const columns = Array.from({ length: count }, (_, k) => places[(start + k) % size])
+    return { origin, columns, first: Math.min(...columns) }
+  })
+  origins.sort((one, other) => one.first - other.first)
+  const stacked = new Float64Array(origins.length * stride)
+  origins.forEach(({ origin, columns, first }, row) => {
+    columns.forEach((column, k) => {
+      const value = origin < 0 ? values[(-1 - origin) * width + k] : penaltyValues[origin * 4 + k]
+      stacked[row * stride + column - first] = value
+    })
+  })
+  return {
+    rows: { starts: Int32Array.from(origins, ({ first }) => first), values: stacked },
+    origins: Int32Array.from(origins, ({ origin }) => origin),
+  }
 }
 
 /**
@@ -58,6 +99,14 @@ export function penalisedSystem(basis: SmoothingBasis): PenalisedSystem {
  */
 export function factorSystem(system: PenalisedSystem, weights: Float64Array, lambda: number): BandedFactor {
   const { basis, penalty, slots, halfBandwidth } = system
+  const total = weights.reduce((sum, weight) => sum + weight, 0)
+  if (lambda * basis.size > STIFF * total) {
+    const { rows, origins } = system.stackedRows()
+    const scales = Float64Array.from(origins, (origin) =>
+      Math.sqrt(origin < 0 ? weights[-1 - origin] : lambda),
+    )
+    return factorRows(rows, scales, basis.size, halfBandwidth)
+  }
   const matrix = penalty.map((entry) => entry * lambda)
   const { width, values, bins } = basis
   let next = 0

@@ -1,8 +1,8 @@
 import { bandedSolve } from '../numeric'
-import { type ChosenFit, lambdaByAic, lambdaByLikelihood, stiffestLog } from './choose-lambda'
+import { type ChosenFit, lambdaByAic, lambdaByLikelihood } from './choose-lambda'
 import { type BinGeometry, effectiveVolumes } from './effective-volumes'
 import { identityBasis } from './identity-basis'
-import { penalisedFit } from './penalised-fit'
+import { type PenalisedFit, penalisedFit } from './penalised-fit'
 import { binValues, penalisedSystem, type PenalisedSystem, projectBins } from './penalised-system'
 import { splineBasis } from './spline-basis'
 
@@ -12,7 +12,7 @@ const SPLINE_COEFFICIENTS = 200
 /** Searches for λ, each with effective volumes from the one before; the first has the exact volumes. */
 const SEARCHES = 3
 /** Fits with the final λ, each with effective volumes from the fit before. */
-const FINAL_FITS = 2
+const REFITS = 3
 
 /** How λ is chosen, or the λ to take. */
 export type LambdaChoice = { readonly by: 'likelihood' | 'aic' } | { readonly log10Lambda: number }
@@ -28,8 +28,6 @@ export interface SmoothDensity {
   /** Per bin index; rounded to 0.01. */
   readonly log10Lambda: number
   readonly effectiveDimension: number
-  /** True when λ is as large as doubles allow, and smaller than asked for or still pulled upwards. */
-  readonly atLimit: boolean
 }
 
 /**
@@ -47,33 +45,37 @@ export function smoothCounts(
 ): SmoothDensity {
   const system = penalisedSystem(chooseBasis(geometry))
   const volumesUnder = effectiveVolumes(geometry)
-  const limit = Math.floor(stiffestLog(system, counts) * 100) / 100
-  let chosen: ChosenFit | null = null
-  let volumes = geometry.volumes
-  if ('by' in choice) {
-    const search = choice.by === 'aic' ? lambdaByAic : lambdaByLikelihood
-    for (let pass = 0; pass < SEARCHES; pass++) {
-      chosen = search(system, counts, volumes, chosen)
-      volumes = volumesUnder(chosen.fit.eta)
-    }
-  }
-  const wanted = 'by' in choice ? (chosen?.log10Lambda ?? limit) : choice.log10Lambda
-  const log10Lambda = Math.min(Math.round(wanted * 100) / 100, limit)
-  const refine = (start: Float64Array | null) =>
-    penalisedFit(system, counts, volumes, 10 ** log10Lambda, start)
-  let fit = refine(chosen?.fit.coefficients ?? null)
-  for (let pass = 0; pass < ('by' in choice ? FINAL_FITS : FINAL_FITS + SEARCHES) - 1; pass++) {
-    volumes = volumesUnder(fit.eta)
-    fit = refine(fit.coefficients)
-  }
+  const start =
+    'by' in choice
+      ? searchLambda(system, volumesUnder, geometry, counts, choice.by)
+      : { log10Lambda: choice.log10Lambda, fit: null }
+  const log10Lambda = Math.round(start.log10Lambda * 100) / 100
+  const refit = (volumes: Float64Array, from: Float64Array | null) =>
+    penalisedFit(system, counts, volumes, 10 ** log10Lambda, from)
+  let fit = start.fit ?? refit(geometry.volumes, null)
+  for (let pass = 0; pass < REFITS; pass++) fit = refit(volumesUnder(fit.eta), fit.coefficients)
   return {
     eta: fit.eta,
     means: fit.means,
     deviations: deviationsFromMode(system, fit),
     log10Lambda,
     effectiveDimension: fit.effectiveDimension,
-    atLimit: Math.round(wanted * 100) / 100 > limit,
   }
+}
+
+function searchLambda(
+  system: PenalisedSystem,
+  volumesUnder: (eta: Float64Array) => Float64Array,
+  { volumes }: BinGeometry,
+  counts: Float64Array,
+  by: 'likelihood' | 'aic',
+): ChosenFit {
+  const search = by === 'aic' ? lambdaByAic : lambdaByLikelihood
+  let chosen = search(system, counts, volumes, null)
+  for (let pass = 1; pass < SEARCHES; pass++) {
+    chosen = search(system, counts, volumesUnder(chosen.fit.eta), chosen)
+  }
+  return chosen
 }
 
 function chooseBasis({ midpoints, edges, period }: BinGeometry) {
@@ -82,10 +84,7 @@ function chooseBasis({ midpoints, edges, period }: BinGeometry) {
 }
 
 /** sd(η_i − η_k) = √(S_ii + S_kk − 2 S_ik), with the column S·_k from one solve. */
-function deviationsFromMode(
-  system: PenalisedSystem,
-  { eta, variances, factor }: ReturnType<typeof penalisedFit>,
-): Float64Array {
+function deviationsFromMode(system: PenalisedSystem, { eta, variances, factor }: PenalisedFit): Float64Array {
   const mode = eta.indexOf(eta.reduce((most, value) => Math.max(most, value), -Infinity))
   const unit = new Float64Array(eta.length)
   unit[mode] = 1

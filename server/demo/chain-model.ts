@@ -20,6 +20,7 @@ const SIDE_MASSES = [28.054, 28.054, 29.062]
 const RENEWAL = { bond: 0.5, angle: 0.4, dihedral: 0.2 } as const
 
 type Coordinate = keyof typeof CHAIN_POTENTIALS
+const COORDINATES = Object.keys(CHAIN_POTENTIALS) as Coordinate[]
 
 /** The samplers of every coordinate at one temperature; made once, used for all chains. */
 export interface ChainModel {
@@ -40,10 +41,9 @@ export interface Chain {
 interface UnitState {
   /** +1 or −1, drawn once: the stereo centre of the backbone bead. */
   readonly centre: 1 | -1
-  readonly coordinates: Record<Coordinate, number>
-  conformer: number
-  angleAtS1: number
-  turnAtE: number
+  readonly coordinates: Readonly<Record<Coordinate, number>>
+  readonly angleAtS1: number
+  readonly turnAtE: number
 }
 
 /** @param thermalEnergy kT in kJ/mol */
@@ -81,29 +81,25 @@ export function createChain(model: ChainModel, units: number, random: Random): C
 
 function drawUnit(model: ChainModel, random: Random): UnitState {
   const coordinates = {} as Record<Coordinate, number>
-  for (const name of Object.keys(model.samplers) as Coordinate[]) {
-    coordinates[name] = model.samplers[name].draw(random)
-  }
-  const conformer = drawConformer(model, random)
-  return {
-    centre: random.uniform() < 0.5 ? 1 : -1,
-    coordinates,
-    conformer,
-    angleAtS1: model.conformers[conformer].angleAtS1.draw(random),
-    turnAtE: model.conformers[conformer].turnAtE.draw(random),
-  }
+  for (const name of COORDINATES) coordinates[name] = model.samplers[name].draw(random)
+  return { centre: random.uniform() < 0.5 ? 1 : -1, coordinates, ...drawSide(model, random) }
 }
 
-/** The conformer, its angle and its turn are one coordinate of three numbers and are drawn anew together. */
 function renewUnit(model: ChainModel, state: UnitState, random: Random): UnitState {
-  const fresh = drawUnit(model, random)
-  const coordinates = {} as Record<Coordinate, number>
-  for (const name of Object.keys(state.coordinates) as Coordinate[]) {
-    const due = random.uniform() < RENEWAL[CHAIN_POTENTIALS[name].kind]
-    coordinates[name] = (due ? fresh : state).coordinates[name]
+  const coordinates = { ...state.coordinates }
+  for (const name of COORDINATES) {
+    if (random.uniform() < RENEWAL[CHAIN_POTENTIALS[name].kind]) {
+      coordinates[name] = model.samplers[name].draw(random)
+    }
   }
-  const side = random.uniform() < RENEWAL.dihedral ? fresh : state
-  return { ...side, centre: state.centre, coordinates }
+  const side = random.uniform() < RENEWAL.dihedral ? drawSide(model, random) : state
+  return { centre: state.centre, coordinates, angleAtS1: side.angleAtS1, turnAtE: side.turnAtE }
+}
+
+/** The conformer with its angle and its turn: one coordinate of three numbers, drawn together. */
+function drawSide(model: ChainModel, random: Random): Pick<UnitState, 'angleAtS1' | 'turnAtE'> {
+  const { angleAtS1, turnAtE } = model.conformers[drawConformer(model, random)]
+  return { angleAtS1: angleAtS1.draw(random), turnAtE: turnAtE.draw(random) }
 }
 
 function drawConformer(model: ChainModel, random: Random): number {

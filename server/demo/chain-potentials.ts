@@ -76,10 +76,10 @@ export const CHAIN_POTENTIALS = {
     energy: (phi: number) => 70 * (1 - Math.cos(phi - 120 * degree)),
   } as CoordinatePotential,
   turnAtEsterBond: turn(-0.8, 1.3, 0.3),
-  turnAtS1: turn(2.6, 0, 0.9),
+  turnAtS1: turn(6, 0, 1.2),
 } as const
 
 export const CONFORMERS: readonly Conformer[] = [
   { energy: 0, angleAtS1: angle(160, 330), turnAtE: turn(-0.6, 0, 0.3) },
-  { energy: -1, angleAtS1: angle(90, 170), turnAtE: turn(-5.5, 0, 0) },
+  { energy: -1, angleAtS1: angle(92, 230), turnAtE: turn(-5.5, 0, 0) },
 ]

@@ -1,5 +1,5 @@
 import type { CoordinateKind } from '../../shared/histogram/histogram'
-import type { IntakeSettings, JointIntakeSettings } from '../../shared/intake/intake-settings'
+import type { DistributionUpload, JointDistributionUpload } from '../../shared/contracts/distribution'
 import type { CoordinateUnit } from '../../shared/units'
 import { inefficiencyBetweenChains } from './chain-scatter'
 import type { ChainCounts, Ensemble, PairCounts } from './measure-chains'
@@ -40,7 +40,7 @@ export function distributionFile(
   types: readonly string[],
   counted: ChainCounts,
   origin: DemoOrigin,
-): DemoFile<IntakeSettings> {
+): DemoFile<DistributionUpload['settings']> {
   const { kind, low, width, perChain } = counted
   const { unit, symbol, scale, digits } = UNITS[kind]
   const counts = sumOfRows(perChain)
@@ -78,11 +78,11 @@ export function distributionFile(
  */
 export function jointFile(
   types: readonly [readonly string[], readonly string[]],
-  kinds: readonly [CoordinateKind, CoordinateKind],
+  kinds: [CoordinateKind, CoordinateKind],
   counted: PairCounts,
   inefficiency: number,
   origin: DemoOrigin,
-): DemoFile<JointIntakeSettings> {
+): DemoFile<JointDistributionUpload['settings']> {
   const [nx, ny] = counted.bins
   const independentSamples = Math.round(total(counted.counts) / inefficiency)
   const alongX = Float64Array.from({ length: nx }, (_, x) =>

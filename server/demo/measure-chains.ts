@@ -43,7 +43,7 @@ export interface PairCounts {
 }
 
 /** Enough for error bars of some hundredths of kT where the chain mostly is, and for bins without counts further out. */
-export const DEMO_ENSEMBLE: Ensemble = { chains: 150, frames: 40, units: 12 }
+export const DEMO_ENSEMBLE: Ensemble = { chains: 100, frames: 24, units: 12 }
 
 const degree = Math.PI / 180
 

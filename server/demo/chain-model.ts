@@ -14,10 +14,11 @@ export type UnitPositions = Readonly<Partial<Record<ModelBead, Point>>>
 const SIDE_MASSES = [28.054, 28.054, 29.062]
 
 /**
- * Chance per frame that a coordinate is drawn anew; otherwise it stays. Each coordinate is then a Markov chain with the
- * Boltzmann distribution and statistical inefficiency (2 − c)/c: 3 for a bond, 4 for an angle, 9 for a turn.
+ * Chance per frame that a repeat unit is drawn anew, all its coordinates at once; otherwise it stays as it is. Each unit is
+ * then a Markov chain with the Boltzmann distribution, and whatever is measured within it has the same statistical
+ * inefficiency, (2 − c)/c = 4: the one number that a file can state is the right one for bonds, angles, turns and pairs.
  */
-const RENEWAL = { bond: 0.5, angle: 0.4, dihedral: 0.2 } as const
+const RENEWAL = 0.4
 
 type Coordinate = keyof typeof CHAIN_POTENTIALS
 const COORDINATES = Object.keys(CHAIN_POTENTIALS) as Coordinate[]
@@ -34,7 +35,7 @@ export interface ChainModel {
 
 /** One chain that moves from frame to frame. */
 export interface Chain {
-  /** Draws the coordinates that are due anew and gives the beads in space, one entry per repeat unit. */
+  /** Draws the units that are due anew and gives the beads in space, one entry per repeat unit. */
   nextFrame(): readonly UnitPositions[]
 }
 
@@ -86,14 +87,7 @@ function drawUnit(model: ChainModel, random: Random): UnitState {
 }
 
 function renewUnit(model: ChainModel, state: UnitState, random: Random): UnitState {
-  const coordinates = { ...state.coordinates }
-  for (const name of COORDINATES) {
-    if (random.uniform() < RENEWAL[CHAIN_POTENTIALS[name].kind]) {
-      coordinates[name] = model.samplers[name].draw(random)
-    }
-  }
-  const side = random.uniform() < RENEWAL.dihedral ? drawSide(model, random) : state
-  return { centre: state.centre, coordinates, angleAtS1: side.angleAtS1, turnAtE: side.turnAtE }
+  return random.uniform() < RENEWAL ? { ...drawUnit(model, random), centre: state.centre } : state
 }
 
 /** The conformer with its angle and its turn: one coordinate of three numbers, drawn together. */

@@ -65,7 +65,7 @@ export const CHAIN_POTENTIALS = {
   backboneAngle: angle(150, 190),
   /** B–B–E towards the previous backbone bead; towards the next one it follows from the geometry. */
   esterAngle: angle(106, 95),
-  angleAtE: angle(144, 230),
+  angleAtE: angle(146, 480),
   angleAtS2: angle(152, 260),
   backboneTurn: turn(1.1, 0.4, 0.9),
   /** The ester about the backbone, against the next backbone bead, where its centre is (stereo centre +1); −1 mirrors it. */
@@ -81,5 +81,5 @@ export const CHAIN_POTENTIALS = {
 
 export const CONFORMERS: readonly Conformer[] = [
   { energy: 0, angleAtS1: angle(160, 330), turnAtE: turn(-0.6, 0, 0.3) },
-  { energy: -1, angleAtS1: angle(92, 230), turnAtE: turn(-5.5, 0, 0) },
+  { energy: -1, angleAtS1: angle(88, 230), turnAtE: turn(-8, 0, 0) },
 ]

@@ -72,7 +72,7 @@ export function distributionFile(
 }
 
 /**
- * A grid in long form: x, y and count per line. The larger inefficiency of the two terms rules.
+ * A grid in long form: x, y and count per line.
  *
  * @param kinds of the two terms, as counted
  */
@@ -80,16 +80,15 @@ export function jointFile(
   types: readonly [readonly string[], readonly string[]],
   kinds: [CoordinateKind, CoordinateKind],
   counted: PairCounts,
-  inefficiency: number,
   origin: DemoOrigin,
 ): DemoFile<JointDistributionUpload['settings']> {
   const [nx, ny] = counted.bins
-  const independentSamples = Math.round(total(counted.counts) / inefficiency)
-  const alongX = Float64Array.from({ length: nx }, (_, x) =>
-    total(counted.counts.subarray(x * ny, (x + 1) * ny)),
-  )
+  const counts = sumOfRows(counted.perChain)
+  const inefficiency = inefficiencyBetweenChains(counted.perChain, ny)
+  const independentSamples = Math.round(total(counts) / inefficiency)
+  const alongX = Float64Array.from({ length: nx }, (_, x) => total(counts.subarray(x * ny, (x + 1) * ny)))
   const alongY = Float64Array.from({ length: ny }, (_, y) =>
-    alongX.reduce((sum, _x, x) => sum + counted.counts[x * ny + y], 0),
+    alongX.reduce((sum, _x, x) => sum + counts[x * ny + y], 0),
   )
   const [fromX, toX] = writtenRange(kinds[0], alongX)
   const [fromY, toY] = writtenRange(kinds[1], alongY)
@@ -101,7 +100,7 @@ export function jointFile(
     return ((counted.lows[axis] + (bin + 0.5) * counted.widths[axis]) * scale).toFixed(digits)
   }
   for (let x = fromX; x < toX; x++) {
-    for (let y = fromY; y < toY; y++) lines.push(`${at(0, x)} ${at(1, y)} ${counted.counts[x * ny + y]}`)
+    for (let y = fromY; y < toY; y++) lines.push(`${at(0, x)} ${at(1, y)} ${counts[x * ny + y]}`)
   }
   return {
     name: `${origin.mapping}_${names.join('_with_')}_${origin.temperature}K.txt`,

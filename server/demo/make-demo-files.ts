@@ -1,7 +1,6 @@
 import type { CoordinateKind } from '../../shared/histogram/histogram'
 import type { DistributionUpload, JointDistributionUpload } from '../../shared/contracts/distribution'
 import type { DerivedTerm } from '../../shared/mapping/term'
-import { inefficiencyBetweenChains } from './chain-scatter'
 import { distributionFile, jointFile, type DemoFile, type DemoOrigin } from './demo-files'
 import type { DemoMapping } from './demo-mappings'
 import { DEMO_ENSEMBLE, measureChains, type Ensemble, type MeasuredTerm } from './measure-chains'
@@ -61,9 +60,8 @@ export function makeDemoFiles(
     const distributions = [...ofTerm].map(([term, counts]) => distributionFile(term.types, counts, origin))
     const joints = request.pairs.map((pair) => {
       const both = pair.map((types) => findTerm(request.terms, types)) as [DemoTerm, DemoTerm]
-      const [first, second] = both.map((term) => inefficiencyBetweenChains(ofTerm.get(term)!.perChain))
       const kinds = both.map(({ kind }) => kind) as [CoordinateKind, CoordinateKind]
-      return jointFile(pair, kinds, counted.pairs[nextPair++], Math.max(first, second), origin)
+      return jointFile(pair, kinds, counted.pairs[nextPair++], origin)
     })
     return { distributions, joints }
   })

@@ -34,12 +34,12 @@ export interface ChainCounts {
   readonly perChain: readonly Float64Array[]
 }
 
-/** Counts of two coordinates over all chains, row-major. */
+/** Counts of two coordinates, row-major; one row of cells per chain. */
 export interface PairCounts {
   readonly bins: readonly [number, number]
   readonly lows: readonly [number, number]
   readonly widths: readonly [number, number]
-  readonly counts: Float64Array
+  readonly perChain: readonly Float64Array[]
 }
 
 /** Enough for error bars of some hundredths of kT where the chain mostly is, and for bins without counts further out. */
@@ -73,13 +73,13 @@ export function measureChains(
   const random = createRandom(seed)
   const model = createChainModel(thermalEnergy(temperature))
   const counted = terms.map(({ kind }) => emptyChainCounts(kind, ensemble.chains))
-  const countedPairs = pairs.map(emptyPairCounts)
+  const countedPairs = pairs.map((pair) => emptyPairCounts(pair, ensemble.chains))
   for (let index = 0; index < ensemble.chains; index++) {
     const chain = createChain(model, ensemble.units, random)
     for (let frame = 0; frame < ensemble.frames; frame++) {
       const positions = chain.nextFrame()
       terms.forEach((term, i) => countTerm(term, positions, counted[i], index))
-      pairs.forEach((pair, i) => countPair(pair, positions, countedPairs[i]))
+      pairs.forEach((pair, i) => countPair(pair, positions, countedPairs[i], index))
     }
   }
   return { terms: counted, pairs: countedPairs }
@@ -90,14 +90,14 @@ function emptyChainCounts(kind: CoordinateKind, chains: number): ChainCounts {
   return { kind, low, width, perChain: Array.from({ length: chains }, () => new Float64Array(count)) }
 }
 
-function emptyPairCounts({ first, second }: MeasuredPair): PairCounts {
+function emptyPairCounts({ first, second }: MeasuredPair, chains: number): PairCounts {
   const x = first.kind === 'bond' ? PAIR_BOND_BINS : BINS[first.kind]
   const y = second.kind === 'bond' ? PAIR_BOND_BINS : BINS[second.kind]
   return {
     bins: [x.count, y.count],
     lows: [x.low, y.low],
     widths: [x.width, y.width],
-    counts: new Float64Array(x.count * y.count),
+    perChain: Array.from({ length: chains }, () => new Float64Array(x.count * y.count)),
   }
 }
 
@@ -116,7 +116,13 @@ function countTerm(
   }
 }
 
-function countPair(pair: MeasuredPair, positions: readonly UnitPositions[], counted: PairCounts) {
+function countPair(
+  pair: MeasuredPair,
+  positions: readonly UnitPositions[],
+  counted: PairCounts,
+  chain: number,
+) {
+  const row = counted.perChain[chain]
   const [nx, ny] = counted.bins
   pair.first.places.forEach((place, i) => {
     for (let unit = 0; unit < positions.length; unit++) {
@@ -125,7 +131,7 @@ function countPair(pair: MeasuredPair, positions: readonly UnitPositions[], coun
       if (first === null || second === null) continue
       const x = binOf(measure(first), counted.lows[0], counted.widths[0], nx)
       const y = binOf(measure(second), counted.lows[1], counted.widths[1], ny)
-      counted.counts[x * ny + y]++
+      row[x * ny + y]++
     }
   })
 }

@@ -8,7 +8,7 @@ import {
 import { installGuards } from './guards'
 
 const views = import.meta.glob<{ default: object }>('../views/*View.vue')
-const view = (name: string) => views[`../views/${name}View.vue`]
+const view = (name: string) => views[`../views/${name}View.vue`] ?? views['../views/NotFoundView.vue']
 
 declare module 'vue-router' {
   interface RouteMeta {
@@ -35,7 +35,7 @@ const workbenchRooms: RouteRecordRaw[] = [
     meta: { title: 'Correlation' },
   },
   { path: 'tables', name: 'tables', component: view('Tables'), meta: { title: 'Tables' } },
-].filter((route) => route.name === 'workbench' || ('component' in route && route.component !== undefined))
+]
 
 const routes: RouteRecordRaw[] = [
   { path: '/', name: 'front-desk', component: view('FrontDesk'), meta: { title: 'Front desk' } },

@@ -1,0 +1,99 @@
+import { computed, ref, shallowRef, type ComputedRef, type Ref, type ShallowRef } from 'vue'
+import type { RouteLocationRaw } from 'vue-router'
+import type { Mapping } from '@shared/contracts/mapping'
+import type { Polymer } from '@shared/contracts/polymer'
+import { ApiError } from '@/api/http'
+import { listMappings } from '@/api/mappings'
+import { listPolymers } from '@/api/polymers'
+import { countOf } from '@/format/numbers'
+import { useSessionStore } from '@/stores/session'
+
+export interface DeskPolymer {
+  readonly polymer: Polymer
+  readonly mappings: readonly Mapping[]
+}
+
+export interface DeskGroup {
+  readonly groupId: string
+  readonly groupName: string
+  readonly polymers: readonly DeskPolymer[]
+}
+
+/** Something that cannot go on without a modeller: what, about which polymer, and where to do it. */
+export interface Waiting {
+  readonly key: string
+  readonly text: string
+  readonly about: string
+  readonly to: RouteLocationRaw
+}
+
+/** What a polymer still lacks before its tables can be made. */
+export const waitingFor = ({ polymer, mappings }: DeskPolymer): Waiting[] => {
+  const room = { name: 'polymer', params: { polymerId: polymer.id } }
+  const found: Waiting[] = []
+  const add = (key: string, text: string, to: RouteLocationRaw, about = polymer.name): void => {
+    found.push({ key: `${polymer.id}-${key}`, text, about, to })
+  }
+  if (polymer.counts.statePoints === 0) {
+    add('state-points', 'No state point yet', { ...room, hash: '#state-points' })
+  }
+  if (mappings.length === 0) add('mappings', 'No mapping yet', { ...room, hash: '#mappings' })
+  for (const { id, name, counts } of mappings) {
+    const params = { polymerId: polymer.id, mappingId: id }
+    const about = `${polymer.name}, ${name}`
+    const missing = counts.terms - counts.termsWithData
+    if (counts.terms === 0) add(id, 'No terms yet: paint its beads', { name: 'mapping', params }, about)
+    else if (missing > 0) {
+      add(
+        id,
+        `${countOf(missing, 'term')} of ${counts.terms} without data`,
+        { name: 'intake', params },
+        about,
+      )
+    }
+  }
+  return found
+}
+
+/** The front desk: the polymers of the person's groups with their mappings, and what waits for someone who writes. */
+export function useFrontDesk(): {
+  groups: ShallowRef<readonly DeskGroup[]>
+  waiting: ComputedRef<Waiting[]>
+  loaded: Ref<boolean>
+  failure: ShallowRef<ApiError | null>
+  load: () => Promise<void>
+} {
+  const session = useSessionStore()
+  const groups = shallowRef<readonly DeskGroup[]>([])
+  const loaded = ref(false)
+  const failure = shallowRef<ApiError | null>(null)
+
+  const withMappings = async (polymer: Polymer): Promise<DeskPolymer> => ({
+    polymer,
+    mappings: polymer.counts.mappings > 0 ? await listMappings(polymer.id) : [],
+  })
+
+  const load = async (): Promise<void> => {
+    failure.value = null
+    try {
+      groups.value = await Promise.all(
+        session.readableGroups.map(async ({ groupId, groupName }) => {
+          const polymers = await Promise.all((await listPolymers(groupId)).map(withMappings))
+          return { groupId, groupName, polymers }
+        }),
+      )
+      loaded.value = true
+    } catch (error) {
+      if (!(error instanceof ApiError)) throw error
+      failure.value = error
+    }
+  }
+
+  const waiting = computed(() =>
+    groups.value
+      .filter(({ groupId }) => session.canWrite(groupId))
+      .flatMap(({ polymers }) => polymers.flatMap(waitingFor)),
+  )
+
+  return { groups, waiting, loaded, failure, load }
+}

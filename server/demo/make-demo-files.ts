@@ -1,15 +1,25 @@
-import type { CoordinateKind } from '../../shared/histogram/histogram'
 import type { DistributionUpload, JointDistributionUpload } from '../../shared/contracts/distribution'
 import type { DerivedTerm } from '../../shared/mapping/term'
 import { distributionFile, jointFile, type DemoFile, type DemoOrigin } from './demo-files'
 import type { DemoMapping } from './demo-mappings'
-import { DEMO_ENSEMBLE, measureChains, type Ensemble, type MeasuredTerm } from './measure-chains'
+import {
+  DEMO_ENSEMBLE,
+  measureChains,
+  type Ensemble,
+  type MeasuredPair,
+  type MeasuredTerm,
+} from './measure-chains'
 
 /** What of a term the files need. */
 export type DemoTerm = Pick<DerivedTerm, 'kind' | 'types' | 'places'>
 
 /** Two terms of a mapping to be measured together, by their types: a bond, and an angle that holds it. */
-export type DemoPair = readonly [bond: readonly string[], angle: readonly string[]]
+export interface DemoPair {
+  readonly bond: readonly string[]
+  readonly angle: readonly string[]
+  /** nm */
+  readonly bondWidth: number
+}
 
 /** A mapping with its terms, and the pairs wanted of it. */
 export interface DemoRequest {
@@ -25,16 +35,10 @@ export interface DemoFiles {
 }
 
 /** The stretched and the folded side chain differ in both: one joint potential. */
-export const COUPLED_PAIR: DemoPair = [
-  ['E', 'H'],
-  ['B', 'E', 'H'],
-]
+export const COUPLED_PAIR: DemoPair = { bond: ['E', 'H'], angle: ['B', 'E', 'H'], bondWidth: 0.008 }
 
 /** The ester bond knows nothing of the side chain: two tables. */
-export const SEPARABLE_PAIR: DemoPair = [
-  ['B', 'E'],
-  ['B', 'E', 'H'],
-]
+export const SEPARABLE_PAIR: DemoPair = { bond: ['B', 'E'], angle: ['B', 'E', 'H'], bondWidth: 0.004 }
 
 /** One seed for all: the same chains are seen by every mapping, as in a real study. */
 const SEED = 20_260
@@ -59,9 +63,7 @@ export function makeDemoFiles(
     const ofTerm = new Map(request.terms.map((term) => [term, counted.terms[nextTerm++]]))
     const distributions = [...ofTerm].map(([term, counts]) => distributionFile(term.types, counts, origin))
     const joints = request.pairs.map((pair) => {
-      const both = pair.map((types) => findTerm(request.terms, types)) as [DemoTerm, DemoTerm]
-      const kinds = both.map(({ kind }) => kind) as [CoordinateKind, CoordinateKind]
-      return jointFile(pair, kinds, counted.pairs[nextPair++], origin)
+      return jointFile([pair.bond, pair.angle], ['bond', 'angle'], counted.pairs[nextPair++], origin)
     })
     return { distributions, joints }
   })
@@ -86,7 +88,7 @@ function measuredTerm(mapping: DemoMapping, { kind, places }: DemoTerm): Measure
 }
 
 /** The bond at one end of every place of the angle. */
-function measuredPair({ mapping, terms }: DemoRequest, [bond, angle]: DemoPair) {
+function measuredPair({ mapping, terms }: DemoRequest, { bond, angle, bondWidth }: DemoPair): MeasuredPair {
   const second = measuredTerm(mapping, findTerm(terms, angle))
   const { types } = findTerm(terms, angle)
   const start = bond.every((type) => types.slice(0, 2).includes(type)) ? 0 : 1
@@ -94,5 +96,5 @@ function measuredPair({ mapping, terms }: DemoRequest, [bond, angle]: DemoPair) 
     kind: 'bond',
     places: second.places.map((place) => place.slice(start, start + 2)),
   }
-  return { first, second }
+  return { first, second, bondWidth }
 }

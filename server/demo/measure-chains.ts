@@ -13,10 +13,12 @@ export interface MeasuredTerm {
   readonly places: readonly ModelPlace[]
 }
 
-/** Two terms measured together at places of equal number: the i-th place of one with the i-th of the other. */
+/** A bond and another term measured together: the i-th place of one with the i-th of the other. */
 export interface MeasuredPair {
   readonly first: MeasuredTerm
   readonly second: MeasuredTerm
+  /** Width of the first one's bins in nm: a joint map wants fewer and wider ones than a distribution alone. */
+  readonly bondWidth: number
 }
 
 /** How many chains are followed, and for how long. */
@@ -54,9 +56,6 @@ const BINS = {
   dihedral: { low: -Math.PI, width: 5 * degree, count: 72 },
 } as const satisfies Record<CoordinateKind, { low: number; width: number; count: number }>
 
-/** Cells of the joint maps are coarser along the bond. */
-const PAIR_BOND_BINS = { low: 0, width: 0.004, count: 250 } as const
-
 /**
  * Follows the invented chains at one temperature and counts every term and pair.
  *
@@ -90,9 +89,10 @@ function emptyChainCounts(kind: CoordinateKind, chains: number): ChainCounts {
   return { kind, low, width, perChain: Array.from({ length: chains }, () => new Float64Array(count)) }
 }
 
-function emptyPairCounts({ first, second }: MeasuredPair, chains: number): PairCounts {
-  const x = first.kind === 'bond' ? PAIR_BOND_BINS : BINS[first.kind]
-  const y = second.kind === 'bond' ? PAIR_BOND_BINS : BINS[second.kind]
+function emptyPairCounts({ second, bondWidth }: MeasuredPair, chains: number): PairCounts {
+  const { low, width, count } = BINS.bond
+  const x = { low, width: bondWidth, count: Math.ceil((count * width) / bondWidth) }
+  const y = BINS[second.kind]
   return {
     bins: [x.count, y.count],
     lows: [x.low, y.low],

@@ -88,7 +88,8 @@ async function addFiles(
     await services.distributions.add(modeller, terms[index].id, upload, uploaded(file))
   }
   for (const [index, file] of joints.entries()) {
-    const [first, second] = pairs[index].map((types) => findTerm(terms, types))
+    const first = findTerm(terms, pairs[index].bond)
+    const second = findTerm(terms, pairs[index].angle)
     const upload = {
       firstTermId: first.id,
       secondTermId: second.id,

@@ -112,7 +112,7 @@ describe('makeDemoFiles', () => {
     files[0].joints.forEach(({ text, settings }, at) => {
       const { histogram } = readJointHistogram(text, settings)
       const ny = histogram.yEdges.length - 1
-      const angle = findTerm(terms, [COUPLED_PAIR, SEPARABLE_PAIR][at][1])
+      const angle = findTerm(terms, [COUPLED_PAIR, SEPARABLE_PAIR][at].angle)
       const alone = files[0].distributions[terms.indexOf(angle)]
       const single = readHistogram(alone.text, alone.settings).histogram
       const summed = Array.from({ length: ny }, (_, y) =>

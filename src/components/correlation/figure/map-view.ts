@@ -1,0 +1,2 @@
+/** What the cells of the map show. */
+export type MapView = 'density' | 'coupling'

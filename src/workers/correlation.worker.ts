@@ -1,0 +1,4 @@
+import { expose } from 'comlink'
+import { runCorrelation } from './correlation-task'
+
+expose({ runCorrelation })

@@ -1,0 +1,138 @@
+import type { CustomSeriesOption, LineSeriesOption } from 'echarts/charts'
+import type { CurveChartOption } from '@/plugins/echarts'
+import type { FigureFrame, Panel } from './figure-frame'
+import type { FigureAxes, FigureModel } from './figure-model'
+import type { Point } from './stepped-outline'
+
+/** Curves that the key can switch off. */
+export const CURVES = ['measured', 'regenerated', 'potential', 'rings', 'comparison'] as const
+export type CurveName = (typeof CURVES)[number]
+export type VisibleCurves = Readonly<Record<CurveName, boolean>>
+
+const RING_RADIUS = 2.1
+const DISTRIBUTION = 0
+const POTENTIAL = 1
+
+/** Colours are the page's tokens as CSS variables, so that a change of theme needs no redraw. */
+const token = (name: string): string => `var(--${name})`
+
+type Series = LineSeriesOption | CustomSeriesOption
+
+/**
+ * The two panels for the chart library: same shared axis, axes themselves undrawn (the spine and the margins are drawn over
+ * it to the pixel). Without a model the panels stay empty.
+ */
+export function panelOption(
+  frame: FigureFrame,
+  axes: FigureAxes,
+  model: FigureModel | null,
+  visible: VisibleCurves,
+): CurveChartOption {
+  const hidden = { show: false, type: 'value', scale: false } as const
+  const [low, high] = axes.domain
+  return {
+    animation: false,
+    grid: [grid(frame.distribution), grid(frame.potential)],
+    xAxis: [DISTRIBUTION, POTENTIAL].map((gridIndex) => ({ ...hidden, gridIndex, min: low, max: high })),
+    yAxis: [
+      { ...hidden, gridIndex: DISTRIBUTION, min: 0, max: axes.densityTop },
+      { ...hidden, gridIndex: POTENTIAL, min: axes.energyDomain[0], max: axes.energyDomain[1] },
+    ],
+    series: model === null ? [] : curves(model, visible),
+  }
+}
+
+const grid = ({ left, top, width, height }: Panel) => ({
+  left,
+  top,
+  width,
+  height,
+  outerBoundsMode: 'none' as const,
+})
+
+/** The curves in drawing order. */
+function curves(model: FigureModel, visible: VisibleCurves): Series[] {
+  const series: Series[] = []
+  if (visible.measured) series.push(measured(model.measured))
+  if (visible.regenerated) {
+    series.push(line('regenerated', DISTRIBUTION, model.regenerated, { color: token('model'), width: 1.5 }))
+  }
+  if (visible.potential) model.band?.forEach((polygon) => series.push(band(polygon)))
+  if (visible.comparison && model.comparison) {
+    const style = { color: token('plain'), width: 1.25, type: [5, 3.5] }
+    series.push(line('comparison', POTENTIAL, model.comparison, style))
+  }
+  if (visible.rings) series.push(rings(model.rings))
+  if (visible.potential) {
+    const style = { color: token('model'), width: 1.75 }
+    const dots = { color: token('model'), width: 1.5, type: [2, 3.5] }
+    series.push(line('potential', POTENTIAL, model.potential, style))
+    model.tails.forEach((tail) => series.push(line('tail', POTENTIAL, tail, dots)))
+  }
+  return series
+}
+
+function line(
+  name: string,
+  panel: number,
+  points: readonly Point[],
+  style: NonNullable<LineSeriesOption['lineStyle']>,
+): LineSeriesOption {
+  return {
+    ...shared(name, panel),
+    type: 'line',
+    data: points.map((point) => [...point]),
+    showSymbol: false,
+    emphasis: { disabled: true },
+    lineStyle: { cap: 'round', join: 'round', ...style },
+  }
+}
+
+const shared = (name: string, panel: number) =>
+  ({ name, xAxisIndex: panel, yAxisIndex: panel, silent: true, clip: true }) as const
+
+/** Stepped area and its outline. */
+function measured(outline: readonly Point[]): CustomSeriesOption {
+  return {
+    ...shared('measured', DISTRIBUTION),
+    type: 'custom',
+    data: [[outline[0][0], 0]],
+    renderItem: (_, api) => {
+      const points = outline.map((point) => api.coord([...point]))
+      const edge = { fill: 'none', stroke: token('dataEdge'), lineWidth: 1, lineJoin: 'miter' as const }
+      return {
+        type: 'group',
+        children: [
+          { type: 'polygon', shape: { points }, style: { fill: token('data') } },
+          { type: 'polyline', shape: { points }, style: edge },
+        ],
+      }
+    },
+  }
+}
+
+function band(polygon: readonly Point[]): CustomSeriesOption {
+  return {
+    ...shared('band', POTENTIAL),
+    type: 'custom',
+    data: [[...polygon[0]]],
+    renderItem: (_, api) => ({
+      type: 'polygon',
+      shape: { points: polygon.map((point) => api.coord([...point])) },
+      style: { fill: token('band') },
+    }),
+  }
+}
+
+function rings(points: readonly Point[]): CustomSeriesOption {
+  return {
+    ...shared('rings', POTENTIAL),
+    type: 'custom',
+    data: points.map((point) => [...point]),
+    renderItem: (_, api) => {
+      const [cx, cy] = api.coord([api.value(0), api.value(1)])
+      const style = { fill: token('plotGround'), stroke: token('raw'), lineWidth: 1 }
+      return { type: 'circle', shape: { cx, cy, r: RING_RADIUS }, style }
+    },
+  }
+}

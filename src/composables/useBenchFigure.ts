@@ -1,0 +1,87 @@
+import { computed, reactive, type ComputedRef } from 'vue'
+import type { Histogram } from '@shared/histogram'
+import { coordinateFromInternal, type CoordinateKind } from '@shared/units'
+import { coordinateUnitOf, type DisplayUnits } from '@/components/bench/figure/coordinate-names'
+import { emptyAxes } from '@/components/bench/figure/empty-axes'
+import { figureModel, type FigureAxes, type FigureModel } from '@/components/bench/figure/figure-model'
+import type { CurveName, VisibleCurves } from '@/components/bench/figure/panel-option'
+import { edgeDecimals, readingAt, type Reading } from '@/components/bench/figure/reading'
+import { warningPlaces } from '@/components/bench/warning-titles'
+import type { InversionAnswer } from '@/workers'
+
+/** What the figure and the row under it show. */
+export interface BenchFigureState {
+  readonly model: ComputedRef<FigureModel | null>
+  /** Those of the model, or the usual ones of the kind while there is none. */
+  readonly axes: ComputedRef<FigureAxes>
+  readonly reading: ComputedRef<Reading | null>
+  /** Decimals of bin edges; a coordinate between them has one more. */
+  readonly decimals: ComputedRef<number>
+  /** Width of the bins, null where they differ. */
+  readonly binWidth: ComputedRef<number | null>
+  /** Where warnings point at the axis, in the unit shown. */
+  readonly wedges: ComputedRef<number[]>
+  readonly visible: VisibleCurves
+  readonly toggle: (curve: CurveName) => void
+}
+
+/** What the figure is made from. */
+export interface FigureSource {
+  readonly kind: () => CoordinateKind
+  readonly temperature: () => number
+  readonly histogram: () => Histogram | null
+  readonly answer: () => InversionAnswer | null
+  readonly bin: () => number | null
+  readonly units: DisplayUnits
+}
+
+/** Turns an inversion into what the figure draws, in the units a person reads. */
+export function useBenchFigure(source: FigureSource): BenchFigureState {
+  const { units } = source
+  const visible = reactive({
+    measured: true,
+    regenerated: true,
+    potential: true,
+    rings: true,
+    comparison: true,
+  })
+  const chosenUnits = computed<DisplayUnits>(() => ({ ...units }))
+  const inversion = computed(() => source.answer()?.inversion ?? null)
+  const model = computed(() => inversion.value && figureModel(inversion.value, chosenUnits.value))
+  const unit = computed(() => coordinateUnitOf(source.kind(), units))
+  const edges = computed(
+    () => source.histogram()?.edges.map((edge) => coordinateFromInternal(edge, unit.value)) ?? null,
+  )
+
+  return {
+    model,
+    axes: computed(() => model.value ?? emptyAxes(source.kind(), chosenUnits.value, source.temperature())),
+    reading: computed(() => {
+      const [histogram, bin] = [source.histogram(), source.bin()]
+      if (histogram === null || bin === null || inversion.value === null || model.value === null) return null
+      return readingAt(histogram, inversion.value, model.value, chosenUnits.value, bin)
+    }),
+    decimals: computed(() => (edges.value === null ? 0 : edgeDecimals(edges.value))),
+    binWidth: computed(() => edges.value && evenWidth(edges.value)),
+    wedges: computed(() => {
+      const histogram = source.histogram()
+      if (histogram === null || inversion.value === null) return []
+      return warningPlaces(inversion.value.warnings, histogram.edges, histogram.weights).map((place) =>
+        coordinateFromInternal(place, unit.value),
+      )
+    }),
+    visible,
+    toggle: (curve) => {
+      visible[curve] = !visible[curve]
+    },
+  }
+}
+
+/** The common width of bins, null where they differ by more than rounding of a text file. */
+function evenWidth(edges: Float64Array): number | null {
+  const mean = (edges[edges.length - 1] - edges[0]) / (edges.length - 1)
+  const even = edges.every(
+    (edge, index) => index === 0 || Math.abs(edge - edges[index - 1] - mean) < 0.01 * mean,
+  )
+  return even ? mean : null
+}

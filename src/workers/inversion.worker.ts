@@ -1,0 +1,4 @@
+import { expose } from 'comlink'
+import { findAutomatic, runInversion } from './inversion-task'
+
+expose({ runInversion, findAutomatic })

@@ -1,0 +1,96 @@
+import type { z } from 'zod'
+import type { ApiCode } from '../../shared/contracts/error'
+import type { Visitor } from '../middleware/visitor'
+import type { Download, Member, Services, UploadedFile } from '../services'
+import type { Resource } from '../services/access.service'
+
+/** Someone in the group of the record that the path names: everyone but collaborators reads, owner and modeller write. */
+export interface MemberAccess {
+  readonly may: 'read' | 'write'
+  /** Its id is the path's parameter of that name with Id behind it, as in :polymerId. */
+  readonly at: Resource
+}
+
+/** Who may ask: anyone without a session, anyone with one, or members of a group. */
+export type Access = 'anyone' | 'visitor' | MemberAccess
+
+type ParameterNames<Path extends string> = Path extends `${string}:${infer Name}/${infer Rest}`
+  ? Name | ParameterNames<Rest>
+  : Path extends `${string}:${infer Name}`
+    ? Name
+    : never
+
+/** What a handler is given: everything parsed, everyone checked. */
+export type Context<Path extends string, Query, Body, Who extends Access> = {
+  readonly services: Services
+  readonly params: Readonly<Record<ParameterNames<Path>, string>>
+  readonly query: Query
+  readonly body: Body
+  /** The file of an upload route. */
+  readonly file: UploadedFile
+} & (Who extends MemberAccess ? { readonly member: Member } : object) &
+  (Who extends 'visitor' ? { readonly visitor: Visitor } : object)
+
+/** What a route answers when all goes well. */
+export type Answer<Result> =
+  | {
+      readonly status: 200 | 201
+      readonly body: z.ZodType<Result>
+      /** Another status for some results. */
+      readonly statusFor?: (result: Result) => number
+    }
+  | { readonly status: 204 }
+  | { readonly status: 200; readonly download: string }
+
+/** One route of the API, said once: who may call it, what comes in, what goes out, and what does it. */
+export interface Route<
+  Path extends string = string,
+  Query = unknown,
+  Body = unknown,
+  Result = unknown,
+  Who extends Access = Access,
+> {
+  readonly method: 'get' | 'post' | 'put' | 'patch' | 'delete'
+  readonly path: Path
+  /** One line for the API document. */
+  readonly summary: string
+  readonly access: Who
+  readonly query?: z.ZodType<Query>
+  readonly body?: z.ZodType<Body>
+  /** The body comes as multipart: one file, and the rest as JSON in the field `settings`. */
+  readonly upload?: true
+  readonly limited?: 'sign-in'
+  readonly answer: Answer<Result>
+  /** Codes beyond those that follow from access and form. */
+  readonly errors?: readonly ApiCode[]
+  /** The core may refuse the content: 422 with a code of the core. */
+  readonly readsContent?: true
+  handle(context: Context<Path, Query, Body, Who>): Promise<Result> | Result
+}
+
+/** Any route, as the mounting code sees it. */
+export type AnyRoute = Omit<Route, 'handle' | 'answer' | 'query' | 'body'> & {
+  readonly query?: z.ZodType
+  readonly body?: z.ZodType
+  readonly answer: {
+    readonly status: number
+    readonly body?: z.ZodType
+    readonly download?: string
+    readonly statusFor?: (result: never) => number
+  }
+  handle(context: never): unknown
+}
+
+/** Declares a route; the types of its handler follow from the rest. */
+export function route<
+  const Path extends string,
+  Query = undefined,
+  Body = undefined,
+  Result = void,
+  const Who extends Access = Access,
+>(definition: Route<Path, Query, Body, Result, Who>): AnyRoute {
+  return definition
+}
+
+/** A file as the answer of a route. */
+export type DownloadResult = Download

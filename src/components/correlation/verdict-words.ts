@@ -18,9 +18,9 @@ export function verdictTitle({ verdict, independentSamples }: Correlation): stri
   return VERDICT_TITLES[verdict]
 }
 
-/** Nats with three decimals, more where the number is smaller; negative estimates are chance about 0. */
+/** Nats with three decimals; an estimate below 0 is chance about 0 and is written as it is. */
 export function natsText(nats: number): string {
-  return fixedText(nats, Math.abs(nats) < 0.0095 ? 4 : 3)
+  return fixedText(nats, 3)
 }
 
 /** The number of the verdict and its standard deviation to the digits it earns. */
@@ -41,8 +41,7 @@ export function costSentence(correlation: Correlation, [first, second]: PairName
   }
   const cost = `Treating ${first} and ${second} one by one costs ${kTText(mutualInformationCorrected)} on average`
   const share = `${fixedText(100 * totalVariation, 0)} %`
-  if (verdict === 'joint')
-    return `${cost}, and puts ${share} of the configurations where the chain has none of them.`
+  if (verdict === 'joint') return `${cost}, and misplaces ${share} of the configurations.`
   if (verdict === 'borderline') {
     return `${cost}, and misplaces ${share} of the configurations. Two tables may do; look where the coupling sits.`
   }

@@ -8,12 +8,15 @@ export function coordinateAt(axis: MapAxis, internal: number): string {
   return `${fixedText(internal / axis.scale, middleDecimals(axis.edges))}${axis.names.valueSuffix}`
 }
 
-/** The least number of decimals that writes the middle of the first bin out; the other middles follow by whole bins. */
+/** The least number of decimals that writes out the middles of the first two bins; the others follow by whole bins. */
 function middleDecimals(edges: ArrayLike<number>): number {
-  const middle = (edges[0] + edges[1]) / 2
-  for (let decimals = 0; decimals < MOST_DECIMALS; decimals += 1) {
-    const shifted = middle * 10 ** decimals
-    if (Math.abs(shifted - Math.round(shifted)) < 1e-3) return decimals
-  }
-  return MOST_DECIMALS
+  const middles = [(edges[0] + edges[1]) / 2, (edges[1] + edges[2]) / 2]
+  const written = (decimals: number) =>
+    middles.every((middle) => {
+      const shifted = middle * 10 ** decimals
+      return Math.abs(shifted - Math.round(shifted)) < 1e-3
+    })
+  let decimals = 0
+  while (decimals < MOST_DECIMALS && !written(decimals)) decimals += 1
+  return decimals
 }

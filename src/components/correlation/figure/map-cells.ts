@@ -37,22 +37,43 @@ export function mapCells(
 }
 
 /** Cells of the file's grid by their density per volume; cells without counts are left as ground. */
-export function densityCells(correlation: Correlation, model: MapModel, steps: number): MapCell[] {
-  const { density } = correlation
-  return mapCells(model.x.edges, model.y.edges, (index) =>
-    density[index] === 0 ? null : densityStep(density[index] / model.highest.density, steps),
-  )
+export function densityCells(model: MapModel, steps: number): MapCell[] {
+  return mapCells(model.x.edges, model.y.edges, (index) => {
+    const density = model.shown[index]
+    return Number.isNaN(density) ? null : densityStep(density / model.highest.density, steps)
+  })
 }
 
-/** Cells of the coupling map; those too thin to judge are left out. */
-export function couplingCells({ coupling }: Correlation, model: MapModel, steps: number): MapCell[] {
+/** A cell of the file's grid is drawn where independence would put at least this many independent samples in it. */
+const LEAST_EXPECTED = 0.5
+/** The same where nobody stated a sample size, as a share. */
+const LEAST_EXPECTED_SHARE = 1e-4
+
+/**
+ * Cells of the file's grid by the coupling of the cell of the coupling map that holds them. Those too thin to judge are left
+ * out, also at the rim, where a merged cell of the coupling map reaches far beyond the samples.
+ */
+export function couplingCells(correlation: Correlation, model: MapModel, steps: number): MapCell[] {
+  const { coupling, marginals, independentSamples, xEdges, yEdges } = correlation
   const limit = couplingLimit(coupling.values)
-  return mapCells(
-    coupling.xEdges.map((edge) => edge / model.x.scale),
-    coupling.yEdges.map((edge) => edge / model.y.scale),
-    (index) => {
-      const value = coupling.values[index]
-      return Number.isNaN(value) ? null : couplingStep(value, limit, steps)
-    },
-  )
+  const columns = holders(xEdges, coupling.xEdges)
+  const rows = holders(yEdges, coupling.yEdges)
+  const least = independentSamples === null ? LEAST_EXPECTED_SHARE : LEAST_EXPECTED / independentSamples
+  return mapCells(model.x.edges, model.y.edges, (index) => {
+    const ix = Math.floor(index / rows.length)
+    const iy = index % rows.length
+    const value = coupling.values[columns[ix] * (coupling.yEdges.length - 1) + rows[iy]]
+    if (Number.isNaN(value) || marginals.x[ix] * marginals.y[iy] < least) return null
+    return couplingStep(value, limit, steps)
+  })
+}
+
+/** For each fine bin the coarse one that holds its middle. */
+function holders(fine: Float64Array, coarse: Float64Array): number[] {
+  let bin = 0
+  return Array.from({ length: fine.length - 1 }, (_, at) => {
+    const middle = (fine[at] + fine[at + 1]) / 2
+    while (bin < coarse.length - 2 && middle >= coarse[bin + 1]) bin += 1
+    return bin
+  })
 }

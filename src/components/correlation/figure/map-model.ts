@@ -8,6 +8,7 @@ import {
   type DisplayUnits,
 } from '@/components/bench/figure/coordinate-names'
 import { contourLines, type ContourLine } from './contour-lines'
+import { adaptiveDensity } from './adaptive-density'
 import { axisWindow, shareOutside } from './map-window'
 import { smoothDensity } from './smooth-density'
 
@@ -36,12 +37,13 @@ export interface MapModel {
   readonly x: MapAxis
   readonly y: MapAxis
   readonly mean: readonly MeanPoint[]
+  /** Density per volume of each cell as it is coloured (see `adaptiveDensity`), NaN without counts. */
+  readonly shown: Float64Array
+  /** Whether thin cells are averaged: only where the number of independent samples is known. */
+  readonly averaged: boolean
   /** Lines at 1, 2 and 3 kT above the lowest free energy, from the averaged density. */
   readonly contours: readonly ContourLine[]
-  /**
-   * Highest density per volume once every cell is averaged over its neighbours, and where it is, in the units shown. Single
-   * samples in cells of tiny volume, such as those at 180°, would else set the scale.
-   */
+  /** Highest density of the cells as coloured, and where it is, in the units shown. */
   readonly highest: { readonly density: number; readonly x: number; readonly y: number }
   /** Share of the samples outside the frame. */
   readonly outside: number
@@ -64,13 +66,19 @@ export function mapModel(correlation: Correlation, units: DisplayUnits): MapMode
   const y = mapAxis(kinds[1], yEdges, marginals.y, units)
   const volumes = cellVolumes(correlation)
   const masses = density.map((value, index) => value * volumes[index])
-  const smooth = smoothDensity(masses, volumes, x.edges.length - 1, y.edges.length - 1, SMOOTHING_PASSES)
+  const [nx, ny] = [x.edges.length - 1, y.edges.length - 1]
+  const averaged = adaptiveDensity(masses, volumes, nx, ny, correlation.independentSamples)
+  const shown = averaged.map((value, index) => (masses[index] > 0 ? value : NaN))
+  const averagedMasses = averaged.map((value, index) => value * volumes[index])
+  const smooth = smoothDensity(averagedMasses, volumes, nx, ny, SMOOTHING_PASSES)
   return {
     x,
     y,
+    shown,
+    averaged: correlation.independentSamples !== null,
     mean: meanPoints(correlation, x, y),
     contours: contours(x, y, smooth),
-    highest: highestCell(smooth, x, y),
+    highest: highestCell(shown, x, y),
     outside: shareOutside(x.edges, y.edges, masses, x.window, y.window),
   }
 }
@@ -129,10 +137,10 @@ function contours(x: MapAxis, y: MapAxis, smooth: Float64Array): ContourLine[] {
 
 function highestCell(density: Float64Array, x: MapAxis, y: MapAxis): MapModel['highest'] {
   const ny = y.edges.length - 1
-  let best = 0
-  for (let index = 1; index < density.length; index += 1) if (density[index] > density[best]) best = index
+  const highest = density.reduce((high, value) => (value > high ? value : high), 0)
+  const best = density.indexOf(highest)
   return {
-    density: density[best],
+    density: highest,
     x: midpoints(x.edges)[Math.floor(best / ny)],
     y: midpoints(y.edges)[best % ny],
   }

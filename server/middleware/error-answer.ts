@@ -18,6 +18,6 @@ export function createErrorAnswer(logger: Logger): ErrorRequestHandler {
     if (unexpected) logger.error({ requestId, err: errorForLog(error) }, 'request failed')
     // Half of the answer is out already: all that is left is to cut it off.
     if (response.headersSent) return next(error)
-    response.status(status).json(body)
+    response.set('Cache-Control', 'no-store').status(status).json(body)
   }
 }

@@ -44,9 +44,13 @@ export interface ConditionalMean {
 export interface CouplingMap {
   readonly xEdges: Float64Array
   readonly yEdges: Float64Array
-  /** Row-major as the joint histogram; NaN where the expected count is too small, −Infinity never occurs. */
+  /**
+   * Row-major as the joint histogram; NaN where fewer than 10 independent samples are expected (without a sample size:
+   * where p₁p₂ is below 1 % of its peak or nothing was seen). A cell without a sample where e are expected stands at
+   * ln(½/e): half a sample, since −∞ would claim too much.
+   */
   readonly values: Float64Array
-  /** Standard deviation of each value, 1/√expected, in kT; NaN where the value is, and everywhere without a sample size. */
+  /** Standard deviation of each value, 1/√n in kT; NaN where the value is, and everywhere without a sample size. */
   readonly deviations: Float64Array
 }
 
@@ -105,6 +109,8 @@ export interface Correlation {
   readonly pValue: number | null
   /** Total variation distance between joint and product of marginals on the verdict grid, in [0, 1]. */
   readonly totalVariation: number
+  /** What independent data of this size show of it, from the null tables; null when the sample size is unknown. */
+  readonly totalVariationNullMean: number | null
   /** Null when one coordinate is a dihedral, which has no order, or does not vary. */
   readonly pearson: number | null
   readonly spearman: number | null

@@ -1,0 +1,41 @@
+import type { CoordinateKind } from '../histogram/histogram'
+import type { CorrelationVerdict, CorrelationWarning } from './correlation'
+import { SEPARABLE_BELOW } from './correlation'
+import type { NullDistribution } from './null-tables'
+
+/** What a reader of the verdict must know beside it. */
+export function correlationWarnings(
+  kinds: readonly [CoordinateKind, CoordinateKind],
+  independentSamples: number | null,
+  verdict: CorrelationVerdict,
+  chance: NullDistribution | null,
+): CorrelationWarning[] {
+  const warnings: CorrelationWarning[] = []
+  if (chance === null) {
+    warnings.push({
+      code: 'SAMPLE_SIZE_UNKNOWN',
+      message:
+        'The file holds a density without a number of samples, so nobody can tell its mutual information from noise.',
+      action: 'State how many independent samples it stands for, or give the counts.',
+    })
+  } else if (verdict === 'undecided') {
+    const hidden = Number((chance.percentile99 - chance.mean).toPrecision(2))
+    const count = Math.round(independentSamples ?? 0)
+    warnings.push({
+      code: 'TOO_FEW_SAMPLES',
+      message:
+        `With ${count} independent samples chance alone reaches ${hidden} nats, more than the ${SEPARABLE_BELOW} that ` +
+        'would still be separable.',
+      action: 'Sample longer, or pool chains, before deciding.',
+    })
+  }
+  if (kinds.includes('dihedral')) {
+    warnings.push({
+      code: 'CIRCULAR_COEFFICIENT',
+      message:
+        'A dihedral has no first and last value, so Pearson and Spearman coefficients say nothing about it.',
+      action: 'Rest on the mutual information and the map.',
+    })
+  }
+  return warnings
+}

@@ -1,0 +1,15 @@
+export {
+  type ConditionalMean,
+  type Correlation,
+  type CorrelationVerdict,
+  type CorrelationWarning,
+  type CorrelationWarningCode,
+  type CouplingMap,
+  JOINT_ABOVE,
+  type LargestCoupling,
+  SEPARABLE_BELOW,
+  SIGNIFICANCE,
+  type VerdictGrid,
+} from './correlation'
+export { correlate, type CorrelateOptions, DEFAULT_SEED } from './correlate'
+export { NULL_TABLES } from './null-tables'

@@ -118,6 +118,12 @@ const request = async <Answer>(method: string, path: string, options: RequestOpt
   return (await response.json()) as Answer
 }
 
+/** A text file with the name the server gives it. */
+export interface TextFile {
+  readonly name: string
+  readonly text: string
+}
+
 type Read = Pick<RequestOptions, 'query' | 'signal'>
 type Write = Pick<RequestOptions, 'query' | 'json' | 'form' | 'signal'>
 
@@ -139,10 +145,11 @@ export const http = {
     }
   },
 
-  /** The text of a file the API sends, such as a table. */
-  async text(path: string, options: Read = {}): Promise<string> {
+  /** A text file the API sends, such as a table, with the name it gives it. */
+  async textFile(path: string, options: Read = {}): Promise<TextFile> {
     const response = await send('GET', path, options)
-    return response.text()
+    const disposition = response.headers.get('Content-Disposition') ?? ''
+    return { name: /filename="([^"]+)"/.exec(disposition)?.[1] ?? '', text: await response.text() }
   },
 }
 

@@ -1,5 +1,5 @@
 import type { TableQuery } from '@shared/contracts/potential'
-import { apiUrl, http } from './http'
+import { apiUrl, http, type TextFile } from './http'
 
 /** Address of one table as a file; follow it to download. */
 export const tableUrl = (termId: string, query: TableQuery): string =>
@@ -9,6 +9,6 @@ export const tableUrl = (termId: string, query: TableQuery): string =>
 export const tablesArchiveUrl = (mappingId: string, query: TableQuery): string =>
   apiUrl(`/mappings/${mappingId}/tables.zip`, { ...query })
 
-/** The text of one table, exactly as the download has it. */
-export const readTable = (termId: string, query: TableQuery, signal?: AbortSignal): Promise<string> =>
-  http.text(`/terms/${termId}/table`, { query: { ...query }, signal })
+/** One table as a file, exactly as the download has it. */
+export const readTable = (termId: string, query: TableQuery, signal?: AbortSignal): Promise<TextFile> =>
+  http.textFile(`/terms/${termId}/table`, { query: { ...query }, signal })

@@ -1,7 +1,7 @@
 import type { SmoothingSettings } from '@shared/inversion'
 
 /** What the slider spans in log10 λ: from curves that follow every bin to the stiff limit. */
-export const SMOOTHING_RANGE = { low: -2, high: 8 } as const
+export const SMOOTHING_RANGE = { low: -2, high: 12 } as const
 
 /** One press of [ or ] in log10 λ. */
 export const SMOOTHING_STEP = 0.1

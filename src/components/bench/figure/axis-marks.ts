@@ -51,7 +51,7 @@ export function axisMarks(frame: FigureFrame, axes: FigureAxes): AxisMarks {
       }),
       minor: spine.minor.map((value) => ({ at: x.at(value), label: null })),
     },
-    densityTicks: headFree(distribution, density, valueTicks(density, 56)).map((mark, index) =>
+    densityTicks: headFree(distribution, density, valueTicks(density, 36)).map((mark, index) =>
       index === 0 ? { ...mark, label: null } : mark,
     ),
     energyTicks: headFree(potential, energy, valueTicks(energy, 38)),
@@ -66,7 +66,7 @@ const valueTicks = (scale: LinearScale, every: number): AxisTicks =>
   axisTicks(
     scale.domain[0],
     scale.domain[1],
-    Math.max(2, Math.floor((scale.range[0] - scale.range[1]) / every)),
+    Math.max(2, Math.round((scale.range[0] - scale.range[1]) / every)),
   )
 
 /** Labelled ticks from zero up, except where the head of the axis stands. */

@@ -2,12 +2,17 @@ import type { CustomSeriesOption, LineSeriesOption } from 'echarts/charts'
 import type { CurveChartOption } from '@/plugins/echarts'
 import type { FigureFrame, Panel } from './figure-frame'
 import type { FigureAxes, FigureModel } from './figure-model'
+import { ringPath } from './ring-path'
 import type { Point } from './stepped-outline'
 
 /** Curves that the key can switch off. */
 export const CURVES = ['measured', 'regenerated', 'potential', 'rings', 'comparison'] as const
 export type CurveName = (typeof CURVES)[number]
 export type VisibleCurves = Readonly<Record<CurveName, boolean>>
+
+/** From back to front. */
+const LAYERS = ['measured', 'regenerated', 'band', 'comparison', 'rings', 'potential', 'tail'] as const
+type Layer = (typeof LAYERS)[number]
 
 const RING_RADIUS = 2.1
 const DISTRIBUTION = 0
@@ -57,7 +62,7 @@ function curves(model: FigureModel, visible: VisibleCurves): Series[] {
   if (visible.regenerated) {
     series.push(line('regenerated', DISTRIBUTION, model.regenerated, { color: token('model'), width: 1.5 }))
   }
-  if (visible.potential) model.band?.forEach((polygon) => series.push(band(polygon)))
+  if (visible.potential) model.band?.forEach((polygon, index) => series.push(band(polygon, index)))
   if (visible.comparison && model.comparison) {
     const style = { color: token('plain'), width: 1.25, type: [5, 3.5] }
     series.push(line('comparison', POTENTIAL, model.comparison, style))
@@ -67,19 +72,20 @@ function curves(model: FigureModel, visible: VisibleCurves): Series[] {
     const style = { color: token('model'), width: 1.75 }
     const dots = { color: token('model'), width: 1.5, type: [2, 3.5] }
     series.push(line('potential', POTENTIAL, model.potential, style))
-    model.tails.forEach((tail) => series.push(line('tail', POTENTIAL, tail, dots)))
+    model.tails.forEach((tail, index) => series.push(line('tail', POTENTIAL, tail, dots, index)))
   }
   return series
 }
 
 function line(
-  name: string,
+  layer: Layer,
   panel: number,
   points: readonly Point[],
   style: NonNullable<LineSeriesOption['lineStyle']>,
+  index = 0,
 ): LineSeriesOption {
   return {
-    ...shared(name, panel),
+    ...shared(layer, panel, index),
     type: 'line',
     data: points.map((point) => [...point]),
     showSymbol: false,
@@ -88,8 +94,17 @@ function line(
   }
 }
 
-const shared = (name: string, panel: number) =>
-  ({ name, xAxisIndex: panel, yAxisIndex: panel, silent: true, clip: true }) as const
+/** What every series says. A steady id lets the library change a curve in place; the layer keeps the drawing order. */
+const shared = (layer: Layer, panel: number, index = 0) =>
+  ({
+    id: `${layer} ${index}`,
+    name: layer,
+    z: LAYERS.indexOf(layer),
+    xAxisIndex: panel,
+    yAxisIndex: panel,
+    silent: true,
+    clip: true,
+  }) as const
 
 /** Stepped area and its outline. */
 function measured(outline: readonly Point[]): CustomSeriesOption {
@@ -111,9 +126,9 @@ function measured(outline: readonly Point[]): CustomSeriesOption {
   }
 }
 
-function band(polygon: readonly Point[]): CustomSeriesOption {
+function band(polygon: readonly Point[], index: number): CustomSeriesOption {
   return {
-    ...shared('band', POTENTIAL),
+    ...shared('band', POTENTIAL, index),
     type: 'custom',
     data: [[...polygon[0]]],
     renderItem: (_, api) => ({
@@ -128,11 +143,11 @@ function rings(points: readonly Point[]): CustomSeriesOption {
   return {
     ...shared('rings', POTENTIAL),
     type: 'custom',
-    data: points.map((point) => [...point]),
+    data: [[...points[0]]],
     renderItem: (_, api) => {
-      const [cx, cy] = api.coord([api.value(0), api.value(1)])
+      const centres = points.map((point) => api.coord([...point]))
       const style = { fill: token('plotGround'), stroke: token('raw'), lineWidth: 1 }
-      return { type: 'circle', shape: { cx, cy, r: RING_RADIUS }, style }
+      return { type: 'path', shape: { pathData: ringPath(centres, RING_RADIUS) }, style }
     },
   }
 }

@@ -24,6 +24,8 @@ export interface Comparison {
 
 const LEAST_POINTS = 400
 const POINTS_PER_BIN = 3
+/** More than a point per pixel is not seen. */
+const MOST_POINTS = 800
 
 /** Evenly spaced coordinates from low to high, both included. */
 export function evenly(low: number, high: number, count: number): Float64Array {
@@ -32,7 +34,7 @@ export function evenly(low: number, high: number, count: number): Float64Array {
 
 /** Points enough to draw the spline of so many bins as a smooth line. */
 export function curvePoints(bins: number): number {
-  return Math.max(LEAST_POINTS, POINTS_PER_BIN * bins)
+  return Math.min(MOST_POINTS, Math.max(LEAST_POINTS, POINTS_PER_BIN * bins))
 }
 
 /** Samples what is drawn in the potential's panel between two coordinates. A dihedral's Jacobian is constant: no comparison. */

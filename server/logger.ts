@@ -1,4 +1,4 @@
-import { destination, pino, type Logger } from 'pino'
+import { destination, type Logger, type LoggerOptions, pino } from 'pino'
 
 /** Properties of a database error that say what failed without repeating the values that were sent. */
 const ERROR_FIELDS = ['code', 'constraint', 'table', 'column', 'routine'] as const
@@ -17,31 +17,19 @@ export function errorForLog(error: unknown): unknown {
   return { type: error.name, message: error.message, stack: error.stack, ...fields, cause }
 }
 
+/** How a line of the log looks, and what never stands in it. */
+export const LOG_OPTIONS = {
+  base: undefined,
+  timestamp: () => `,"time":"${new Date().toISOString()}"`,
+  formatters: { level: (label: string) => ({ level: label }) },
+  serializers: { err: errorForLog },
+  redact: {
+    paths: ['password', 'token', 'csrfToken', 'cookie', 'headers'].flatMap((name) => [name, `*.${name}`]),
+    censor: '[redacted]',
+  },
+} satisfies LoggerOptions
+
 /** Logs are lines of JSON on standard error: standard output is for the lines that the start script reads. */
 export function createLogger(level: string): Logger {
-  return pino(
-    {
-      level,
-      base: undefined,
-      timestamp: () => `,"time":"${new Date().toISOString()}"`,
-      formatters: { level: (label) => ({ level: label }) },
-      serializers: { err: errorForLog },
-      redact: {
-        paths: [
-          'password',
-          'token',
-          'csrfToken',
-          'cookie',
-          '*.password',
-          '*.token',
-          '*.csrfToken',
-          '*.cookie',
-          'headers',
-          '*.headers',
-        ],
-        censor: '[redacted]',
-      },
-    },
-    destination({ dest: 2, sync: true }),
-  )
+  return pino({ ...LOG_OPTIONS, level }, destination({ dest: 2, sync: true }))
 }

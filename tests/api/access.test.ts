@@ -1,0 +1,273 @@
+import { randomUUID } from 'node:crypto'
+import type { Response } from 'supertest'
+import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { DEFAULT_INVERSION_SETTINGS } from '@shared/inversion'
+import { routes } from '../../server/routes'
+import type { AnyRoute } from '../../server/routes/route'
+import { ApiClient, type TextFile } from '../support/api-client'
+import { type ApiServer, openApiServer } from '../support/api-server'
+import { buildGroup, type TestGroup } from '../support/group-builder'
+import {
+  ANGLE_SETTINGS,
+  angleFile,
+  buildJob,
+  DOCUMENT,
+  JOINT_SETTINGS,
+  type Job,
+  jointFile,
+} from '../support/job-builder'
+
+/** What a valid request to a route holds beside its path. */
+interface Sample {
+  readonly query?: string
+  readonly body?: object
+  readonly file?: TextFile
+}
+
+/** One valid request for every route that asks for membership. A route without one fails the first test below. */
+const SAMPLES: Readonly<Record<string, (job: Job) => Sample>> = {
+  'get /api/groups/:groupId/polymers': () => ({}),
+  'post /api/groups/:groupId/polymers': () => ({ body: { name: randomUUID(), smiles: '*CC*' } }),
+  'get /api/polymers/:polymerId': () => ({}),
+  'patch /api/polymers/:polymerId': () => ({ body: { revision: 1, notes: 'changed' } }),
+  'delete /api/polymers/:polymerId': () => ({}),
+  'get /api/polymers/:polymerId/state-points': () => ({}),
+  'post /api/polymers/:polymerId/state-points': () => ({ body: { temperature: 300 } }),
+  'patch /api/state-points/:statePointId': () => ({ body: { revision: 1, notes: 'changed' } }),
+  'delete /api/state-points/:statePointId': () => ({}),
+  'get /api/polymers/:polymerId/mappings': () => ({}),
+  'post /api/polymers/:polymerId/mappings': () => ({ body: { name: 'Another' } }),
+  'get /api/mappings/:mappingId': () => ({}),
+  'put /api/mappings/:mappingId': () => ({ body: { revision: 1, name: 'Saved', document: DOCUMENT } }),
+  'delete /api/mappings/:mappingId': () => ({}),
+  'get /api/mappings/:mappingId/terms': ({ statePointId }) => ({ query: `statePoint=${statePointId}` }),
+  'get /api/mappings/:mappingId/pairs': ({ statePointId }) => ({ query: `statePoint=${statePointId}` }),
+  'get /api/mappings/:mappingId/tables.zip': ({ statePointId }) => ({ query: `statePoint=${statePointId}` }),
+  'post /api/mappings/:mappingId/joint-distributions': ({ bondId, angleId, statePointId }) => ({
+    body: { firstTermId: bondId, secondTermId: angleId, statePointId, settings: JOINT_SETTINGS },
+    file: jointFile(),
+  }),
+  'post /api/terms/:termId/distributions': ({ statePointId }) => ({
+    body: { statePointId, settings: { ...ANGLE_SETTINGS, kind: 'angle' } },
+    file: angleFile(),
+  }),
+  'get /api/terms/:termId/distribution': ({ statePointId }) => ({ query: `statePoint=${statePointId}` }),
+  'get /api/terms/:termId/potential': ({ statePointId }) => ({ query: `statePoint=${statePointId}` }),
+  'put /api/terms/:termId/potential': ({ statePointId }) => ({
+    body: { statePointId, revision: 1, settings: DEFAULT_INVERSION_SETTINGS },
+  }),
+  'get /api/terms/:termId/table': ({ statePointId }) => ({ query: `statePoint=${statePointId}` }),
+  'patch /api/distributions/:distributionId': () => ({ body: { independentSamples: 1000 } }),
+  'delete /api/distributions/:distributionId': () => ({}),
+  'get /api/distributions/:distributionId/file': () => ({}),
+  'delete /api/potentials/:potentialId': () => ({}),
+  'get /api/joint-distributions/:jointDistributionId': () => ({}),
+  'delete /api/joint-distributions/:jointDistributionId': () => ({}),
+  'get /api/joint-distributions/:jointDistributionId/file': () => ({}),
+  'put /api/joint-distributions/:jointDistributionId/decision': () => ({
+    body: { choice: 'separate', reason: 'They move on their own.' },
+  }),
+}
+
+const memberRoutes = routes.filter(({ access }) => typeof access === 'object')
+const keyOf = ({ method, path }: AnyRoute): string => `${method} ${path}`
+const named = memberRoutes.map((route) => ({ name: keyOf(route), route }))
+const mayWrite = ({ access }: AnyRoute): boolean => typeof access === 'object' && access.may === 'write'
+
+let server: ApiServer
+let group: TestGroup
+let strangers: TestGroup
+let shared: Job
+
+beforeAll(async () => {
+  server = await openApiServer()
+  group = await buildGroup(server)
+  strangers = await buildGroup(server)
+  shared = await buildJob(server.services, group.modeller.member)
+})
+
+afterAll(() => server.close())
+
+function pathFor({ path }: AnyRoute, job: Job, ids: Readonly<Record<string, string>> = {}): string {
+  // The route that takes a new distribution is asked for the angle, all others for the bond that has data.
+  const termId = path.endsWith('/distributions') ? job.angleId : job.bondId
+  const all: Record<string, string> = { groupId: group.groupId, termId, ...idsOf(job), ...ids }
+  return path.replace(/:(\w+)/g, (_, name: string) => all[name])
+}
+
+function idsOf(job: Job): Record<string, string> {
+  const { polymerId, statePointId, mappingId, distributionId, potentialId, jointDistributionId } = job
+  return { polymerId, statePointId, mappingId, distributionId, potentialId, jointDistributionId }
+}
+
+async function call(
+  client: ApiClient,
+  route: AnyRoute,
+  job: Job,
+  path = pathFor(route, job),
+): Promise<Response> {
+  const { query, body, file } = SAMPLES[keyOf(route)](job)
+  const url = query === undefined ? path : `${path}?${query}`
+  return file ? client.upload(url, body, file) : client.send(route.method, url, body)
+}
+
+describe('who may do what', () => {
+  it('is tried out for every route of the API', () => {
+    expect(Object.keys(SAMPLES).sort()).toEqual(memberRoutes.map(keyOf).sort())
+    expect(
+      routes
+        .filter(({ access }) => typeof access !== 'object')
+        .map(keyOf)
+        .sort(),
+    ).toEqual([
+      'delete /api/session',
+      'get /api/health',
+      'get /api/openapi.json',
+      'get /api/session',
+      'get /api/set-up/:token',
+      'post /api/session',
+      'post /api/session/demo',
+      'post /api/set-up',
+    ])
+  })
+
+  it.each(named)('$name works for an owner and a modeller', async ({ route }) => {
+    for (const role of ['owner', 'modeller'] as const) {
+      const joint = route.path.includes(':jointDistributionId')
+      const job =
+        route.method === 'get' ? shared : await buildJob(server.services, group.modeller.member, { joint })
+      if (route.path === '/api/state-points/:statePointId' && route.method === 'delete') {
+        await server.services.distributions.remove(group.owner.member, job.distributionId)
+      }
+      const response = await call(group[role].client, route, job)
+      expect(response.status, `${role}: ${response.text}`).toBe(route.answer.status)
+    }
+  })
+
+  it.each(named)('$name: a reviewer reads and does not write', async ({ route }) => {
+    const response = await call(group.reviewer.client, route, shared)
+    expect(response.status).toBe(mayWrite(route) ? 403 : 200)
+  })
+
+  it.each(named)('$name: a collaborator sees nothing yet', async ({ route }) => {
+    const response = await call(group.collaborator.client, route, shared)
+    expect(response.status).toBe(403)
+    expect(response.body).toMatchObject({ code: 'FORBIDDEN' })
+  })
+
+  it.each(named)('$name: for the owner of another group there is nothing there', async ({ route }) => {
+    const response = await call(strangers.owner.client, route, shared)
+    const missing = await call(
+      strangers.owner.client,
+      route,
+      shared,
+      route.path.replace(/:\w+/g, () => randomUUID()),
+    )
+    expect(response.status).toBe(404)
+    const { requestId, ...body } = response.body as Record<string, unknown>
+    expect(requestId).toEqual(expect.any(String))
+    expect({ ...(missing.body as object), requestId: undefined }).toEqual({ ...body, requestId: undefined })
+  })
+
+  it.each(named)('$name asks whoever is not signed in to sign in', async ({ route }) => {
+    const visitor = new ApiClient(server.app)
+    await visitor.open()
+    const response = await call(visitor, route, shared)
+    expect(response.status).toBe(401)
+    expect(response.body).toMatchObject({ code: 'NOT_SIGNED_IN' })
+  })
+
+  it.each(named.filter(({ route }) => route.method !== 'get'))(
+    '$name is refused without the token of the session, and with another one',
+    async ({ route }) => {
+      const path = pathFor(route, shared)
+      const { client } = group.owner
+      const { body } = SAMPLES[keyOf(route)](shared)
+      const without = await client.raw(route.method, path).send(body)
+      const wrong = await client
+        .raw(route.method, path)
+        .set('X-CSRF-Token', strangers.owner.client.csrfToken)
+        .send(body)
+      for (const response of [without, wrong]) {
+        expect(response.status).toBe(403)
+        expect(response.body).toMatchObject({ code: 'CSRF_TOKEN_INVALID' })
+      }
+    },
+  )
+
+  it.each(named)('$name: an id that is none is not found', async ({ route }) => {
+    for (const id of [
+      '1',
+      'x'.repeat(300),
+      "'; drop table polymer; --",
+      '00000000-0000-0000-0000-00000000000g',
+    ]) {
+      const path = route.path.replace(/:\w+/g, () => encodeURIComponent(id))
+      const response = await call(group.owner.client, route, shared, path)
+      expect([id, response.status]).toEqual([id, 404])
+    }
+  })
+})
+
+describe('ids named in the content of a request', () => {
+  it('do not reach into another group', async () => {
+    const job = await buildJob(server.services, strangers.modeller.member)
+    const { client } = group.modeller
+    const distribution = await client.upload(
+      `/api/terms/${shared.angleId}/distributions`,
+      { statePointId: job.statePointId, settings: ANGLE_SETTINGS },
+      angleFile(),
+    )
+    expect(distribution.status).toBe(404)
+    expect(distribution.body).toMatchObject({ code: 'NOT_FOUND', field: 'statePointId' })
+    const joint = await client.upload(
+      `/api/mappings/${shared.mappingId}/joint-distributions`,
+      {
+        firstTermId: job.bondId,
+        secondTermId: shared.angleId,
+        statePointId: shared.statePointId,
+        settings: JOINT_SETTINGS,
+      },
+      jointFile(),
+    )
+    expect(joint.status).toBe(404)
+    const potential = await client.put(`/api/terms/${shared.bondId}/potential`, {
+      statePointId: job.statePointId,
+      revision: null,
+      settings: DEFAULT_INVERSION_SETTINGS,
+    })
+    expect(potential.status).toBe(404)
+    for (const path of [`mappings/${shared.mappingId}/terms`, `mappings/${shared.mappingId}/pairs`]) {
+      expect((await client.get(`/api/${path}?statePoint=${job.statePointId}`)).status).toBe(404)
+    }
+    for (const path of [`terms/${shared.bondId}/table`, `mappings/${shared.mappingId}/tables.zip`]) {
+      expect((await client.get(`/api/${path}?statePoint=${job.statePointId}`)).status).toBe(404)
+    }
+  })
+
+  it('do not mix the polymers of one group', async () => {
+    const other = await buildJob(server.services, group.modeller.member)
+    const response = await group.modeller.client.upload(
+      `/api/terms/${shared.angleId}/distributions`,
+      { statePointId: other.statePointId, settings: ANGLE_SETTINGS },
+      angleFile(),
+    )
+    expect(response.status).toBe(404)
+    const joint = await group.modeller.client.upload(
+      `/api/mappings/${shared.mappingId}/joint-distributions`,
+      {
+        firstTermId: other.bondId,
+        secondTermId: shared.angleId,
+        statePointId: shared.statePointId,
+        settings: JOINT_SETTINGS,
+      },
+      jointFile(),
+    )
+    expect(joint.body).toMatchObject({ code: 'NOT_FOUND', field: 'firstTermId' })
+  })
+
+  it('leave the records of a group as they were after strangers tried', async () => {
+    const { body } = await group.owner.client.get(`/api/polymers/${shared.polymerId}`)
+    expect(body).toMatchObject({ revision: 1, counts: { distributions: 1, potentials: 1, mappings: 1 } })
+  })
+})

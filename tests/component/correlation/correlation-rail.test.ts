@@ -52,6 +52,13 @@ describe('CorrelationRail', () => {
     expect(wrapper.emitted('choose')).toEqual([[pairs[1]]])
   })
 
+  it('keeps the focus on the chosen row while arrows walk', async () => {
+    const wrapper = rail(pairs[0])
+    wrapper.findAll('button')[0].element.focus()
+    await wrapper.setProps({ chosen: pairs[1] })
+    expect(document.activeElement).toBe(wrapper.findAll('button')[1].element)
+  })
+
   it('says which pair is the current one', () => {
     const rows = rail(pairs[1]).findAll('button')
     expect(rows.map((row) => row.attributes('aria-current'))).toEqual([undefined, 'true'])

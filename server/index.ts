@@ -1,5 +1,5 @@
 import { ConfigError, readConfig, type Config } from './config'
-import { createLogger, errorForLog } from './logger'
+import { createLogger } from './logger'
 import { serve, type RunningServer } from './serve'
 
 /** Standard output carries two lines for whoever started us: `set-up PATH` if there is one, and `listening PORT`. */
@@ -7,7 +7,7 @@ async function main(): Promise<void> {
   const config = readConfig(process.env)
   const logger = createLogger(config.logLevel)
   const server = await serve(config, logger).catch((error: unknown) => {
-    logger.fatal({ err: errorForLog(error) }, 'not started')
+    logger.fatal({ err: error }, 'not started')
     throw new StartRefused(sentenceFor(error, config))
   })
   if (server.setUpPath !== null) process.stdout.write(`set-up ${server.setUpPath}\n`)

@@ -8,7 +8,6 @@ import { createApp } from './app'
 import type { Config } from './config'
 import { createDataSource, migrate } from './data-source'
 import { seedDemo } from './demo/seed-demo'
-import { errorForLog } from './logger'
 import { packageRoot, packageVersion } from './package-root'
 import { createServices } from './services'
 
@@ -38,7 +37,7 @@ export async function serve(config: Config, logger: Logger): Promise<RunningServ
     application_name: 'beadwright',
   })
   // Without a listener an idle connection that breaks would end the process.
-  sessionPool.on('error', (error) => logger.error({ err: errorForLog(error) }, 'session connection lost'))
+  sessionPool.on('error', (error) => logger.error({ err: error }, 'session connection lost'))
   const closing: (() => Promise<unknown>)[] = [() => sessionPool.end()]
   const close = async (): Promise<void> => {
     for (const end of closing.splice(0).reverse()) await end()

@@ -3,7 +3,6 @@ import type { RequestHandler } from 'express'
 import session from 'express-session'
 import type { Pool } from 'pg'
 import type { Logger } from 'pino'
-import { errorForLog } from '../logger'
 import { SIGNED_IN } from './visitor'
 
 export const SESSION_COOKIE = 'beadwright.sid'
@@ -22,7 +21,7 @@ export function createSessions(pool: Pool, secret: string, logger: Logger): Sess
   const store = new PgStore({
     pool,
     tableName: 'session',
-    errorLog: (...details: unknown[]) => logger.error({ err: errorForLog(details.at(-1)) }, 'session store'),
+    errorLog: (...details: unknown[]) => logger.error({ err: details.at(-1) }, 'session store'),
   })
   const handler = session({
     name: SESSION_COOKIE,

@@ -267,7 +267,10 @@ describe('ids named in the content of a request', () => {
   })
 
   it('leave the records of a group as they were after strangers tried', async () => {
-    const { body } = await group.owner.client.get(`/api/polymers/${shared.polymerId}`)
-    expect(body).toMatchObject({ revision: 1, counts: { distributions: 1, potentials: 1, mappings: 1 } })
+    const response = await group.owner.client.get(`/api/polymers/${shared.polymerId}`)
+    expect(response.body).toMatchObject({
+      revision: 1,
+      counts: { distributions: 1, potentials: 1, mappings: 1 },
+    })
   })
 })

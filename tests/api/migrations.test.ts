@@ -29,6 +29,11 @@ async function objects(dataSource: DataSource): Promise<string[]> {
   return rows.map(({ name }) => name).filter((name) => !/^_?migration/.test(name))
 }
 
+async function appliedMigrations(dataSource: DataSource): Promise<number> {
+  const rows: unknown[] = await dataSource.query('select * from "migration"')
+  return rows.length
+}
+
 describe('the migrations', () => {
   it('make the schema that the entities describe, to the last name', async () => {
     database = await createEmptyTestDatabase()
@@ -43,7 +48,7 @@ describe('the migrations', () => {
     const dataSource = await connect()
     await migrate(dataSource)
     expect(await objects(dataSource)).toContain('polymer')
-    for (const _ of dataSource.migrations) await dataSource.undoLastMigration()
+    while ((await appliedMigrations(dataSource)) > 0) await dataSource.undoLastMigration()
     expect(await objects(dataSource)).toEqual([])
   })
 
@@ -51,8 +56,7 @@ describe('the migrations', () => {
     database = await createEmptyTestDatabase()
     const sources = await Promise.all([connect(), connect(), connect()])
     await Promise.all(sources.map(migrate))
-    const rows: unknown[] = await sources[0].query('select * from "migration"')
-    expect(rows).toHaveLength(sources[0].migrations.length)
+    expect(await appliedMigrations(sources[0])).toBe(sources[0].migrations.length)
   })
 
   it('do nothing on a database that is up to date', async () => {

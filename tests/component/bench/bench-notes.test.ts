@@ -1,0 +1,200 @@
+import { mount } from '@vue/test-utils'
+import { afterEach, describe, expect, it } from 'vitest'
+import { createVuetify } from 'vuetify'
+import { DEFAULT_INVERSION_SETTINGS, type InversionSettings } from '@shared/inversion'
+import { formatNumber, formatRows } from '@shared/tables'
+import BaseChoice from '@/components/base/BaseChoice.vue'
+import BenchEvidence from '@/components/bench/BenchEvidence.vue'
+import BenchSettings from '@/components/bench/BenchSettings.vue'
+import BenchTable from '@/components/bench/BenchTable.vue'
+import { coordinateNames, type DisplayUnits } from '@/components/bench/figure/coordinate-names'
+import { runInversion } from '@/workers/inversion-task'
+import { angleCounts, TEMPERATURE, withoutSampleSize } from '../../unit/src/components/bench/distributions'
+import { storedDistribution } from '../../unit/src/components/bench/stored-records'
+
+const units: DisplayUnits = { length: 'nm', angle: 'degree', energy: 'kJ/mol' }
+const names = coordinateNames('angle', units)
+const histogram = angleCounts()
+const { inversion, table } = runInversion({
+  histogram,
+  temperature: TEMPERATURE,
+  settings: DEFAULT_INVERSION_SETTINGS,
+}).answer!
+
+afterEach(() => {
+  document.body.innerHTML = ''
+})
+
+describe('BenchSettings', () => {
+  const settings = (change: Partial<InstanceType<typeof BenchSettings>['$props']> = {}) =>
+    mount(BenchSettings, {
+      props: {
+        kind: 'angle',
+        settings: DEFAULT_INVERSION_SETTINGS,
+        result: inversion.smoothing,
+        automatic: inversion.smoothing.log10Lambda,
+        sampleSizeKnown: true,
+        readonly: false,
+        ...change,
+      },
+      global: { plugins: [createVuetify()] },
+    })
+  const choice = (wrapper: ReturnType<typeof settings>, label: string) =>
+    wrapper.findAllComponents(BaseChoice).find((each) => each.props('label') === label)!
+
+  it('shows the Jacobian by its formula, and switches it off', () => {
+    const wrapper = settings()
+    expect(wrapper.text()).toContain('sin θ, exact per bin')
+    choice(wrapper, 'Jacobian').vm.$emit('update:modelValue', 'off')
+    expect(wrapper.emitted('jacobian')).toEqual([[false]])
+  })
+
+  it('takes over by hand where automatic smoothing sits', () => {
+    const wrapper = settings()
+    choice(wrapper, 'Smoothing').vm.$emit('update:modelValue', 'manual')
+    choice(wrapper, 'Smoothing').vm.$emit('update:modelValue', 'aic')
+    choice(wrapper, 'Smoothing').vm.$emit('update:modelValue', 'off')
+    expect(wrapper.emitted('smoothing')).toEqual([
+      [{ mode: 'manual', log10Lambda: inversion.smoothing.log10Lambda }],
+      [{ mode: 'auto', criterion: 'aic' }],
+      [{ mode: 'off' }],
+    ])
+  })
+
+  it('offers no choice where the Jacobian is constant', () => {
+    const wrapper = settings({ kind: 'dihedral' })
+    expect(wrapper.text()).toContain('constant')
+    expect(wrapper.text()).toContain('flat')
+  })
+
+  it('says why nothing is smoothed without a sample size', () => {
+    const wrapper = settings({ sampleSizeKnown: false, result: null, automatic: null })
+    expect(wrapper.text()).toContain('the number of independent samples is not stated')
+    expect(wrapper.find('input[type=range]').attributes('disabled')).toBeDefined()
+  })
+
+  it('gives a reviewer words instead of controls', () => {
+    const wrapper = settings({ readonly: true })
+    expect(wrapper.findAllComponents(BaseChoice)).toHaveLength(0)
+    expect(wrapper.find('input').exists()).toBe(false)
+    expect(wrapper.text()).toContain('by likelihood')
+  })
+})
+
+describe('BenchEvidence', () => {
+  const evidence = (change: Partial<InstanceType<typeof BenchEvidence>['$props']> = {}) =>
+    mount(BenchEvidence, {
+      props: {
+        distribution: storedDistribution(histogram),
+        inversion,
+        temperature: TEMPERATURE,
+        names,
+        coordinateUnit: 'degree',
+        decimals: 1,
+        readonly: false,
+        sampleError: '',
+        ...change,
+      },
+    })
+  const plain = (text: string): string => text.replaceAll('\u00a0', ' ')
+
+  it('states counts, inefficiency, dimension and where the potential is lowest', () => {
+    const text = plain(evidence({ readonly: true }).text())
+    const total = histogram.weights.reduce((sum, weight) => sum + weight, 0)
+    expect(text).toContain(plain(total.toLocaleString('en-GB').replaceAll(',', ' ')))
+    expect(text).toContain('20 000')
+    expect(text).toMatch(/inefficiency g\s*10\.0/)
+    expect(text).toContain(`${inversion.smoothing.effectiveDimension?.toFixed(1)} of 60 bins`)
+    expect(text).toMatch(/Lowest U at\s*1(09|10)\.\d°/)
+  })
+
+  it('lets the number of independent samples be stated', async () => {
+    const density = storedDistribution(withoutSampleSize(histogram))
+    const wrapper = evidence({ distribution: density, inversion: null })
+    expect(wrapper.text()).toContain('none: a probability')
+    const input = wrapper.find('input')
+    expect(input.attributes('placeholder')).toBe('not stated')
+    await input.trigger('focus')
+    await input.setValue('500')
+    await input.trigger('keydown', { key: 'Enter' })
+    expect(wrapper.emitted('samples')).toEqual([[500]])
+  })
+
+  it('says that counts without a stated number are all taken as independent', () => {
+    const counts = storedDistribution({ ...histogram, independentSamples: null })
+    expect(evidence({ distribution: counts }).find('input').attributes('placeholder')).toBe('every count')
+  })
+})
+
+describe('BenchTable', () => {
+  const shown = (change: Partial<InstanceType<typeof BenchTable>['$props']> = {}) =>
+    mount(BenchTable, {
+      props: {
+        settings: DEFAULT_INVERSION_SETTINGS.table,
+        table,
+        names,
+        coordinateUnit: 'degree',
+        energyUnit: 'kJ/mol',
+        temperature: TEMPERATURE,
+        reading: Math.PI / 2,
+        readonly: false,
+        refusal: null,
+        ...change,
+      },
+    })
+  const field = (wrapper: ReturnType<typeof shown>, label: string) =>
+    wrapper
+      .findAll('label')
+      .find((each) => each.text() === label)!
+      .element.parentElement!.querySelector('input')!
+
+  it('shows the rows of the file, digit by digit', () => {
+    const lines = formatRows(table, { coordinateUnit: 'degree', energyUnit: 'kJ/mol' })
+      .trim()
+      .split('\n')
+      .map((line) => line.trim().split(/\s+/).map(Number).map(formatNumber).join(' '))
+    const rows = shown().findAll('tbody tr')
+    expect(rows).toHaveLength(7)
+    for (const row of rows) {
+      const cells = row.findAll('td').map((cell) => cell.text().replace('−', '-'))
+      expect(lines).toContain(cells.join(' '))
+    }
+  })
+
+  it('names the ends that hold while none are typed', () => {
+    const wrapper = shown()
+    expect(field(wrapper, 'From').placeholder).toBe('0')
+    expect(field(wrapper, 'To').placeholder).toBe('180')
+    expect(field(wrapper, 'Energy capped at').placeholder).toBe('no cap')
+  })
+
+  it('takes ends and cap in the units shown and hands them on in internal ones', async () => {
+    const wrapper = shown({ energyUnit: 'kcal/mol' })
+    const type = async (label: string, text: string): Promise<InversionSettings['table']> => {
+      const input = field(wrapper, label)
+      input.dispatchEvent(new Event('focus'))
+      input.value = text
+      input.dispatchEvent(new Event('input'))
+      input.dispatchEvent(new KeyboardEvent('keydown', { key: 'Enter' }))
+      await wrapper.vm.$nextTick()
+      return wrapper.emitted<[InversionSettings['table']]>('change')!.at(-1)![0]
+    }
+    expect((await type('From', '90')).low).toBeCloseTo(Math.PI / 2, 12)
+    expect((await type('Energy capped at', '10')).cap).toBeCloseTo(41.84, 9)
+    expect((await type('Rows', '500')).rows).toBe(500)
+  })
+
+  it('says at the field why the core refused it', () => {
+    const wrapper = shown({ refusal: { field: 'high', message: 'The table must end above its start.' } })
+    expect(wrapper.find('[role=alert]').text()).toBe('The table must end above its start.')
+    expect(field(wrapper, 'To').getAttribute('aria-invalid')).toBe('true')
+  })
+
+  it('cannot be changed by someone who only reads', () => {
+    expect(
+      shown({ readonly: true })
+        .findAll('input')
+        .every((input) => input.attributes('disabled') !== undefined),
+    ).toBe(true)
+  })
+})

@@ -1,0 +1,245 @@
+import { mount, RouterLinkStub } from '@vue/test-utils'
+import { describe, expect, it } from 'vitest'
+import BenchConflict from '@/components/bench/BenchConflict.vue'
+import BenchDownload from '@/components/bench/BenchDownload.vue'
+import BenchEmpty from '@/components/bench/BenchEmpty.vue'
+import BenchFigureKey from '@/components/bench/BenchFigureKey.vue'
+import BenchReading from '@/components/bench/BenchReading.vue'
+import BenchReadingPill from '@/components/bench/BenchReadingPill.vue'
+import BenchSmoothing from '@/components/bench/BenchSmoothing.vue'
+import BenchWarnings from '@/components/bench/BenchWarnings.vue'
+import { coordinateNames, type DisplayUnits } from '@/components/bench/figure/coordinate-names'
+import type { Reading } from '@/components/bench/figure/reading'
+import { storedPotential } from '../../unit/src/components/bench/stored-records'
+
+const units: DisplayUnits = { length: 'nm', angle: 'degree', energy: 'kJ/mol' }
+const shown = { measured: true, regenerated: true, potential: true, rings: true, comparison: true }
+const words = (text: string): string => text.replace(/\s+/g, ' ').trim()
+
+describe('BenchFigureKey', () => {
+  const key = (kind: 'angle' | 'dihedral', hasBand = true) =>
+    mount(BenchFigureKey, {
+      props: { visible: shown, names: coordinateNames(kind, units), hasBand, jacobian: true },
+    })
+
+  it('names every curve and says which is switched off', async () => {
+    const wrapper = key('angle')
+    const entries = wrapper.findAll('button')
+    expect(entries.map((entry) => words(entry.text()))).toEqual([
+      'measured',
+      'regenerated from U',
+      'U with 95 % band',
+      'bin by bin',
+      'without sin θ',
+    ])
+    await wrapper.setProps({ visible: { ...shown, rings: false } })
+    expect(entries.map((entry) => entry.attributes('aria-pressed'))).toEqual([
+      'true',
+      'true',
+      'true',
+      'false',
+      'true',
+    ])
+    await entries[3].trigger('click')
+    expect(wrapper.emitted('toggle')).toEqual([['rings']])
+  })
+
+  it('says why there is no band, and offers no comparison where the Jacobian is constant', () => {
+    expect(words(key('dihedral', false).text())).toContain('U, no band: sample size not stated')
+    expect(key('dihedral').text()).not.toContain('without')
+  })
+})
+
+describe('BenchReading', () => {
+  const reading: Reading = {
+    bin: 35,
+    coordinate: 131,
+    low: 130,
+    high: 132,
+    counts: 2065,
+    share: 0.0172,
+    independent: 111.02,
+    energy: 3.8012,
+    halfWidth: 0.4093,
+    thermal: 1.143,
+    force: 0.3853,
+    comparison: 3.73,
+    density: 0.8,
+  }
+  const row = (change: Partial<Reading> = {}) =>
+    words(
+      mount(BenchReading, {
+        props: {
+          reading: { ...reading, ...change },
+          names: coordinateNames('angle', units),
+          energyUnit: 'kJ/mol',
+          decimals: 0,
+          jacobian: true,
+        },
+      }).text(),
+    )
+
+  it('reads every number with its unit and the digits it has earned', () => {
+    const text = row()
+    for (const part of [
+      '130–132°',
+      '2 065',
+      '111',
+      '3.80 ± 0.41 kJ/mol',
+      '1.14',
+      '0.385 kJ/mol/deg',
+      '3.73',
+    ]) {
+      expect(text.replaceAll('\u00a0', ' ')).toContain(part)
+    }
+  })
+
+  it('shows the share of a density, and states neither samples nor error it does not know', () => {
+    const text = row({ counts: null, independent: null, halfWidth: null }).replaceAll('\u00a0', ' ')
+    expect(text).toContain('share1.72 %')
+    expect(text).toContain('independentnot stated')
+    expect(text).not.toContain('±')
+  })
+})
+
+describe('BenchReadingPill', () => {
+  const pill = () =>
+    mount(BenchReadingPill, {
+      props: {
+        from: 10,
+        to: 60,
+        top: 0,
+        text: '131.0°',
+        bin: 35,
+        bins: 60,
+        description: '131.0°, U 3.80 kJ/mol',
+      },
+    })
+
+  it('is a slider over the bins that says what it reads', () => {
+    const attributes = pill().attributes()
+    expect(attributes).toMatchObject({
+      role: 'slider',
+      tabindex: '0',
+      'aria-valuemin': '1',
+      'aria-valuemax': '60',
+      'aria-valuenow': '36',
+      'aria-valuetext': '131.0°, U 3.80 kJ/mol',
+    })
+  })
+
+  it('moves by a bin, by ten with Shift or Page, and to both ends', async () => {
+    const wrapper = pill()
+    await wrapper.trigger('keydown', { key: 'ArrowRight' })
+    await wrapper.trigger('keydown', { key: 'ArrowLeft', shiftKey: true })
+    await wrapper.trigger('keydown', { key: 'PageUp' })
+    expect(wrapper.emitted('move')).toEqual([[1], [-10], [10]])
+    await wrapper.trigger('keydown', { key: 'Home' })
+    await wrapper.trigger('keydown', { key: 'End' })
+    expect(wrapper.emitted('go')).toEqual([[0], [59]])
+  })
+})
+
+describe('BenchSmoothing', () => {
+  const slider = (value: number | null) =>
+    mount(BenchSmoothing, { props: { value, automatic: 2.85, stiffLimit: 'harmonic' } })
+
+  it('slides in log10 λ and steps by a tenth from the keyboard', async () => {
+    const wrapper = slider(3)
+    const input = wrapper.find('input')
+    expect(input.attributes('aria-valuetext')).toBe('log10 λ 3.00')
+    await input.setValue('4.25')
+    await input.trigger('keydown', { key: 'ArrowRight' })
+    await input.trigger('keydown', { key: 'ArrowLeft', shiftKey: true })
+    expect(wrapper.emitted('change')).toEqual([[4.25], [3.1], [2.99]])
+  })
+
+  it('says where automatic smoothing sits', () => {
+    expect(slider(3).text()).toContain('automatic smoothing sits at log10 λ 2.85')
+  })
+
+  it('says that smoothing is off', () => {
+    expect(slider(null).find('input').attributes('aria-valuetext')).toBe('off')
+  })
+})
+
+describe('BenchWarnings', () => {
+  const warning = { code: 'SAMPLE_SIZE_UNKNOWN', message: 'Nobody said.', action: 'State it.' } as const
+
+  it('says what is wrong, why, and what to do, with the way to do it', async () => {
+    const wrapper = mount(BenchWarnings, { props: { warnings: [warning], stale: null, readonly: false } })
+    expect(wrapper.text()).toContain('Sample size not stated')
+    expect(wrapper.text()).toContain('Nobody said.')
+    await wrapper.find('button').trigger('click')
+    expect(wrapper.emitted('stateSamples')).toHaveLength(1)
+  })
+
+  it('says that the data changed since the potential was saved', () => {
+    const stale = storedPotential({ stale: true })
+    const wrapper = mount(BenchWarnings, { props: { warnings: [], stale, readonly: false } })
+    expect(wrapper.text()).toContain('The data changed since this was saved')
+    expect(wrapper.text()).toContain('Revision 3')
+  })
+
+  it('offers no act to someone who only reads, and nothing at all without warnings', () => {
+    const stale = storedPotential({ stale: true })
+    expect(
+      mount(BenchWarnings, { props: { warnings: [warning], stale, readonly: true } })
+        .find('button')
+        .exists(),
+    ).toBe(false)
+    expect(mount(BenchWarnings, { props: { warnings: [], stale: null, readonly: false } }).text()).toBe('')
+  })
+})
+
+describe('BenchDownload', () => {
+  it('leads to the file that has what is on screen', () => {
+    const link = mount(BenchDownload, { props: { href: '/api/t', changed: false, revision: 3 } }).find('a')
+    expect(link.attributes('href')).toBe('/api/t')
+    expect(link.text()).toBe('Download')
+  })
+
+  it('says that the file has the saved revision while there are changes', () => {
+    const link = mount(BenchDownload, { props: { href: '/api/t', changed: true, revision: 3 } }).find('a')
+    expect(link.text()).toBe('Download revision 3')
+    expect(link.attributes('title')).toContain('without your changes')
+  })
+
+  it('offers no file before anything is saved', () => {
+    const wrapper = mount(BenchDownload, { props: { href: null, changed: true, revision: null } })
+    expect(wrapper.find('a').exists()).toBe(false)
+    expect(wrapper.text()).toBe('no file before it is saved')
+  })
+})
+
+describe('BenchConflict', () => {
+  it('names who saved and leaves the choice to a person', async () => {
+    const wrapper = mount(BenchConflict, {
+      props: { theirs: storedPotential({ revision: 4 }), saving: false },
+    })
+    expect(wrapper.text()).toContain('Ana Rivera saved this potential')
+    const [take, mine] = wrapper.findAll('button')
+    expect(take.text()).toBe('Take revision 4')
+    await take.trigger('click')
+    await mine.trigger('click')
+    expect(Object.keys(wrapper.emitted())).toEqual(expect.arrayContaining(['takeTheirs', 'saveMine']))
+  })
+})
+
+describe('BenchEmpty', () => {
+  const empty = (readonly: boolean) =>
+    mount(BenchEmpty, {
+      props: { termName: 'B–B–E–H', temperature: 400, intake: { name: 'intake' }, readonly },
+      global: { stubs: { RouterLink: RouterLinkStub } },
+    })
+
+  it('says what is missing and gives two ways to get it', () => {
+    const wrapper = empty(false)
+    expect(wrapper.text()).toContain('No distribution for B–B–E–H at 400 K')
+    expect(wrapper.findAllComponents(RouterLinkStub)).toHaveLength(2)
+  })
+
+  it('sends nobody to the intake who may not write', () => {
+    expect(empty(true).findAllComponents(RouterLinkStub)).toHaveLength(0)
+  })
+})

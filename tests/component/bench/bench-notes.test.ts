@@ -3,7 +3,6 @@ import { afterEach, describe, expect, it } from 'vitest'
 import { createVuetify } from 'vuetify'
 import { DEFAULT_INVERSION_SETTINGS, type InversionSettings } from '@shared/inversion'
 import { formatNumber, formatRows } from '@shared/tables'
-import BaseChoice from '@/components/base/BaseChoice.vue'
 import BenchEvidence from '@/components/bench/BenchEvidence.vue'
 import BenchSettings from '@/components/bench/BenchSettings.vue'
 import BenchTable from '@/components/bench/BenchTable.vue'
@@ -40,7 +39,7 @@ describe('BenchSettings', () => {
       global: { plugins: [createVuetify()] },
     })
   const choice = (wrapper: ReturnType<typeof settings>, label: string) =>
-    wrapper.findAllComponents(BaseChoice).find((each) => each.props('label') === label)!
+    wrapper.findAllComponents({ name: 'BaseChoice' }).find((each) => each.props('label') === label)!
 
   it('shows the Jacobian by its formula, and switches it off', () => {
     const wrapper = settings()
@@ -75,7 +74,7 @@ describe('BenchSettings', () => {
 
   it('gives a reviewer words instead of controls', () => {
     const wrapper = settings({ readonly: true })
-    expect(wrapper.findAllComponents(BaseChoice)).toHaveLength(0)
+    expect(wrapper.findAllComponents({ name: 'BaseChoice' })).toHaveLength(0)
     expect(wrapper.find('input').exists()).toBe(false)
     expect(wrapper.text()).toContain('by likelihood')
   })

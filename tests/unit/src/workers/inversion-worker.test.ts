@@ -18,7 +18,7 @@ class NearWorker extends EventTarget {
     super()
     const { port1, port2 } = new MessageChannel()
     this.near = port1
-    port1.onmessage = (event: MessageEvent) =>
+    port1.onmessage = (event: MessageEvent<unknown>) =>
       this.dispatchEvent(new MessageEvent('message', { data: event.data }))
     expose(inversionTask, port2)
     NearWorker.last = this

@@ -1,4 +1,4 @@
-import { mount } from '@vue/test-utils'
+import { mount, type VueWrapper } from '@vue/test-utils'
 import { afterEach, describe, expect, it } from 'vitest'
 import { createVuetify } from 'vuetify'
 import { DEFAULT_INVERSION_SETTINGS, type InversionSettings } from '@shared/inversion'
@@ -38,21 +38,25 @@ describe('BenchSettings', () => {
       },
       global: { plugins: [createVuetify()] },
     })
-  const choice = (wrapper: ReturnType<typeof settings>, label: string) =>
-    wrapper.findAllComponents({ name: 'BaseChoice' }).find((each) => each.props('label') === label)!
+  const choose = (wrapper: ReturnType<typeof settings>, label: string, value: string): void => {
+    const choices: VueWrapper[] = wrapper.findAllComponents({ name: 'BaseChoice' })
+    choices
+      .find((choice) => (choice.props() as { label: string }).label === label)!
+      .vm.$emit('update:modelValue', value)
+  }
 
   it('shows the Jacobian by its formula, and switches it off', () => {
     const wrapper = settings()
     expect(wrapper.text()).toContain('sin θ, exact per bin')
-    choice(wrapper, 'Jacobian').vm.$emit('update:modelValue', 'off')
+    choose(wrapper, 'Jacobian', 'off')
     expect(wrapper.emitted('jacobian')).toEqual([[false]])
   })
 
   it('takes over by hand where automatic smoothing sits', () => {
     const wrapper = settings()
-    choice(wrapper, 'Smoothing').vm.$emit('update:modelValue', 'manual')
-    choice(wrapper, 'Smoothing').vm.$emit('update:modelValue', 'aic')
-    choice(wrapper, 'Smoothing').vm.$emit('update:modelValue', 'off')
+    choose(wrapper, 'Smoothing', 'manual')
+    choose(wrapper, 'Smoothing', 'aic')
+    choose(wrapper, 'Smoothing', 'off')
     expect(wrapper.emitted('smoothing')).toEqual([
       [{ mode: 'manual', log10Lambda: inversion.smoothing.log10Lambda }],
       [{ mode: 'auto', criterion: 'aic' }],

@@ -39,7 +39,7 @@ describe('BenchSettings', () => {
       global: { plugins: [createVuetify()] },
     })
   const choose = (wrapper: ReturnType<typeof settings>, label: string, value: string): void => {
-    const choices: VueWrapper[] = wrapper.findAllComponents({ name: 'BaseChoice' })
+    const choices = wrapper.findAllComponents({ name: 'BaseChoice' }) as unknown as VueWrapper[]
     choices
       .find((choice) => (choice.props() as { label: string }).label === label)!
       .vm.$emit('update:modelValue', value)

@@ -149,7 +149,8 @@ export const http = {
   async textFile(path: string, options: Read = {}): Promise<TextFile> {
     const response = await send('GET', path, options)
     const disposition = response.headers.get('Content-Disposition') ?? ''
-    return { name: /filename="([^"]+)"/.exec(disposition)?.[1] ?? '', text: await response.text() }
+    const [, quoted, bare] = /filename=(?:"([^"]+)"|([^;\s]+))/.exec(disposition) ?? []
+    return { name: quoted ?? bare ?? '', text: await response.text() }
   },
 }
 

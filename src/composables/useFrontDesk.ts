@@ -5,7 +5,7 @@ import type { Polymer } from '@shared/contracts/polymer'
 import { ApiError } from '@/api/http'
 import { listMappings } from '@/api/mappings'
 import { listPolymers } from '@/api/polymers'
-import { countOf } from '@/format/numbers'
+import { countOf, formatCount } from '@/format/numbers'
 import { useSessionStore } from '@/stores/session'
 
 export interface DeskPolymer {
@@ -51,6 +51,11 @@ export const waitingFor = ({ polymer, mappings }: DeskPolymer): Waiting[] => {
         about,
       )
     }
+  }
+  const open = polymer.counts.distributions - polymer.counts.potentials
+  if (open > 0) {
+    const all = countOf(polymer.counts.distributions, 'distribution')
+    add('potentials', `${formatCount(open)} of ${all} not inverted`, { ...room, hash: '#mappings' })
   }
   return found
 }

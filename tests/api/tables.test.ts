@@ -83,7 +83,7 @@ async function archive(
   return {
     files: Object.fromEntries(entries) as Record<string, string>,
     bytes,
-    headers: response.headers as Headers,
+    headers: response.headers,
   }
 }
 
@@ -112,7 +112,7 @@ describe('the table of a term', () => {
 
   it('is the potential the counts were made from', async () => {
     // Expected counts of U = ½ k (r − r₀)²: within 0.05 kT wherever the density is above 1 % of its peak (U < 4.6 kT).
-    const kT = (8.31446261815324e-3 * TEMPERATURE) as number
+    const kT = (8.31446261815324e-3 * TEMPERATURE)
     const within = numbersOf((await table()).text)
       .map(([r, energy]) => ({ exact: 0.5 * BOND.stiffness * (r - BOND.length) ** 2, energy }))
       .filter(({ exact }) => exact < 4.6 * kT)
@@ -130,7 +130,7 @@ describe('the table of a term', () => {
     expect(text).toContain(createHash('sha256').update(bondFile().text).digest('hex'))
     expect(text).not.toContain('INVENTED')
     expect(response.headers['content-type']).toBe('text/plain; charset=utf-8')
-    expect(response.headers['content-disposition']).toBe('attachment; filename="bond_A-A_400K.txt"')
+    expect(response.headers['content-disposition']).toBe('attachment; filename=bond_A-A_400K.txt')
   })
 
   it('carries the checksum of its own rows', async () => {
@@ -187,7 +187,7 @@ describe('the archive of all tables', () => {
     expect(files['bond_A-A_400K.txt']).toBe((await table()).text)
     expect(files['angle_A-A-A_400K.txt']).toBe((await table(job.angleId)).text)
     expect(headers['content-type']).toBe('application/zip')
-    expect(headers['content-disposition']).toMatch(/filename="Polymer-[\w-]+_Two-beads_400K_tables\.zip"/)
+    expect(headers['content-disposition']).toMatch(/filename=Polymer-[\w-]+_Two-beads_400K_tables\.zip/)
   })
 
   it('explains every file, its units and signs, and names the terms without a table with the reason', async () => {

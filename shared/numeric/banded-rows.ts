@@ -25,48 +25,65 @@ export function factorRows(
 ): BandedFactor {
   const stride = halfBandwidth + 1
   const upper = new Float64Array(size * stride)
-  const row = new Float64Array(stride)
+  const lengths = new Int32Array(size)
+  const row = new Float64Array(size + stride)
   for (let index = 0; index < starts.length; index++) {
-    if (scales[index] === 0) continue
-    for (let k = 0; k < stride; k++) row[k] = scales[index] * values[index * stride + k]
-    insertRow(upper, row, starts[index], size, stride)
+    const scale = scales[index]
+    if (scale === 0) continue
+    const start = starts[index]
+    const from = index * stride
+    let end = start
+    for (let k = 0; k < stride; k++) {
+      row[start + k] = scale * values[from + k]
+      if (row[start + k] !== 0) end = start + k + 1
+    }
+    insertRow(upper, lengths, row, start, end, stride)
   }
   return toFactor(upper, size, halfBandwidth)
 }
 
-/** Rotates a row into the triangle until it is used up or finds an empty place. */
+/**
+ * Rotates a row, which stands in `row` from column `start` to `end`, into the triangle until it is used up or finds an
+ * empty place. `lengths` counts the entries of each row of the triangle up to its last one, so that zeros are not dragged
+ * along.
+ */
 function insertRow(
   upper: Float64Array,
+  lengths: Int32Array,
   row: Float64Array,
   start: number,
-  size: number,
+  end: number,
   stride: number,
 ): void {
-  for (let column = start; column < size; column++) {
+  let last = end
+  for (let column = start; column < last; column++) {
+    const lead = row[column]
+    row[column] = 0
+    if (lead === 0) continue
     const place = column * stride
-    const lead = row[0]
-    if (lead !== 0) {
-      const pivot = upper[place]
-      if (pivot === 0) {
-        upper.set(row, place)
-        return
+    const length = lengths[column]
+    if (length === 0) {
+      upper[place] = lead
+      lengths[column] = last - column
+      for (let k = 1; k < last - column; k++) {
+        upper[place + k] = row[column + k]
+        row[column + k] = 0
       }
-      const length = Math.sqrt(pivot * pivot + lead * lead)
-      const [cosine, sine] = [pivot / length, lead / length]
-      upper[place] = length
-      for (let k = 1; k < stride; k++) {
-        const [above, below] = [upper[place + k], row[k]]
-        upper[place + k] = cosine * above + sine * below
-        row[k] = cosine * below - sine * above
-      }
+      return
     }
-    let left = 0
-    for (let k = 1; k < stride; k++) {
-      row[k - 1] = row[k]
-      left += Math.abs(row[k])
+    const pivot = upper[place]
+    const radius = Math.sqrt(pivot * pivot + lead * lead)
+    const cosine = pivot / radius
+    const sine = lead / radius
+    last = Math.max(last, column + length)
+    lengths[column] = last - column
+    upper[place] = radius
+    for (let k = 1; k < last - column; k++) {
+      const above = upper[place + k]
+      const below = row[column + k]
+      upper[place + k] = cosine * above + sine * below
+      row[column + k] = cosine * below - sine * above
     }
-    row[stride - 1] = 0
-    if (left === 0) return
   }
 }
 

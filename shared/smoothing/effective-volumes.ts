@@ -26,11 +26,13 @@ export function effectiveVolumes(geometry: BinGeometry): (eta: Float64Array) => 
   const bins = midpoints.length
   const points = GAUSS_LEGENDRE.length
   const shares = new Float64Array(bins * points)
+  const steps = new Float64Array(bins * points)
   for (let bin = 0; bin < bins; bin++) {
-    if (volumes[bin] === 0) continue
     const half = (edges[bin + 1] - edges[bin]) / 2
     GAUSS_LEGENDRE.forEach(({ node, weight }, point) => {
-      shares[bin * points + point] = weight * half * jacobian(midpoints[bin] + node * half)
+      steps[bin * points + point] = node * half
+      shares[bin * points + point] =
+        volumes[bin] === 0 ? 0 : weight * half * jacobian(midpoints[bin] + node * half)
     })
   }
   return (eta) => {
@@ -38,16 +40,16 @@ export function effectiveVolumes(geometry: BinGeometry): (eta: Float64Array) => 
       period === null ? notAKnotCurvatures(midpoints, eta) : periodicCurvatures(midpoints, eta, period)
     const result = new Float64Array(bins)
     for (let bin = 0; bin < bins; bin++) {
-      if (volumes[bin] === 0) continue
-      const half = (edges[bin + 1] - edges[bin]) / 2
       const left = taylorTowards(midpoints, eta, curvatures, period, bin, -1)
       const right = taylorTowards(midpoints, eta, curvatures, period, bin, 1)
       let sum = 0
       for (let point = 0; point < points; point++) {
-        const step = GAUSS_LEGENDRE[point].node * half
+        const index = bin * points + point
+        if (shares[index] === 0) continue
+        const step = steps[index]
         const { slope, third } = step < 0 ? left : right
         const change = step * (slope + step * (curvatures[bin] / 2 + (step * third) / 6))
-        sum += shares[bin * points + point] * Math.exp(change)
+        sum += shares[index] * Math.exp(change)
       }
       result[bin] = sum
     }

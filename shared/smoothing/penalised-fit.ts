@@ -7,10 +7,14 @@ import {
   type PenalisedSystem,
   projectBins,
   thirdDifferences,
+  transposedDifferences,
 } from './penalised-system'
 
-/** Step of η at which Newton's method has converged, relative to 1 + max |η|. */
-const CONVERGED = 1e-10
+/**
+ * Step of η, relative to 1 + max |η|, after which Newton's method stops. It converges quadratically: after the last step
+ * the error is about the square of this.
+ */
+export const NEWTON_STEP = { final: 1e-10, search: 1e-3 }
 /** Below this a step that no longer shrinks is rounding. */
 const ROUNDING = 1e-6
 /** Steps shorter than this need no check that they descend: the model is close to quadratic there. */
@@ -44,6 +48,7 @@ export interface PenalisedFit {
  * @param volumes V, one per bin; 0 marks a bin that was not observed and that only the penalty determines
  * @param lambda per bin index, above 0
  * @param start coefficients to start from, or null
+ * @param converged longest last step of Newton's method
  * @throws {InvalidInputError} SINGULAR_SYSTEM when the counts do not determine a curve (too few filled bins)
  */
 export function penalisedFit(
@@ -52,6 +57,7 @@ export function penalisedFit(
   volumes: Float64Array,
   lambda: number,
   start: Float64Array | null,
+  converged: number = NEWTON_STEP.final,
 ): PenalisedFit {
   const weight = lambda * system.basis.lambdaScale
   let state = evaluate(system, counts, volumes, weight, start ?? firstGuess(system, counts, volumes, weight))
@@ -64,7 +70,7 @@ export function penalisedFit(
     state = next
     factor = factorSystem(system, state.means, weight)
     const scale = 1 + largest(state.eta)
-    if (moved <= CONVERGED * scale || (moved < ROUNDING * scale && moved >= previous)) break
+    if (moved <= converged * scale || (moved < ROUNDING * scale && moved >= previous)) break
     if (step === MOST_STEPS) {
       throw new InvalidInputError('SINGULAR_SYSTEM', 'The counts do not determine a smooth curve.')
     }
@@ -77,7 +83,7 @@ export function penalisedFit(
     means: state.means,
     roughness: state.roughness,
     variances,
-    effectiveDimension: state.means.reduce((sum, mean, bin) => sum + mean * variances[bin], 0),
+    effectiveDimension: dot(state.means, variances),
     deviance: deviance(counts, state.means),
     factor,
   }
@@ -113,19 +119,15 @@ function evaluate(
   }
   const differences = thirdDifferences(basis, coefficients)
   const pull = projectBins(basis, residuals)
-  let roughness = 0
   // D′(Dβ) in two steps, not (D′D)β: the polynomial part cancels in the first and takes its rounding with it.
-  for (let row = 0; row < differences.length; row++) {
-    const difference = differences[row]
-    roughness += difference * difference
-    for (let k = 0; k < 4; k++) {
-      const index = (basis.penaltyStarts[row] + k) % basis.size
-      pull[index] -= weight * basis.penaltyValues[row * 4 + k] * difference
-    }
-  }
+  const stiffness = transposedDifferences(basis, differences)
+  let roughness = 0
+  for (let row = 0; row < differences.length; row++) roughness += differences[row] * differences[row]
   objective += 0.5 * weight * roughness
   const gradient = new Float64Array(basis.size)
-  for (let index = 0; index < basis.size; index++) gradient[places[index]] = pull[index]
+  for (let index = 0; index < basis.size; index++) {
+    gradient[places[index]] = pull[index] - weight * stiffness[index]
+  }
   return { coefficients, eta, means, roughness, gradient, objective }
 }
 
@@ -141,7 +143,10 @@ function descend(
   const longest = largest(direction)
   let share = 1
   for (let halving = 0; halving < MOST_HALVINGS; halving++) {
-    const moved = state.coefficients.map((value, index) => value + share * direction[places[index]])
+    const moved = new Float64Array(direction.length)
+    for (let index = 0; index < moved.length; index++) {
+      moved[index] = state.coefficients[index] + share * direction[places[index]]
+    }
     const next = evaluate(system, counts, volumes, weight, moved)
     if (share * longest < SAFE_STEP || next.objective <= state.objective) return next
     share /= 2
@@ -172,6 +177,12 @@ function deviance(counts: Float64Array, means: Float64Array): number {
     sum += mean - count + (count > 0 ? count * Math.log(count / mean) : 0)
   }
   return 2 * sum
+}
+
+function dot(one: Float64Array, other: Float64Array): number {
+  let sum = 0
+  for (let index = 0; index < one.length; index++) sum += one[index] * other[index]
+  return sum
 }
 
 function largest(values: Float64Array): number {

@@ -99,16 +99,12 @@ function stackRows(
  */
 export function factorSystem(system: PenalisedSystem, weights: Float64Array, lambda: number): BandedFactor {
   const { basis, penalty, slots, halfBandwidth } = system
-  const total = weights.reduce((sum, weight) => sum + weight, 0)
-  if (lambda * basis.size > STIFF * total) {
-    const { rows, origins } = system.stackedRows()
-    const scales = Float64Array.from(origins, (origin) =>
-      Math.sqrt(origin < 0 ? weights[-1 - origin] : lambda),
-    )
-    return factorRows(rows, scales, basis.size, halfBandwidth)
-  }
-  const matrix = penalty.map((entry) => entry * lambda)
-  const { width, values, bins } = basis
+  const { width, values, bins, size } = basis
+  let total = 0
+  for (let bin = 0; bin < bins; bin++) total += weights[bin]
+  if (lambda * size > STIFF * total) return factorStiff(system, weights, lambda)
+  const matrix = new Float64Array(penalty.length)
+  for (let entry = 0; entry < matrix.length; entry++) matrix[entry] = penalty[entry] * lambda
   let next = 0
   for (let bin = 0; bin < bins; bin++) {
     for (let j = 0; j < width; j++) {
@@ -116,7 +112,16 @@ export function factorSystem(system: PenalisedSystem, weights: Float64Array, lam
       for (let k = 0; k <= j; k++) matrix[slots[next++]] += share * values[bin * width + k]
     }
   }
-  return factorBanded(matrix, basis.size, halfBandwidth)
+  return factorBanded(matrix, size, halfBandwidth)
+}
+
+function factorStiff(system: PenalisedSystem, weights: Float64Array, lambda: number): BandedFactor {
+  const { rows, origins } = system.stackedRows()
+  const scales = new Float64Array(origins.length)
+  for (let row = 0; row < scales.length; row++) {
+    scales[row] = Math.sqrt(origins[row] < 0 ? weights[-1 - origins[row]] : lambda)
+  }
+  return factorRows(rows, scales, system.basis.size, system.halfBandwidth)
 }
 
 /**
@@ -150,7 +155,10 @@ export function binValues(
   const result = new Float64Array(bins)
   for (let bin = 0; bin < bins; bin++) {
     let sum = 0
-    for (let k = 0; k < width; k++) sum += values[bin * width + k] * coefficients[(starts[bin] + k) % size]
+    for (let k = 0; k < width; k++) {
+      const index = starts[bin] + k
+      sum += values[bin * width + k] * coefficients[index < size ? index : index - size]
+    }
     result[bin] = sum
   }
   return result
@@ -163,21 +171,42 @@ export function projectBins(
 ): Float64Array {
   const result = new Float64Array(size)
   for (let bin = 0; bin < bins; bin++) {
-    for (let k = 0; k < width; k++)
-      result[(starts[bin] + k) % size] += values[bin * width + k] * residuals[bin]
+    for (let k = 0; k < width; k++) {
+      const index = starts[bin] + k
+      result[index < size ? index : index - size] += values[bin * width + k] * residuals[bin]
+    }
   }
   return result
 }
 
 /** Third differences Dβ. */
-export function thirdDifferences(basis: SmoothingBasis, coefficients: Float64Array): Float64Array {
-  const { penaltyStarts, penaltyValues, size } = basis
+export function thirdDifferences(
+  { penaltyStarts, penaltyValues, size }: SmoothingBasis,
+  coefficients: Float64Array,
+): Float64Array {
   const result = new Float64Array(penaltyStarts.length)
   for (let row = 0; row < result.length; row++) {
     let sum = 0
-    for (let k = 0; k < 4; k++)
-      sum += penaltyValues[row * 4 + k] * coefficients[(penaltyStarts[row] + k) % size]
+    for (let k = 0; k < 4; k++) {
+      const index = penaltyStarts[row] + k
+      sum += penaltyValues[row * 4 + k] * coefficients[index < size ? index : index - size]
+    }
     result[row] = sum
+  }
+  return result
+}
+
+/** D′v. */
+export function transposedDifferences(
+  { penaltyStarts, penaltyValues, size }: SmoothingBasis,
+  differences: Float64Array,
+): Float64Array {
+  const result = new Float64Array(size)
+  for (let row = 0; row < differences.length; row++) {
+    for (let k = 0; k < 4; k++) {
+      const index = penaltyStarts[row] + k
+      result[index < size ? index : index - size] += penaltyValues[row * 4 + k] * differences[row]
+    }
   }
   return result
 }

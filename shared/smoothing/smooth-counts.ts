@@ -1,5 +1,7 @@
 import { bandedSolve } from '../numeric'
-import { type ChosenFit, lambdaByAic, lambdaByLikelihood } from './choose-lambda'
+import { lambdaByAic } from './lambda-by-aic'
+import { lambdaByLikelihood } from './lambda-by-likelihood'
+import { type LambdaSearch, lambdaSearch, type LambdaTrial } from './lambda-search'
 import { type BinGeometry, effectiveVolumes } from './effective-volumes'
 import { identityBasis } from './identity-basis'
 import { type PenalisedFit, penalisedFit } from './penalised-fit'
@@ -45,10 +47,7 @@ export function smoothCounts(
 ): SmoothDensity {
   const system = penalisedSystem(chooseBasis(geometry))
   const volumesUnder = effectiveVolumes(geometry)
-  const start =
-    'by' in choice
-      ? searchLambda(system, volumesUnder, geometry, counts, choice.by)
-      : { log10Lambda: choice.log10Lambda, fit: null }
+  const start = startingPoint(system, counts, geometry, volumesUnder, choice)
   const log10Lambda = Math.round(start.log10Lambda * 100) / 100
   const refit = (volumes: Float64Array, from: Float64Array | null) =>
     penalisedFit(system, counts, volumes, 10 ** log10Lambda, from)
@@ -63,19 +62,32 @@ export function smoothCounts(
   }
 }
 
-function searchLambda(
+function startingPoint(
   system: PenalisedSystem,
-  volumesUnder: (eta: Float64Array) => Float64Array,
-  { volumes }: BinGeometry,
   counts: Float64Array,
-  by: 'likelihood' | 'aic',
-): ChosenFit {
-  const search = by === 'aic' ? lambdaByAic : lambdaByLikelihood
-  let chosen = search(system, counts, volumes, null)
+  geometry: BinGeometry,
+  volumesUnder: (eta: Float64Array) => Float64Array,
+  choice: LambdaChoice,
+): { readonly log10Lambda: number; readonly fit: PenalisedFit | null } {
+  if ('log10Lambda' in choice) return { log10Lambda: choice.log10Lambda, fit: null }
+  return choice.by === 'aic'
+    ? searchLambda(lambdaByAic, system, counts, geometry, volumesUnder)
+    : searchLambda(lambdaByLikelihood, system, counts, geometry, volumesUnder)
+}
+
+/** Looks for λ a few times, each time with the effective volumes of the curve found before. */
+function searchLambda<Found extends LambdaTrial>(
+  look: (search: LambdaSearch, before: Found | null) => Found,
+  system: PenalisedSystem,
+  counts: Float64Array,
+  { volumes }: BinGeometry,
+  volumesUnder: (eta: Float64Array) => Float64Array,
+): LambdaTrial {
+  let found = look(lambdaSearch(system, counts, volumes), null)
   for (let pass = 1; pass < SEARCHES; pass++) {
-    chosen = search(system, counts, volumesUnder(chosen.fit.eta), chosen)
+    found = look(lambdaSearch(system, counts, volumesUnder(found.fit.eta)), found)
   }
-  return chosen
+  return found
 }
 
 function chooseBasis({ midpoints, edges, period }: BinGeometry) {

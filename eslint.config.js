@@ -105,7 +105,12 @@ export default tseslint.config(
   ),
   forbid(['server/migrations/**/*.ts'], ['^(?!typeorm$)', 'Migrations import typeorm only.']),
   {
-    files: ['*.config.{js,ts}', 'tests/support/closing-line-reporter.ts', 'tests/support/*-setup.ts'],
+    files: [
+      '*.config.{js,ts}',
+      'src/env.d.ts',
+      'tests/support/closing-line-reporter.ts',
+      'tests/support/*-setup.ts',
+    ],
     rules: { 'import-x/no-default-export': 'off' },
   },
   { files: ['**/*.vue'], rules: { 'import-x/no-default-export': 'off' } },

@@ -1,0 +1,37 @@
+import { describe, expect, it } from 'vitest'
+import { fileNamePart, tableFileName, tableFileNames } from '../../../../server/services/table-names'
+
+const table = (types: string[], temperature = 400) => ({ kind: 'bond' as const, types, temperature })
+
+describe('names of table files', () => {
+  it('say kind, types and temperature', () => {
+    expect(tableFileName(table(['B', 'E']))).toBe('bond_B-E_400K.txt')
+    expect(tableFileName(table(['B', 'E'], 298.15))).toBe('bond_B-E_298.15K.txt')
+  })
+
+  it('stay apart where capitals do not count', () => {
+    const names = tableFileNames([table(['B', 'E']), table(['b', 'E']), table(['b', 'e']), table(['X', 'Y'])])
+    expect(names).toEqual([
+      'bond_B-E_400K.txt',
+      'bond_b-E_400K_2.txt',
+      'bond_b-e_400K_3.txt',
+      'bond_X-Y_400K.txt',
+    ])
+  })
+})
+
+describe('fileNamePart', () => {
+  it.each([
+    ['poly(n-hexyl acrylate)', 'poly-n-hexyl-acrylate'],
+    ['Größe ½', 'Gro-e-1-2'],
+    ['../../etc/passwd', 'etc-passwd'],
+    ['聚合物', 'unnamed'],
+    ['', 'unnamed'],
+  ])('makes of %s what every system can write', (name, expected) => {
+    expect(fileNamePart(name)).toBe(expected)
+  })
+
+  it('does not get too long', () => {
+    expect(fileNamePart('x'.repeat(500))).toHaveLength(60)
+  })
+})

@@ -4,10 +4,15 @@ import { hashPassword, verifyPassword } from '../../../../server/services/passwo
 
 vi.mock(import('@node-rs/argon2'), async (importOriginal) => {
   const original = await importOriginal()
-  return { ...original, verify: vi.fn(original.verify) }
+  return {
+    ...original,
+    verify: vi.fn(original.verify),
+  }
 })
 
-beforeEach(() => vi.mocked(verify).mockClear())
+beforeEach(() => {
+  vi.mocked(verify).mockClear()
+})
 
 describe('passwords', () => {
   it('are known again by their hash, which differs each time', async () => {

@@ -112,7 +112,7 @@ describe('the table of a term', () => {
 
   it('is the potential the counts were made from', async () => {
     // Expected counts of U = ½ k (r − r₀)²: within 0.05 kT wherever the density is above 1 % of its peak (U < 4.6 kT).
-    const kT = (8.31446261815324e-3 * TEMPERATURE)
+    const kT = 8.31446261815324e-3 * TEMPERATURE
     const within = numbersOf((await table()).text)
       .map(([r, energy]) => ({ exact: 0.5 * BOND.stiffness * (r - BOND.length) ** 2, energy }))
       .filter(({ exact }) => exact < 4.6 * kT)

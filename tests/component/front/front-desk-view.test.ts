@@ -1,0 +1,71 @@
+import { enableAutoUnmount } from '@vue/test-utils'
+import { afterEach, describe, expect, it, vi } from 'vitest'
+import type { Role } from '@shared/contracts/common'
+import FrontDeskView from '@/views/FrontDeskView.vue'
+import { click, control, fakeApi, freshStores, mountAt, pageText } from '../../support/mount'
+
+enableAutoUnmount(afterEach)
+afterEach(() => vi.unstubAllGlobals())
+
+const polymer = {
+  id: 'p',
+  groupId: 'group',
+  name: 'polyethylene',
+  smiles: '*CC*',
+  formula: 'C2H4',
+  mass: 28.054,
+  demo: false,
+  counts: { statePoints: 1, mappings: 1, distributions: 1, potentials: 1 },
+}
+const mapping = { id: 'm', name: '1-to-1', counts: { beads: 1, terms: 3, termsWithData: 1 } }
+const answers = {
+  'GET /api/groups/group/polymers': { body: { polymers: [polymer] } },
+  'GET /api/polymers/p/mappings': { body: { mappings: [mapping] } },
+}
+const open = (role: Role = 'modeller') => mountAt('front-desk', '/', FrontDeskView, freshStores(role))
+const here = (text: string | RegExp) => vi.waitFor(() => expect(pageText()).toMatch(text))
+
+describe('FrontDeskView', () => {
+  it('shows the polymers of the group with how far they are, and what waits', async () => {
+    fakeApi(answers)
+    const { wrapper } = await open()
+    await here('1 of 3 terms with data')
+    expect(wrapper.find('h1').text()).toBe('Adhesives group')
+    expect(pageText()).toContain('28.054 g/mol')
+    expect(control('2 terms of 3 without data').getAttribute('href')).toBe('/polymers/p/mappings/m/intake')
+  })
+
+  it('asks nothing of a reviewer and offers no writing', async () => {
+    fakeApi(answers)
+    await open('reviewer')
+    await here('polyethylene')
+    expect(pageText()).not.toContain('What waits for you')
+    expect(() => control('New polymer')).toThrow()
+  })
+
+  it('tells a collaborator that nothing was handed over, and asks the server for nothing', async () => {
+    const sent = fakeApi({})
+    await open('collaborator')
+    await here('Nothing was handed over to you yet')
+    expect(sent).toEqual([])
+  })
+
+  it('leads an empty group to its first repeat unit', async () => {
+    fakeApi({ 'GET /api/groups/group/polymers': { body: { polymers: [] } } })
+    await open()
+    await here('No polymer yet')
+    expect(control('Draw the first repeat unit').getAttribute('href')).toBe('/polymers/new?group=group')
+  })
+
+  it('says when the polymers could not be fetched, and tries again when asked', async () => {
+    const failed = { status: 503, body: { code: 'UNAVAILABLE', message: 'The database rests.' } }
+    fakeApi({
+      ...answers,
+      'GET /api/groups/group/polymers': [failed, answers['GET /api/groups/group/polymers']],
+    })
+    await open()
+    await here('The database rests.')
+    await click('Try again')
+    await here('polyethylene')
+  })
+})

@@ -1,25 +1,22 @@
-import {
-  computed,
-  onScopeDispose,
-  ref,
-  shallowRef,
-  watch,
-  type ComputedRef,
-  type Ref,
-  type ShallowRef,
-} from 'vue'
+import { computed, onScopeDispose, shallowRef, watch, type ComputedRef, type Ref, type ShallowRef } from 'vue'
 import type { Pair } from '@shared/contracts/distribution'
 import type { Term } from '@shared/contracts/mapping'
 import type { TableQuery } from '@shared/contracts/potential'
+import type { CoordinateUnit } from '@shared/units'
 import { ApiError } from '@/api/http'
-import { listPairs } from '@/api/joint-distributions'
 import { readTable } from '@/api/tables'
 import { useWorkbenchStore } from '@/stores/workbench'
+import { usePairs } from './usePairs'
+
+/** A state point and the units of the files. */
+export type TableUnitQuery = Required<TableQuery>
 
 /** A table as its file has it: the numbers on the screen are read from the very text that is downloaded. */
 export interface TableFile {
   readonly name: string
   readonly text: string
+  /** Unit of its coordinate. */
+  readonly unit: CoordinateUnit
   readonly rows: number
   readonly low: number
   readonly high: number
@@ -28,7 +25,7 @@ export interface TableFile {
 }
 
 /** Reads off a table's text what its list shows. */
-export const tableFileOf = (name: string, text: string): TableFile => {
+export const tableFileOf = (name: string, text: string, unit: CoordinateUnit): TableFile => {
   const rows = text
     .split('\n')
     .filter((line) => line.trim() !== '' && !line.startsWith('#'))
@@ -38,6 +35,7 @@ export const tableFileOf = (name: string, text: string): TableFile => {
   return {
     name,
     text,
+    unit,
     rows: rows.length,
     low: rows[0]?.[0] ?? Number.NaN,
     high: rows[rows.length - 1]?.[0] ?? Number.NaN,
@@ -46,19 +44,18 @@ export const tableFileOf = (name: string, text: string): TableFile => {
 }
 
 /** The tables of the mapping on screen at its state point, in the units asked for. */
-export function useTableFiles(query: () => TableQuery | null): {
+export function useTableFiles(query: () => TableUnitQuery | null): {
   files: ShallowRef<ReadonlyMap<string, TableFile>>
   failures: ShallowRef<ReadonlyMap<string, string>>
-  loading: Ref<boolean>
   ready: ComputedRef<readonly Term[]>
   missing: ComputedRef<readonly Term[]>
   joint: ComputedRef<readonly Pair[]>
+  pairsFailure: Ref<string>
 } {
   const workbench = useWorkbenchStore()
   const files = shallowRef<ReadonlyMap<string, TableFile>>(new Map())
   const failures = shallowRef<ReadonlyMap<string, string>>(new Map())
-  const pairs = shallowRef<readonly Pair[]>([])
-  const loading = ref(false)
+  const { pairs, failure: pairsFailure } = usePairs()
   let leaving = new AbortController()
   onScopeDispose(() => leaving.abort())
 
@@ -68,18 +65,17 @@ export function useTableFiles(query: () => TableQuery | null): {
   )
   const joint = computed(() => pairs.value.filter(({ decision }) => decision === 'joint'))
 
-  const load = async (asked: TableQuery): Promise<void> => {
+  const load = async (asked: TableUnitQuery): Promise<void> => {
     leaving.abort()
     leaving = new AbortController()
     const { signal } = leaving
-    loading.value = true
     const found = new Map<string, TableFile>()
     const failed = new Map<string, string>()
     await Promise.all(
-      ready.value.map(async ({ id }) => {
+      ready.value.map(async ({ id, kind }) => {
         try {
           const { name, text } = await readTable(id, asked, signal)
-          found.set(id, tableFileOf(name, text))
+          found.set(id, tableFileOf(name, text, kind === 'bond' ? asked.length : asked.angle))
         } catch (error) {
           if (error instanceof ApiError) failed.set(id, error.message)
           else if (!signal.aborted) throw error
@@ -89,7 +85,6 @@ export function useTableFiles(query: () => TableQuery | null): {
     if (signal.aborted) return
     files.value = found
     failures.value = failed
-    loading.value = false
   }
 
   watch(
@@ -100,13 +95,5 @@ export function useTableFiles(query: () => TableQuery | null): {
     },
     { immediate: true },
   )
-  watch(
-    [() => workbench.mapping?.id, () => workbench.statePoint?.id],
-    async ([mappingId, statePointId]) => {
-      pairs.value = mappingId && statePointId ? await listPairs(mappingId, statePointId) : []
-    },
-    { immediate: true },
-  )
-
-  return { files, failures, loading, ready, missing, joint }
+  return { files, failures, ready, missing, joint, pairsFailure }
 }

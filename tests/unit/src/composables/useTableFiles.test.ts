@@ -11,9 +11,10 @@ const text = `# INVENTED data
 
 describe('tableFileOf', () => {
   it('reads rows, domain and lowest point from the text of the file itself', () => {
-    expect(tableFileOf('bond_B-E_400K.txt', text)).toEqual({
+    expect(tableFileOf('bond_B-E_400K.txt', text, 'nm')).toEqual({
       name: 'bond_B-E_400K.txt',
       text,
+      unit: 'nm',
       rows: 3,
       low: 0.2,
       high: 0.3,
@@ -22,7 +23,7 @@ describe('tableFileOf', () => {
   })
 
   it('shows no numbers for a file without rows', () => {
-    expect(tableFileOf('empty.txt', '# nothing\n')).toMatchObject({
+    expect(tableFileOf('empty.txt', '# nothing\n', 'degree')).toMatchObject({
       rows: 0,
       low: Number.NaN,
       lowestAt: Number.NaN,

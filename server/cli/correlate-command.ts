@@ -1,0 +1,84 @@
+import { Command } from 'commander'
+import { correlate, DEFAULT_SEED } from '../../shared/correlation'
+import type { CoordinateKind } from '../../shared/histogram'
+import {
+  guessJointIntakeSettings,
+  jointHistogramFromTable,
+  type JointIntakeSettings,
+  readColumns,
+} from '../../shared/intake'
+import { type CoordinateUnit, unitsOfKind } from '../../shared/units'
+import { correlationJson } from './correlation-json'
+import { correlationReport } from './correlation-report'
+import type { Output } from './output'
+import { type JointColumnChoice, jointColumns } from './parse-columns'
+import { pairOf, positiveNumber, wholeNumber } from './parse-options'
+import { type Input, readInput } from './read-input'
+import { withFileName } from './refused-file'
+import { UsageError } from './usage-error'
+
+interface CorrelateOptions {
+  readonly kinds: [CoordinateKind, CoordinateKind]
+  readonly units: [CoordinateUnit, CoordinateUnit]
+  readonly columns?: JointColumnChoice
+  readonly independentSamples?: number
+  readonly seed: number
+  readonly json?: boolean
+}
+
+/** `beadwright correlate`: may two coordinates be treated one by one? */
+export function correlateCommand(output: Output): Command {
+  return new Command('correlate')
+    .description('Judge from their joint distribution whether two terms need one joint potential.')
+    .argument('<file>', 'text file with a histogram in long form or paired samples; - for standard input')
+    .requiredOption(
+      '--kinds <first,second>',
+      'such as bond,angle',
+      pairOf(['bond', 'angle', 'dihedral'] as const),
+    )
+    .requiredOption(
+      '--units <first,second>',
+      'such as nm,degree',
+      pairOf(['nm', 'angstrom', 'degree', 'radian'] as const),
+    )
+    .option(
+      '--columns <names>',
+      'columns from the left: x,y,VALUE with VALUE count, density or probability; or x,y for paired samples; skip ' +
+        'passes over a column (default: guessed)',
+      jointColumns,
+    )
+    .option(
+      '--independent-samples <n>',
+      'number of independent samples the file stands for (default: the sum of the counts)',
+      positiveNumber,
+    )
+    .option('--seed <n>', 'seed of the unrelated tables', wholeNumber(0), DEFAULT_SEED)
+    .option('--json', 'print JSON instead of a report')
+    .action((file: string, options: CorrelateOptions) => {
+      withFileName(file, () => output.print(correlated(readInput(file), options, output)))
+    })
+}
+
+function correlated(input: Input, options: CorrelateOptions, output: Output): string {
+  const columnsOfFile = readColumns(input.text)
+  const settings = jointSettings(guessJointIntakeSettings(columnsOfFile, options.kinds), options, output)
+  const { histogram, notes } = jointHistogramFromTable(columnsOfFile, settings)
+  notes.forEach((note) => output.note(note))
+  const correlation = correlate(histogram, { seed: options.seed })
+  correlation.warnings.forEach(({ code, message, action }) => output.note(`${code}: ${message} ${action}`))
+  const json = correlationJson(correlation, options.units, input)
+  return options.json ? `${JSON.stringify(json, null, 2)}\n` : correlationReport(json)
+}
+
+function jointSettings(
+  guess: ReturnType<typeof guessJointIntakeSettings>,
+  { kinds, units, columns, independentSamples }: CorrelateOptions,
+  output: Output,
+): JointIntakeSettings {
+  kinds.forEach((kind, place) => {
+    if (unitsOfKind(kind).includes(units[place])) return
+    throw new UsageError(`The unit of a ${kind} is ${unitsOfKind(kind).join(' or ')}, not ${units[place]}.`)
+  })
+  if (columns === undefined) guess.reasons.slice(0, 1).forEach((reason) => output.note(`guessed: ${reason}`))
+  return { ...guess.settings, ...columns, units, independentSamples: independentSamples ?? null }
+}

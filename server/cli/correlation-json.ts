@@ -1,0 +1,56 @@
+import type { Correlation, CorrelationVerdict } from '../../shared/correlation'
+import { coordinateFromInternal, type CoordinateUnit } from '../../shared/units'
+
+/** What `correlate --json` prints; informations in nats, couplings in kT, null for "unknown". */
+export interface CorrelationJson {
+  readonly kinds: readonly [string, string]
+  readonly units: readonly [CoordinateUnit, CoordinateUnit]
+  readonly input: { readonly name: string; readonly sha256: string }
+  readonly samples: number | null
+  readonly independentSamples: number | null
+  /** Bins of the verdict grid. */
+  readonly grid: readonly [number, number]
+  readonly mutualInformation: number
+  readonly mutualInformationMillerMadow: number | null
+  readonly mutualInformationCorrected: number | null
+  readonly nullMean: number | null
+  readonly pValue: number | null
+  readonly totalVariation: number
+  readonly pearson: number | null
+  readonly spearman: number | null
+  readonly largestCoupling: { readonly value: number; readonly x: number; readonly y: number } | null
+  readonly verdict: CorrelationVerdict
+  readonly warnings: readonly { readonly code: string; readonly message: string }[]
+}
+
+/** The JSON of a correlation. */
+export function correlationJson(
+  correlation: Correlation,
+  units: readonly [CoordinateUnit, CoordinateUnit],
+  input: { readonly name: string; readonly sha256: string },
+): CorrelationJson {
+  const { verdictGrid, largestCoupling: largest } = correlation
+  return {
+    kinds: correlation.kinds,
+    units,
+    input: { name: input.name, sha256: input.sha256 },
+    samples: correlation.samples,
+    independentSamples: correlation.independentSamples,
+    grid: [verdictGrid.xEdges.length - 1, verdictGrid.yEdges.length - 1],
+    mutualInformation: correlation.mutualInformation,
+    mutualInformationMillerMadow: correlation.mutualInformationMillerMadow,
+    mutualInformationCorrected: correlation.mutualInformationCorrected,
+    nullMean: correlation.nullMean,
+    pValue: correlation.pValue,
+    totalVariation: correlation.totalVariation,
+    pearson: correlation.pearson,
+    spearman: correlation.spearman,
+    largestCoupling: largest && {
+      value: largest.value,
+      x: coordinateFromInternal(largest.x, units[0]),
+      y: coordinateFromInternal(largest.y, units[1]),
+    },
+    verdict: correlation.verdict,
+    warnings: correlation.warnings.map(({ code, message }) => ({ code, message })),
+  }
+}

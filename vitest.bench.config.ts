@@ -1,5 +1,5 @@
 import { defineConfig, mergeConfig } from 'vitest/config'
-import viteConfig from './vite.config'
+import viteConfig from './vite.config.ts'
 
 /** `npm run bench`: prints milliseconds and ratios; judged by people, never part of the suite. */
 export default mergeConfig(

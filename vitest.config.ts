@@ -1,5 +1,5 @@
 import { defineConfig, mergeConfig } from 'vitest/config'
-import viteConfig from './vite.config'
+import viteConfig from './vite.config.ts'
 
 /** The layers of the suite; `vitest run --project unit` runs one of them. */
 export default mergeConfig(

@@ -53,7 +53,7 @@ export class PotentialService {
           'There are no data for this term at this state point: bring them in first.',
         )
       }
-      const { potential } = invert(input.histogram, statePoint.temperature, settings)
+      const { potential, regenerated } = invert(input.histogram, statePoint.temperature, settings)
       makeTable(potential, settings.table)
       const record = {
         groupId,
@@ -62,7 +62,7 @@ export class PotentialService {
         distributionId: input.distribution.id,
         settings,
         inputSha256: input.sha256,
-        silhouette: derivedSilhouette(potential, input.histogram),
+        silhouette: derivedSilhouette(regenerated, input.histogram),
         revision: (revision ?? 0) + 1,
         savedAt: new Date(),
         savedById: userId,

@@ -1,14 +1,9 @@
 import { coordinateDomain, type Histogram } from '../../shared/histogram'
-import { type Potential, potentialEnergy } from '../../shared/inversion'
-import { thermalEnergy } from '../../shared/units'
 
 const POINTS = 40
 
 /** Room on either side of the filled bins, as a share of their extent. */
 const MARGIN = 0.08
-
-/** A potential reaches the top of its silhouette at this many kT: beyond, a rail has nothing to tell. */
-const CEILING = 8
 
 /**
  * The outline of a histogram for the rail: its density at 40 places over the filled range, the largest being 1.
@@ -16,7 +11,26 @@ const CEILING = 8
  * @returns length 40, each in [0, 1]
  */
 export function measuredSilhouette(histogram: Histogram): number[] {
-  const { edges, weights } = histogram
+  const masses = outline(histogram, histogram.weights)
+  const most = largest(masses)
+  return Array.from(masses, (mass) => round(mass / most))
+}
+
+/**
+ * The outline of the distribution that a potential regenerates, on the range and at the scale of the measured one.
+ *
+ * @param regenerated probability mass of each bin, sum 1
+ * @returns length 40, each in [0, 1]; a peak above the measured one is cut at 1
+ */
+export function derivedSilhouette(regenerated: Float64Array, histogram: Histogram): number[] {
+  const total = histogram.weights.reduce((sum, weight) => sum + weight, 0)
+  const most = largest(outline(histogram, histogram.weights)) / total
+  return Array.from(outline(histogram, regenerated), (mass) => round(Math.min(1, mass / most)))
+}
+
+/** What lies in each of 40 equal parts of the filled range, each bin spread evenly. */
+function outline(histogram: Histogram, weights: Float64Array): Float64Array {
+  const { edges } = histogram
   const [low, high] = silhouetteRange(histogram)
   const width = (high - low) / POINTS
   const masses = new Float64Array(POINTS)
@@ -29,22 +43,11 @@ export function measuredSilhouette(histogram: Histogram): number[] {
       if (to > from) masses[point] += density * (to - from)
     }
   }
-  const most = masses.reduce((largest, mass) => Math.max(largest, mass), 0)
-  return Array.from(masses, (mass) => round(mass / most))
+  return masses
 }
 
-/**
- * The outline of a potential on the range of its histogram: 0 at the minimum, 1 at 8 kT and above.
- *
- * @returns length 40, each in [0, 1]
- */
-export function derivedSilhouette(potential: Potential, histogram: Histogram): number[] {
-  const [low, high] = silhouetteRange(histogram)
-  const ceiling = CEILING * thermalEnergy(potential.temperature)
-  return Array.from({ length: POINTS }, (_, point) => {
-    const coordinate = low + ((point + 0.5) / POINTS) * (high - low)
-    return round(Math.min(1, Math.max(0, potentialEnergy(potential, coordinate) / ceiling)))
-  })
+function largest(masses: Float64Array): number {
+  return masses.reduce((most, mass) => Math.max(most, mass), 0)
 }
 
 /** From the first to the last filled bin with a margin, within the domain; a whole turn for a dihedral. */

@@ -1,6 +1,5 @@
 import { computed, onScopeDispose, ref, shallowReactive, shallowRef, type ComputedRef, type Ref } from 'vue'
 import type { Pair } from '@shared/contracts/distribution'
-import type { Term } from '@shared/contracts/mapping'
 import type { IntakeSettings, JointIntakeSettings } from '@shared/intake'
 import { ApiError } from '@/api/http'
 import { storeDistribution } from '@/api/distributions'
@@ -40,7 +39,7 @@ export interface Intake {
   readonly items: readonly IntakeItem[]
   readonly current: ComputedRef<IntakeItem | null>
   readonly currentId: Ref<number | null>
-  bring(files: Iterable<File>, asked: Term | null): void
+  bring(files: Iterable<File>, asked: IntakeTarget | null): void
   drop(item: IntakeItem): void
   aim(item: IntakeItem, target: IntakeTarget): void
   read(item: IntakeItem, settings: IntakeSettings | JointIntakeSettings | null): Promise<void>
@@ -49,7 +48,7 @@ export interface Intake {
 
 /**
  * The files on the intake desk: each is read in a worker as what its name says it is, read again when something is changed,
- * and stored only when asked. `asked` is the term the person came from; it is taken when a file's name says nothing.
+ * and stored only when asked. `asked` is the term or pair the person came from; it is taken when a file's name says nothing.
  */
 export function useIntake(
   pairs: Ref<readonly Pair[]>,
@@ -101,13 +100,13 @@ export function useIntake(
     }
   }
 
-  const bring = (files: Iterable<File>, asked: Term | null): void => {
+  const bring = (files: Iterable<File>, asked: IntakeTarget | null): void => {
     for (const file of files) {
       const named = guessTarget(file.name, workbench.terms, pairs.value)
       const item = shallowReactive<IntakeItem>({
         id: ++last,
         file,
-        target: named ?? (asked ? { type: 'term', termId: asked.id } : null),
+        target: named ?? asked,
         guessed: named !== null,
         statePointId: guessStatePoint(file.name, workbench.statePoints)?.id ?? workbench.statePoint?.id ?? '',
         answer: null,

@@ -72,7 +72,7 @@ describe('useIntake', () => {
 
   it('takes the term one came from when the name says nothing, and waits when nobody said', async () => {
     const desk = open()
-    desk.bring([file('run7.txt', bond)], term('bond', 'E', 'H'))
+    desk.bring([file('run7.txt', bond)], { type: 'term', termId: term('bond', 'E', 'H').id })
     desk.bring([file('run8.txt', bond)], null)
     await flushPromises()
     expect(desk.items.map(({ target }) => target)).toEqual([{ type: 'term', termId: 'EH' }, null])

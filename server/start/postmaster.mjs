@@ -36,8 +36,9 @@ export async function startPostmaster(options) {
 }
 
 /**
- * After kill -9 of the postmaster its children leave by themselves within moments. If the number in its file meanwhile
- * belongs to some other process, PostgreSQL would refuse to start, so the file goes.
+ * After kill -9 of the postmaster its children leave by themselves within moments. PostgreSQL would refuse to start while
+ * the number in its file belongs to anything, be it some other process or a dead one that nobody buried yet, so the file
+ * goes.
  */
 async function clearRemains(dataDirectory, left) {
   const gone = await waitUntil(() => postgresProcessesOf(dataDirectory).length === 0, { limit: 20_000 })
@@ -47,7 +48,7 @@ async function clearRemains(dataDirectory, left) {
         `${dataDirectory}: end them and start again.`,
     )
   }
-  if (left && processStart(left.pid) !== null) rmSync(join(dataDirectory, 'postmaster.pid'), { force: true })
+  if (left) rmSync(join(dataDirectory, 'postmaster.pid'), { force: true })
 }
 
 /** Null when somebody else took the port between our look and PostgreSQL's. */

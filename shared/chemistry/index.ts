@@ -1,6 +1,8 @@
 export { atomicWeight, isKnownElement } from './atomic-weights'
 export { MAX_HEAVY_ATOMS } from './check-attachments'
 export { composition, compositionMass, formulaParts, formulaText, type FormulaPart } from './composition'
+export { inverse, type Isometry, moved, type Point } from './isometry'
+export { layoutRepeatUnit, type RepeatUnitLayout } from './layout-repeat-unit'
 export { parseRepeatUnit } from './parse-repeat-unit'
 export { refineClasses } from './refine-classes'
 export type { BondOrder, Composition, RepeatUnit, RepeatUnitAtom, RepeatUnitBond } from './repeat-unit'

@@ -5,6 +5,7 @@ export { beadPieces } from './bead-pieces'
 export { checkMapping } from './check-mapping'
 export { compareTypes, compareTypeSequences } from './compare-types'
 export { deriveTerms } from './derive-terms'
+export { addBead, type BeadChange, changeBead, freeAtoms, giveAtoms, removeBead } from './edit-mapping'
 export {
   BEAD_COLOURS,
   type Bead,

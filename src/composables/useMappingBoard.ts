@@ -1,0 +1,103 @@
+import { computed, shallowRef, type ComputedRef, type Ref, type ShallowRef } from 'vue'
+import type { RepeatUnit } from '@shared/chemistry'
+import {
+  addBead,
+  type Bead,
+  type BeadChange,
+  changeBead,
+  checkMapping,
+  type DerivedTerm,
+  deriveTerms,
+  freeAtoms,
+  giveAtoms,
+  type MappingDocument,
+  type MappingProblem,
+  removeBead,
+} from '@shared/mapping'
+import { useHistory, type History } from './useHistory'
+
+/** A mapping while it is painted: the document with its history, the bead in hand, and what follows. */
+export interface MappingBoard {
+  readonly document: ComputedRef<MappingDocument>
+  readonly history: History<MappingDocument>
+  readonly selected: ComputedRef<Bead | null>
+  readonly select: (beadId: string) => void
+  readonly problems: ComputedRef<readonly MappingProblem[]>
+  readonly terms: ComputedRef<readonly DerivedTerm[]>
+  /** The document as it looks during a stroke; null between strokes. */
+  readonly stroke: ShallowRef<MappingDocument | null>
+  /** Begins a stroke on an atom: it paints, or takes away when the atom is in the bead in hand already. */
+  readonly begin: (atom: number) => void
+  readonly paintOver: (atom: number) => void
+  readonly end: () => void
+  readonly add: () => void
+  readonly change: (beadId: string, change: BeadChange) => void
+  readonly remove: (beadId: string) => void
+  readonly give: (atoms: readonly number[], beadId: string) => void
+  readonly free: (atoms: readonly number[]) => void
+}
+
+/** The state of the mapping board. Strokes and changes are steps of the history; what follows from them is derived live. */
+export function useMappingBoard(unit: Ref<RepeatUnit>, first: MappingDocument): MappingBoard {
+  const history = useHistory(first)
+  const stroke = shallowRef<MappingDocument | null>(null)
+  const chosen = shallowRef<string | null>(first.beads[0]?.id ?? null)
+  let erasing = false
+
+  const document = computed(() => stroke.value ?? history.value.value)
+  const selected = computed(
+    () => document.value.beads.find(({ id }) => id === chosen.value) ?? document.value.beads[0] ?? null,
+  )
+  const problems = computed(() => checkMapping(unit.value, document.value))
+  const terms = computed(() => deriveTerms(unit.value, document.value))
+
+  const select = (beadId: string): void => {
+    chosen.value = beadId
+  }
+  const newBead = (from: MappingDocument): MappingDocument => {
+    const id = newBeadId()
+    chosen.value = id
+    return addBead(from, id)
+  }
+
+  const begin = (atom: number): void => {
+    const start = document.value.beads.length === 0 ? newBead(document.value) : document.value
+    stroke.value = start
+    erasing = selected.value?.atoms.some((held) => held.atom === atom) ?? false
+    paintOver(atom)
+  }
+  const paintOver = (atom: number): void => {
+    if (stroke.value === null || selected.value === null) return
+    stroke.value = erasing
+      ? freeAtoms(stroke.value, [atom])
+      : giveAtoms(stroke.value, selected.value.id, [atom])
+  }
+  const end = (): void => {
+    if (stroke.value !== null) history.push(stroke.value)
+    stroke.value = null
+  }
+
+  return {
+    document,
+    history,
+    selected,
+    select,
+    problems,
+    terms,
+    stroke,
+    begin,
+    paintOver,
+    end,
+    add: () => history.push(newBead(document.value)),
+    change: (beadId, change) => history.push(changeBead(document.value, beadId, change)),
+    remove: (beadId) => history.push(removeBead(document.value, beadId)),
+    give: (atoms, beadId) => history.push(giveAtoms(document.value, beadId, atoms)),
+    free: (atoms) => history.push(freeAtoms(document.value, atoms)),
+  }
+}
+
+/** Never one that stood before, so that a term never passes to another bead by accident. */
+function newBeadId(): string {
+  const bytes = crypto.getRandomValues(new Uint8Array(6))
+  return `b${Array.from(bytes, (byte) => byte.toString(16).padStart(2, '0')).join('')}`
+}

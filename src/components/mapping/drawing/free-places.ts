@@ -4,17 +4,29 @@ import { type Box, HALO_RADIUS } from './board-layout'
 const DIRECTIONS = 24
 const LETTER_DISTANCE = HALO_RADIUS + 2
 
+/** A bond is stood for by points this share of its length apart. */
+const BOND_SHARES = [0.25, 0.5, 0.75]
+
 /**
- * Where the letter of a bead goes: on the rim of its halo, as far as possible from all other atoms and letters.
+ * Where the letter of a bead goes: on the outer rim of its halo, as far as possible from everything else that is drawn.
  *
- * @param held atoms of the bead
+ * @param held atoms of the bead, at least one
  * @param letters places of letters that are taken
  */
 export function letterPlace(
   held: readonly number[],
   positions: readonly Point[],
+  bonds: readonly { readonly from: number; readonly to: number }[],
   letters: readonly Point[],
 ): Point {
+  const inside = new Set(held)
+  const pointsOf = (own: boolean) => [
+    ...positions.filter((_, atom) => inside.has(atom) === own),
+    ...bonds
+      .filter(({ from, to }) => (inside.has(from) && inside.has(to)) === own)
+      .flatMap(({ from, to }) => BOND_SHARES.map((share) => between(positions[from], positions[to], share))),
+  ]
+  const [own, others] = [pointsOf(true), [...pointsOf(false), ...letters]]
   const candidates = held.flatMap((atom) =>
     Array.from({ length: DIRECTIONS }, (_, step) => {
       const angle = (2 * Math.PI * step) / DIRECTIONS
@@ -24,7 +36,10 @@ export function letterPlace(
       }
     }),
   )
-  const room = (place: Point) => Math.min(nearest(place, positions), nearest(place, letters) - HALO_RADIUS)
+  // A place nearer than the rim lies inside the halo: the last resort.
+  const room = (place: Point) =>
+    Math.min(nearest(place, others), 3 * HALO_RADIUS) -
+    100 * Math.max(0, LETTER_DISTANCE - 1 - nearest(place, own))
   return best(candidates, room)
 }
 
@@ -48,6 +63,10 @@ export function notePlace(
     positions.filter((atom) => distanceTo({ ...place, ...size }, atom) < HALO_RADIUS + 12).length
   const merit = (place: Point) => -1000 * covered(place) - distanceTo({ ...place, ...size }, about)
   return candidates.length === 0 ? { x: frame.x, y: frame.y } : best(candidates, merit)
+}
+
+function between(from: Point, to: Point, share: number): Point {
+  return { x: from.x + share * (to.x - from.x), y: from.y + share * (to.y - from.y) }
 }
 
 function distanceTo({ x, y, width, height }: Box, point: Point): number {

@@ -21,6 +21,8 @@ export interface PageOptions {
   /** In CSS pixels; 1280 and 390 are the widths that every room is looked at. */
   readonly width?: number
   readonly theme?: 'light' | 'dark'
+  /** Where relative addresses lead; the server with the demonstration unless told otherwise. */
+  readonly baseUrl?: string
 }
 
 export interface OpenedPage {
@@ -39,12 +41,11 @@ export function launchBrowser(): Promise<Browser> {
   return chromium.launch({ executablePath, args: FLAGS })
 }
 
-/** Opens a page in a context of its own, as a person with no past on this site. Relative addresses lead to our server. */
+/** Opens a page in a context of its own, as a person with no past on this site. */
 export async function openPage(
   browser: Browser,
-  { width = 1280, theme = 'light' }: PageOptions = {},
+  { width = 1280, theme = 'light', baseUrl: baseURL = inject('baseUrl') }: PageOptions = {},
 ): Promise<OpenedPage> {
-  const baseURL = inject('baseUrl')
   const context = await browser.newContext({
     baseURL,
     viewport: { width, height: HEIGHTS[width] ?? 800 },
@@ -53,6 +54,7 @@ export async function openPage(
     acceptDownloads: true,
   })
   const page = await context.newPage()
+  page.setDefaultTimeout(10_000)
   return {
     page,
     complaints: listen(page, new URL(baseURL).host),
@@ -69,7 +71,9 @@ export async function openPage(
 function listen(page: Page, host: string): readonly string[] {
   const complaints: string[] = []
   page.on('console', (message) => {
-    if (message.type() === 'error') complaints.push(`console: ${message.text()}`)
+    // 404 is how the API says that a record is not there yet; Chromium writes that down as an error.
+    const notThere = /^Failed to load resource.* 404 /.test(message.text())
+    if (message.type() === 'error' && !notThere) complaints.push(`console: ${message.text()}`)
   })
   page.on('pageerror', (error) => complaints.push(`exception: ${error.message}`))
   page.on('request', (request) => {

@@ -32,7 +32,7 @@ function incompleteTurn({ edges, added: [before, after] }: PreparedBins): Warnin
   return [
     {
       code: 'TURN_INCOMPLETE',
-      message: `The histogram leaves out ${coordinateFromInternal(missing, 'degree').toFixed(1)}° of the turn; the potential there is a bridge, not a measurement.`,
+      message: `The histogram leaves out ${coordinateFromInternal(missing, 'degree').toFixed(1)}° of the turn; it was taken as never visited.`,
       action: 'Give a histogram from −180° to 180°, with zeros where nothing was seen.',
     },
   ]

@@ -20,7 +20,7 @@ import { type FittedCurve, smoothCurve } from './smooth-curve'
  * @param temperature K
  * @returns potential, evidence and warnings
  * @throws {InvalidInputError} TEMPERATURE_INVALID; SETTING_INVALID with the field; TOO_FEW_BINS with fewer than 5 filled
- *   bins; SINGULAR_SYSTEM when the counts do not determine a smooth curve
+ *   bins; TOO_FEW_SAMPLES when counts add up to less than 1; SINGULAR_SYSTEM when the counts do not determine a smooth curve
  */
 export function invert(histogram: Histogram, temperature: number, settings: InversionSettings): Inversion {
   const kT = thermalEnergy(temperature)

@@ -4,7 +4,7 @@ import { binCentroids, binMidpoints, binVolumes, type Histogram } from '../histo
 /** Fewest filled bins that an inversion accepts. */
 export const MINIMUM_FILLED_BINS = 5
 
-/** Files of expected counts hold fractions down to 1e-20; this many effective counts at an end say nothing. */
+/** Files of expected counts hold fractions down to 1e-20; this many effective counts at an end say nothing (fewer of few). */
 const NO_COUNT = 1e-6
 
 /** A histogram laid out for inversion; for a dihedral the bins fill the turn. */
@@ -12,7 +12,7 @@ export interface PreparedBins {
   readonly edges: Float64Array
   readonly midpoints: Float64Array
   readonly centroids: Float64Array
-  /** ∫ J dq, or widths with the Jacobian off; 0 for a bin that the histogram does not cover. */
+  /** ∫ J dq, or widths with the Jacobian off. */
   readonly volumes: Float64Array
   /** Effective counts: weights scaled to the number of independent samples, or to sum 1 where that is unknown. */
   readonly counts: Float64Array
@@ -25,41 +25,51 @@ export interface PreparedBins {
 
 /**
  * Lays a histogram out for inversion. The part of a turn that a dihedral histogram does not cover is divided into bins of
- * its mean width without volume: not empty, but unobserved. Counts without a stated number of independent samples are
+ * its mean width without counts: a chain on the table then goes only where the histogram says. Counts without a stated number of independent samples are
  * taken as independent; a density or probability without it keeps null.
  *
- * @throws {InvalidInputError} TOO_FEW_BINS with fewer than 5 filled bins
+ * @throws {InvalidInputError} TOO_FEW_BINS with fewer than 5 filled bins; TOO_FEW_SAMPLES when counts add up to less than 1
  */
 export function prepareBins(histogram: Histogram, jacobian: boolean): PreparedBins {
   const { kind, weights, content } = histogram
-  const filledBins = weights.reduce((count, weight) => count + (weight > 0 ? 1 : 0), 0)
-  if (filledBins < MINIMUM_FILLED_BINS) {
-    throw new InvalidInputError(
-      'TOO_FEW_BINS',
-      `Only ${filledBins} of ${weights.length} bins hold data; at least ${MINIMUM_FILLED_BINS} are needed.`,
-    )
-  }
   const total = weights.reduce((sum, weight) => sum + weight, 0)
   const independentSamples = histogram.independentSamples ?? (content === 'count' ? total : null)
-  const scale = (independentSamples ?? 1) / total
+  if (independentSamples !== null && independentSamples < 1) {
+    throw new InvalidInputError(
+      'TOO_FEW_SAMPLES',
+      `The counts add up to ${independentSamples.toPrecision(2)}, less than one sample. If they are a density or probabilities, say so.`,
+    )
+  }
   const [before, after] = kind === 'dihedral' ? missingEdges(histogram.edges) : [[], []]
   const edges = Float64Array.from([...before, ...histogram.edges, ...after])
   const added = [before.length, after.length] as const
   const counts = new Float64Array(edges.length - 1)
-  weights.forEach((weight, bin) => (counts[bin + added[0]] = weight * scale))
-  const volumes = binVolumes(kind, edges, jacobian)
-  volumes.fill(0, 0, added[0])
-  volumes.fill(0, volumes.length - added[1])
+  weights.forEach((weight, bin) => (counts[bin + added[0]] = (weight / total) * (independentSamples ?? 1)))
+  const filled = filledRange(
+    counts,
+    independentSamples === null ? 0 : NO_COUNT * Math.min(1, independentSamples / 1000),
+  )
+  checkFilled(counts, filled)
   return {
     edges,
     midpoints: binMidpoints(edges),
     centroids: binCentroids(kind, edges, jacobian),
-    volumes,
+    volumes: binVolumes(kind, edges, jacobian),
     counts,
     independentSamples,
     added,
-    filled: filledRange(counts, independentSamples === null ? 0 : NO_COUNT),
+    filled,
   }
+}
+
+function checkFilled(counts: Float64Array, [first, last]: readonly [number, number]): void {
+  const inside = counts.subarray(first, last + 1)
+  const filledBins = inside.reduce((sum, count) => sum + (count > 0 ? 1 : 0), 0)
+  if (filledBins >= MINIMUM_FILLED_BINS) return
+  throw new InvalidInputError(
+    'TOO_FEW_BINS',
+    `Only ${filledBins} of ${counts.length} bins hold data; at least ${MINIMUM_FILLED_BINS} are needed.`,
+  )
 }
 
 /** First and last bin that hold data: outer bins are left out while their counts add up to no more than `negligible`. */

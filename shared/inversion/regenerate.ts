@@ -1,3 +1,4 @@
+import { InvalidInputError } from '../errors'
 import { type CoordinateKind, jacobian } from '../histogram'
 import { GAUSS_LEGENDRE } from '../numeric'
 import { thermalEnergy } from '../units'
@@ -10,6 +11,7 @@ import { potentialEnergy } from './potential-energy'
  * @param edges ascending, length n + 1, nm or rad
  * @param useJacobian false takes J = 1, for a potential that was made without it
  * @returns probability mass of each bin, sum 1 over the bins
+ * @throws {InvalidInputError} SINGULAR_SYSTEM when the potential leaves no mass in the bins
  */
 export function regenerate(
   kind: CoordinateKind,
@@ -31,6 +33,12 @@ export function regenerate(
     }
     masses[bin] = sum * half
     total += masses[bin]
+  }
+  if (!(total > 0 && Number.isFinite(total))) {
+    throw new InvalidInputError(
+      'SINGULAR_SYSTEM',
+      'The curve is least where no bin is: the counts do not determine it.',
+    )
   }
   return masses.map((mass) => mass / total)
 }

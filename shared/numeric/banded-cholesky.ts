@@ -1,5 +1,3 @@
-import { InvalidInputError } from '../errors'
-
 /**
  * L D Lᵀ of a symmetric positive definite matrix with p diagonals below the main one. Stored by rows: entry (i, i − k) of
  * L stands at i·(p + 1) + k, and D at k = 0 (the unit diagonal of L is not stored).
@@ -11,14 +9,18 @@ export interface BandedFactor {
   readonly values: Float64Array
 }
 
+/** A pivot that keeps less than this share of its diagonal has lost all but five digits of a double to cancellation. */
+const LEAST_PIVOT = 1e-11
+
 /**
  * Factors a banded symmetric matrix in place, in size·p² operations.
  *
  * @param matrix lower band by rows, entry (i, i − k) at i·(p + 1) + k; entries left of the first column are ignored;
  *   overwritten by the factor
- * @throws {InvalidInputError} SINGULAR_SYSTEM with the row whose pivot is not above zero
+ * @returns null where cancellation leaves fewer than about five digits of a pivot, or the matrix is not positive definite:
+ *   `factorRows` then still gets a product A′A right
  */
-export function factorBanded(matrix: Float64Array, size: number, halfBandwidth: number): BandedFactor {
+export function factorBanded(matrix: Float64Array, size: number, halfBandwidth: number): BandedFactor | null {
   const stride = halfBandwidth + 1
   for (let row = 0; row < size; row++) {
     const start = row * stride
@@ -37,11 +39,7 @@ export function factorBanded(matrix: Float64Array, size: number, halfBandwidth: 
       matrix[start + k] = lower
       pivot -= entry * lower
     }
-    if (!(pivot > 0)) {
-      throw new InvalidInputError('SINGULAR_SYSTEM', 'The data do not determine a smooth curve.', {
-        index: row,
-      })
-    }
+    if (!(pivot > LEAST_PIVOT * matrix[start])) return null
     matrix[start] = pivot
   }
   return { size, halfBandwidth, values: matrix }

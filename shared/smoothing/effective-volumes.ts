@@ -1,11 +1,17 @@
 import { GAUSS_LEGENDRE, notAKnotCurvatures, periodicCurvatures } from '../numeric'
 
+/**
+ * Most that ln of an effective volume may differ from ln of the exact one. A density that falls by more across a bin, as
+ * beside a spike, is not resolved by the histogram, and the correction would only chase its own tail.
+ */
+const LARGEST_CORRECTION = 5
+
 /** Jacobian and geometry of the bins that effective volumes are taken over. */
 export interface BinGeometry {
   /** Ascending, length n + 1. */
   readonly edges: Float64Array
   readonly midpoints: Float64Array
-  /** Exact volumes ∫ J dq; 0 for a bin that was not observed. */
+  /** Exact volumes ∫ J dq. */
   readonly volumes: Float64Array
   readonly jacobian: (coordinate: number) => number
   /** 2π when the bins fill a turn, else null. */
@@ -13,45 +19,51 @@ export interface BinGeometry {
 }
 
 /**
- * Prepares the effective volumes ∫_bin J(q) exp(η(q) − η(m)) dq about the midpoints m of bins, by Gauss–Legendre with five
+ * Prepares the logarithms of effective volumes ∫_bin J(q) exp(η(q) − η(m)) dq about the midpoints m of bins, by Gauss–Legendre with five
  * points. With them as offset a bin is what it is, an average of exp η and not its value at one point (composite link:
  * Thompson & Baker, Appl. Stat. 30 (1981) 125; Eilers, Stat. Model. 7 (2007) 239); what is left of the bin-width error is
  * of fourth order.
  *
  * @param geometry at least 4 bins
- * @returns function from η at the midpoints to the effective volumes; η between midpoints is a cubic spline
+ * @returns function from η at the midpoints to ln of the effective volumes; η between midpoints is a cubic spline
  */
-export function effectiveVolumes(geometry: BinGeometry): (eta: Float64Array) => Float64Array {
+export function logEffectiveVolumes(geometry: BinGeometry): (eta: Float64Array) => Float64Array {
   const { edges, midpoints, volumes, jacobian, period } = geometry
   const bins = midpoints.length
   const points = GAUSS_LEGENDRE.length
+  const exactLogs = volumes.map(Math.log)
   const shares = new Float64Array(bins * points)
   const steps = new Float64Array(bins * points)
   for (let bin = 0; bin < bins; bin++) {
     const half = (edges[bin + 1] - edges[bin]) / 2
     GAUSS_LEGENDRE.forEach(({ node, weight }, point) => {
       steps[bin * points + point] = node * half
-      shares[bin * points + point] =
-        volumes[bin] === 0 ? 0 : weight * half * jacobian(midpoints[bin] + node * half)
+      shares[bin * points + point] = weight * half * jacobian(midpoints[bin] + node * half)
     })
   }
   return (eta) => {
     const curvatures =
       period === null ? notAKnotCurvatures(midpoints, eta) : periodicCurvatures(midpoints, eta, period)
     const result = new Float64Array(bins)
+    const changes = new Float64Array(points)
     for (let bin = 0; bin < bins; bin++) {
       const left = taylorTowards(midpoints, eta, curvatures, period, bin, -1)
       const right = taylorTowards(midpoints, eta, curvatures, period, bin, 1)
+      let largest = -Infinity
+      for (let point = 0; point < points; point++) {
+        const step = steps[bin * points + point]
+        const { slope, third } = step < 0 ? left : right
+        changes[point] = step * (slope + step * (curvatures[bin] / 2 + (step * third) / 6))
+        if (changes[point] > largest) largest = changes[point]
+      }
+      // Beside a spike η may fall by hundreds within a bin: the largest term is taken out before exp can overflow.
       let sum = 0
       for (let point = 0; point < points; point++) {
-        const index = bin * points + point
-        if (shares[index] === 0) continue
-        const step = steps[index]
-        const { slope, third } = step < 0 ? left : right
-        const change = step * (slope + step * (curvatures[bin] / 2 + (step * third) / 6))
-        sum += shares[index] * Math.exp(change)
+        sum += shares[bin * points + point] * Math.exp(changes[point] - largest)
       }
-      result[bin] = sum
+      const exact = exactLogs[bin]
+      const effective = largest + Math.log(sum)
+      result[bin] = Math.min(Math.max(effective, exact - LARGEST_CORRECTION), exact + LARGEST_CORRECTION)
     }
     return result
   }

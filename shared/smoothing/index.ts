@@ -1,4 +1,4 @@
-export { type BinGeometry, effectiveVolumes } from './effective-volumes'
+export { type BinGeometry, logEffectiveVolumes } from './effective-volumes'
 export { identityBasis } from './identity-basis'
 export { type PenalisedFit, penalisedFit } from './penalised-fit'
 export { penalisedSystem, type PenalisedSystem } from './penalised-system'

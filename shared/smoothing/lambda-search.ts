@@ -1,9 +1,7 @@
-import { NEWTON_STEP, type PenalisedFit, penalisedFit } from './penalised-fit'
+import { NEWTON_STEP, type PenalisedFit, penalisedFit, stiffestWeight } from './penalised-fit'
 import type { PenalisedSystem } from './penalised-system'
 import { penaltyNullity } from './smoothing-basis'
 
-/** λ beside the mean expected count per coefficient that no histogram needs: the curve is stiff long before. */
-const STIFFEST = 1e18
 const SOFTEST_LOG = -6
 /** A curve this close to the stiff limit in effective dimension is there: more λ moves nothing. */
 const STIFF_DIMENSION = 0.02
@@ -33,26 +31,26 @@ export interface LambdaSearch {
 }
 
 /**
- * Sets up a search for λ on given counts and volumes.
+ * Sets up a search for λ on given counts and offsets.
  *
  * @param counts effective counts, one per bin
- * @param volumes offset of each bin
+ * @param offsets ln of the effective volume of each bin
  */
 export function lambdaSearch(
   system: PenalisedSystem,
   counts: Float64Array,
-  volumes: Float64Array,
+  offsets: Float64Array,
 ): LambdaSearch {
-  const { size, lambdaScale } = system.basis
+  const { lambdaScale } = system.basis
   const nullity = penaltyNullity(system.basis)
   const total = counts.reduce((sum, count) => sum + count, 0)
   const low = SOFTEST_LOG
-  const high = Math.log10((STIFFEST * total) / size / lambdaScale)
+  const high = Math.log10(stiffestWeight(system, counts) / lambdaScale)
   const first = Math.log10(total / counts.length) + 6 * Math.log10(counts.length / FIRST_BINS_PER_PARAMETER)
   const tryAt = (wanted: number, from: LambdaTrial | null): LambdaTrial => {
     const log10Lambda = Math.min(Math.max(wanted, low), high)
     const start = from?.fit.coefficients ?? null
-    const fit = penalisedFit(system, counts, volumes, 10 ** log10Lambda, start, NEWTON_STEP.search)
+    const fit = penalisedFit(system, counts, offsets, 10 ** log10Lambda, start, NEWTON_STEP.search)
     const excess = fit.effectiveDimension - nullity
     return { log10Lambda, fit, excess, stiff: excess < STIFF_DIMENSION }
   }

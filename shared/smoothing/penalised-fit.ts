@@ -17,9 +17,20 @@ import {
 export const NEWTON_STEP = { final: 1e-10, search: 1e-3 }
 /** Below this a step that no longer shrinks is rounding. */
 const ROUNDING = 1e-6
+/**
+ * After this many steps only bins that counts speak about are waited for, and to this step: far from all data, beside a
+ * wall, the curve may be too deep for doubles to settle.
+ */
+const PATIENCE = 30
+const IMPATIENT_STEP = 1e-6
 /** Steps shorter than this need no check that they descend: the model is close to quadratic there. */
 const SAFE_STEP = 0.25
-const MOST_STEPS = 300
+/**
+ * λ on the coefficients beside the mean count per coefficient at which the curve is stiff to every digit that matters (it is
+ * within 1e-5 of its own deviation of the limit λ → ∞ even with hundreds of bins); more would only add rounding.
+ */
+const STIFFEST = 1e16
+const MOST_STEPS = 120
 const MOST_HALVINGS = 60
 
 /** A penalised Poisson fit: counts n_i with mean μ_i = V_i exp(η_i). */
@@ -45,8 +56,8 @@ export interface PenalisedFit {
  * method to a step of 1e-10, halving steps that do not descend (Eilers & Marx, Stat. Sci. 11 (1996) 89).
  *
  * @param counts not negative, one per bin; fractions are allowed
- * @param volumes V, one per bin; 0 marks a bin that was not observed and that only the penalty determines
- * @param lambda per bin index, above 0
+ * @param offsets ln V, one per bin
+ * @param lambda per bin index, above 0; from `stiffestWeight` on, the fit is the one at that weight
  * @param start coefficients to start from, or null
  * @param converged longest last step of Newton's method
  * @throws {InvalidInputError} SINGULAR_SYSTEM when the counts do not determine a curve (too few filled bins)
@@ -54,23 +65,24 @@ export interface PenalisedFit {
 export function penalisedFit(
   system: PenalisedSystem,
   counts: Float64Array,
-  volumes: Float64Array,
+  offsets: Float64Array,
   lambda: number,
   start: Float64Array | null,
   converged: number = NEWTON_STEP.final,
 ): PenalisedFit {
-  const weight = lambda * system.basis.lambdaScale
-  let state = evaluate(system, counts, volumes, weight, start ?? firstGuess(system, counts, volumes, weight))
+  const weight = Math.min(lambda * system.basis.lambdaScale, stiffestWeight(system, counts))
+  let state = evaluate(system, counts, offsets, weight, start ?? firstGuess(system, counts, offsets, weight))
   let factor = factorSystem(system, state.means, weight)
   let previous = Infinity
   for (let step = 0; ; step++) {
     const direction = bandedSolve(factor, Float64Array.from(state.gradient))
-    const next = descend(system, counts, volumes, weight, state, direction)
-    const moved = largestDifference(next.eta, state.eta)
+    const next = descend(system, counts, offsets, weight, state, direction)
+    const { moved, felt } = stepLength(state, next)
     state = next
     factor = factorSystem(system, state.means, weight)
     const scale = 1 + largest(state.eta)
     if (moved <= converged * scale || (moved < ROUNDING * scale && moved >= previous)) break
+    if (step >= PATIENCE && felt < IMPATIENT_STEP) break
     if (step === MOST_STEPS) {
       throw new InvalidInputError('SINGULAR_SYSTEM', 'The counts do not determine a smooth curve.')
     }
@@ -89,6 +101,11 @@ export function penalisedFit(
   }
 }
 
+/** λ on the coefficients beyond which a fit no longer changes; see `penalisedFit`. */
+export function stiffestWeight({ basis }: PenalisedSystem, counts: Float64Array): number {
+  return (STIFFEST * counts.reduce((sum, count) => sum + count, 0)) / basis.size
+}
+
 interface State {
   readonly coefficients: Float64Array
   readonly eta: Float64Array
@@ -102,18 +119,17 @@ interface State {
 function evaluate(
   system: PenalisedSystem,
   counts: Float64Array,
-  volumes: Float64Array,
+  offsets: Float64Array,
   weight: number,
   coefficients: Float64Array,
 ): State {
-  const { basis, places } = system
+  const { basis, places, hold } = system
   const eta = binValues(basis, coefficients)
   const means = new Float64Array(basis.bins)
   const residuals = new Float64Array(basis.bins)
   let objective = 0
   for (let bin = 0; bin < basis.bins; bin++) {
-    // A bin that was not observed has mean 0 whatever η is there.
-    means[bin] = volumes[bin] === 0 ? 0 : volumes[bin] * Math.exp(eta[bin])
+    means[bin] = Math.exp(offsets[bin] + eta[bin])
     residuals[bin] = counts[bin] - means[bin]
     objective += means[bin] - counts[bin] * eta[bin]
   }
@@ -126,7 +142,9 @@ function evaluate(
   objective += 0.5 * weight * roughness
   const gradient = new Float64Array(basis.size)
   for (let index = 0; index < basis.size; index++) {
-    gradient[places[index]] = pull[index] - weight * stiffness[index]
+    const away = coefficients[index] - hold.level
+    objective += 0.5 * hold.strength * away * away
+    gradient[places[index]] = pull[index] - weight * stiffness[index] - hold.strength * away
   }
   return { coefficients, eta, means, roughness, gradient, objective }
 }
@@ -134,7 +152,7 @@ function evaluate(
 function descend(
   system: PenalisedSystem,
   counts: Float64Array,
-  volumes: Float64Array,
+  offsets: Float64Array,
   weight: number,
   state: State,
   direction: Float64Array,
@@ -147,7 +165,7 @@ function descend(
     for (let index = 0; index < moved.length; index++) {
       moved[index] = state.coefficients[index] + share * direction[places[index]]
     }
-    const next = evaluate(system, counts, volumes, weight, moved)
+    const next = evaluate(system, counts, offsets, weight, moved)
     if (share * longest < SAFE_STEP || next.objective <= state.objective) return next
     share /= 2
   }
@@ -158,14 +176,16 @@ function descend(
 function firstGuess(
   system: PenalisedSystem,
   counts: Float64Array,
-  volumes: Float64Array,
+  offsets: Float64Array,
   weight: number,
 ): Float64Array {
-  const weights = counts.map((count, bin) => (volumes[bin] === 0 ? 0 : count + 0.5))
-  const targets = weights.map((value, bin) => (value === 0 ? 0 : value * Math.log(value / volumes[bin])))
+  const weights = counts.map((count) => count + 0.5)
+  const targets = weights.map((value, bin) => value * (Math.log(value) - offsets[bin]))
   const pull = projectBins(system.basis, targets)
   const right = new Float64Array(pull.length)
-  for (let index = 0; index < pull.length; index++) right[system.places[index]] = pull[index]
+  for (let index = 0; index < pull.length; index++) {
+    right[system.places[index]] = pull[index] + system.hold.strength * system.hold.level
+  }
   const solved = bandedSolve(factorSystem(system, weights, weight), right)
   return pull.map((_, index) => solved[system.places[index]])
 }
@@ -191,8 +211,13 @@ function largest(values: Float64Array): number {
   return most
 }
 
-function largestDifference(one: Float64Array, other: Float64Array): number {
-  let most = 0
-  for (let index = 0; index < one.length; index++) most = Math.max(most, Math.abs(one[index] - other[index]))
-  return most
+/** Largest change of η, and the largest that matters: weighted by √μ where less than one count is expected. */
+function stepLength(before: State, after: State): { moved: number; felt: number } {
+  let [moved, felt] = [0, 0]
+  for (let bin = 0; bin < after.eta.length; bin++) {
+    const change = Math.abs(after.eta[bin] - before.eta[bin])
+    moved = Math.max(moved, change)
+    felt = Math.max(felt, change * Math.sqrt(Math.min(1, after.means[bin])))
+  }
+  return { moved, felt }
 }

@@ -1,12 +1,20 @@
 import { type BandedFactor, type BandedRows, factorBanded, factorRows } from '../numeric'
 import type { SmoothingBasis } from './smoothing-basis'
 
+/** A weak spring on each coefficient: adds (strength/2)(β − level)² to what is minimised. */
+export interface CoefficientHold {
+  /** In counts; 0 for none. */
+  readonly strength: number
+  readonly level: number
+}
+
 /**
- * The matrix H = B′WB + λ D′D of a basis as a band. On a circle the coefficients are interleaved from both sides
+ * The matrix H = B′WB + λ D′D + hold of a basis as a band. On a circle the coefficients are interleaved from both sides
  * (0, n−1, 1, n−2, …), which turns the cyclic band into a plain one of twice the width, so that one solver serves both.
  */
 export interface PenalisedSystem {
   readonly basis: SmoothingBasis
+  readonly hold: CoefficientHold
   readonly halfBandwidth: number
   /** Place of each coefficient in the band. */
   readonly places: Int32Array
@@ -18,18 +26,21 @@ export interface PenalisedSystem {
   readonly stackedRows: () => StackedRows
 }
 
-/** The rows of D and of B together, in the order of their first place. */
+/** The rows of D, of B and of the hold together, in the order of their first place. */
 interface StackedRows {
   readonly rows: BandedRows
-  /** Which row each one is: r for row r of D, −1 − i for bin i. */
+  /** What each row is weighted by: its bin, or one of `PENALTY_ROW` and `HOLD_ROW`. */
   readonly origins: Int32Array
 }
 
-/** Above this ratio of λ to the mean weight per coefficient the weights would lose half their digits beside λ D′D. */
-const STIFF = 1e7
+const PENALTY_ROW = -1
+const HOLD_ROW = -2
 
 /** Lays out the band of a basis once; λ and weights come later. */
-export function penalisedSystem(basis: SmoothingBasis): PenalisedSystem {
+export function penalisedSystem(
+  basis: SmoothingBasis,
+  hold: CoefficientHold = { strength: 0, level: 0 },
+): PenalisedSystem {
   const halfBandwidth = basis.periodic ? 6 : 3
   const stride = halfBandwidth + 1
   const { size, width } = basis
@@ -60,7 +71,7 @@ export function penalisedSystem(basis: SmoothingBasis): PenalisedSystem {
   }
   let stacked: StackedRows | null = null
   const stackedRows = () => (stacked ??= stackRows(basis, places, stride))
-  return { basis, halfBandwidth, places, penalty, slots, stackedRows }
+  return { basis, hold, halfBandwidth, places, penalty, slots, stackedRows }
 }
 
 function stackRows(
@@ -68,25 +79,27 @@ function stackRows(
   places: Int32Array,
   stride: number,
 ): StackedRows {
-  const origins = [
-    ...Array.from(penaltyStarts.keys()),
-    ...Array.from({ length: bins }, (_, bin) => -1 - bin),
-  ].map((origin) => {
-    const [start, count] = origin < 0 ? [starts[-1 - origin], width] : [penaltyStarts[origin], 4]
-    const columns = Array.from({ length: count }, (_, k) => places[(start + k) % size])
-    return { origin, columns, first: Math.min(...columns) }
-  })
-  origins.sort((one, other) => one.first - other.first)
-  const stacked = new Float64Array(origins.length * stride)
-  origins.forEach(({ origin, columns, first }, row) => {
-    columns.forEach((column, k) => {
-      const value = origin < 0 ? values[(-1 - origin) * width + k] : penaltyValues[origin * 4 + k]
-      stacked[row * stride + column - first] = value
-    })
+  const row = (origin: number, start: number, entries: Float64Array) => {
+    const columns = Array.from(entries, (_, k) => places[(start + k) % size])
+    return { origin, entries, columns, first: Math.min(...columns) }
+  }
+  const all = [
+    ...Array.from(penaltyStarts, (start, r) =>
+      row(PENALTY_ROW, start, penaltyValues.subarray(r * 4, r * 4 + 4)),
+    ),
+    // With one coefficient per bin the hold adds to the weight of the bin and needs no rows of its own.
+    ...Array.from({ length: width === 1 ? 0 : size }, (_, index) => row(HOLD_ROW, index, Float64Array.of(1))),
+    ...Array.from({ length: bins }, (_, bin) =>
+      row(bin, starts[bin], values.subarray(bin * width, (bin + 1) * width)),
+    ),
+  ].sort((one, other) => one.first - other.first)
+  const stacked = new Float64Array(all.length * stride)
+  all.forEach(({ entries, columns, first }, place) => {
+    columns.forEach((column, k) => (stacked[place * stride + column - first] = entries[k]))
   })
   return {
-    rows: { starts: Int32Array.from(origins, ({ first }) => first), values: stacked },
-    origins: Int32Array.from(origins, ({ origin }) => origin),
+    rows: { starts: Int32Array.from(all, ({ first }) => first), values: stacked },
+    origins: Int32Array.from(all, ({ origin }) => origin),
   }
 }
 
@@ -98,13 +111,11 @@ function stackRows(
  * @throws {InvalidInputError} SINGULAR_SYSTEM when the weights do not determine the coefficients
  */
 export function factorSystem(system: PenalisedSystem, weights: Float64Array, lambda: number): BandedFactor {
-  const { basis, penalty, slots, halfBandwidth } = system
+  const { basis, hold, penalty, slots, halfBandwidth } = system
   const { width, values, bins, size } = basis
-  let total = 0
-  for (let bin = 0; bin < bins; bin++) total += weights[bin]
-  if (lambda * size > STIFF * total) return factorStiff(system, weights, lambda)
   const matrix = new Float64Array(penalty.length)
   for (let entry = 0; entry < matrix.length; entry++) matrix[entry] = penalty[entry] * lambda
+  for (let index = 0; index < size; index++) matrix[index * (halfBandwidth + 1)] += hold.strength
   let next = 0
   for (let bin = 0; bin < bins; bin++) {
     for (let j = 0; j < width; j++) {
@@ -112,14 +123,18 @@ export function factorSystem(system: PenalisedSystem, weights: Float64Array, lam
       for (let k = 0; k <= j; k++) matrix[slots[next++]] += share * values[bin * width + k]
     }
   }
-  return factorBanded(matrix, size, halfBandwidth)
+  return factorBanded(matrix, size, halfBandwidth) ?? factorStiff(system, weights, lambda)
 }
 
 function factorStiff(system: PenalisedSystem, weights: Float64Array, lambda: number): BandedFactor {
   const { rows, origins } = system.stackedRows()
+  const held = system.hold.strength
+  const shared = system.basis.width === 1 ? held : 0
   const scales = new Float64Array(origins.length)
   for (let row = 0; row < scales.length; row++) {
-    scales[row] = Math.sqrt(origins[row] < 0 ? weights[-1 - origins[row]] : lambda)
+    const origin = origins[row]
+    const squared = origin === PENALTY_ROW ? lambda : origin === HOLD_ROW ? held : weights[origin] + shared
+    scales[row] = Math.sqrt(squared)
   }
   return factorRows(rows, scales, system.basis.size, system.halfBandwidth)
 }

@@ -2,7 +2,7 @@ import { bandedSolve } from '../numeric'
 import { lambdaByAic } from './lambda-by-aic'
 import { lambdaByLikelihood } from './lambda-by-likelihood'
 import { type LambdaSearch, lambdaSearch, type LambdaTrial } from './lambda-search'
-import { type BinGeometry, effectiveVolumes } from './effective-volumes'
+import { type BinGeometry, logEffectiveVolumes } from './effective-volumes'
 import { identityBasis } from './identity-basis'
 import { type PenalisedFit, penalisedFit } from './penalised-fit'
 import { binValues, penalisedSystem, type PenalisedSystem, projectBins } from './penalised-system'
@@ -15,6 +15,12 @@ const SPLINE_COEFFICIENTS = 200
 const SEARCHES = 3
 /** Fits with the final λ, each with effective volumes from the fit before. */
 const REFITS = 3
+
+/**
+ * A spring of this strength, in counts, holds each coefficient to the mean log-density. It is felt only where bins are empty
+ * and the penalty too weak to guide the curve, which beside a wall would otherwise run off to a million kT.
+ */
+const HOLD = 1e-8
 
 /** How λ is chosen, or the λ to take. */
 export type LambdaChoice = { readonly by: 'likelihood' | 'aic' } | { readonly log10Lambda: number }
@@ -45,14 +51,17 @@ export function smoothCounts(
   counts: Float64Array,
   choice: LambdaChoice,
 ): SmoothDensity {
-  const system = penalisedSystem(chooseBasis(geometry))
-  const volumesUnder = effectiveVolumes(geometry)
-  const start = startingPoint(system, counts, geometry, volumesUnder, choice)
+  const system = penalisedSystem(chooseBasis(geometry), {
+    strength: HOLD,
+    level: meanLevel(geometry, counts),
+  })
+  const offsetsUnder = logEffectiveVolumes(geometry)
+  const start = startingPoint(system, counts, geometry, offsetsUnder, choice)
   const log10Lambda = Math.round(start.log10Lambda * 100) / 100
-  const refit = (volumes: Float64Array, from: Float64Array | null) =>
-    penalisedFit(system, counts, volumes, 10 ** log10Lambda, from)
-  let fit = start.fit ?? refit(geometry.volumes, null)
-  for (let pass = 0; pass < REFITS; pass++) fit = refit(volumesUnder(fit.eta), fit.coefficients)
+  const refit = (offsets: Float64Array, from: Float64Array | null) =>
+    penalisedFit(system, counts, offsets, 10 ** log10Lambda, from)
+  let fit = start.fit ?? refit(geometry.volumes.map(Math.log), null)
+  for (let pass = 0; pass < REFITS; pass++) fit = refit(offsetsUnder(fit.eta), fit.coefficients)
   return {
     eta: fit.eta,
     means: fit.means,
@@ -62,17 +71,23 @@ export function smoothCounts(
   }
 }
 
+/** ln of all counts over all volume. */
+function meanLevel({ volumes }: BinGeometry, counts: Float64Array): number {
+  const sum = (values: Float64Array) => values.reduce((total, value) => total + value, 0)
+  return Math.log(sum(counts) / sum(volumes))
+}
+
 function startingPoint(
   system: PenalisedSystem,
   counts: Float64Array,
   geometry: BinGeometry,
-  volumesUnder: (eta: Float64Array) => Float64Array,
+  offsetsUnder: (eta: Float64Array) => Float64Array,
   choice: LambdaChoice,
 ): { readonly log10Lambda: number; readonly fit: PenalisedFit | null } {
   if ('log10Lambda' in choice) return { log10Lambda: choice.log10Lambda, fit: null }
   return choice.by === 'aic'
-    ? searchLambda(lambdaByAic, system, counts, geometry, volumesUnder)
-    : searchLambda(lambdaByLikelihood, system, counts, geometry, volumesUnder)
+    ? searchLambda(lambdaByAic, system, counts, geometry, offsetsUnder)
+    : searchLambda(lambdaByLikelihood, system, counts, geometry, offsetsUnder)
 }
 
 /** Looks for λ a few times, each time with the effective volumes of the curve found before. */
@@ -81,11 +96,11 @@ function searchLambda<Found extends LambdaTrial>(
   system: PenalisedSystem,
   counts: Float64Array,
   { volumes }: BinGeometry,
-  volumesUnder: (eta: Float64Array) => Float64Array,
+  offsetsUnder: (eta: Float64Array) => Float64Array,
 ): LambdaTrial {
-  let found = look(lambdaSearch(system, counts, volumes), null)
+  let found = look(lambdaSearch(system, counts, volumes.map(Math.log)), null)
   for (let pass = 1; pass < SEARCHES; pass++) {
-    found = look(lambdaSearch(system, counts, volumesUnder(found.fit.eta)), found)
+    found = look(lambdaSearch(system, counts, offsetsUnder(found.fit.eta)), found)
   }
   return found
 }

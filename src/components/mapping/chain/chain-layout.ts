@@ -1,79 +1,110 @@
 import type { Point, RepeatUnit } from '@shared/chemistry'
-import { beadGraph, beadLinks, type BeadPlace, type MappingDocument } from '@shared/mapping'
+import { beadGraph, type BeadPlace, type MappingDocument } from '@shared/mapping'
+import { countCollisions } from './count-collisions'
+import { hangUnit, type Slope } from './hang-unit'
+import { unitLayers } from './unit-layers'
 
-/** The chain as it runs: beads of three units, the ones on the backbone on one line, side groups below. */
+/** The chain as it runs: beads of three units, the ones on the backbone on one line, side groups below. Lengths in px. */
 export interface ChainLayout {
   readonly beads: readonly (BeadPlace & Point)[]
-  readonly bonds: readonly { readonly from: Point; readonly to: Point }[]
+  readonly bonds: readonly { readonly from: BeadPlace & Point; readonly to: BeadPlace & Point }[]
+  /** From the left edge to the first bead of the line, and from its last one to the right edge; null when no unit is linked. */
+  readonly ends: { readonly first: Point; readonly last: Point } | null
+  /** Shift from one unit to the next. */
+  readonly unitWidth: number
+  readonly width: number
+  readonly height: number
+}
+
+/** Room for the drawing, px. */
+export interface ChainRoom {
   readonly width: number
   readonly height: number
 }
 
 export const CHAIN_UNITS = 3
-const UNIT_WIDTH = 200
-const LINE = 34
-const DEPTH_STEP = 23
-const SIDE_STEP = 19
-const ROOM_BELOW = 18
+export const BEAD_RADIUS = 10
+const WIDEST_UNIT = 200
+const NARROWEST_STEP = 34
+const MARGIN = { left: 44, right: 36, top: 20, bottom: 18 }
+/** From the steep one of a short side chain to ever flatter ones, all with 30 px from bead to bead. */
+const SLOPES: readonly Slope[] = [23, 20, 17, 14, 11, 8, 5].map((down) => ({
+  along: Math.sqrt(900 - down * down),
+  down,
+}))
 
-/** Lays out the bead graph of a short chain. */
-export function chainLayout(unit: RepeatUnit, document: MappingDocument): ChainLayout {
+/**
+ * Lays out the bead graph of a short chain. Of the unit widths and slopes that are tried the one is taken in which the fewest
+ * beads and bonds lie on one another, then the one that has to be shrunk least, then the steepest and widest.
+ */
+export function chainLayout(unit: RepeatUnit, document: MappingDocument, room: ChainRoom): ChainLayout {
   const graph = beadGraph(unit, document, CHAIN_UNITS)
-  const inUnit = unitPlaces(unit, document)
-  const beads = graph.beads.map((place) => {
-    const index = document.beads.findIndex(({ id }) => id === place.bead)
-    const { x, y } = inUnit[index]
-    return { ...place, x: x + place.unit * UNIT_WIDTH, y }
-  })
-  const deepest = beads.reduce((most, { y }) => Math.max(most, y), LINE)
-  return {
-    beads,
-    bonds: graph.bonds.map(({ from, to }) => ({ from: beads[from], to: beads[to] })),
-    width: CHAIN_UNITS * UNIT_WIDTH,
-    height: deepest + ROOM_BELOW,
-  }
-}
-
-/** Places of the beads in the first unit: the path that links the units level, everything else hanging from it. */
-function unitPlaces(unit: RepeatUnit, document: MappingDocument): Point[] {
-  const links = beadLinks(unit, document)
-  const neighbours = document.beads.map((_, bead) =>
-    links.filter(({ from, shift }) => from === bead && shift === 0).map(({ to }) => to),
-  )
-  const entry = links.find(({ shift }) => shift < 0)?.from ?? 0
-  const exit = links.find(({ shift }) => shift > 0)?.from ?? entry
-  const line = shortestPath(neighbours, entry, exit)
-  const places: (Point | undefined)[] = document.beads.map(() => undefined)
-  line.forEach((bead, step) => {
-    places[bead] = { x: ((step + 0.5) * UNIT_WIDTH) / line.length - UNIT_WIDTH / 4, y: LINE }
-  })
-  const queue = [...line]
-  for (const bead of queue) {
-    const from = places[bead] as Point
-    const children = neighbours[bead].filter((child) => places[child] === undefined)
-    children.forEach((child, order) => {
-      const side = order % 2 === 0 ? 1 : -1
-      places[child] = { x: from.x + side * SIDE_STEP * (1 + Math.floor(order / 2)), y: from.y + DEPTH_STEP }
-      queue.push(child)
-    })
-  }
-  // Beads that nothing holds yet wait below the line.
-  return places.map((place, bead) => place ?? { x: bead * SIDE_STEP, y: LINE + 4 * DEPTH_STEP })
-}
-
-function shortestPath(neighbours: readonly (readonly number[])[], from: number, to: number): number[] {
-  if (neighbours.length === 0) return []
-  const before = new Map<number, number>([[from, from]])
-  const queue = [from]
-  for (const bead of queue) {
-    for (const next of neighbours[bead]) {
-      if (before.has(next)) continue
-      before.set(next, bead)
-      queue.push(next)
+  const layers = unitLayers(unit, document)
+  const narrowest = NARROWEST_STEP * Math.max(1, layers.line.length)
+  const widest = Math.max(WIDEST_UNIT, narrowest)
+  const slopes = layers.layers.length > 1 ? SLOPES : SLOPES.slice(0, 1)
+  let best: { layout: ChainLayout; collisions: number; scale: number } | null = null
+  for (const slope of slopes) {
+    for (let unitWidth = widest; unitWidth >= narrowest; unitWidth -= 10) {
+      const inUnit = hangUnit(layers, unitWidth / Math.max(1, layers.line.length), slope)
+      const layout = repeated(graph, document, inUnit, unitWidth, layers.linked ? layers.line : null)
+      const collisions = countCollisions({ beads: layout.beads, bonds: indexed(layout) })
+      const scale = chainScale(layout, room)
+      if (
+        best === null ||
+        collisions < best.collisions ||
+        (collisions === best.collisions && scale > best.scale)
+      )
+        best = { layout, collisions, scale }
+      if (collisions === 0 && scale === 1) return layout
     }
   }
-  if (!before.has(to)) return [from]
-  const path = [to]
-  while (path[0] !== from) path.unshift(before.get(path[0]) as number)
-  return path
+  return (best as { layout: ChainLayout }).layout
+}
+
+/** By how much a drawing is shrunk to fit; never magnified. */
+export function chainScale({ width, height }: ChainRoom, room: ChainRoom): number {
+  return Math.min(1, room.width / width, room.height / height)
+}
+
+function repeated(
+  graph: ReturnType<typeof beadGraph>,
+  document: MappingDocument,
+  inUnit: readonly (Point | undefined)[],
+  unitWidth: number,
+  line: readonly number[] | null,
+): ChainLayout {
+  const points = inUnit.filter((point) => point !== undefined)
+  const left = Math.min(0, ...points.map(({ x }) => x)) - MARGIN.left
+  const right = Math.max(0, ...points.map(({ x }) => x)) + MARGIN.right
+  const at = (point: Point, unit: number): Point => ({
+    x: point.x - left + unit * unitWidth,
+    y: point.y + MARGIN.top,
+  })
+  const all = graph.beads.map((place, index) => {
+    const point = inUnit[index % document.beads.length]
+    return point && { ...place, ...at(point, place.unit) }
+  })
+  const ends =
+    line === null
+      ? null
+      : {
+          first: at(inUnit[line[0]] as Point, 0),
+          last: at(inUnit[line[line.length - 1]] as Point, CHAIN_UNITS - 1),
+        }
+  return {
+    beads: all.filter((bead) => bead !== undefined),
+    bonds: graph.bonds.flatMap(({ from, to }) => {
+      const [one, other] = [all[from], all[to]]
+      return one && other ? [{ from: one, to: other }] : []
+    }),
+    ends,
+    unitWidth,
+    width: (CHAIN_UNITS - 1) * unitWidth + right - left,
+    height: Math.max(0, ...points.map(({ y }) => y)) + MARGIN.top + MARGIN.bottom,
+  }
+}
+
+function indexed({ beads, bonds }: ChainLayout): { from: number; to: number }[] {
+  return bonds.map(({ from, to }) => ({ from: beads.indexOf(from), to: beads.indexOf(to) }))
 }

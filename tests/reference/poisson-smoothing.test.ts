@@ -11,7 +11,9 @@ interface Case {
   readonly results: readonly {
     readonly lambda: number
     readonly eta: readonly number[]
-    readonly effective_dimension?: number
+    readonly effective_dimension: number
+    readonly deviance: number
+    readonly posterior_cov_diag: readonly number[]
   }[]
 }
 
@@ -23,10 +25,18 @@ describe.each(fixture.expected.cases as readonly Case[])('penalised Poisson smoo
   const counts = Float64Array.from(given.counts)
   const offsets = Float64Array.from(given.bin_volume, Math.log)
 
-  it.each(given.results)('λ = $lambda gives the same log-density', ({ lambda, eta }) => {
-    const fit = penalisedFit(system, counts, offsets, lambda, null)
-    fit.eta.forEach((value, bin) => {
-      expect(Math.abs(value - eta[bin])).toBeLessThan(Math.max(fixture.tolerance.abs_eta, 1e-9))
-    })
-  })
+  it.each(given.results)(
+    'λ = $lambda gives the same curve, dimension, deviance and variances',
+    (expected) => {
+      const fit = penalisedFit(system, counts, offsets, expected.lambda, null)
+      fit.eta.forEach((value, bin) => {
+        expect(Math.abs(value - expected.eta[bin])).toBeLessThan(fixture.tolerance.abs_eta)
+      })
+      const near = (value: number, reference: number) =>
+        expect(Math.abs(value / reference - 1)).toBeLessThan(fixture.tolerance.rel_others)
+      near(fit.effectiveDimension, expected.effective_dimension)
+      near(fit.deviance, expected.deviance)
+      fit.variances.forEach((variance, bin) => near(variance, expected.posterior_cov_diag[bin]))
+    },
+  )
 })

@@ -1,14 +1,11 @@
 import type { DerivedTerm } from '@shared/mapping'
+import { numberWord } from '../number-words'
 import { CHAIN_UNITS } from './chain-layout'
 
-const NUMBERS = ['no', 'one', 'two', 'three', 'four', 'five', 'six', 'seven', 'eight', 'nine', 'ten']
-const ORDINALS = ['', 'first', 'second', 'third', 'fourth', 'fifth', 'sixth', 'seventh']
-
-/** What is lit, in words: 'B–B–E at its two places', 'B–B on the chain'. */
-export function placesPhrase(term: DerivedTerm, beyond: boolean): string {
+/** What is lit, in words: 'B–B–E at its two places', 'B–B–B–B on the chain, over four units'. */
+export function placesPhrase(term: DerivedTerm): string {
   const classes = new Set(term.placeClasses).size
-  const where = classes > 1 ? `at its ${NUMBERS[classes] ?? classes} places` : 'on the chain'
-  const span = Math.max(...term.places.flat().map(({ unit }) => unit)) + 1
-  const last = ORDINALS[span] ?? `${span}th`
-  return `${term.name} ${where}${beyond && span > CHAIN_UNITS ? `, reaching into a ${last} unit` : ''}`
+  const where = classes > 1 ? `at its ${numberWord(classes)} places` : 'on the chain'
+  const units = Math.max(...term.places.flat().map(({ unit }) => unit)) + 1
+  return `${term.name} ${where}${units > CHAIN_UNITS ? `, over ${numberWord(units)} units` : ''}`
 }

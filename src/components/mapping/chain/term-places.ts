@@ -13,8 +13,6 @@ export interface TermPlaces {
   readonly rows: readonly (readonly Point[])[]
   /** At the bonds by which places that differ can be told apart. */
   readonly notes: readonly PlaceNote[]
-  /** A place needs more units than are drawn, and runs off the drawing. */
-  readonly beyond: boolean
 }
 
 /** Room that a note needs between two discs, px. */
@@ -36,11 +34,7 @@ export function termPlaces(
     })
   }
   const rows = term.places.map(rowOf)
-  return {
-    rows,
-    notes: placeNotes(term, rows, unit, document),
-    beyond: term.places.some((place) => Math.max(...place.map(({ unit: at }) => at)) >= CHAIN_UNITS),
-  }
+  return { rows, notes: placeNotes(term, rows, unit, document) }
 }
 
 function placeShift(place: Place): number {

@@ -28,7 +28,7 @@ export function shortCoordinate(value: number, unit: CoordinateUnit): string {
 
 /**
  * Coordinates of a file in internal units, checked against the domain of their kind. Radians printed as a rounded
- * multiple of π are taken as that multiple, so that 3.1416 is the straight angle and not beyond it. A dihedral may be
+ * multiple of π, and any angle within 1e-9 rad of one, are that multiple: 3.1416 is straight and not beyond it. A dihedral may be
  * given in −180…180° or in 0…360°, not in both; it is not folded here.
  *
  * @throws {InvalidInputError} BOND_NOT_POSITIVE: below zero, or at zero for a sample; ANGLE_OUT_OF_RANGE;
@@ -37,9 +37,8 @@ export function shortCoordinate(value: number, unit: CoordinateUnit): string {
 export function coordinateValues(coordinates: FileCoordinates, role: CoordinateRole): Float64Array {
   const { values, kind, unit } = coordinates
   if (kind === 'bond') checkBonds(coordinates, role)
-  const internal = values.map(
-    unit === 'radian' ? fromPrintedRadian : (value) => coordinateToInternal(value, unit),
-  )
+  const internal = values.map((value) => coordinateToInternal(value, unit))
+  if (kind !== 'bond') internal.forEach((value, index) => (internal[index] = onTurn(value, unit)))
   if (kind === 'angle') checkAngles(coordinates, internal)
   if (kind === 'dihedral') checkDihedrals(coordinates, internal)
   return internal
@@ -88,12 +87,19 @@ function outside(
   )
 }
 
+/** Multiples of π that are ends of a domain. */
+const TURN_ENDS = [-Math.PI, 0, Math.PI, 2 * Math.PI]
+/** What the arithmetic of the program that wrote the file leaves behind, rad. */
+const ROUNDING = 1e-9
+
 /** −π, π and 2π as they look after rounding to 2 … 12 decimals, with the exact value. */
 const PRINTED_TURNS = new Map<number, number>()
 for (const exact of [-Math.PI, Math.PI, 2 * Math.PI]) {
   for (let decimals = 2; decimals <= 12; decimals++) PRINTED_TURNS.set(Number(exact.toFixed(decimals)), exact)
 }
 
-function fromPrintedRadian(value: number): number {
-  return PRINTED_TURNS.get(value) ?? value
+/** The end of a domain that a value stands for, or the value itself. */
+function onTurn(value: number, unit: CoordinateUnit): number {
+  const end = TURN_ENDS.find((each) => Math.abs(value - each) < ROUNDING)
+  return end ?? (unit === 'radian' ? PRINTED_TURNS.get(value) : undefined) ?? value
 }

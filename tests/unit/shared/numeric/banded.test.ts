@@ -1,5 +1,5 @@
 import fc from 'fast-check'
-import { inv, lusolve, type Matrix, matrix } from 'mathjs'
+import { inv, lusolve, matrix } from 'mathjs'
 import { describe, expect, it } from 'vitest'
 import { bandedSolve, factorBanded, selectedInverse } from '@shared/numeric'
 
@@ -34,7 +34,7 @@ describe('the banded solver', () => {
         const factor = factorBanded(rows, SIZE, HALF)
         if (factor === null) throw new Error('A diagonally dominant matrix is positive definite.')
         const solved = bandedSolve(factor, Float64Array.from(right))
-        const dense = (lusolve(matrix(full), right)).toArray().flat() as number[]
+        const dense = lusolve(matrix(full), right).toArray().flat() as number[]
         solved.forEach((value, row) => expect(value).toBeCloseTo(dense[row], 10))
       }),
       { numRuns: 50 },

@@ -7,9 +7,6 @@ import {
 } from 'vue-router'
 import { installGuards } from './guards'
 
-const views = import.meta.glob<{ default: object }>('../views/*View.vue')
-const view = (name: string) => views[`../views/${name}View.vue`] ?? views['../views/NotFoundView.vue']
-
 declare module 'vue-router' {
   interface RouteMeta {
     /** Stands after the product's name in the window title. */
@@ -25,44 +22,79 @@ const workbenchRooms: RouteRecordRaw[] = [
     name: 'workbench',
     redirect: (to: RouteLocation) => ({ name: 'mapping', params: to.params, query: to.query }),
   },
-  { path: 'mapping', name: 'mapping', component: view('Mapping'), meta: { title: 'Mapping' } },
-  { path: 'intake', name: 'intake', component: view('Intake'), meta: { title: 'Intake' } },
-  { path: 'bench/:termId?', name: 'bench', component: view('Bench'), meta: { title: 'Bench' } },
+  {
+    path: 'mapping',
+    name: 'mapping',
+    component: () => import('@/views/MappingView.vue'),
+    meta: { title: 'Mapping' },
+  },
+  {
+    path: 'intake',
+    name: 'intake',
+    component: () => import('@/views/IntakeView.vue'),
+    meta: { title: 'Intake' },
+  },
+  {
+    path: 'bench/:termId?',
+    name: 'bench',
+    component: () => import('@/views/BenchView.vue'),
+    meta: { title: 'Bench' },
+  },
   {
     path: 'correlation/:pair?',
     name: 'correlation',
-    component: view('Correlation'),
+    component: () => import('@/views/CorrelationView.vue'),
     meta: { title: 'Correlation' },
   },
-  { path: 'tables', name: 'tables', component: view('Tables'), meta: { title: 'Tables' } },
+  {
+    path: 'tables',
+    name: 'tables',
+    component: () => import('@/views/TablesView.vue'),
+    meta: { title: 'Tables' },
+  },
 ]
 
 const routes: RouteRecordRaw[] = [
-  { path: '/', name: 'front-desk', component: view('FrontDesk'), meta: { title: 'Front desk' } },
-  { path: '/sign-in', name: 'sign-in', component: view('SignIn'), meta: { title: 'Sign in', open: true } },
+  {
+    path: '/',
+    name: 'front-desk',
+    component: () => import('@/views/FrontDeskView.vue'),
+    meta: { title: 'Front desk' },
+  },
+  {
+    path: '/sign-in',
+    name: 'sign-in',
+    component: () => import('@/views/SignInView.vue'),
+    meta: { title: 'Sign in', open: true },
+  },
   {
     path: '/set-up/:token',
     name: 'set-up',
-    component: view('SetUp'),
+    component: () => import('@/views/SetUpView.vue'),
     meta: { title: 'Set up', open: true },
   },
   {
     path: '/polymers/new',
     name: 'polymer-new',
-    component: view('PolymerNew'),
+    component: () => import('@/views/PolymerNewView.vue'),
     meta: { title: 'New polymer' },
   },
-  { path: '/polymers/:polymerId', name: 'polymer', component: view('Polymer'), meta: { title: 'Polymer' } },
+  {
+    path: '/polymers/:polymerId',
+    name: 'polymer',
+    component: () => import('@/views/PolymerView.vue'),
+    meta: { title: 'Polymer' },
+  },
   {
     path: '/polymers/:polymerId/mappings/:mappingId',
-    component: view('Workbench'),
+    component: () => import('@/views/WorkbenchView.vue'),
     meta: { title: 'Mapping' },
     children: workbenchRooms,
   },
   {
     path: '/:path(.*)*',
     name: 'not-found',
-    component: view('NotFound'),
+    component: () => import('@/views/NotFoundView.vue'),
     meta: { title: 'Not found', open: true },
   },
 ]

@@ -1,5 +1,5 @@
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest'
-import type { ApiError} from '@/api/http';
+import type { ApiError } from '@/api/http'
 import { apiUrl, http, setCsrfToken, setSignedOutHandler, uploadForm } from '@/api/http'
 import { fakeApi } from '../../../support/mount'
 

@@ -2,8 +2,8 @@ import { performance } from 'node:perf_hooks'
 import { expect, test } from 'vitest'
 import { createHistogram, type CoordinateKind, type Histogram } from '@shared/histogram'
 import { DEFAULT_INVERSION_SETTINGS, invert } from '@shared/inversion'
+import { createRandom } from '@shared/numeric'
 import { makeTable } from '@shared/tables'
-import { poissonCounts, seededUniform } from '../support/random-counts'
 
 const BINS = [90, 360, 1000, 5000]
 const SAMPLES = 100_000
@@ -51,8 +51,8 @@ function noisyHistogram({ kind, range: [low, high], energy }: Case, bins: number
     return volume * Math.exp(-energy(middle))
   })
   const total = masses.reduce((sum, mass) => sum + mass, 0)
-  const random = seededUniform(7)
-  const weights = masses.map((mass) => poissonCounts((SAMPLES * mass) / total, random))
+  const random = createRandom(7)
+  const weights = masses.map((mass) => random.poisson((SAMPLES * mass) / total))
   return createHistogram({ kind, edges, weights, content: 'count' })
 }
 

@@ -66,6 +66,7 @@ function found(
     case 'ATOM_UNKNOWN':
       return beads.map(({ id, name }) => ({ label: `Remove ${name}`, act: { kind: 'remove', bead: id } }))
     case 'RING_CUT':
+    case 'TERMS_TOO_MANY':
       return []
   }
 }

@@ -22,6 +22,9 @@ export interface ChainRoom {
   readonly height: number
 }
 
+/** The room of the board on a desk at 1280 px. */
+export const DESK_ROOM: ChainRoom = { width: 680, height: 134 }
+
 export const CHAIN_UNITS = 3
 export const BEAD_RADIUS = 10
 const WIDEST_UNIT = 200
@@ -37,7 +40,11 @@ const SLOPES: readonly Slope[] = [23, 20, 17, 14, 11, 8, 5].map((down) => ({
  * Lays out the bead graph of a short chain. Of the unit widths and slopes that are tried the one is taken in which the fewest
  * beads and bonds lie on one another, then the one that has to be shrunk least, then the steepest and widest.
  */
-export function chainLayout(unit: RepeatUnit, document: MappingDocument, room: ChainRoom): ChainLayout {
+export function chainLayout(
+  unit: RepeatUnit,
+  document: MappingDocument,
+  room: ChainRoom = DESK_ROOM,
+): ChainLayout {
   const graph = beadGraph(unit, document, CHAIN_UNITS)
   const layers = unitLayers(unit, document)
   const narrowest = NARROWEST_STEP * Math.max(1, layers.line.length)
@@ -48,8 +55,10 @@ export function chainLayout(unit: RepeatUnit, document: MappingDocument, room: C
     for (let unitWidth = widest; unitWidth >= narrowest; unitWidth -= 10) {
       const inUnit = hangUnit(layers, unitWidth / Math.max(1, layers.line.length), slope)
       const layout = repeated(graph, document, inUnit, unitWidth, layers.linked ? layers.line : null)
-      const collisions = countCollisions({ beads: layout.beads, bonds: indexed(layout) })
       const scale = chainScale(layout, room)
+      // Counting takes nearly all of the time, and this one could not be taken.
+      if (best?.collisions === 0 && scale <= best.scale) continue
+      const collisions = countCollisions({ beads: layout.beads, bonds: indexed(layout) })
       if (
         best === null ||
         collisions < best.collisions ||

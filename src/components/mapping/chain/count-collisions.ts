@@ -16,20 +16,22 @@ export function countCollisions({ beads, bonds }: BeadDrawing): number {
   let count = 0
   beads.forEach((bead, index) => {
     for (let other = 0; other < index; other++) {
-      if (Math.hypot(bead.x - beads[other].x, bead.y - beads[other].y) < BEAD_TO_BEAD) count++
+      const [dx, dy] = [bead.x - beads[other].x, bead.y - beads[other].y]
+      if (dx * dx + dy * dy < BEAD_TO_BEAD ** 2) count++
     }
     for (const { from, to } of bonds) {
       if (from === index || to === index) continue
-      if (distanceToBond(bead, beads[from], beads[to]) < BEAD_TO_BOND) count++
+      if (squaredDistance(bead, beads[from], beads[to]) < BEAD_TO_BOND ** 2) count++
     }
   })
   return count
 }
 
-function distanceToBond(point: Point, from: Point, to: Point): number {
+/** From a point to the nearest point of a bond. */
+function squaredDistance(point: Point, from: Point, to: Point): number {
   const [dx, dy] = [to.x - from.x, to.y - from.y]
   const square = dx * dx + dy * dy
   const share = square === 0 ? 0 : ((point.x - from.x) * dx + (point.y - from.y) * dy) / square
   const within = Math.min(1, Math.max(0, share))
-  return Math.hypot(point.x - from.x - within * dx, point.y - from.y - within * dy)
+  return (point.x - from.x - within * dx) ** 2 + (point.y - from.y - within * dy) ** 2
 }

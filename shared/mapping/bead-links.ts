@@ -46,16 +46,10 @@ export function atomLinks(unit: RepeatUnit): AtomLink[] {
  * @throws {InvalidInputError} MAPPING_INVALID when a bead names an atom that the unit does not have
  */
 export function beadLinks(unit: RepeatUnit, document: MappingDocument): BeadLink[] {
+  checkAtoms(unit, document)
   const holders: { bead: number; unit: number }[][] = unit.atoms.map(() => [])
   document.beads.forEach((bead, index) => {
     for (const { atom, unit: offset } of bead.atoms) {
-      if (atom >= unit.atoms.length) {
-        throw new InvalidInputError(
-          'MAPPING_INVALID',
-          `Bead ${bead.name} names atom ${atom + 1}; the repeat unit has ${unit.atoms.length}.`,
-          { field: 'document', index: atom },
-        )
-      }
       holders[atom].push({ bead: index, unit: offset })
     }
   })
@@ -81,4 +75,21 @@ export function beadLinks(unit: RepeatUnit, document: MappingDocument): BeadLink
     }
   }
   return [...links.values()]
+}
+
+/**
+ * Refuses a mapping that names atoms the unit does not have.
+ *
+ * @throws {InvalidInputError} MAPPING_INVALID
+ */
+export function checkAtoms(unit: RepeatUnit, document: MappingDocument): void {
+  for (const { name, atoms } of document.beads) {
+    const unknown = atoms.find(({ atom }) => atom >= unit.atoms.length)
+    if (unknown === undefined) continue
+    throw new InvalidInputError(
+      'MAPPING_INVALID',
+      `Bead ${name} names atom ${unknown.atom + 1}; the repeat unit has ${unit.atoms.length}.`,
+      { field: 'document', index: unknown.atom },
+    )
+  }
 }

@@ -3,11 +3,13 @@ import { cutRings, looseAtoms, unknownAtoms, wrongShares } from './check-atoms'
 import { beadInPieces, emptyBead, mixedTypes, sameNames, siteOutside } from './check-beads'
 import type { MappingDocument } from './mapping-document'
 import type { MappingProblem } from './mapping-problem'
+import { tooManyPlaces } from './term-limit'
 
 /**
  * Everything about a mapping that a person should see, in the order in which it is best mended: unknown atoms (then nothing else
  * is said), atoms in no bead, shares that do not sum to 1, empty beads, beads in several pieces, sites outside their bead, names
- * given twice, one type for different compositions, rings cut through (a note).
+ * given twice, one type for different compositions, more places than terms are derived for, rings cut through
+ * (a note).
  *
  * @returns empty when the mapping is sound
  */
@@ -24,6 +26,7 @@ export function checkMapping(unit: RepeatUnit, document: MappingDocument): Mappi
     ]),
     ...sameNames(document),
     ...mixedTypes(unit, document),
+    ...tooManyPlaces(unit, document),
     ...cutRings(unit, document),
   ]
 }

@@ -1,10 +1,11 @@
 import type { RepeatUnit } from '../chemistry'
 import type { CoordinateKind } from '../histogram/histogram'
-import { beadLinks, type BeadLink } from './bead-links'
+import { beadLinks, checkAtoms, type BeadLink } from './bead-links'
 import { compareTypes, compareTypeSequences } from './compare-types'
 import type { MappingDocument } from './mapping-document'
 import { chainClasses, placeSignature } from './place-signature'
 import { termName, type DerivedTerm, type Place } from './term'
+import { checkTermPlaces } from './term-limit'
 
 const KINDS: readonly CoordinateKind[] = ['bond', 'angle', 'dihedral']
 
@@ -24,10 +25,13 @@ interface Row {
  * @param unit the repeat unit
  * @param document the mapping; atoms may still be in no bead
  * @returns bonds, angles, dihedrals, in each by the types they hold in natural order
- * @throws {InvalidInputError} MAPPING_INVALID when a bead names an atom that the unit does not have
+ * @throws {InvalidInputError} MAPPING_INVALID when a bead names an atom that the unit does not have, or when the terms stand
+ *   at more than `MAX_TERM_PLACES` places
  * @example deriveTerms(unit, oneBead).map((term) => term.name) // ['A–A', 'A–A–A', 'A–A–A–A']
  */
 export function deriveTerms(unit: RepeatUnit, document: MappingDocument): DerivedTerm[] {
+  checkAtoms(unit, document)
+  checkTermPlaces(unit, document)
   const links = beadLinks(unit, document)
   const classes = chainClasses(unit, document)
   const linksFrom: BeadLink[][] = document.beads.map(() => [])

@@ -15,4 +15,5 @@ export {
   type Site,
 } from './mapping-document'
 export type { MappingProblem, MappingProblemCode } from './mapping-problem'
+export { MAX_TERM_PLACES } from './term-limit'
 export { termName, type BeadPlace, type DerivedTerm, type Place } from './term'

@@ -7,6 +7,7 @@ export type MappingProblemCode =
   | 'BEAD_NAME_TWICE'
   | 'RING_CUT'
   | 'SITE_OUTSIDE'
+  | 'TERMS_TOO_MANY'
   | 'TYPE_COMPOSITION'
 
 /**

@@ -49,7 +49,12 @@ export function useMappingBoard(unit: Ref<RepeatUnit>, first: MappingDocument): 
     () => document.value.beads.find(({ id }) => id === chosen.value) ?? document.value.beads[0] ?? null,
   )
   const problems = computed(() => checkMapping(unit.value, document.value))
-  const terms = computed(() => deriveTerms(unit.value, document.value))
+  // With too many places there are no terms to list; the problem above says so.
+  const terms = computed(() =>
+    problems.value.some(({ code }) => code === 'TERMS_TOO_MANY')
+      ? []
+      : deriveTerms(unit.value, document.value),
+  )
 
   const select = (beadId: string): void => {
     chosen.value = beadId

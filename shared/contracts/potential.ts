@@ -1,4 +1,5 @@
 import { z } from 'zod'
+import { SETTING_LIMITS } from '../inversion/inversion-settings'
 import {
   angleUnitSchema,
   energyUnitSchema,
@@ -9,14 +10,16 @@ import {
   timestampSchema,
 } from './common'
 
-export const MIN_TABLE_ROWS = 10
-export const MAX_TABLE_ROWS = 20_000
+const { log10Lambda, rows } = SETTING_LIMITS
 
 const smoothingSchema = z
   .discriminatedUnion('mode', [
     z.object({ mode: z.literal('auto'), criterion: z.enum(['likelihood', 'aic']) }),
     z.object({ mode: z.literal('off') }),
-    z.object({ mode: z.literal('manual'), log10Lambda: z.number().min(-6).max(12) }),
+    z.object({
+      mode: z.literal('manual'),
+      log10Lambda: z.number().min(log10Lambda.low).max(log10Lambda.high),
+    }),
   ])
   .meta({ id: 'SmoothingSettings' })
 
@@ -27,7 +30,7 @@ export const inversionSettingsSchema = z
     jacobian: z.boolean(),
     smoothing: smoothingSchema,
     table: z.object({
-      rows: z.number().int().min(MIN_TABLE_ROWS).max(MAX_TABLE_ROWS),
+      rows: z.number().int().min(rows.low).max(rows.high),
       low: z.number().nullable(),
       high: z.number().nullable(),
       cap: z.number().positive().nullable(),

@@ -33,8 +33,11 @@ export const DEFAULT_INVERSION_SETTINGS: InversionSettings = {
   table: { rows: 1000, low: null, high: null, cap: null },
 }
 
-/** Limits that forms, contracts and the core all read. */
+/**
+ * Limits that forms, contracts and the core all read. λ reaches as far as any automatic choice on 5,000 bins and a billion
+ * counts, so that every choice can be repeated by hand.
+ */
 export const SETTING_LIMITS = {
-  log10Lambda: { low: -6, high: 25 },
+  log10Lambda: { low: -6, high: 30 },
   rows: { low: 2, high: 100_000 },
 } as const

@@ -33,6 +33,11 @@ interface StackedRows {
   readonly origins: Int32Array
 }
 
+/**
+ * Above this ratio of λ to the mean weight per coefficient H is not summed up: the rounding of λ D′D would reach the
+ * weights beside it, at this ratio with 1e-6 of the effective dimension.
+ */
+const STIFF = 1e8
 const PENALTY_ROW = -1
 const HOLD_ROW = -2
 
@@ -113,6 +118,9 @@ function stackRows(
 export function factorSystem(system: PenalisedSystem, weights: Float64Array, lambda: number): BandedFactor {
   const { basis, hold, penalty, slots, halfBandwidth } = system
   const { width, values, bins, size } = basis
+  let total = 0
+  for (let bin = 0; bin < bins; bin++) total += weights[bin]
+  if (lambda * size > STIFF * total) return factorStiff(system, weights, lambda)
   const matrix = new Float64Array(penalty.length)
   for (let entry = 0; entry < matrix.length; entry++) matrix[entry] = penalty[entry] * lambda
   for (let index = 0; index < size; index++) matrix[index * (halfBandwidth + 1)] += hold.strength

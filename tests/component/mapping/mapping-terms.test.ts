@@ -1,4 +1,4 @@
-import { mount } from '@vue/test-utils'
+import { flushPromises, mount } from '@vue/test-utils'
 import { afterEach, describe, expect, it } from 'vitest'
 import { parseRepeatUnit } from '@shared/chemistry'
 import { deriveTerms } from '@shared/mapping'
@@ -93,11 +93,13 @@ describe('MappingTerms', () => {
     expect(pointedAt(wrapper)).toEqual(['B–E', 'E–H', 'B–E', null])
   })
 
-  it('takes the focus to the explained term', async () => {
+  it('takes the focus to the explained term and asks for the chain', async () => {
     const wrapper = list()
     await wrapper.get('[aria-label=Warning] button').trigger('click')
+    await flushPromises()
     expect(document.activeElement?.getAttribute('data-term')).toBe('angle B–B–E')
     expect(pointedAt(wrapper)).toEqual(['B–B–E'])
+    expect(wrapper.emitted('show')).toHaveLength(1)
   })
 
   it('says why there is none', () => {

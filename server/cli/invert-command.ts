@@ -154,7 +154,7 @@ function inversionSettings(options: InvertOptions, unit: CoordinateUnit): Invers
   const bound = (value: number | undefined) =>
     value === undefined ? null : coordinateToInternal(value, unit)
   return {
-    version: 1,
+    ...DEFAULT_INVERSION_SETTINGS,
     jacobian: options.jacobian === 'on',
     smoothing: options.smoothing,
     table: { rows: options.rows, low: bound(options.from), high: bound(options.to), cap: null },

@@ -1,5 +1,5 @@
 import { z } from 'zod'
-import { SETTING_LIMITS } from '../inversion/inversion-settings'
+import { DEFAULT_INVERSION_SETTINGS, SETTING_LIMITS } from '../inversion/inversion-settings'
 import {
   angleUnitSchema,
   energyUnitSchema,
@@ -10,7 +10,9 @@ import {
   timestampSchema,
 } from './common'
 
-const { log10Lambda, rows } = SETTING_LIMITS
+const { log10Lambda, inefficiency, tailStiffness, rows } = SETTING_LIMITS
+/** Longest name of a form. */
+const FORM_NAME_LENGTH = 40
 
 const smoothingSchema = z
   .discriminatedUnion('mode', [
@@ -23,12 +25,26 @@ const smoothingSchema = z
   ])
   .meta({ id: 'SmoothingSettings' })
 
-/** Settings of an inversion (document version 1), in internal units (nm, rad, kJ/mol). null takes the default of the kind. */
+/**
+ * Settings of an inversion (document version 1), in internal units (nm, rad, kJ/mol). null takes the default of the kind,
+ * what the distribution says, or no form; what is left out takes the default of the core.
+ */
 export const inversionSettingsSchema = z
   .object({
     version: z.literal(1),
     jacobian: z.boolean(),
     smoothing: smoothingSchema,
+    inefficiency: z
+      .number()
+      .min(inefficiency.low)
+      .max(inefficiency.high)
+      .nullable()
+      .default(DEFAULT_INVERSION_SETTINGS.inefficiency),
+    straightAngle: z.enum(['free', 'level']).default(DEFAULT_INVERSION_SETTINGS.straightAngle),
+    tails: z
+      .object({ stiffness: z.number().min(tailStiffness.low).max(tailStiffness.high) })
+      .default(DEFAULT_INVERSION_SETTINGS.tails),
+    form: z.string().min(1).max(FORM_NAME_LENGTH).nullable().default(DEFAULT_INVERSION_SETTINGS.form),
     table: z.object({
       rows: z.number().int().min(rows.low).max(rows.high),
       low: z.number().nullable(),

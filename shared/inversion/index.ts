@@ -5,7 +5,9 @@ export {
   SETTING_LIMITS,
   type SmoothingCriterion,
   type SmoothingSettings,
+  type StraightAngle,
   type TableSettings,
+  type TailSettings,
 } from './inversion-settings'
 export { invert } from './invert'
 export type { Potential, PotentialTail } from './potential'

@@ -16,12 +16,27 @@ export interface TableSettings {
   readonly cap: number | null
 }
 
+/** What an angle does at 180°: whatever the data say, or its slope vanishes there, as that of a form in cos θ does. */
+export type StraightAngle = 'free' | 'level'
+
+/** How a bond or an angle goes on where its data end. */
+export interface TailSettings {
+  /** Least curvature of the quadratic tails as a multiple of kT/σ², the stiffness of a spring with the spread of the data. */
+  readonly stiffness: number
+}
+
 /** Everything a user may choose about an inversion; stored with each result. */
 export interface InversionSettings {
   readonly version: 1
   /** Divide by the exact volume of each bin; off divides by its width only. */
   readonly jacobian: boolean
   readonly smoothing: SmoothingSettings
+  /** Statistical inefficiency g ≥ 1 that counts are divided by; null takes what the distribution says. */
+  readonly inefficiency: number | null
+  readonly straightAngle: StraightAngle
+  readonly tails: TailSettings
+  /** Name of the analytic form the table is written from; null writes the smoothed curve itself. */
+  readonly form: string | null
   readonly table: TableSettings
 }
 
@@ -30,6 +45,10 @@ export const DEFAULT_INVERSION_SETTINGS: InversionSettings = {
   version: 1,
   jacobian: true,
   smoothing: { mode: 'auto', criterion: 'likelihood' },
+  inefficiency: null,
+  straightAngle: 'free',
+  tails: { stiffness: 0.5 },
+  form: null,
   table: { rows: 1000, low: null, high: null, cap: null },
 }
 
@@ -39,5 +58,7 @@ export const DEFAULT_INVERSION_SETTINGS: InversionSettings = {
  */
 export const SETTING_LIMITS = {
   log10Lambda: { low: -6, high: 30 },
+  inefficiency: { low: 1, high: 1e6 },
+  tailStiffness: { low: 0.05, high: 20 },
   rows: { low: 2, high: 100_000 },
 } as const

@@ -64,6 +64,9 @@ export function tableComments(input: TableCommentInput): string[] {
       input.settings.jacobian ? JACOBIANS[input.kind] : 'off: bins divided by their width only',
     ),
     line('smoothing', smoothingSentence(input)),
+    line('form', input.settings.form),
+    line('straight angle', straightAngleSentence(input)),
+    line('tails', tailSentence(input)),
     line('cap', capSentence(input)),
     line('input', input.input && `${input.input.name}, SHA-256 ${input.input.sha256}`),
     line('rows', `SHA-256 ${input.rowsSha256}`),
@@ -99,6 +102,15 @@ function smoothingSentence({ smoothing, independentSamples }: TableCommentInput)
       : `chosen by ${smoothing.criterion === 'aic' ? 'AIC' : 'marginal likelihood'}`
   const dimension = formatNumber(Number(smoothing.effectiveDimension.toPrecision(3)))
   return `log10 lambda ${smoothing.log10Lambda.toFixed(2)}, ${choice}; effective dimension ${dimension}; ${samples}`
+}
+
+function straightAngleSentence({ kind, settings }: TableCommentInput): string | null {
+  return kind === 'angle' && settings.straightAngle === 'level' ? 'made to level off at 180 deg' : null
+}
+
+function tailSentence({ kind, settings }: TableCommentInput): string | null {
+  if (kind === 'dihedral') return null
+  return `quadratic, curvature at least ${formatNumber(settings.tails.stiffness)} kT / variance of the data`
 }
 
 function capSentence({ settings, units }: TableCommentInput): string | null {

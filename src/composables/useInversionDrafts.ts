@@ -53,12 +53,16 @@ export function sameSettings(one: InversionSettings, other: InversionSettings): 
   return asText(one) === asText(other)
 }
 
-const asText = ({ jacobian, smoothing, table }: InversionSettings): string =>
+const asText = ({ jacobian, smoothing, table, ...rest }: InversionSettings): string =>
   JSON.stringify([
     jacobian,
     smoothing.mode,
     smoothing.mode === 'auto' ? smoothing.criterion : null,
     smoothing.mode === 'manual' ? smoothing.log10Lambda : null,
+    rest.inefficiency,
+    rest.straightAngle,
+    rest.tails.stiffness,
+    rest.form,
     table.rows,
     table.low,
     table.high,

@@ -1,7 +1,7 @@
 import { computed, reactive, type ComputedRef } from 'vue'
 import type { Histogram } from '@shared/histogram'
 import { coordinateFromInternal, type CoordinateKind } from '@shared/units'
-import { coordinateUnitOf, type DisplayUnits } from '@/components/bench/figure/coordinate-names'
+import { coordinateUnitOf, type DisplayUnits } from '@/components/figure/coordinate-names'
 import { emptyAxes } from '@/components/bench/figure/empty-axes'
 import { figureModel, type FigureAxes, type FigureModel } from '@/components/bench/figure/figure-model'
 import type { CurveName, VisibleCurves } from '@/components/bench/figure/panel-option'

@@ -1,5 +1,5 @@
 import type { Correlation, CorrelationVerdict } from '@shared/correlation'
-import { decimalsFor, fixedText, significantText } from '@/components/bench/figure/number-text'
+import { decimalsFor, fixedText, significantText } from '@/components/figure/number-text'
 import type { DecisionChoice } from './decision-words'
 
 /** Two terms by their names, bond first. */

@@ -8,7 +8,7 @@ import BenchReading from '@/components/bench/BenchReading.vue'
 import BenchReadingPill from '@/components/bench/BenchReadingPill.vue'
 import BenchSmoothing from '@/components/bench/BenchSmoothing.vue'
 import BenchWarnings from '@/components/bench/BenchWarnings.vue'
-import { coordinateNames, type DisplayUnits } from '@/components/bench/figure/coordinate-names'
+import { coordinateNames, type DisplayUnits } from '@/components/figure/coordinate-names'
 import type { Reading } from '@/components/bench/figure/reading'
 import { storedPotential } from '../../unit/src/components/bench/stored-records'
 

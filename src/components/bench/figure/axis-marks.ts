@@ -1,8 +1,8 @@
-import { axisTicks, type AxisTicks } from './axis-ticks'
+import { axisTicks, type AxisTicks } from '@/components/figure/axis-ticks'
+import { linearScale, type LinearScale } from '@/components/figure/linear-scale'
+import { fixedText } from '@/components/figure/number-text'
 import type { FigureFrame, Panel } from './figure-frame'
 import type { FigureAxes } from './figure-model'
-import { linearScale, type LinearScale } from './linear-scale'
-import { fixedText } from './number-text'
 
 /** A tick at a pixel, with its label where it has one. */
 export interface Mark {

@@ -1,4 +1,4 @@
-import type { Point } from './stepped-outline'
+import type { Point } from '@/components/figure/stepped-outline'
 
 /** Half width of a 95 % band in standard deviations. */
 export const BAND_DEVIATIONS = 1.96

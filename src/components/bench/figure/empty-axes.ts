@@ -1,6 +1,6 @@
 import { coordinateDomain } from '@shared/histogram'
 import { coordinateFromInternal, energyScale, type CoordinateKind } from '@shared/units'
-import { coordinateNames, coordinateUnitOf, type DisplayUnits } from './coordinate-names'
+import { coordinateNames, coordinateUnitOf, type DisplayUnits } from '@/components/figure/coordinate-names'
 import { secondEnergy, type FigureAxes } from './figure-model'
 
 /** Where bonds between beads usually lie, nm: what the axis of an empty figure shows. */

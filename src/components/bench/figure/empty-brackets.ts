@@ -1,5 +1,5 @@
+import type { LinearScale } from '@/components/figure/linear-scale'
 import type { EmptyRun } from './empty-bins'
-import type { LinearScale } from './linear-scale'
 
 /** An open bracket on the spine, from one pixel to another. */
 export interface Bracket {

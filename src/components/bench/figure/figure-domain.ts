@@ -1,6 +1,6 @@
 import { coordinateDomain } from '@shared/histogram'
 import { coordinateFromInternal, type CoordinateKind, type CoordinateUnit } from '@shared/units'
-import { tickStep } from './axis-ticks'
+import { tickStep } from '@/components/figure/axis-ticks'
 import type { EmptyRun } from './empty-bins'
 
 /** Part of the populated range that is shown beyond each of its ends. */

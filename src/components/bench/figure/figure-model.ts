@@ -7,20 +7,20 @@ import {
   type CoordinateKind,
   type EnergyUnit,
 } from '@shared/units'
-import { bandPolygons } from './band-polygon'
 import {
   coordinateNames,
   coordinateUnitOf,
   type CoordinateNames,
   type DisplayUnits,
-} from './coordinate-names'
+} from '@/components/figure/coordinate-names'
+import { measuredHeights } from '@/components/figure/measured-heights'
+import { steppedOutline, type Point } from '@/components/figure/stepped-outline'
+import { bandPolygons } from './band-polygon'
 import { dataRange } from './data-range'
 import { emptyRuns, populatedBins, type EmptyRun } from './empty-bins'
 import { densityTop, energyDomain, shownDomain } from './figure-domain'
-import { measuredHeights } from './measured-heights'
 import { evenly, potentialCurve, type Comparison } from './potential-curve'
 import { regeneratedCurve } from './regenerated-curve'
-import { steppedOutline, type Point } from './stepped-outline'
 
 /** The axes of the figure, in the units shown. They do not depend on the smoothing, so nothing jumps under a slider. */
 export interface FigureAxes {

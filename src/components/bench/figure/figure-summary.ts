@@ -1,6 +1,6 @@
+import { fixedText, significantText } from '@/components/figure/number-text'
+import type { Point } from '@/components/figure/stepped-outline'
 import type { FigureModel } from './figure-model'
-import { fixedText, significantText } from './number-text'
-import type { Point } from './stepped-outline'
 
 const ROWS = 36
 

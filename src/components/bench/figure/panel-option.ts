@@ -1,9 +1,9 @@
 import type { CustomSeriesOption, LineSeriesOption } from 'echarts/charts'
+import type { Point } from '@/components/figure/stepped-outline'
 import type { CurveChartOption } from '@/plugins/echarts'
 import type { FigureFrame, Panel } from './figure-frame'
 import type { FigureAxes, FigureModel } from './figure-model'
 import { ringPath } from './ring-path'
-import type { Point } from './stepped-outline'
 
 /** Curves that the key can switch off. */
 export const CURVES = ['measured', 'regenerated', 'potential', 'rings', 'comparison'] as const

@@ -1,8 +1,8 @@
 import type { Histogram } from '@shared/histogram'
 import { potentialEnergy, potentialSlope, type Inversion } from '@shared/inversion'
 import { coordinateFromInternal, coordinateScale, energyScale, thermalEnergy } from '@shared/units'
+import { coordinateUnitOf, type DisplayUnits } from '@/components/figure/coordinate-names'
 import { BAND_DEVIATIONS } from './band-polygon'
-import { coordinateUnitOf, type DisplayUnits } from './coordinate-names'
 import { deviationAt } from './deviation-at'
 import type { FigureModel } from './figure-model'
 

@@ -1,5 +1,5 @@
 import type { Correlation } from '@shared/correlation'
-import { fixedText, significantText } from '@/components/bench/figure/number-text'
+import { fixedText, significantText } from '@/components/figure/number-text'
 import { coordinateAt } from './coordinate-at'
 import type { MapAxis, MapModel } from './map-model'
 

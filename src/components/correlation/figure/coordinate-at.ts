@@ -1,4 +1,4 @@
-import { fixedText } from '@/components/bench/figure/number-text'
+import { fixedText } from '@/components/figure/number-text'
 import type { MapAxis } from './map-model'
 
 const MOST_DECIMALS = 5

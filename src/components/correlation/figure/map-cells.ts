@@ -1,6 +1,6 @@
 import type { Correlation } from '@shared/correlation'
+import { couplingLimit, couplingStep, densityStep } from '@/components/figure/ramp-steps'
 import type { MapModel } from './map-model'
-import { couplingLimit, couplingStep, densityStep } from './ramp-steps'
 
 /** A rectangle of the map in data coordinates (internal units), and its place on the colour ramp. */
 export interface MapCell {

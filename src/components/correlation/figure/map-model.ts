@@ -6,7 +6,7 @@ import {
   coordinateUnitOf,
   type CoordinateNames,
   type DisplayUnits,
-} from '@/components/bench/figure/coordinate-names'
+} from '@/components/figure/coordinate-names'
 import { contourLines, type ContourLine } from './contour-lines'
 import { adaptiveDensity } from './adaptive-density'
 import { axisWindow, shareOutside } from './map-window'

@@ -1,5 +1,5 @@
 import type { CustomSeriesOption } from 'echarts/charts'
-import { steppedOutline } from '@/components/bench/figure/stepped-outline'
+import { steppedOutline } from '@/components/figure/stepped-outline'
 import type { CurveChartOption } from '@/plugins/echarts'
 import type { MapCell } from './map-cells'
 import type { Area, MapFrame } from './map-frame'

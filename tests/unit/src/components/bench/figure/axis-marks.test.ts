@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import type { DisplayUnits } from '@/components/bench/figure/coordinate-names'
+import type { DisplayUnits } from '@/components/figure/coordinate-names'
 import { axisMarks } from '@/components/bench/figure/axis-marks'
 import { emptyAxes } from '@/components/bench/figure/empty-axes'
 import { figureFrame } from '@/components/bench/figure/figure-frame'

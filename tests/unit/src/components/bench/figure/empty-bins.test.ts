@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { emptyRuns, populatedBins } from '@/components/bench/figure/empty-bins'
 import { emptyBrackets } from '@/components/bench/figure/empty-brackets'
-import { linearScale } from '@/components/bench/figure/linear-scale'
+import { linearScale } from '@/components/figure/linear-scale'
 
 describe('emptyRuns', () => {
   it('joins neighbouring empty bins', () => {

@@ -1,11 +1,11 @@
 import { describe, expect, it } from 'vitest'
 import { potentialEnergy } from '@shared/inversion'
 import { thermalEnergy } from '@shared/units'
-import type { DisplayUnits } from '@/components/bench/figure/coordinate-names'
+import type { DisplayUnits } from '@/components/figure/coordinate-names'
 import { emptyAxes } from '@/components/bench/figure/empty-axes'
 import { figureModel } from '@/components/bench/figure/figure-model'
 import { figureRows, figureSummary } from '@/components/bench/figure/figure-summary'
-import type { Point } from '@/components/bench/figure/stepped-outline'
+import type { Point } from '@/components/figure/stepped-outline'
 import {
   angleCounts,
   bondCounts,

@@ -1,6 +1,6 @@
 import { init } from 'echarts/core'
 import { describe, expect, it } from 'vitest'
-import type { DisplayUnits } from '@/components/bench/figure/coordinate-names'
+import type { DisplayUnits } from '@/components/figure/coordinate-names'
 import { figureFrame } from '@/components/bench/figure/figure-frame'
 import { figureModel } from '@/components/bench/figure/figure-model'
 import { CURVES, panelOption, type VisibleCurves } from '@/components/bench/figure/panel-option'

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { potentialEnergy, potentialSlope } from '@shared/inversion'
 import { GAS_CONSTANT } from '@shared/units'
-import type { DisplayUnits } from '@/components/bench/figure/coordinate-names'
+import type { DisplayUnits } from '@/components/figure/coordinate-names'
 import { figureModel } from '@/components/bench/figure/figure-model'
 import { edgeDecimals, readingAt } from '@/components/bench/figure/reading'
 import { angleCounts, dihedralCounts, inverted, TEMPERATURE, withoutSampleSize } from '../distributions'

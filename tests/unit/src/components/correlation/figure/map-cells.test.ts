@@ -1,12 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { mapCells } from '@/components/correlation/figure/map-cells'
 import { axisWindow, shareOutside } from '@/components/correlation/figure/map-window'
-import {
-  couplingLimit,
-  couplingStep,
-  densityStep,
-  exceedsLimit,
-} from '@/components/correlation/figure/ramp-steps'
+import { couplingLimit, couplingStep, densityStep, exceedsLimit } from '@/components/figure/ramp-steps'
 import { smoothDensity } from '@/components/correlation/figure/smooth-density'
 
 describe('mapCells', () => {

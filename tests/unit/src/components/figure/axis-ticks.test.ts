@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { axisTicks, stepDecimals, tickStep } from '@/components/bench/figure/axis-ticks'
+import { axisTicks, stepDecimals, tickStep } from '@/components/figure/axis-ticks'
 
 describe('axisTicks', () => {
   it('labels a full turn in degrees every 60 with a minor tick between', () => {

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { steppedOutline } from '@/components/bench/figure/stepped-outline'
+import { steppedOutline } from '@/components/figure/stepped-outline'
 
 describe('steppedOutline', () => {
   it('goes up at the first edge, over every bin, and down at the last edge', () => {

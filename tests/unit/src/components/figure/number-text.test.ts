@@ -1,11 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import {
-  bandText,
-  decimalsFor,
-  fixedText,
-  rangeText,
-  significantText,
-} from '@/components/bench/figure/number-text'
+import { bandText, decimalsFor, fixedText, rangeText, significantText } from '@/components/figure/number-text'
 
 describe('fixedText', () => {
   it('parts thousands by a no-break space and writes a real minus', () => {

@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { linearScale } from '@/components/bench/figure/linear-scale'
+import { linearScale } from '@/components/figure/linear-scale'
 
 describe('linearScale', () => {
   it('takes the ends of the domain to the ends of the range, also when the range runs backwards', () => {

@@ -1,11 +1,16 @@
 import { coordinateDomain } from '../histogram'
-import { notAKnotCurvatures, periodicCurvatures, pieceCurvature, pieceSlope, pieceValue } from '../numeric'
+import {
+  mirroredCurvatures,
+  notAKnotCurvatures,
+  periodicCurvatures,
+  pieceSlope,
+  pieceValue,
+} from '../numeric'
 import { type CoordinateKind, thermalEnergy } from '../units'
 import type { Potential, PotentialTail } from './potential'
-import { pieceAt, type SplineKnots } from './potential-energy'
+import { pieceAt, type SplineKnots } from './potential-spline'
+import { continueSpline, takeOver, tailEnergy, tailMinimum, type TailRule } from './potential-tail'
 
-/** A tail has at least this share of kT/σ², the stiffness of a spring with the spread of the data. */
-const LEAST_STIFFNESS = 0.5
 /** Where the curve still falls at the end of its data, the tail may carry it down by at most this much more, in kT. */
 const MOST_FALL = 0.1
 
@@ -19,76 +24,98 @@ export interface PotentialCurve {
   readonly energies: Float64Array
   readonly deviations: Float64Array | null
   readonly populated: readonly [number, number]
-  /** Where the spline ends and the tails take over; null on a side that reaches the end of the domain. */
-  readonly tailsFrom: readonly [low: number | null, high: number | null]
+  /** How far out the spline may rule: as far as bins speak for it. */
+  readonly reach: readonly [low: number, high: number]
   /** Variance of the coordinate in the data, nm² or rad². */
   readonly variance: number
 }
 
+/** What a user may choose about the ends of a potential. */
+export interface EndRules {
+  /** Least curvature of a tail in kT/σ², the stiffness of a spring with the spread of the data. */
+  readonly stiffness: number
+  /** Whether the slope of an angle has to vanish at 180°. */
+  readonly level: boolean
+}
+
 /**
- * Makes a potential from values at knots: a not-a-knot cubic spline, periodic for a dihedral, with quadratic tails that
- * take value, slope and curvature over from the spline. A tail's curvature is never below half of kT/σ², so it cannot turn
- * down; where the curve still falls outwards, it is large enough to stop the fall within 0.1 kT.
+ * Makes a potential from values at knots: a not-a-knot cubic spline, periodic for a dihedral and mirrored at 180° for an
+ * angle that has to be level there, with tails that take value, slope and curvature over from it. Beyond the data the
+ * curvature is never below `stiffness` kT/σ², so the potential cannot turn down: where the spline bends less, a tail takes
+ * over; where the curve still falls outwards, the tail stops the fall within 0.1 kT. Where an end has to be level, the tail
+ * fades into it instead.
  *
  * @returns the potential with its least value set to 0, where that value lies, and the constant that was taken away
  */
-export function buildPotential(curve: PotentialCurve): {
+export function buildPotential(
+  curve: PotentialCurve,
+  rules: EndRules,
+): {
   potential: Potential
   minimum: number
   constant: number
 } {
-  const { kind, temperature, knots, deviations, populated } = curve
-  const period = kind === 'dihedral' ? 2 * Math.PI : null
-  const curvatures =
-    period === null
-      ? notAKnotCurvatures(knots, curve.energies)
-      : periodicCurvatures(knots, curve.energies, period)
-  const spline: SplineKnots = { knots, energies: curve.energies, curvatures, period }
+  const { kind, temperature, populated } = curve
+  const level = kind === 'angle' && rules.level
+  const { spline, deviations } = splineOf(curve, level)
   const kT = thermalEnergy(temperature)
-  const [lowTail, highTail] = curve.tailsFrom.map((coordinate, side) =>
-    coordinate === null ? null : tail(spline, coordinate, side === 0 ? -1 : 1, kT, curve.variance),
-  )
-  const [start, end] = coordinateDomain(kind)
-  const range: [number, number] = [curve.tailsFrom[0] ?? start, curve.tailsFrom[1] ?? end]
-  const candidates = [
-    ...splineMinima(spline, range),
-    ...tailMinimum(lowTail, -1),
-    ...tailMinimum(highTail, 1),
-  ]
-  const least = candidates.reduce((lowest, point) => (point.energy < lowest.energy ? point : lowest))
-  const lower = (end: PotentialTail | null) => end && { ...end, energy: end.energy - least.energy }
+  const least = (rules.stiffness * kT) / curve.variance
+  const domain = coordinateDomain(kind)
+  const endOf = (side: 0 | 1): { at: number; tail: PotentialTail | null } => {
+    if (spline.period !== null) return { at: domain[side], tail: null }
+    const outwards = side === 0 ? -1 : 1
+    const inner = outwards * Math.min(outwards * populated[side], outwards * curve.reach[side])
+    const levelAt = side === 1 && level ? Math.PI : null
+    const at = levelAt === null ? takeOver(spline, inner, curve.reach[side], least) : inner
+    const rule: TailRule = { least, mostFall: MOST_FALL * kT, levelAt }
+    return { at, tail: at === domain[side] ? null : continueSpline(spline, at, outwards, rule) }
+  }
+  const [low, high] = [endOf(0), endOf(1)]
+  const lowest = [
+    ...splineMinima(spline, [low.at, high.at]),
+    ...tailMinima(low.tail, -1),
+    ...tailMinima(high.tail, 1),
+  ].reduce((least, point) => (point.energy < least.energy ? point : least))
+  const lower = (tail: PotentialTail | null) => tail && { ...tail, energy: tail.energy - lowest.energy }
   const potential: Potential = {
     kind,
     temperature,
-    knots,
-    energies: curve.energies.map((energy) => energy - least.energy),
-    curvatures,
+    ...spline,
+    energies: spline.energies.map((energy) => energy - lowest.energy),
     deviations,
     populated,
-    period,
-    lowTail: lower(lowTail),
-    highTail: lower(highTail),
+    lowTail: lower(low.tail),
+    highTail: lower(high.tail),
   }
-  return { potential, minimum: least.coordinate, constant: least.energy }
+  return { potential, minimum: lowest.coordinate, constant: lowest.energy }
 }
 
-function tail(
-  spline: SplineKnots,
-  coordinate: number,
-  outwards: -1 | 1,
-  kT: number,
-  variance: number,
-): PotentialTail {
-  const index = outwards < 0 ? 0 : spline.knots.length - 2
-  const piece = pieceAt(spline, index)
-  const t = coordinate - spline.knots[index]
-  const slope = outwards * pieceSlope(piece, t)
-  const toStopFall = slope < 0 ? (slope * slope) / (2 * MOST_FALL * kT) : 0
+function splineOf(
+  { kind, knots, energies, deviations, reach }: PotentialCurve,
+  level: boolean,
+): { spline: SplineKnots; deviations: Float64Array | null } {
+  if (kind === 'dihedral') {
+    const period = 2 * Math.PI
+    const curvatures = periodicCurvatures(knots, energies, period)
+    return { spline: { knots, energies, curvatures, period }, deviations }
+  }
+  if (!(level && reach[1] === Math.PI)) {
+    const curvatures = notAKnotCurvatures(knots, energies)
+    return { spline: { knots, energies, curvatures, period: null }, deviations }
+  }
+  // Between the last knot and its mirror image the spline is a parabola about 180°, where it gets a knot of its own.
+  const last = knots.length - 1
+  const curvatures = mirroredCurvatures(knots, energies, Math.PI)
+  const rise = -(curvatures[last] * (Math.PI - knots[last]) ** 2) / 2
+  const append = (values: Float64Array, value: number) => Float64Array.of(...values, value)
   return {
-    coordinate,
-    energy: pieceValue(piece, t),
-    slope,
-    curvature: Math.max(pieceCurvature(piece, t), (LEAST_STIFFNESS * kT) / variance, toStopFall),
+    spline: {
+      knots: append(knots, Math.PI),
+      energies: append(energies, energies[last] + rise),
+      curvatures: append(curvatures, curvatures[last]),
+      period: null,
+    },
+    deviations: deviations && append(deviations, deviations[last]),
   }
 }
 
@@ -104,8 +131,10 @@ function splineMinima(spline: SplineKnots, [low, high]: readonly [number, number
   const points: CurvePoint[] = []
   for (let index = 0; index <= (period === null ? last - 1 : last); index++) {
     const piece = pieceAt(spline, index)
-    const from = period === null && index === 0 ? low - knots[0] : 0
-    const to = period === null && index === last - 1 ? high - knots[index] : piece.width
+    const ends = period === null ? [low - knots[index], high - knots[index]] : [0, piece.width]
+    const from = index === 0 ? ends[0] : Math.max(0, ends[0])
+    const to = index >= last - 1 ? ends[1] : Math.min(piece.width, ends[1])
+    if (to < from) continue
     const a = (piece.endCurvature - piece.startCurvature) / (2 * piece.width)
     const b = piece.startCurvature
     const c = pieceSlope(piece, 0)
@@ -124,10 +153,8 @@ function inTurn(coordinate: number, period: number | null): number {
   return period !== null && coordinate >= Math.PI ? coordinate - period : coordinate
 }
 
-function tailMinimum(tail: PotentialTail | null, outwards: -1 | 1): CurvePoint[] {
-  if (tail === null || tail.slope >= 0) return []
-  const distance = -tail.slope / tail.curvature
-  return [
-    { coordinate: tail.coordinate + outwards * distance, energy: tail.energy + (tail.slope * distance) / 2 },
-  ]
+function tailMinima(tail: PotentialTail | null, outwards: -1 | 1): CurvePoint[] {
+  if (tail === null) return []
+  const distance = tailMinimum(tail)
+  return [{ coordinate: tail.coordinate + outwards * distance, energy: tailEnergy(tail, distance) }]
 }

@@ -5,6 +5,7 @@ import { buildPotential } from './build-potential'
 import type { Inversion, InvertedBins, SmoothingResult } from './inversion'
 import { type InversionSettings, SETTING_LIMITS, type SmoothingSettings } from './inversion-settings'
 import { inversionWarnings } from './inversion-warnings'
+import type { Potential } from './potential'
 import { type PreparedBins, prepareBins } from './prepared-bins'
 import { rawCurve } from './raw-curve'
 import { regenerate } from './regenerate'
@@ -29,13 +30,16 @@ export function invert(histogram: Histogram, temperature: number, settings: Inve
   checkSmoothing(settings.smoothing)
   const bins = prepareBins(histogram, jacobian)
   const fitted = fitCurve(histogram, temperature, bins, settings)
-  const { potential, minimum, constant } = buildPotential(fitted.curve)
+  const { potential, minimum, constant } = buildPotential(fitted.curve, {
+    stiffness: settings.tails.stiffness,
+    level: settings.straightAngle === 'level',
+  })
   const inversion = {
     kind,
     temperature,
     jacobian,
     settings,
-    bins: invertedBins(histogram, bins, fitted, jacobian, kT),
+    bins: invertedBins(histogram, bins, fitted, potential, jacobian, kT),
     uncorrectedEnergies: rawEnergies(histogram.weights, binVolumes(kind, histogram.edges, false), kT),
     potential,
     rawOffset: fitted.leastRaw - constant,
@@ -60,26 +64,34 @@ function fitCurve(
   { kind }: Histogram,
   temperature: number,
   bins: PreparedBins,
-  { smoothing, jacobian }: InversionSettings,
+  settings: InversionSettings,
 ): FittedCurve {
-  if (smoothing.mode === 'off' || bins.independentSamples === null) return rawCurve(kind, temperature, bins)
+  const { smoothing } = settings
+  if (smoothing.mode === 'off' || bins.independentSamples === null) {
+    return rawCurve(kind, temperature, bins, settings)
+  }
   const choice =
     smoothing.mode === 'auto' ? { by: smoothing.criterion } : { log10Lambda: smoothing.log10Lambda }
-  return smoothCurve(kind, temperature, bins, jacobian, choice)
+  return smoothCurve(kind, temperature, bins, settings, choice)
 }
 
 function invertedBins(
   { kind, edges, weights }: Histogram,
   bins: PreparedBins,
   { curve, range: [first, end] }: FittedCurve,
+  { lowTail, highTail }: Potential,
   jacobian: boolean,
   kT: number,
 ): InvertedBins {
   const volumes = binVolumes(kind, edges, jacobian)
   const { deviations } = curve
+  const [low, high] = [lowTail?.coordinate ?? -Infinity, highTail?.coordinate ?? Infinity]
   const deviationOf = (bin: number) => {
     const place = bin + bins.added[0]
-    return deviations !== null && place >= first && place < end ? deviations[place - first] : NaN
+    if (deviations === null || place < first || place >= end) return NaN
+    const knot = place - first
+    // A raw curve ends at its outermost knots: these still count.
+    return curve.knots[knot] >= low && curve.knots[knot] <= high ? deviations[knot] : NaN
   }
   return {
     edges,

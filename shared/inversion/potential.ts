@@ -1,8 +1,9 @@
 import type { CoordinateKind } from '../units'
 
 /**
- * Quadratic continuation of a potential beyond the range that was fitted. With d ≥ 0 the distance from `coordinate`
- * outwards, U = energy + slope·d + ½·curvature·d². The curvature is above zero, so the tail never turns down.
+ * Continuation of a potential beyond its data. With d ≥ 0 the distance from `coordinate` outwards, s the slope and c the
+ * curvature: U = energy + s·d + ½c·d², with c above zero, so that the tail never turns down; or, where it has to be level at
+ * d = span, dU/dd = (s + (c + s/span)·d)·(1 − d/span), with c + s/span above zero.
  */
 export interface PotentialTail {
   /** Where the tail takes over, nm or rad. */
@@ -11,12 +12,14 @@ export interface PotentialTail {
   readonly energy: number
   /** dU/dd outwards, kJ/mol per nm or rad. */
   readonly slope: number
-  /** kJ/mol per nm² or rad², above 0. */
+  /** d²U/dd² where the tail takes over, kJ/mol per nm² or rad². */
   readonly curvature: number
+  /** Distance at which the tail is level, above 0; null for a plain quadratic. */
+  readonly span: number | null
 }
 
 /**
- * A potential as plain data: a cubic spline through its knots, continued by quadratic tails; periodic for a dihedral.
+ * A potential as plain data: a cubic spline through its knots, continued by tails; periodic for a dihedral.
  * Its least value is 0. Evaluate it with `potentialEnergy` and `potentialSlope`.
  */
 export interface Potential {
@@ -38,7 +41,7 @@ export interface Potential {
   readonly populated: readonly [low: number, high: number]
   /** 2π for a dihedral, else null. */
   readonly period: number | null
-  /** null for a dihedral, and where the spline reaches the end of the domain. */
+  /** null for a dihedral, and where the spline reaches the end of the domain; beyond its coordinate no knot counts. */
   readonly lowTail: PotentialTail | null
   readonly highTail: PotentialTail | null
 }

@@ -1,7 +1,8 @@
 import type { CoordinateKind } from '../histogram'
 import { thermalEnergy } from '../units'
+import type { InversionSettings } from './inversion-settings'
 import type { PreparedBins } from './prepared-bins'
-import { coordinateVariance, type FittedCurve, populatedRange, tailEnds } from './smooth-curve'
+import { coordinateVariance, type FittedCurve, populatedRange } from './smooth-curve'
 
 /**
  * Curve through the raw energies −kT ln(n/V) at the centroids of the bins, from the first to the last filled one (for a
@@ -9,9 +10,17 @@ import { coordinateVariance, type FittedCurve, populatedRange, tailEnds } from '
  * neighbours: it adds no minimum and no barrier that the data do not show. The deviation is that of a difference of two
  * Poisson counts, kT √(1/n + 1/n_min); NaN in bridged bins.
  *
+ * The curve reaches to the outermost centroids only: continued over the half bin beyond, a spline through noise may turn
+ * down. An angle that has to be level at 180° reaches that point by its mirror image.
+ *
  * @param bins deviations are null where their number of independent samples is
  */
-export function rawCurve(kind: CoordinateKind, temperature: number, bins: PreparedBins): FittedCurve {
+export function rawCurve(
+  kind: CoordinateKind,
+  temperature: number,
+  bins: PreparedBins,
+  { straightAngle }: Pick<InversionSettings, 'straightAngle'>,
+): FittedCurve {
   const [first, end] = kind === 'dihedral' ? [0, bins.counts.length] : [bins.filled[0], bins.filled[1] + 1]
   const kT = thermalEnergy(temperature)
   const counts = bins.counts.subarray(first, end)
@@ -26,6 +35,8 @@ export function rawCurve(kind: CoordinateKind, temperature: number, bins: Prepar
     if (bin === least) return 0
     return count > 0 ? kT * Math.sqrt(1 / count + 1 / counts[least]) : NaN
   })
+  const populated = populatedRange(bins)
+  const level = kind === 'angle' && straightAngle === 'level' && populated[1] === Math.PI
   return {
     curve: {
       kind,
@@ -33,8 +44,8 @@ export function rawCurve(kind: CoordinateKind, temperature: number, bins: Prepar
       knots,
       energies: bridgeGaps(knots, raw, kind === 'dihedral' ? 2 * Math.PI : null),
       deviations: bins.independentSamples === null ? null : deviations,
-      populated: populatedRange(bins),
-      tailsFrom: tailEnds(kind, bins.edges.subarray(first, end + 1)),
+      populated,
+      reach: [knots[0], level ? Math.PI : knots[knots.length - 1]],
       variance: coordinateVariance(bins),
     },
     range: [first, end],

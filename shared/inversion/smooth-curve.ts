@@ -1,7 +1,8 @@
-import { type CoordinateKind, coordinateDomain, jacobian } from '../histogram'
+import { type CoordinateKind, jacobian } from '../histogram'
 import { type LambdaChoice, smoothCounts, type SmoothDensity } from '../smoothing'
 import { thermalEnergy } from '../units'
 import type { PotentialCurve } from './build-potential'
+import type { InversionSettings } from './inversion-settings'
 import type { PreparedBins } from './prepared-bins'
 
 /** Empty bins beside the filled ones that take part in the fit: at least this many, or this share of the filled range. */
@@ -20,7 +21,8 @@ export interface FittedCurve {
 
 /**
  * Smooth curve of a histogram: U = −kT η at the midpoints of the filled range and a pad of empty bins beside it (as far
- * as the histogram goes), for a dihedral of the whole turn.
+ * as the histogram goes), for a dihedral of the whole turn. An angle that has to be level at 180° is fitted together with its
+ * mirror image there.
  *
  * @param bins with a known number of independent samples
  * @throws {InvalidInputError} SINGULAR_SYSTEM when the counts do not determine a curve
@@ -29,7 +31,7 @@ export function smoothCurve(
   kind: CoordinateKind,
   temperature: number,
   bins: PreparedBins,
-  useJacobian: boolean,
+  { jacobian: useJacobian, straightAngle }: Pick<InversionSettings, 'jacobian' | 'straightAngle'>,
   choice: LambdaChoice,
 ): FittedCurve {
   const [first, end] = fittedRange(kind, bins)
@@ -37,12 +39,14 @@ export function smoothCurve(
   const midpoints = bins.midpoints.subarray(first, end)
   const counts = bins.counts.subarray(first, end)
   const volumes = bins.volumes.subarray(first, end)
+  const mirrored = kind === 'angle' && straightAngle === 'level' && edges[end - first] === Math.PI
   const geometry = {
     edges,
     midpoints,
     volumes,
     jacobian: (coordinate: number) => (useJacobian ? jacobian(kind, coordinate) : 1),
     period: kind === 'dihedral' ? 2 * Math.PI : null,
+    mirrored,
   }
   const density = smoothCounts(geometry, counts, choice)
   const kT = thermalEnergy(temperature)
@@ -53,7 +57,7 @@ export function smoothCurve(
     energies: density.eta.map((value) => -kT * value),
     deviations: density.deviations.map((value) => kT * value),
     populated: populatedRange(bins),
-    tailsFrom: tailEnds(kind, edges),
+    reach: [edges[0], edges[end - first]],
     variance: coordinateVariance(bins),
   }
   const leastRaw =
@@ -77,14 +81,6 @@ function fittedRange(
 /** Outer edges of the first and the last filled bin. */
 export function populatedRange({ edges, filled: [first, last] }: PreparedBins): [number, number] {
   return [edges[first], edges[last + 1]]
-}
-
-/** Where tails take over: the ends of the fitted bins, unless those are ends of the domain. */
-export function tailEnds(kind: CoordinateKind, edges: Float64Array): [number | null, number | null] {
-  if (kind === 'dihedral') return [null, null]
-  const [low, high] = coordinateDomain(kind)
-  const [first, last] = [edges[0], edges[edges.length - 1]]
-  return [first > low ? first : null, last < high ? last : null]
 }
 
 /** Variance of the coordinate under the histogram, with the weight of each bin at its midpoint. */

@@ -15,19 +15,8 @@
 export function notAKnotCurvatures(x: Float64Array, y: Float64Array): Float64Array {
   const last = x.length - 1
   const count = last - 1
-  const [lower, diagonal, upper, right] = [0, 0, 0, 0].map(() => new Float64Array(count))
-  for (let row = 0; row < count; row++) {
-    const before = x[row + 1] - x[row]
-    const after = x[row + 2] - x[row + 1]
-    lower[row] = before
-    diagonal[row] = 2 * (before + after)
-    upper[row] = after
-    right[row] = 6 * ((y[row + 2] - y[row + 1]) / after - (y[row + 1] - y[row]) / before)
-  }
-  // A continuous third derivative at the second knot gives M₀ = M₁ − (M₂ − M₁)·h₀/h₁; likewise at the other end.
-  const first = lower[0] / upper[0]
-  diagonal[0] += lower[0] * (1 + first)
-  upper[0] -= lower[0] * first
+  const { lower, diagonal, upper, right } = innerRows(x, y, count)
+  const first = eliminateFirst(lower, diagonal, upper)
   const final = upper[count - 1] / lower[count - 1]
   diagonal[count - 1] += upper[count - 1] * (1 + final)
   lower[count - 1] -= upper[count - 1] * final
@@ -37,6 +26,52 @@ export function notAKnotCurvatures(x: Float64Array, y: Float64Array): Float64Arr
   curvatures[0] = inner[0] - (inner[1] - inner[0]) * first
   curvatures[last] = inner[count - 1] + (inner[count - 1] - inner[count - 2]) * final
   return curvatures
+}
+
+/**
+ * Second derivatives of the cubic spline that goes on beyond its last knot as its own mirror image, so that its slope at
+ * the mirror is 0; not-a-knot at the first knot.
+ *
+ * @param x ascending knots below the mirror, at least 4
+ * @param y values at the knots, same length
+ * @returns second derivatives at the knots; from the last knot to its image the spline is a parabola
+ */
+export function mirroredCurvatures(x: Float64Array, y: Float64Array, mirror: number): Float64Array {
+  const last = x.length - 1
+  const { lower, diagonal, upper, right } = innerRows(x, y, last)
+  const first = eliminateFirst(lower, diagonal, upper)
+  // The row of the last knot: the next one is its image, with the same value and the same second derivative.
+  const before = x[last] - x[last - 1]
+  lower[last - 1] = before
+  diagonal[last - 1] = 2 * before + 6 * (mirror - x[last])
+  right[last - 1] = (-6 * (y[last] - y[last - 1])) / before
+  const inner = solveTridiagonal(lower, diagonal, upper, right)
+  const curvatures = new Float64Array(x.length)
+  curvatures.set(inner, 1)
+  curvatures[0] = inner[0] - (inner[1] - inner[0]) * first
+  return curvatures
+}
+
+/** Rows of the knots 1 … of an open spline, `count` in all; rows without a knot on both sides stay empty. */
+function innerRows(x: Float64Array, y: Float64Array, count: number) {
+  const [lower, diagonal, upper, right] = [0, 0, 0, 0].map(() => new Float64Array(count))
+  for (let row = 0; row < Math.min(count, x.length - 2); row++) {
+    const before = x[row + 1] - x[row]
+    const after = x[row + 2] - x[row + 1]
+    lower[row] = before
+    diagonal[row] = 2 * (before + after)
+    upper[row] = after
+    right[row] = 6 * ((y[row + 2] - y[row + 1]) / after - (y[row + 1] - y[row]) / before)
+  }
+  return { lower, diagonal, upper, right }
+}
+
+/** A continuous third derivative at the second knot gives M₀ = M₁ − (M₂ − M₁)·h₀/h₁; returns h₀/h₁. */
+function eliminateFirst(lower: Float64Array, diagonal: Float64Array, upper: Float64Array): number {
+  const first = lower[0] / upper[0]
+  diagonal[0] += lower[0] * (1 + first)
+  upper[0] -= lower[0] * first
+  return first
 }
 
 /**

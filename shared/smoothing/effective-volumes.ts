@@ -1,10 +1,10 @@
-import { GAUSS_LEGENDRE, notAKnotCurvatures, periodicCurvatures } from '../numeric'
+import { GAUSS_LEGENDRE, mirroredCurvatures, notAKnotCurvatures, periodicCurvatures } from '../numeric'
 
 /**
  * Most that ln of an effective volume may differ from ln of the exact one. A density that falls by more across a bin, as
  * beside a spike, is not resolved by the histogram, and the correction would only chase its own tail.
  */
-const LARGEST_CORRECTION = 5
+export const LARGEST_CORRECTION = 5
 
 /** Jacobian and geometry of the bins that effective volumes are taken over. */
 export interface BinGeometry {
@@ -16,6 +16,8 @@ export interface BinGeometry {
   readonly jacobian: (coordinate: number) => number
   /** 2π when the bins fill a turn, else null. */
   readonly period: number | null
+  /** Whether the density goes on beyond the last edge as its own mirror image, so that it is level there. */
+  readonly mirrored: boolean
 }
 
 /**
@@ -28,7 +30,7 @@ export interface BinGeometry {
  * @returns function from η at the midpoints to ln of the effective volumes; η between midpoints is a cubic spline
  */
 export function logEffectiveVolumes(geometry: BinGeometry): (eta: Float64Array) => Float64Array {
-  const { edges, midpoints, volumes, jacobian, period } = geometry
+  const { edges, midpoints, volumes, jacobian } = geometry
   const bins = midpoints.length
   const points = GAUSS_LEGENDRE.length
   const exactLogs = volumes.map(Math.log)
@@ -42,13 +44,12 @@ export function logEffectiveVolumes(geometry: BinGeometry): (eta: Float64Array) 
     })
   }
   return (eta) => {
-    const curvatures =
-      period === null ? notAKnotCurvatures(midpoints, eta) : periodicCurvatures(midpoints, eta, period)
+    const curvatures = splineCurvatures(geometry, eta)
     const result = new Float64Array(bins)
     const changes = new Float64Array(points)
     for (let bin = 0; bin < bins; bin++) {
-      const left = taylorTowards(midpoints, eta, curvatures, period, bin, -1)
-      const right = taylorTowards(midpoints, eta, curvatures, period, bin, 1)
+      const left = taylorTowards(geometry, eta, curvatures, bin, -1)
+      const right = taylorTowards(geometry, eta, curvatures, bin, 1)
       let largest = -Infinity
       for (let point = 0; point < points; point++) {
         const step = steps[bin * points + point]
@@ -69,21 +70,35 @@ export function logEffectiveVolumes(geometry: BinGeometry): (eta: Float64Array) 
   }
 }
 
+function splineCurvatures(
+  { midpoints, edges, period, mirrored }: BinGeometry,
+  eta: Float64Array,
+): Float64Array {
+  if (period !== null) return periodicCurvatures(midpoints, eta, period)
+  return mirrored
+    ? mirroredCurvatures(midpoints, eta, edges[edges.length - 1])
+    : notAKnotCurvatures(midpoints, eta)
+}
+
 /** Slope and third derivative of the spline at a knot, on the piece to its left (−1) or right (+1). */
 function taylorTowards(
-  x: Float64Array,
+  geometry: BinGeometry,
   y: Float64Array,
   curvatures: Float64Array,
-  period: number | null,
   knot: number,
   side: -1 | 1,
 ): { slope: number; third: number } {
+  const { midpoints: x, edges, period, mirrored } = geometry
   const count = x.length
+  // Towards its mirror image a knot stands on a parabola that is level at the mirror.
+  if (mirrored && knot + side === count) {
+    return { slope: -curvatures[knot] * (edges[count] - x[knot]), third: 0 }
+  }
   let neighbour = knot + side
   let turn = 0
   if (neighbour < 0 || neighbour >= count) {
     // Without a period the piece on the inner side continues to the edge.
-    if (period === null) return taylorTowards(x, y, curvatures, period, knot, side === 1 ? -1 : 1)
+    if (period === null) return taylorTowards(geometry, y, curvatures, knot, side === 1 ? -1 : 1)
     neighbour = (neighbour + count) % count
     turn = side * period
   }

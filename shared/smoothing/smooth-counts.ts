@@ -20,7 +20,7 @@ const REFITS = 3
  * A spring of this strength, in counts, holds each coefficient to the mean log-density. It is felt only where bins are empty
  * and the penalty too weak to guide the curve, which beside a wall would otherwise run off to a million kT.
  */
-const HOLD = 1e-8
+export const HOLD = 1e-8
 
 /** How λ is chosen, or the λ to take. */
 export type LambdaChoice = { readonly by: 'likelihood' | 'aic' } | { readonly log10Lambda: number }
@@ -105,9 +105,10 @@ function searchLambda<Found extends LambdaTrial>(
   return found
 }
 
-function chooseBasis({ midpoints, edges, period }: BinGeometry) {
-  if (midpoints.length <= IDENTITY_BINS) return identityBasis(midpoints, period)
-  return splineBasis(midpoints, edges[0], edges[edges.length - 1], period !== null, SPLINE_COEFFICIENTS)
+function chooseBasis({ midpoints, edges, period, mirrored }: BinGeometry) {
+  const [low, high] = [edges[0], edges[edges.length - 1]]
+  if (midpoints.length <= IDENTITY_BINS) return identityBasis(midpoints, period, mirrored ? high : null)
+  return splineBasis(midpoints, low, high, period !== null, SPLINE_COEFFICIENTS, mirrored)
 }
 
 /** sd(η_i − η_k) = √(S_ii + S_kk − 2 S_ik), with the column S·_k from one solve. */

@@ -19,9 +19,15 @@ export interface SmoothingBasis {
   readonly penaltyValues: Float64Array
   /** λ on these coefficients = λ per bin index · this. */
   readonly lambdaScale: number
+  /** Whether the curve is level at its upper end, where it goes on as its own mirror image. */
+  readonly mirrored: boolean
 }
 
-/** Polynomials that third differences do not see: a parabola, or on a circle a constant. */
+/**
+ * Polynomials that third differences do not see: a parabola; with a mirror one that is level there; on a circle a
+ * constant.
+ */
 export function penaltyNullity(basis: SmoothingBasis): number {
-  return basis.periodic ? 1 : 3
+  if (basis.periodic) return 1
+  return basis.mirrored ? 2 : 3
 }

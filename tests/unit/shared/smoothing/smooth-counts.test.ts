@@ -22,6 +22,7 @@ function geometryOf(kind: 'bond' | 'angle' | 'dihedral', edges: readonly number[
     volumes: binVolumes(kind, bins),
     jacobian: (coordinate) => jacobian(kind, coordinate),
     period: kind === 'dihedral' ? 2 * Math.PI : null,
+    mirrored: false,
   }
 }
 

@@ -6,6 +6,8 @@ export interface StoredTerm {
   readonly id: string
   readonly kind: CoordinateKind
   readonly types: readonly string[]
+  /** As `DerivedTerm.placeKey`. */
+  readonly placeKey: string
   readonly current: boolean
 }
 
@@ -19,7 +21,8 @@ export interface TermChanges {
 }
 
 /**
- * Which stored term each derived term is. A term is its kind and type sequence. A bead type that was renamed throughout —
+ * Which stored term each derived term is. A term is its kind and type sequence, and
+ * its place where the sequence is split. A bead type that was renamed throughout —
  * told by the ids of the beads that carry it — takes its terms along; types that swapped their names count as renamed.
  * Terms that had vanished come back under the names they left with.
  *
@@ -43,12 +46,12 @@ export function matchTerms(
   const byKey = new Map<string, StoredTerm>()
   for (const term of [...stored].sort((a, b) => claim(a) - claim(b))) {
     const types = term.current ? term.types.map((type) => renamed.get(type) ?? type) : term.types
-    byKey.set(termKey(term.kind, types), term)
+    byKey.set(termKey(term.kind, types, term.placeKey), term)
   }
   const kept: { id: string; term: DerivedTerm }[] = []
   const added: DerivedTerm[] = []
   for (const term of derived) {
-    const match = byKey.get(termKey(term.kind, term.types))
+    const match = byKey.get(termKey(term.kind, term.types, term.placeKey))
     if (match) kept.push({ id: match.id, term })
     else added.push(term)
   }
@@ -56,10 +59,13 @@ export function matchTerms(
   return { kept, added, vanished: stored.filter(({ id }) => !keptIds.has(id)).map(({ id }) => id) }
 }
 
-/** The same for a sequence and its reverse. */
-function termKey(kind: CoordinateKind, types: readonly string[]): string {
-  const [forward, backward] = [types.join('\n'), [...types].reverse().join('\n')]
-  return `${kind}\n${forward < backward ? forward : backward}`
+/** The same for a sequence and its reverse, with their place read the same way. */
+function termKey(kind: CoordinateKind, types: readonly string[], placeKey: string): string {
+  const either = (words: readonly string[]): string => {
+    const [forward, backward] = [words.join('\n'), words.toReversed().join('\n')]
+    return forward < backward ? forward : backward
+  }
+  return [kind, either(types), either(placeKey.split(' '))].join('\n\n')
 }
 
 /**

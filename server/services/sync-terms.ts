@@ -46,8 +46,8 @@ export async function syncTerms(manager: EntityManager, sync: TermSync): Promise
   )
 }
 
-function columnsOf({ kind, types, places }: DerivedTerm, position: number) {
-  return { kind, types, places, placeKey: '', position, current: true }
+function columnsOf({ kind, types, places, placeKey }: DerivedTerm, position: number) {
+  return { kind, types, places, placeKey, position, current: true }
 }
 
 async function termsWithData(manager: EntityManager, ids: readonly string[]): Promise<Set<string>> {

@@ -36,7 +36,7 @@ export class TermService {
     })
     const facts =
       statePointId === null ? new Map<string, TermFacts>() : await this.facts(mapping, terms, statePointId)
-    return terms.map((term) => termBody(term, facts.get(term.id)))
+    return terms.map((term) => termBody(term, numberOf(term, terms), facts.get(term.id)))
   }
 
   private async facts(
@@ -69,16 +69,24 @@ export class TermService {
   }
 }
 
-function termBody(term: Term, facts: TermFacts | undefined): TermBody {
-  const { id, mappingId, kind, types, places, current } = term
+/** The number of one of several terms of a split sequence: they follow one another in the order of their numbers. */
+function numberOf(term: Term, terms: readonly Term[]): number | undefined {
+  if (term.placeKey === '' || !term.current) return undefined
+  const sequence = term.types.join('\n')
+  return terms.filter(({ current, types }) => current && types.join('\n') === sequence).indexOf(term) + 1
+}
+
+function termBody(term: Term, number: number | undefined, facts: TermFacts | undefined): TermBody {
+  const { id, mappingId, kind, types, places, placeKey, current } = term
   const { distribution, potential } = facts ?? {}
   return {
     id,
     mappingId,
     kind,
     types,
-    name: termName(types),
+    name: termName(types, number),
     places,
+    placeKey,
     current,
     standing: potential ? 'inverted' : distribution ? 'data' : 'no data',
     silhouette: distribution

@@ -8,9 +8,31 @@
  * @returns one class number per vertex, from 0, in the order of first appearance
  * @example refineClasses(['C', 'C', 'C'], [{ from: 0, to: 1 }, { from: 1, to: 2 }]) // [0, 1, 0]
  */
-export function refineClasses(
+export function refineClasses(labels: readonly string[], edges: readonly LabelledEdge[]): number[] {
+  return refined(labels, edges, firstSeen)
+}
+
+/**
+ * The same classes, numbered by rank: vertices of two graphs that are the same graph get the same numbers, however either is
+ * numbered.
+ *
+ * @returns one class number per vertex, from 0
+ */
+export function rankClasses(labels: readonly string[], edges: readonly LabelledEdge[]): number[] {
+  return refined(labels, edges, ranked)
+}
+
+/** An undirected edge; `label` tells kinds of edges apart. */
+export interface LabelledEdge {
+  readonly from: number
+  readonly to: number
+  readonly label?: string
+}
+
+function refined(
   labels: readonly string[],
-  edges: readonly { readonly from: number; readonly to: number; readonly label?: string }[],
+  edges: readonly LabelledEdge[],
+  numbered: (keys: readonly string[]) => number[],
 ): number[] {
   const around: { to: number; label: string }[][] = labels.map(() => [])
   for (const { from, to, label = '' } of edges) {
@@ -29,12 +51,13 @@ export function refineClasses(
   }
 }
 
-function numbered(keys: readonly string[]): number[] {
+function firstSeen(keys: readonly string[]): number[] {
   const numbers = new Map<string, number>()
-  return keys.map((key) => {
-    const known = numbers.get(key)
-    if (known !== undefined) return known
-    numbers.set(key, numbers.size)
-    return numbers.size - 1
-  })
+  for (const key of keys) if (!numbers.has(key)) numbers.set(key, numbers.size)
+  return keys.map((key) => numbers.get(key) as number)
+}
+
+function ranked(keys: readonly string[]): number[] {
+  const numbers = new Map([...new Set(keys)].sort().map((key, rank) => [key, rank]))
+  return keys.map((key) => numbers.get(key) as number)
 }

@@ -48,8 +48,32 @@ export const beadSchema = z
     colour: z.number().int().min(0).max(7),
     site: siteSchema,
     atoms: z.array(beadAtomSchema).max(400),
+    /** What differs where this bead ends a chain. */
+    endGroup: z.string().trim().max(80).optional(),
   })
   .meta({ id: 'Bead' })
+
+const termTypesSchema = z.array(beadSchema.shape.type).min(2).max(4)
+const reasonSchema = z.string().trim().max(400)
+
+/** One term for each kind of place of a type sequence, or one for all of them and why. */
+export const termPoolingSchema = z
+  .object({ types: termTypesSchema, choice: z.enum(['split', 'pooled']), reason: reasonSchema })
+  .refine(({ choice, reason }) => choice === 'split' || reason !== '', 'Say why the places are pooled.')
+  .meta({ id: 'TermPooling' })
+
+/** Whether a term is used; `placeKey` is empty unless the term is one of several of a split sequence. */
+export const termChoiceSchema = z
+  .object({
+    types: termTypesSchema,
+    placeKey: z.string().max(200),
+    use: z.enum(['used', 'left out']),
+    reason: reasonSchema,
+  })
+  .meta({ id: 'TermChoice' })
+
+/** Most decisions about terms that a mapping stores; more terms than these have no use. */
+export const MAX_TERM_DECISIONS = 2000
 
 /** The saved mapping: document version 1. */
 export const mappingDocumentSchema = z
@@ -59,6 +83,9 @@ export const mappingDocumentSchema = z
       .array(beadSchema)
       .max(MAX_BEADS, `A mapping has at most ${MAX_BEADS} beads per repeat unit.`)
       .refine((beads) => new Set(beads.map(({ id }) => id)).size === beads.length, 'Two beads have one id.'),
+    /** Absent in documents from before there were any. */
+    poolings: z.array(termPoolingSchema).max(MAX_TERM_DECISIONS).optional(),
+    termChoices: z.array(termChoiceSchema).max(MAX_TERM_DECISIONS).optional(),
   })
   .meta({ id: 'MappingDocument' })
 export type MappingDocument = z.infer<typeof mappingDocumentSchema>
@@ -119,6 +146,8 @@ export const termSchema = z
     types: z.array(z.string()),
     name: z.string(),
     places: z.array(placeSchema),
+    /** Tells the terms of a split type sequence apart; empty where all its places are pooled. */
+    placeKey: z.string().optional(),
     current: z.boolean(),
     standing: standingSchema,
     silhouette: silhouetteSchema.nullable(),

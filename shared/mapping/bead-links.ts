@@ -1,14 +1,6 @@
-import type { RepeatUnit } from '../chemistry'
+import { atomLinks, type RepeatUnit } from '../chemistry'
 import { InvalidInputError } from '../errors'
 import type { MappingDocument } from './mapping-document'
-
-/** A bond between two atoms of the chain; the second one is `shift` units further along. */
-export interface AtomLink {
-  readonly from: number
-  readonly to: number
-  readonly shift: number
-  readonly label: string
-}
 
 /**
  * A bond between two beads of the chain, as seen from the first: bead `from` in any unit u is bonded to bead `to` in unit
@@ -20,22 +12,6 @@ export interface BeadLink {
   readonly shift: number
   /** The atom bonds that make it, first atom in `from`; indices in the repeat unit. */
   readonly atomBonds: readonly { readonly from: number; readonly to: number; readonly label: string }[]
-}
-
-/**
- * Bonds of one unit of the chain and to the next one: the tail of a unit is bonded to the head of the next.
- *
- * @returns each bond once
- */
-export function atomLinks(unit: RepeatUnit): AtomLink[] {
-  const inside = unit.bonds.map(({ from, to, order, aromatic }) => ({
-    from,
-    to,
-    shift: 0,
-    label: aromatic ? 'a' : String(order),
-  }))
-  const [head, tail] = unit.attachments
-  return [...inside, { from: tail, to: head, shift: 1, label: String(unit.linkOrder) }]
 }
 
 /**

@@ -1,5 +1,4 @@
-import type { RepeatUnit } from '../chemistry'
-import { atomLinks } from './bead-links'
+import { atomLinks, type RepeatUnit } from '../chemistry'
 import type { Bead, BeadAtom } from './mapping-document'
 
 /**

@@ -4,7 +4,8 @@ import { beadLinks, checkAtoms, type BeadLink } from './bead-links'
 import { compareTypes, compareTypeSequences } from './compare-types'
 import type { MappingDocument } from './mapping-document'
 import { chainClasses, placeSignature } from './place-signature'
-import { termName, type DerivedTerm, type Place } from './term'
+import { splitTerms } from './split-terms'
+import { placeKey, termName, type DerivedTerm, type Place } from './term'
 import { checkTermPlaces } from './term-limit'
 
 const KINDS: readonly CoordinateKind[] = ['bond', 'angle', 'dihedral']
@@ -18,8 +19,8 @@ interface Row {
 
 /**
  * The terms of a mapping: every bond, angle and dihedral of an endless chain of repeat units, across their borders. Rows of
- * beads that carry the same type sequence, or its reverse, are one term; where they stand is listed up to a shift along the
- * chain. The beads of a row are all different, so a dihedral is a path of four. The result does not depend on the order of beads
+ * beads that carry the same type sequence, or its reverse, are one term, unless the document splits it by its places; where
+ * they stand is listed up to a shift along the chain. The beads of a row are all different, so a dihedral is a path of four. The result does not depend on the order of beads
  * or atoms in the document.
  *
  * @param unit the repeat unit
@@ -30,6 +31,15 @@ interface Row {
  * @example deriveTerms(unit, oneBead).map((term) => term.name) // ['A–A', 'A–A–A', 'A–A–A–A']
  */
 export function deriveTerms(unit: RepeatUnit, document: MappingDocument): DerivedTerm[] {
+  return splitTerms(derivePooledTerms(unit, document), document)
+}
+
+/**
+ * The terms with all places of a sequence pooled, whatever the document says about splitting.
+ *
+ * @throws {InvalidInputError} as `deriveTerms`
+ */
+export function derivePooledTerms(unit: RepeatUnit, document: MappingDocument): DerivedTerm[] {
   checkAtoms(unit, document)
   checkTermPlaces(unit, document)
   const links = beadLinks(unit, document)
@@ -69,7 +79,13 @@ export function deriveTerms(unit: RepeatUnit, document: MappingDocument): Derive
 
   return KINDS.flatMap((kind, index) =>
     [...terms[index].values()]
-      .map(({ types, rows, places }) => ({ kind, types, name: termName(types), ...ordered(rows, places) }))
+      .map(({ types, rows, places }) => ({
+        kind,
+        types,
+        name: termName(types),
+        placeKey: '',
+        ...ordered(rows, places),
+      }))
       .sort((a, b) => compareTerms(a.types, b.types)),
   )
 }
@@ -102,23 +118,14 @@ function reversed(row: readonly BeadLink[]): BeadLink[] {
   }))
 }
 
-function placeKey(place: Place): string {
-  return place.map(({ bead, unit }) => `${bead}@${unit}`).join(' ')
-}
-
-/** Places in the order of their keys, classes numbered in that order. */
+/** Places in the order of their keys; classes numbered by what surrounds them, the same whichever way the unit is written. */
 function ordered(
   signatures: ReadonlyMap<string, string>,
   places: ReadonlyMap<string, Place>,
 ): Pick<DerivedTerm, 'places' | 'placeClasses'> {
   const keys = [...places.keys()].sort()
-  const numbers = new Map<string, number>()
-  const placeClasses = keys.map((key) => {
-    const signature = signatures.get(key) as string
-    const number = numbers.get(signature) ?? numbers.size
-    numbers.set(signature, number)
-    return number
-  })
+  const numbers = new Map([...new Set(signatures.values())].sort().map((text, number) => [text, number]))
+  const placeClasses = keys.map((key) => numbers.get(signatures.get(key) as string) as number)
   return { places: keys.map((key) => places.get(key) as Place), placeClasses }
 }
 

@@ -1,7 +1,8 @@
+import { renameInDecisions } from './edit-decisions'
 import { BEAD_COLOURS, type Bead, type MappingDocument } from './mapping-document'
 
 /** What a person may change about a bead besides its atoms. */
-export type BeadChange = Partial<Pick<Bead, 'name' | 'type' | 'label' | 'site'>>
+export type BeadChange = Partial<Pick<Bead, 'name' | 'type' | 'label' | 'site' | 'endGroup'>>
 
 /**
  * Gives atoms of the drawn unit to a bead, whole: they leave every other bead. The same document when nothing changes.
@@ -47,9 +48,17 @@ export function addBead(document: MappingDocument, id: string): MappingDocument 
   return { ...document, beads: [...document.beads, bead] }
 }
 
-/** Changes a bead's name, type, word or site rule. */
+/**
+ * Changes a bead's name, type, word, site rule or end note. What was decided about terms follows a type that gets a new name:
+ * one that no other bead carries, before or after.
+ */
 export function changeBead(document: MappingDocument, beadId: string, change: BeadChange): MappingDocument {
-  return withBeads(document, (bead) => (bead.id === beadId ? { ...bead, ...change } : bead))
+  const changed = withBeads(document, (bead) => (bead.id === beadId ? { ...bead, ...change } : bead))
+  const before = document.beads.find(({ id }) => id === beadId)?.type
+  const after = change.type
+  if (before === undefined || after === undefined || before === after) return changed
+  const taken = document.beads.some(({ id, type }) => id !== beadId && (type === before || type === after))
+  return taken ? changed : renameInDecisions(changed, before, after)
 }
 
 /** Removes a bead; its atoms are in no bead then, unless they were shared. */

@@ -1,11 +1,16 @@
+export { backboneBeads } from './backbone-beads'
 export { beadComposition, beadMass } from './bead-composition'
 export { beadGraph, type BeadGraph } from './bead-graph'
-export { atomLinks, beadLinks, type AtomLink, type BeadLink } from './bead-links'
+export { beadLinks, type BeadLink } from './bead-links'
 export { beadPieces } from './bead-pieces'
 export { checkMapping } from './check-mapping'
 export { compareTypes, compareTypeSequences } from './compare-types'
-export { deriveTerms } from './derive-terms'
+export { derivePooledTerms, deriveTerms } from './derive-terms'
+export { setPooling, setTermUse, type TermReference } from './edit-decisions'
 export { addBead, type BeadChange, changeBead, freeAtoms, giveAtoms, removeBead } from './edit-mapping'
+export { type AtomPlace, giveAtomAcross, setShare, shareAtom } from './edit-shares'
+export { endBeads, type EndBead } from './end-beads'
+export { DEFAULT_GAIN_ASSUMPTIONS, estimateGain, type Gain, type GainAssumptions } from './estimate-gain'
 export {
   BEAD_COLOURS,
   type Bead,
@@ -13,7 +18,16 @@ export {
   type BeadColour,
   type MappingDocument,
   type Site,
+  type TermChoice,
+  type TermPooling,
 } from './mapping-document'
+export { mappingNumbers, type MappingNumbers } from './mapping-numbers'
 export type { MappingProblem, MappingProblemCode } from './mapping-problem'
+export { placeFlags, type PlaceFlag } from './place-flags'
+export { acceptProposal, proposeTerms, type TermProposal } from './propose-terms'
+export { poolingOf } from './split-terms'
+export { termGroups, type GroupedTerm, type TermCentre, type TermGroup } from './term-groups'
+export { multiplicity, placeKey, termName, type BeadPlace, type DerivedTerm, type Place } from './term'
 export { MAX_TERM_PLACES } from './term-limit'
-export { termName, type BeadPlace, type DerivedTerm, type Place } from './term'
+export { rankTerms, type RankedTerm, type TermEvidence, WELL_SAMPLED_SHARE } from './term-preference'
+export { termUse, usedTerms, type TermUse } from './term-use'

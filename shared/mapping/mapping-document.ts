@@ -24,12 +24,38 @@ export interface Bead {
   readonly colour: number
   readonly site: Site
   readonly atoms: BeadAtom[]
+  /** What differs where this bead ends a chain, such as “starts with a butyl group”; empty or absent where nothing is noted. */
+  readonly endGroup?: string
+}
+
+/**
+ * What was decided about a type sequence that stands at places with different surroundings: one term for each kind of place,
+ * or one for all of them and why.
+ */
+export interface TermPooling {
+  /** Bead types in the canonical direction of the term. */
+  readonly types: string[]
+  readonly choice: 'split' | 'pooled'
+  readonly reason: string
+}
+
+/** Whether a term is used or left out of the set, and why. Terms without a choice are used. */
+export interface TermChoice {
+  /** Bead types in the canonical direction of the term. */
+  readonly types: string[]
+  /** As `DerivedTerm.placeKey`: empty unless the term is one of several of a split sequence. */
+  readonly placeKey: string
+  readonly use: 'used' | 'left out'
+  readonly reason: string
 }
 
 /** The saved mapping. Readers refuse versions they do not know; a new version brings a step that lifts the one before. */
 export interface MappingDocument {
   readonly version: 1
   readonly beads: Bead[]
+  /** Absent in documents from before there were any, as is `termChoices`. */
+  readonly poolings?: TermPooling[]
+  readonly termChoices?: TermChoice[]
 }
 
 /** Hues of the beads in the order in which they are given out; a bead stores its place in this list. */

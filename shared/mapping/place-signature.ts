@@ -1,11 +1,12 @@
-import { refineClasses, type RepeatUnit } from '../chemistry'
-import { atomLinks, type BeadLink } from './bead-links'
+import { atomLinks, rankClasses, type RepeatUnit } from '../chemistry'
+import type { BeadLink } from './bead-links'
 import type { MappingDocument } from './mapping-document'
 
 /**
  * Classes of the beads and atoms of the endless chain that their surroundings cannot tell apart: colour refinement on the
  * repeat unit closed upon itself, with each bead tied to its atoms. On a graph that repeats, refinement of one closed period
- * gives the classes of the endless graph. Chirality is not looked at.
+ * gives the classes of the endless graph. Chirality is not looked at. The numbers do not depend on how atoms or beads are
+ * numbered, nor on the direction of the chain.
  */
 export interface ChainClasses {
   readonly atoms: readonly number[]
@@ -13,6 +14,8 @@ export interface ChainClasses {
 }
 
 /**
+ * The classes of a mapped unit.
+ *
  * @param unit the repeat unit
  * @param document a mapping whose atoms all exist
  */
@@ -32,7 +35,7 @@ export function chainClasses(unit: RepeatUnit, document: MappingDocument): Chain
       })),
     ),
   ]
-  const classes = refineClasses(labels, edges)
+  const classes = rankClasses(labels, edges)
   return { atoms: classes.slice(0, size), beads: classes.slice(size) }
 }
 

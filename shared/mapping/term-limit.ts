@@ -1,6 +1,6 @@
-import type { RepeatUnit } from '../chemistry'
+import { atomLinks, type RepeatUnit } from '../chemistry'
 import { InvalidInputError } from '../errors'
-import { atomLinks, beadLinks, type BeadLink } from './bead-links'
+import { beadLinks, type BeadLink } from './bead-links'
 import type { MappingDocument } from './mapping-document'
 import type { MappingProblem } from './mapping-problem'
 

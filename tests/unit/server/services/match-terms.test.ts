@@ -20,6 +20,7 @@ const stored = (id: string, types: string, current = true): StoredTerm => ({
   id,
   kind: types.split('-').length === 2 ? 'bond' : 'angle',
   types: types.split('-'),
+  placeKey: '',
   current,
 })
 
@@ -29,6 +30,7 @@ const derived = (types: string): DerivedTerm => ({
   name: types,
   places: [],
   placeClasses: [],
+  placeKey: '',
 })
 
 /** What becomes of each stored term: its new types, or vanished; and which terms are new. */
@@ -118,5 +120,27 @@ describe('matchTerms', () => {
   it('leaves vanished terms under the names they left with', () => {
     const result = match([stored('1', 'A-B', false)], ['C-C'], { b1: 'A' }, { b1: 'C' })
     expect(result).toEqual({ kept: {}, added: ['C-C'], vanished: ['1'] })
+  })
+})
+
+describe('matchTerms of a sequence that is split by its places', () => {
+  const beads = documentOf({ b1: 'A', b2: 'B' })
+  const keys = ['b1@0 b2@0', 'b1@0 b2@1']
+
+  it('tells its terms apart by their place, read from either end', () => {
+    const both = keys.map((placeKey, index) => ({ ...stored(String(index), 'A-B'), placeKey }))
+    const now = ['b2@1 b1@0', 'b2@0 b1@0'].map((placeKey) => ({ ...derived('B-A'), placeKey }))
+    const { kept, added } = matchTerms(both, now, beads, beads)
+    expect(kept).toEqual([
+      { id: '1', term: now[0] },
+      { id: '0', term: now[1] },
+    ])
+    expect(added).toEqual([])
+  })
+
+  it('leaves what stood on the pooled term with the pooled term', () => {
+    const now = keys.map((placeKey) => ({ ...derived('A-B'), placeKey }))
+    const { kept, added, vanished } = matchTerms([stored('pooled', 'A-B')], now, beads, beads)
+    expect([kept, added, vanished]).toEqual([[], now, ['pooled']])
   })
 })

@@ -124,6 +124,8 @@ function deviationsFromMode(system: PenalisedSystem, { eta, variances, factor }:
     system.basis,
     Float64Array.from(pull, (_, index) => solved[system.places[index]]),
   )
-  // Differences of nearly equal variances may round below zero next to the mode.
-  return eta.map((_, bin) => Math.sqrt(Math.max(0, variances[bin] + variances[mode] - 2 * column[bin])))
+  // Differences of nearly equal variances may round below zero next to the mode, and off zero at it.
+  return eta.map((_, bin) =>
+    bin === mode ? 0 : Math.sqrt(Math.max(0, variances[bin] + variances[mode] - 2 * column[bin])),
+  )
 }

@@ -17,10 +17,16 @@ const LEAST_PIVOT = 1e-11
  *
  * @param matrix lower band by rows, entry (i, i − k) at i·(p + 1) + k; entries left of the first column are ignored;
  *   overwritten by the factor
- * @returns null where cancellation leaves fewer than about five digits of a pivot, or the matrix is not positive definite:
+ * @param leastPivot share of its diagonal that a pivot must keep
+ * @returns null where cancellation leaves fewer than about five digits of a pivot (with the share proposed), or the matrix is not positive definite:
  *   `factorRows` then still gets a product A′A right
  */
-export function factorBanded(matrix: Float64Array, size: number, halfBandwidth: number): BandedFactor | null {
+export function factorBanded(
+  matrix: Float64Array,
+  size: number,
+  halfBandwidth: number,
+  leastPivot: number = LEAST_PIVOT,
+): BandedFactor | null {
   const stride = halfBandwidth + 1
   for (let row = 0; row < size; row++) {
     const start = row * stride
@@ -39,7 +45,7 @@ export function factorBanded(matrix: Float64Array, size: number, halfBandwidth: 
       matrix[start + k] = lower
       pivot -= entry * lower
     }
-    if (!(pivot > LEAST_PIVOT * matrix[start])) return null
+    if (!(pivot > leastPivot * matrix[start])) return null
     matrix[start] = pivot
   }
   return { size, halfBandwidth, values: matrix }

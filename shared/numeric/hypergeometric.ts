@@ -18,42 +18,42 @@ export function hypergeometric(random: Random, marked: number, plain: number, dr
   const total = marked + plain
   const mode = Math.min(most, Math.max(least, Math.floor(((drawn + 1) * (marked + 1)) / (total + 2))))
   // Rounding leaves the sum of all probabilities a hair below 1; a number that falls into that gap is drawn again.
+  const peak = Math.exp(logProbability(marked, plain, drawn, mode))
   for (;;) {
-    const value = invertFromMode(random.uniform(), { marked, plain, drawn, least, most, mode })
+    const value = invertFromMode(random.uniform(), peak, mode, marked, plain, drawn)
     if (value >= 0) return value
   }
 }
 
-interface Urn {
-  marked: number
-  plain: number
-  drawn: number
-  least: number
-  most: number
-  mode: number
-}
-
-/** Takes probabilities off `remaining`, mode first, then one step up and one step down in turn; −1 when none is left. */
-function invertFromMode(remaining: number, { marked, plain, drawn, least, most, mode }: Urn): number {
-  let above = Math.exp(logProbability(marked, plain, drawn, mode))
-  remaining -= above
+/**
+ * Takes probabilities off `remaining`, mode first, then one step up and one step down in turn; −1 when none is left. Numbers,
+ * not a record, go in: it is called some hundred thousand times in a row. A step beyond the last possible number multiplies
+ * the probability by zero.
+ */
+function invertFromMode(
+  remaining: number,
+  peak: number,
+  mode: number,
+  marked: number,
+  plain: number,
+  drawn: number,
+): number {
+  remaining -= peak
   if (remaining < 0) return mode
-  let below = above
+  let above = peak
+  let below = peak
   let up = mode
   let down = mode
-  while (up < most || down > least) {
-    if (up < most) {
-      above *= ((marked - up) * (drawn - up)) / ((up + 1) * (plain - drawn + up + 1))
-      up++
-      remaining -= above
-      if (remaining < 0) return up
-    }
-    if (down > least) {
-      below *= (down * (plain - drawn + down)) / ((marked - down + 1) * (drawn - down + 1))
-      down--
-      remaining -= below
-      if (remaining < 0) return down
-    }
+  const least = plain - drawn
+  while (above > 0 || below > 0) {
+    above *= ((marked - up) * (drawn - up)) / ((up + 1) * (least + up + 1))
+    up++
+    remaining -= above
+    if (remaining < 0) return up
+    below *= (down * (least + down)) / ((marked - down + 1) * (drawn - down + 1))
+    down--
+    remaining -= below
+    if (remaining < 0) return down
   }
   return -1
 }

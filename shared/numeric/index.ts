@@ -6,3 +6,9 @@ export { quantileSorted } from './quantile'
 export { pieceCurvature, pieceSlope, pieceValue, type SplinePiece } from './spline-piece'
 export { createRandom, type Random } from './random'
 export { symmetricEigenvalues } from './symmetric-eigenvalues'
+export {
+  autocorrelations,
+  type BlockingLevel,
+  type SeriesInefficiency,
+  seriesInefficiency,
+} from './series-inefficiency'

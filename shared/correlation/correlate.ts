@@ -6,7 +6,7 @@ import { conditionalMeans } from './conditional-mean'
 import type { Correlation } from './correlation'
 import { correlationWarnings } from './correlation-warnings'
 import { couplingMap, largestCoupling } from './coupling-map'
-import { mergeBins, mergeCells } from './merge-bins'
+import { mergeCells, mergeThinBins } from './merge-bins'
 import type { Marginals } from './mutual-information'
 import {
   marginalsOf,
@@ -112,8 +112,8 @@ function mergedForVerdict(
   if (independentSamples === null) return { xEdges, yEdges, masses }
   const side = Math.round(Math.sqrt(independentSamples / SAMPLES_PER_CELL))
   const bins = Math.min(MOST_BINS, Math.max(LEAST_BINS, side))
-  const x = mergeBins(marginals.x, xEdges, bins)
-  const y = mergeBins(marginals.y, yEdges, bins)
+  const x = mergeThinBins(marginals.x, xEdges, bins)
+  const y = mergeThinBins(marginals.y, yEdges, bins)
   return { xEdges: x.edges, yEdges: y.edges, masses: mergeCells(masses, x, y) }
 }
 

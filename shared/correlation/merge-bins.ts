@@ -7,6 +7,9 @@ export interface MergedBins {
   readonly count: number
 }
 
+/** Halvings of the interval in which the share of a group is sought. */
+const HALVINGS = 40
+
 /**
  * Merges neighbouring bins into at most `count` groups of about equal mass. A bin heavier than its share stays alone, so
  * that only thin parts are merged. The groups depend on this marginal alone, which keeps a null distribution with fixed
@@ -18,6 +21,43 @@ export interface MergedBins {
  * @example mergeBins(Float64Array.of(1, 1, 2, 0), Float64Array.of(0, 1, 2, 3, 4), 2).edges // 0, 2, 3
  */
 export function mergeBins(masses: Float64Array, edges: Float64Array, count: number): MergedBins {
+  return grouped(masses, edges, (remaining, group) =>
+    group < count - 1 ? remaining / (count - group) : Infinity,
+  )
+}
+
+/**
+ * Merges no more than it takes to come down to `most` groups: a group is closed once it holds a share of the mass, and the
+ * share is the smallest that leaves at most `most` groups. Bins few enough stay as they are, thin or not; empty ones join the
+ * filled one before. Depends on this marginal alone, as `mergeBins`.
+ *
+ * @param masses not negative, with a positive sum; length n
+ * @param edges length n + 1
+ * @param most at least 1
+ * @example mergeThinBins(Float64Array.of(1, 1, 2, 9, 0), Float64Array.of(0, 1, 2, 3, 4, 5), 3).edges // 0, 2, 3, 4
+ */
+export function mergeThinBins(masses: Float64Array, edges: Float64Array, most: number): MergedBins {
+  const withShare = (share: number) => grouped(masses, edges, () => share)
+  const unmerged = withShare(0)
+  if (unmerged.count <= most) return unmerged
+  let low = 0
+  let high = 2 * masses.reduce((sum, mass) => sum + mass, 0)
+  let found = withShare(high)
+  for (let halving = 0; halving < HALVINGS; halving++) {
+    const share = (low + high) / 2
+    const tried = withShare(share)
+    if (tried.count <= most) [found, high] = [tried, share]
+    else low = share
+  }
+  return found
+}
+
+/** `shareOf`: mass that closes a group, from the mass of this and all later groups and the number of the group. */
+function grouped(
+  masses: Float64Array,
+  edges: Float64Array,
+  shareOf: (remaining: number, group: number) => number,
+): MergedBins {
   const first = masses.findIndex((mass) => mass > 0)
   const last = masses.findLastIndex((mass) => mass > 0)
   const groups = new Int32Array(masses.length).fill(-1)
@@ -26,9 +66,8 @@ export function mergeBins(masses: Float64Array, edges: Float64Array, count: numb
   let group = 0
   let held = 0
   for (let bin = first; bin <= last; bin++) {
-    const share = (remaining + held) / (count - group)
     // Close the group where stopping short of its share misses it by less than going beyond it.
-    if (held > 0 && group < count - 1 && masses[bin] > 0 && held + masses[bin] / 2 > share) {
+    if (held > 0 && masses[bin] > 0 && held + masses[bin] / 2 > shareOf(remaining + held, group)) {
       groupEdges.push(edges[bin])
       group++
       held = 0

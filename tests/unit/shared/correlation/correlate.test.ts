@@ -2,8 +2,9 @@ import fc from 'fast-check'
 import { sampleCorrelation } from 'simple-statistics'
 import { describe, expect, it } from 'vitest'
 import { correlate } from '@shared/correlation'
-import { mergeBins, mergeCells } from '@shared/correlation/merge-bins'
+import { mergeBins, mergeCells, mergeThinBins } from '@shared/correlation/merge-bins'
 import { marginalsOf, mutualInformation } from '@shared/correlation/mutual-information'
+import { nullDistribution } from '@shared/correlation/null-tables'
 import { fillRandomTable } from '@shared/correlation/random-table'
 import { createJointHistogram, type JointHistogram } from '@shared/histogram'
 import { createRandom } from '@shared/numeric'
@@ -140,5 +141,48 @@ describe('its parts', () => {
     expect(sum(merged)).toBeCloseTo(sum(histogram.weights), 6)
     expect(mergedX.edges[0]).toBe(xEdges[0])
     expect(mergedX.edges.at(-1)).toBe(xEdges[NX])
+  })
+
+  it('merging thin bins leaves bins few enough alone, and else comes down to what was asked for', () => {
+    fc.assert(
+      fc.property(
+        fc.array(fc.nat(50), { minLength: 1, maxLength: 60 }),
+        fc.integer({ min: 1, max: 60 }),
+        (bins, most) => {
+          const masses = Float64Array.from(bins)
+          const filled = bins.filter((mass) => mass > 0).length
+          fc.pre(filled > 0)
+          const { groups, edges, count } = mergeThinBins(
+            masses,
+            Float64Array.from(edgesOf(0, 1, bins.length)),
+            most,
+          )
+          expect(count).toBeLessThanOrEqual(most)
+          expect(edges).toHaveLength(count + 1)
+          if (filled <= most) expect(count).toBe(filled)
+          bins.forEach((mass, bin) => mass > 0 && expect(groups[bin]).toBeGreaterThanOrEqual(0))
+        },
+      ),
+    )
+  })
+
+  it('merges the thin tails of many bins and not their middle', () => {
+    const masses = Float64Array.from({ length: 41 }, (_, bin) => Math.exp(-((bin - 20) ** 2) / 50))
+    const { edges, count } = mergeThinBins(masses, Float64Array.from(edgesOf(0, 41, 41)), 40)
+    expect(count).toBe(40)
+    expect(edges).toContain(20)
+    expect(edges).toContain(21)
+  })
+
+  it('null tables of more samples than are drawn show what as many samples would', () => {
+    // Equal margins: the mean tends to (rows − 1)(columns − 1)/(2N) (Wilks 1938; from memory). 200 tables know it to 0.4 %.
+    const cells = new Float64Array(30 * 30).fill(1 / 900)
+    for (const samples of [150_000, 1_000_000]) {
+      const { mean, totalVariationMean } = nullDistribution(cells, 30, samples, 1)
+      expect(Math.abs((mean * 2 * samples) / 29 ** 2 - 1)).toBeLessThan(0.02)
+      // Each cell misses its mean by a normal number of variance e(1 − 1/30)²: ½ Σ √(2/π · e)/N.
+      const variation = (900 / 2) * Math.sqrt((2 / Math.PI) * (samples / 900)) * (29 / 30 / samples)
+      expect(Math.abs(totalVariationMean / variation - 1)).toBeLessThan(0.02)
+    }
   })
 })

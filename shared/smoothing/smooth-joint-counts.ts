@@ -42,6 +42,8 @@ export interface SmoothJointDensity {
   readonly means: Float64Array
   /** Standard deviation of η − η(m) at the cell midpoints, with m the cell of largest η. */
   readonly deviations: Float64Array
+  /** Expected counts that each coefficient speaks for, B_x′ μ B_y: where they are few, only the penalty does. */
+  readonly support: Float64Array
   /** Per bin index along each axis; rounded to 0.01. */
   readonly log10Lambdas: PerAxis<number>
   readonly effectiveDimension: number
@@ -80,6 +82,7 @@ export function smoothJointCounts(
     eta: fit.eta,
     means: fit.means,
     deviations: deviationsFromMode(system, fit),
+    support: tensorProject(system.x.basis, system.y.basis, fit.means),
     log10Lambdas,
     effectiveDimension: fit.effectiveDimension,
   }

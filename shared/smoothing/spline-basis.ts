@@ -1,3 +1,4 @@
+import { cubicBSplines } from '../numeric'
 import type { SmoothingBasis } from './smoothing-basis'
 
 const STENCIL = [-1, 3, -3, 1]
@@ -58,15 +59,4 @@ export function splineBasis(
 /** Weights of four coefficients, the fourth being the image of the second, as weights of the one before and the first three. */
 function foldFourth([first, second, third, fourth]: readonly number[]): [number, number, number, number] {
   return [0, first, second + fourth, third]
-}
-
-/** The four uniform cubic B-splines that reach a segment, at share t of it; their sum is 1. */
-function cubicBSplines(t: number): [number, number, number, number] {
-  const u = 1 - t
-  return [
-    (u * u * u) / 6,
-    (3 * t * t * t - 6 * t * t + 4) / 6,
-    (3 * u * u * u - 6 * u * u + 4) / 6,
-    (t * t * t) / 6,
-  ]
 }

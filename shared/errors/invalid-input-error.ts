@@ -28,6 +28,9 @@ export type InvalidInputCode =
   | 'TOO_FEW_BINS'
   | 'TOO_MANY_BINS'
   | 'TOO_FEW_SAMPLES'
+  | 'SAMPLE_SIZE_UNKNOWN'
+  | 'TOO_FEW_BLOCKS'
+  | 'BLOCKS_DIFFER'
   | 'GRID_INCOMPLETE'
   // chemistry and mapping
   | 'SMILES_UNPARSABLE'

@@ -1,6 +1,7 @@
 import { InvalidInputError } from '../errors'
 import type { CoordinateKind } from '../units'
 import { checkEdges } from './check-edges'
+import type { BlockInefficiency } from './block-inefficiency'
 import type { BinContent, Histogram } from './histogram'
 
 /** What `createHistogram` is given; arrays are copied. */
@@ -11,6 +12,7 @@ export interface HistogramInput {
   readonly weights: ArrayLike<number>
   readonly content: BinContent
   readonly independentSamples?: number | null
+  readonly blocks?: BlockInefficiency | null
 }
 
 /**
@@ -34,7 +36,8 @@ export function createHistogram(input: HistogramInput): Histogram {
   if (input.content !== 'count') weights.forEach((mass, bin) => (weights[bin] = mass / total))
   const independentSamples = input.independentSamples ?? null
   checkIndependentSamples(independentSamples, input.content === 'count' ? total : Infinity)
-  return { kind: input.kind, edges, weights, content: input.content, independentSamples }
+  const { kind, content, blocks = null } = input
+  return { kind, edges, weights, content, independentSamples, blocks }
 }
 
 /**

@@ -1,4 +1,5 @@
 import type { CoordinateKind } from '../units'
+import type { BlockInefficiency } from './block-inefficiency'
 
 export type { CoordinateKind } from '../units'
 
@@ -19,9 +20,8 @@ export interface Histogram {
    */
   readonly weights: Float64Array
   readonly content: BinContent
-  /**
-   * Number of independent samples the histogram stands for: the sum of counts divided by the statistical inefficiency,
-   * or what the user stated; null when nobody said.
-   */
+  /** Number of independent samples the histogram stands for, as the user stated it; null when nobody said. */
   readonly independentSamples: number | null
+  /** Statistical inefficiency of the counts as blocks or chains show it; left out or null where none were measured. */
+  readonly blocks?: BlockInefficiency | null
 }

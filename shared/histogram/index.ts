@@ -1,9 +1,18 @@
 export { accumulate } from './accumulate'
 export { binCentroids, binMidpoints } from './bin-centroids'
 export { binVolumes } from './bin-volumes'
+export {
+  blockInefficiency,
+  type BlockCounts,
+  type BlockInefficiency,
+  type BlockKind,
+  LEAST_BLOCKS,
+  rulingInefficiency,
+} from './block-inefficiency'
 export { checkEdges } from './check-edges'
 export { coordinateDomain, foldDihedral } from './coordinate-domain'
-export { createHistogram, type HistogramInput } from './create-histogram'
+export { checkIndependentSamples, createHistogram, type HistogramInput } from './create-histogram'
+export { type AppliedInefficiency, effectiveSamples, type InefficiencySource } from './effective-samples'
 export type { BinContent, CoordinateKind, Histogram } from './histogram'
 export { jacobian } from './jacobian'
 export {
@@ -13,4 +22,5 @@ export {
   type JointHistogramInput,
 } from './joint-histogram'
 export { rebin } from './rebin'
+export { sampleInefficiency } from './sample-inefficiency'
 export { MAXIMUM_BINS, sampleEdges } from './sample-edges'

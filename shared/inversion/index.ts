@@ -1,3 +1,5 @@
+export type { AppliedInefficiency, InefficiencySource } from '../histogram'
+export { buildPotential, type EndRules, type PotentialCurve } from './build-potential'
 export type { Inversion, InvertedBins, SmoothingResult } from './inversion'
 export {
   DEFAULT_INVERSION_SETTINGS,
@@ -12,7 +14,8 @@ export {
 export { invert } from './invert'
 export type { Potential, PotentialTail } from './potential'
 export { potentialCurvature, potentialEnergy, potentialSlope } from './potential-energy'
-export { MINIMUM_FILLED_BINS } from './prepared-bins'
+export { MINIMUM_FILLED_BINS, prepareBins, type PreparedBins } from './prepared-bins'
 export { regenerate } from './regenerate'
+export { straightAngleWarnings } from './straight-angles'
 export { tableDomain } from './table-domain'
 export type { Warning, WarningCode } from './warning'

@@ -1,3 +1,4 @@
+import type { AppliedInefficiency } from '../histogram'
 import type { CoordinateKind } from '../units'
 import type { InversionSettings, SmoothingCriterion } from './inversion-settings'
 import type { Potential } from './potential'
@@ -51,5 +52,9 @@ export interface Inversion {
   /** Where the potential is least, and that least energy: 0. */
   readonly minimum: { readonly coordinate: number; readonly energy: number }
   readonly independentSamples: number | null
+  /** What the counts were divided by and who says so; null for a density or a probability. */
+  readonly inefficiency: AppliedInefficiency | null
   readonly warnings: readonly Warning[]
+  /** Worth knowing, but no doubt about this very result: counts that were taken as independent. */
+  readonly notes: readonly Warning[]
 }

@@ -4,6 +4,7 @@ import { thermalEnergy } from '../units'
 import { buildPotential } from './build-potential'
 import type { Inversion, InvertedBins, SmoothingResult } from './inversion'
 import { type InversionSettings, SETTING_LIMITS, type SmoothingSettings } from './inversion-settings'
+import { inversionNotes } from './inversion-notes'
 import { inversionWarnings } from './inversion-warnings'
 import type { Potential } from './potential'
 import { type PreparedBins, prepareBins } from './prepared-bins'
@@ -14,21 +15,24 @@ import { type FittedCurve, smoothCurve } from './smooth-curve'
 /**
  * Boltzmann inversion of a histogram into a potential: U = −kT ln(n/V) with the exact volume V of each bin (Tschöp et al.,
  * Acta Polym. 49 (1998) 61; Reith, Pütz, Müller-Plathe, J. Comput. Chem. 24 (2003) 1624), smoothed as a penalised Poisson
- * log-density. Counts without a stated number of independent samples are taken as independent; a density or probability
- * without it is inverted unsmoothed, whatever the settings ask for, with the warning SAMPLE_SIZE_UNKNOWN.
+ * log-density. Counts are divided by their statistical inefficiency g: `settings.inefficiency`, else what the stated number
+ * of independent samples makes it, else g from blocks or chains, else 1 with the note COUNTS_TAKEN_AS_INDEPENDENT; the error
+ * band is √g as wide as that of independent counts. A density or probability without a stated number is inverted unsmoothed,
+ * whatever the settings ask for, with the warning SAMPLE_SIZE_UNKNOWN.
  *
  * @param histogram internal units
  * @param temperature K
- * @returns potential, evidence and warnings
+ * @returns potential, evidence, warnings and notes
  * @throws {InvalidInputError} TEMPERATURE_INVALID; SETTING_INVALID with the field; TOO_FEW_BINS with fewer than 5 filled
- *   bins; TOO_FEW_SAMPLES when counts add up to less than 1; SINGULAR_SYSTEM when the counts do not determine a smooth curve
+ *   bins; TOO_FEW_SAMPLES when counts stand for less than 1; SINGULAR_SYSTEM when the counts do not determine a smooth curve
  */
 export function invert(histogram: Histogram, temperature: number, settings: InversionSettings): Inversion {
   const kT = thermalEnergy(temperature)
   const { kind } = histogram
   const { jacobian } = settings
   checkSmoothing(settings.smoothing)
-  const bins = prepareBins(histogram, jacobian)
+  checkInefficiency(settings.inefficiency)
+  const bins = prepareBins(histogram, jacobian, settings.inefficiency)
   const fitted = fitCurve(histogram, temperature, bins, settings)
   const { potential, minimum, constant } = buildPotential(fitted.curve, {
     stiffness: settings.tails.stiffness,
@@ -47,6 +51,8 @@ export function invert(histogram: Histogram, temperature: number, settings: Inve
     smoothing: smoothingResult(settings.smoothing, fitted),
     minimum: { coordinate: minimum, energy: 0 },
     independentSamples: bins.independentSamples,
+    inefficiency: bins.inefficiency,
+    notes: inversionNotes(bins),
   }
   return { ...inversion, warnings: inversionWarnings(inversion, bins, fitted) }
 }
@@ -57,6 +63,14 @@ function checkSmoothing(smoothing: SmoothingSettings): void {
   if (smoothing.log10Lambda >= low && smoothing.log10Lambda <= high) return
   throw new InvalidInputError('SETTING_INVALID', `log10 λ must lie between ${low} and ${high}.`, {
     field: 'log10Lambda',
+  })
+}
+
+function checkInefficiency(inefficiency: number | null): void {
+  const { low, high } = SETTING_LIMITS.inefficiency
+  if (inefficiency === null || (inefficiency >= low && inefficiency <= high)) return
+  throw new InvalidInputError('SETTING_INVALID', `The inefficiency must lie between ${low} and ${high}.`, {
+    field: 'inefficiency',
   })
 }
 

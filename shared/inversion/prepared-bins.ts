@@ -1,5 +1,12 @@
 import { InvalidInputError } from '../errors'
-import { binCentroids, binMidpoints, binVolumes, type Histogram } from '../histogram'
+import {
+  type AppliedInefficiency,
+  binCentroids,
+  binMidpoints,
+  binVolumes,
+  effectiveSamples,
+  type Histogram,
+} from '../histogram'
 
 /** Fewest filled bins that an inversion accepts. */
 export const MINIMUM_FILLED_BINS = 5
@@ -17,6 +24,8 @@ export interface PreparedBins {
   /** Effective counts: weights scaled to the number of independent samples, or to sum 1 where that is unknown. */
   readonly counts: Float64Array
   readonly independentSamples: number | null
+  /** What counts were divided by; null for a density or a probability. */
+  readonly inefficiency: AppliedInefficiency | null
   /** Number of added bins before and after those of the histogram. */
   readonly added: readonly [before: number, after: number]
   /** First and last filled bin. */
@@ -25,19 +34,24 @@ export interface PreparedBins {
 
 /**
  * Lays a histogram out for inversion. The part of a turn that a dihedral histogram does not cover is divided into bins of
- * its mean width without counts: a chain on the table then goes only where the histogram says. Counts without a stated number of independent samples are
- * taken as independent; a density or probability without it keeps null.
+ * its mean width without counts: a chain on the table then goes only where the histogram says. Counts are divided by their
+ * statistical inefficiency as `effectiveSamples` finds it; a density or probability without a stated number keeps null.
  *
+ * @param stated the user's own g, at least 1; null takes what the histogram says
  * @throws {InvalidInputError} TOO_FEW_BINS with fewer than 5 filled bins; TOO_FEW_SAMPLES when counts add up to less than 1
  */
-export function prepareBins(histogram: Histogram, jacobian: boolean): PreparedBins {
-  const { kind, weights, content } = histogram
+export function prepareBins(
+  histogram: Histogram,
+  jacobian: boolean,
+  stated: number | null = null,
+): PreparedBins {
+  const { kind, weights } = histogram
   const total = weights.reduce((sum, weight) => sum + weight, 0)
-  const independentSamples = histogram.independentSamples ?? (content === 'count' ? total : null)
+  const { independentSamples, inefficiency } = effectiveSamples(histogram, stated)
   if (independentSamples !== null && independentSamples < 1) {
     throw new InvalidInputError(
       'TOO_FEW_SAMPLES',
-      `The counts add up to ${independentSamples.toPrecision(2)}, less than one sample. If they are a density or probabilities, say so.`,
+      `The counts stand for ${independentSamples.toPrecision(2)} independent samples, less than one. If they are a density or probabilities, say so.`,
     )
   }
   const [before, after] = kind === 'dihedral' ? missingEdges(histogram.edges) : [[], []]
@@ -57,6 +71,7 @@ export function prepareBins(histogram: Histogram, jacobian: boolean): PreparedBi
     volumes: binVolumes(kind, edges, jacobian),
     counts,
     independentSamples,
+    inefficiency,
     added,
     filled,
   }

@@ -1,5 +1,6 @@
 export { bandedSolve, type BandedFactor, factorBanded, selectedInverse } from './banded-cholesky'
 export { type BandedRows, factorRows } from './banded-rows'
+export { cubicBSplines, cubicBSplineSlopes, type FourSplines } from './cubic-b-splines'
 export { mirroredCurvatures, notAKnotCurvatures, periodicCurvatures } from './cubic-spline'
 export { GAUSS_LEGENDRE } from './gauss-legendre'
 export { quantileSorted } from './quantile'

@@ -1,7 +1,9 @@
 import type { Inversion } from './inversion'
 import type { PreparedBins } from './prepared-bins'
 import type { FittedCurve } from './smooth-curve'
+import { openBarriers, turnBarriers } from './unsampled-barriers'
 import type { Warning } from './warning'
+import { placeWords } from './warning-words'
 
 /** Bins with fewer expected counts do not speak about the fit. */
 const LEAST_EXPECTED = 5
@@ -10,14 +12,18 @@ const MISFIT_DEVIATIONS = 6
 /** Smaller misses in the energy do not matter even where they are significant, in kT. */
 const MISFIT_ENERGY = 0.1
 
-/** Doubts about the curve: bridged gaps, a curve that misses the data. */
+/** Doubts about the curve: bridged gaps, barriers without samples, a curve that misses the data. */
 export function curveWarnings(
   inversion: Omit<Inversion, 'warnings'>,
   bins: PreparedBins,
   fitted: FittedCurve,
   kT: number,
 ): Warning[] {
-  return [...bridgedGaps(inversion, bins, fitted), ...missedData(bins, fitted, kT)]
+  return [
+    ...bridgedGaps(inversion, bins, fitted),
+    ...unsampledBarriers(inversion, bins, fitted),
+    ...missedData(bins, fitted, kT),
+  ]
 }
 
 function bridgedGaps(
@@ -34,6 +40,25 @@ function bridgedGaps(
       code: 'GAPS_BRIDGED',
       message: `Without smoothing, ${empty} empty ${empty === 1 ? 'bin' : 'bins'} between filled ones got a straight line; a barrier there would be higher.`,
       action: 'Smooth the curve, or merge bins until none between filled ones is empty.',
+    },
+  ]
+}
+
+function unsampledBarriers(
+  { kind }: Omit<Inversion, 'warnings'>,
+  bins: PreparedBins,
+  { density }: FittedCurve,
+): Warning[] {
+  if (density === null) return []
+  const { edges } = bins
+  const barriers = kind === 'dihedral' ? turnBarriers(bins) : openBarriers(bins)
+  if (barriers.length === 0) return []
+  const [[from, to]] = barriers
+  return [
+    {
+      code: 'BARRIER_UNSAMPLED',
+      message: `No sample was seen between ${placeWords(kind, edges[from])} and ${placeWords(kind, edges[to])}, with populations on both sides: the height of the barrier there is what the smoothing makes of empty bins, and too few crossings may have been seen to weigh one side against the other.`,
+      action: 'Sample the barrier, with longer, hotter or biased runs, before its height is trusted.',
     },
   ]
 }

@@ -4,6 +4,7 @@ import type { Inversion } from './inversion'
 import { potentialEnergy, potentialSlope } from './potential-energy'
 import type { PreparedBins } from './prepared-bins'
 import type { Warning } from './warning'
+import { placeWords } from './warning-words'
 
 /** An outermost bin with a free energy below this many kT above the least is still inside the distribution. */
 const EDGE_DEPTH = 4
@@ -50,7 +51,7 @@ function dataAtEdge({ kind, bins }: Omit<Inversion, 'warnings'>, kT: number): Wa
     .filter(({ inside, energy }) => inside && energy < EDGE_DEPTH * kT)
     .map(({ edge, energy }) => ({
       code: 'DATA_AT_EDGE',
-      message: `The histogram ends at ${place(kind, edge)}, where the free energy is only ${(energy / kT).toFixed(1)} kT above the least: part of the distribution is cut off.`,
+      message: `The histogram ends at ${placeWords(kind, edge)}, where the free energy is only ${(energy / kT).toFixed(1)} kT above the least: part of the distribution is cut off.`,
       action: 'Bin the distribution over a wider range.',
     }))
 }
@@ -64,12 +65,8 @@ function slopeAtStraightAngle({ kind, potential }: Omit<Inversion, 'warnings'>, 
     {
       code: 'SLOPE_AT_STRAIGHT_ANGLE',
       message: `Straight angles are populated, but the potential does not level off at 180°: it changes by ${(change / kT).toFixed(2)} kT over the last 5°, so the force jumps when the angle passes through straight.`,
-      action: 'Check the bins next to 180°, or use a form in cos θ, whose force vanishes there.',
+      action:
+        'Set the straight angle to level, so that the slope vanishes at 180°, or check the bins next to it.',
     },
   ]
-}
-
-function place(kind: Inversion['kind'], coordinate: number): string {
-  if (kind === 'bond') return `${Number(coordinate.toPrecision(4))} nm`
-  return `${Number(coordinateFromInternal(coordinate, 'degree').toFixed(1))}°`
 }

@@ -1,7 +1,10 @@
 import { thermalEnergy } from '../units'
+import { axisWarnings } from './axis-warnings'
+import { binWarnings } from './bin-warnings'
 import { curveWarnings } from './curve-warnings'
 import { edgeWarnings } from './edge-warnings'
 import type { Inversion } from './inversion'
+import { jacobianWarnings } from './jacobian-warnings'
 import type { PreparedBins } from './prepared-bins'
 import type { FittedCurve } from './smooth-curve'
 import { tableWarnings } from './table-warnings'
@@ -24,6 +27,9 @@ export function inversionWarnings(
   const kT = thermalEnergy(inversion.temperature)
   return [
     ...sampleWarnings(inversion.independentSamples),
+    ...axisWarnings(inversion.kind, bins),
+    ...jacobianWarnings(inversion.kind, inversion.jacobian, bins),
+    ...binWarnings(inversion.kind, bins),
     ...edgeWarnings(inversion, bins, kT),
     ...curveWarnings(inversion, bins, fitted, kT),
     ...tableWarnings(inversion, kT),

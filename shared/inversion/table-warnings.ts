@@ -1,7 +1,7 @@
-import { coordinateFromInternal } from '../units'
 import type { Inversion } from './inversion'
 import { tableDomain } from './table-domain'
 import type { Warning } from './warning'
+import { extentWords } from './warning-words'
 
 /** Rounding that a bound may lie inside the data. */
 const BOUND_SLACK = 1e-9
@@ -17,14 +17,14 @@ export function tableWarnings(inversion: Omit<Inversion, 'warnings'>, kT: number
   if (outside > inside) {
     warnings.push({
       code: 'EXTRAPOLATION_DOMINATES',
-      message: `The table covers ${extent(kind, inside)} with data and ${extent(kind, outside)} without: most of it is extrapolated.`,
+      message: `The table covers ${extentWords(kind, inside)} with data and ${extentWords(kind, outside)} without: most of it is extrapolated.`,
       action: 'Trust the table only where there are data; narrow its range if the other program allows it.',
     })
   }
   if (low > first + BOUND_SLACK || high < last - BOUND_SLACK) {
     warnings.push({
       code: 'TABLE_CUTS_DATA',
-      message: `The table leaves out ${extent(kind, last - first - inside)} of the measured range.`,
+      message: `The table leaves out ${extentWords(kind, last - first - inside)} of the measured range.`,
       action: 'Widen the table, or it stops where chains really go.',
     })
   }
@@ -33,7 +33,7 @@ export function tableWarnings(inversion: Omit<Inversion, 'warnings'>, kT: number
   if (spacing > width) {
     warnings.push({
       code: 'TABLE_TOO_COARSE',
-      message: `The rows are ${extent(kind, spacing)} apart, wider than the bins of ${extent(kind, width)}: the table blurs what was measured.`,
+      message: `The rows are ${extentWords(kind, spacing)} apart, wider than the bins of ${extentWords(kind, width)}: the table blurs what was measured.`,
       action: `Use at least ${Math.ceil((high - low) / width) + 1} rows.`,
     })
   }
@@ -56,9 +56,4 @@ function capInData({ settings, bins, rawOffset }: Omit<Inversion, 'warnings'>, k
       action: 'Raise the cap above the energies of all filled bins.',
     },
   ]
-}
-
-function extent(kind: Inversion['kind'], length: number): string {
-  if (kind === 'bond') return `${Number(length.toPrecision(3))} nm`
-  return `${Number(coordinateFromInternal(length, 'degree').toPrecision(3))}°`
 }

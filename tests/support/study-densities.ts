@@ -27,8 +27,11 @@ export const STUDY_DENSITIES: readonly StudyDensity[] = [
   density('Harmonic bond', 'bond', [0.23, 0.47], (r) => 750 * (r - 0.35) ** 2),
   density('Anharmonic bond (Morse)', 'bond', [0.27, 0.55], (r) => 8 * (1 - Math.exp(-12 * (r - 0.35))) ** 2),
   density('Angle near 180°', 'angle', ANGLE, (theta) => 0.5 * ((theta / DEGREE - 165) / 12) ** 2),
-  density('Double-well angle', 'angle', ANGLE, (theta) =>
-    -Math.log(gaussian(theta / DEGREE, 100, 8) + 0.7 * gaussian(theta / DEGREE, 140, 10)),
+  density(
+    'Double-well angle',
+    'angle',
+    ANGLE,
+    (theta) => -Math.log(gaussian(theta / DEGREE, 100, 8) + 0.7 * gaussian(theta / DEGREE, 140, 10)),
   ),
   density('Three-fold dihedral', 'dihedral', TURN, (phi) => 1.5 * Math.cos(3 * phi) + 0.8 * Math.cos(phi)),
   density('Flat dihedral', 'dihedral', TURN, () => 0),

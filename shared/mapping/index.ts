@@ -27,7 +27,15 @@ export { placeFlags, type PlaceFlag } from './place-flags'
 export { acceptProposal, proposeTerms, type TermProposal } from './propose-terms'
 export { poolingOf } from './split-terms'
 export { termGroups, type GroupedTerm, type TermCentre, type TermGroup } from './term-groups'
+export { rotatableBonds, type CutBond } from './rotatable-bonds'
+export {
+  LONE_ATOM_COST,
+  type MappingSuggestion,
+  MOST_SUGGESTED_BEADS,
+  PLAIN_CUT_COST,
+  suggestMappings,
+} from './suggest-mappings'
 export { multiplicity, placeKey, termName, type BeadPlace, type DerivedTerm, type Place } from './term'
-export { MAX_TERM_PLACES } from './term-limit'
+export { hasTooManyPlaces, MAX_TERM_PLACES } from './term-limit'
 export { rankTerms, type RankedTerm, type TermEvidence, WELL_SAMPLED_SHARE } from './term-preference'
 export { termUse, usedTerms, type TermUse } from './term-use'

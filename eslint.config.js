@@ -27,6 +27,7 @@ const sharedLayerRules = sharedLayers.flatMap((folders, level) => {
     'forms',
     'basins',
     'correlation',
+    'joint-potential',
     'tables',
     'mapping',
     'contracts',

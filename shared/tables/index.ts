@@ -1,4 +1,5 @@
 export { tableDomain } from '../inversion'
+export { coordinateSentence, jacobianSentence } from './coordinate-sentences'
 export { formatNumber, roundSignificant, SIGNIFICANT_DIGITS } from './format-number'
 export { formatRows, formatTable } from './format-table'
 export { makeTable } from './make-table'

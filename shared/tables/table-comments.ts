@@ -1,5 +1,6 @@
 import type { InversionSettings, SmoothingResult, Warning } from '../inversion'
 import { type CoordinateKind, unitWord } from '../units'
+import { coordinateSentence, jacobianSentence } from './coordinate-sentences'
 import { formatNumber } from './format-number'
 import type { TableUnits } from './table'
 
@@ -31,18 +32,6 @@ export interface TableCommentInput {
   readonly savedOn: string | null
 }
 
-const COORDINATES: Record<CoordinateKind, string> = {
-  bond: 'bond length: distance between the two beads',
-  angle: 'bond angle: internal angle at the middle bead, 180 deg is straight',
-  dihedral: 'dihedral: 0 is cis, 180 deg is trans, sign by the right-hand rule (IUPAC)',
-}
-
-const JACOBIANS: Record<CoordinateKind, string> = {
-  bond: 'divided by the exact volume of each bin, integral of r^2',
-  angle: 'divided by the exact volume of each bin, integral of sin(theta)',
-  dihedral: 'constant for a dihedral, bins divided by their width',
-}
-
 /**
  * Comment lines of a table: what it is, what it was made from and how, and what it may be used for. Pure: the same
  * arguments give the same lines.
@@ -55,13 +44,13 @@ export function tableComments(input: TableCommentInput): string[] {
     line('polymer', input.polymer),
     line('mapping', input.mapping),
     line('term', input.term),
-    line('coordinate', COORDINATES[input.kind]),
+    line('coordinate', coordinateSentence(input.kind)),
     line('bead order', input.beadOrder),
     line('state point', statePoint(input)),
     line('units', unitSentence(input)),
     line(
       'Jacobian',
-      input.settings.jacobian ? JACOBIANS[input.kind] : 'off: bins divided by their width only',
+      input.settings.jacobian ? jacobianSentence(input.kind) : 'off: bins divided by their width only',
     ),
     line('smoothing', smoothingSentence(input)),
     line('form', input.settings.form),

@@ -4,6 +4,15 @@ export { beadGraph, type BeadGraph } from './bead-graph'
 export { beadLinks, type BeadLink } from './bead-links'
 export { beadPieces } from './bead-pieces'
 export { checkMapping } from './check-mapping'
+export { compareMappings, FLAT_AMPLITUDE } from './compare-mappings'
+export type {
+  ComparedMapping,
+  ComparedTerm,
+  MappingComparison,
+  MappingEvidence,
+  PairFinding,
+  TermFinding,
+} from './comparison'
 export { compareTypes, compareTypeSequences } from './compare-types'
 export { derivePooledTerms, deriveTerms } from './derive-terms'
 export { setPooling, setTermUse, type TermReference } from './edit-decisions'

@@ -9,13 +9,13 @@ const COMMAND = fileURLToPath(new URL('../../server/cli/beadwright.mjs', import.
 
 /** Analytic: bins of p(r) = r² exp(−U/kT)/Z with U = (k/2)(r − r₀)². */
 describe('the command as users start it', () => {
-  it('recovers the harmonic bond from its exact bin probabilities', () => {
+  it('recovers the harmonic bond from its exact bin probabilities', async () => {
     const { r_lo, bin_width, k, r0, T, kT } = fixture.inputs
     const counts = fixture.expected.bin_probability.map((probability) => probability * 1e8)
     const text = counts
       .map((count, bin) => `${r_lo + bin * bin_width}\t${r_lo + (bin + 1) * bin_width}\t${count}`)
       .join('\n')
-    const printed = withTextFile(text, (path) =>
+    const printed = await withTextFile(text, (path) =>
       execFileSync(
         COMMAND,
         ['invert', path, '--kind', 'bond', '--temperature', String(T), '--unit', 'nm', '--columns'].concat([

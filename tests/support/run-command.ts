@@ -11,10 +11,10 @@ export interface CommandResult {
 }
 
 /** Runs the beadwright command in this process. */
-export function runCommand(...words: string[]): CommandResult {
+export async function runCommand(...words: string[]): Promise<CommandResult> {
   let printed = ''
   let notes = ''
-  const status = run(words, {
+  const status = await run(words, {
     print: (text) => void (printed += text),
     note: (text) => void (notes += `${text}\n`),
   })
@@ -22,12 +22,15 @@ export function runCommand(...words: string[]): CommandResult {
 }
 
 /** Writes a text to a file of its own for the time of `work`, which gets its path. */
-export function withTextFile<Result>(text: string, work: (path: string) => Result): Result {
+export async function withTextFile<Result>(
+  text: string,
+  work: (path: string) => Result | Promise<Result>,
+): Promise<Result> {
   const folder = mkdtempSync(join(tmpdir(), 'beadwright-'))
   try {
     const path = join(folder, 'input.txt')
     writeFileSync(path, text)
-    return work(path)
+    return await work(path)
   } finally {
     rmSync(folder, { recursive: true })
   }

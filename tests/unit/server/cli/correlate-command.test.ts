@@ -16,22 +16,26 @@ function pairs(correlation: number, count: number): string {
 const CORRELATE = ['--kinds', 'bond,angle', '--units', 'nm,degree']
 
 describe('beadwright correlate', () => {
-  it('calls unrelated samples separable and related ones in need of a joint potential', () => {
-    const verdictOf = (correlation: number) => {
-      const { printed } = withTextFile(pairs(correlation, 5000), (path) =>
+  it('calls unrelated samples separable and related ones in need of a joint potential', async () => {
+    const verdictOf = async (correlation: number) => {
+      const { printed } = await withTextFile(pairs(correlation, 5000), (path) =>
         runCommand('correlate', path, ...CORRELATE, '--columns', 'x,y', '--json'),
       )
       return JSON.parse(printed) as CorrelationJson
     }
-    expect(verdictOf(0)).toMatchObject({ verdict: 'separable', samples: 5000, independentSamples: 5000 })
-    const related = verdictOf(0.7)
+    expect(await verdictOf(0)).toMatchObject({
+      verdict: 'separable',
+      samples: 5000,
+      independentSamples: 5000,
+    })
+    const related = await verdictOf(0.7)
     expect(related).toMatchObject({ verdict: 'joint', grid: [25, 25] })
     expect(related.pearson).toBeCloseTo(0.7, 1)
     expect(related.pValue).toBeLessThan(0.01)
   })
 
-  it('prints a report for people without --json', () => {
-    const { status, printed } = withTextFile(pairs(0.7, 5000), (path) =>
+  it('prints a report for people without --json', async () => {
+    const { status, printed } = await withTextFile(pairs(0.7, 5000), (path) =>
       runCommand('correlate', path, ...CORRELATE),
     )
     expect(status).toBe(0)
@@ -42,8 +46,10 @@ describe('beadwright correlate', () => {
     [['--kinds', 'bond', '--units', 'nm,degree'], /two words/],
     [['--kinds', 'bond,angle', '--units', 'degree,nm'], /nm or angstrom/],
     [[...CORRELATE, '--columns', 'x,count'], /Name x, y/],
-  ])('refuses the options %j with exit status 2', (words, sentence) => {
-    const { status, notes } = withTextFile(pairs(0, 100), (path) => runCommand('correlate', path, ...words))
+  ])('refuses the options %j with exit status 2', async (words, sentence) => {
+    const { status, notes } = await withTextFile(pairs(0, 100), (path) =>
+      runCommand('correlate', path, ...words),
+    )
     expect(status).toBe(2)
     expect(notes).toMatch(sentence)
   })

@@ -20,15 +20,17 @@ function angleFile(head = '# bins in degrees\n'): string {
 
 const INVERT = ['--kind', 'angle', '--temperature', '400', '--unit', 'degree', '--columns', 'centre,count']
 
-function invertJson(text: string, ...words: string[]): InversionJson {
-  const result = withTextFile(text, (path) => runCommand('invert', path, ...INVERT, '--json', ...words))
+async function invertJson(text: string, ...words: string[]): Promise<InversionJson> {
+  const result = await withTextFile(text, (path) => runCommand('invert', path, ...INVERT, '--json', ...words))
   expect(result.notes).not.toContain('beadwright:')
   return JSON.parse(result.printed) as InversionJson
 }
 
 describe('beadwright invert', () => {
-  it('prints a table whose rows hash to the checksum in its comments', () => {
-    const { status, printed } = withTextFile(angleFile(), (path) => runCommand('invert', path, ...INVERT))
+  it('prints a table whose rows hash to the checksum in its comments', async () => {
+    const { status, printed } = await withTextFile(angleFile(), (path) =>
+      runCommand('invert', path, ...INVERT),
+    )
     expect(status).toBe(0)
     const lines = printed.trimEnd().split('\n')
     const rows = lines.filter((line) => !line.startsWith('#'))
@@ -41,19 +43,19 @@ describe('beadwright invert', () => {
     ).toBe(stated)
   })
 
-  it('prints the same rows in the table and in the JSON', () => {
-    const { printed } = withTextFile(angleFile(), (path) =>
+  it('prints the same rows in the table and in the JSON', async () => {
+    const { printed } = await withTextFile(angleFile(), (path) =>
       runCommand('invert', path, ...INVERT, '--rows', '37'),
     )
     const rows = printed.split('\n').filter((line) => line !== '' && !line.startsWith('#'))
-    const json = invertJson(angleFile(), '--rows', '37')
+    const json = await invertJson(angleFile(), '--rows', '37')
     expect(rows.map((row) => row.trim().split(/\s+/).map(Number))).toEqual(
       json.table.map(({ coordinate, energy, force }) => [coordinate, energy, force]),
     )
   })
 
-  it('gives −kT ln(count/volume) of each bin, least value 0, and null for an empty one', () => {
-    const json = invertJson(angleFile().replace(/^1 .*$/m, '1 0'))
+  it('gives −kT ln(count/volume) of each bin, least value 0, and null for an empty one', async () => {
+    const json = await invertJson(angleFile().replace(/^1 .*$/m, '1 0'))
     const filled = json.bins.filter(({ count }) => count !== 0)
     expect(filled.length).toBeGreaterThan(60)
     const raw = filled.map(({ count, volume }) => -KT * Math.log((count ?? NaN) / volume))
@@ -64,28 +66,31 @@ describe('beadwright invert', () => {
     expect(json.bins[40].volume).toBeCloseTo(Math.cos(low) - Math.cos(high), 12)
   })
 
-  it('divides by the width alone with the Jacobian off', () => {
-    expect(invertJson(angleFile(), '--jacobian', 'off').bins[40].volume).toBeCloseTo(2, 9)
+  it('divides by the width alone with the Jacobian off', async () => {
+    const json = await invertJson(angleFile(), '--jacobian', 'off')
+    expect(json.bins[40].volume).toBeCloseTo(2, 9)
   })
 
-  it('gives energies in the unit asked for', () => {
-    const [joules, calories, thermal] = ['kJ/mol', 'kcal/mol', 'kT'].map(
-      (unit) => invertJson(angleFile(), '--energy-unit', unit).bins[30].energy ?? NaN,
+  it('gives energies in the unit asked for', async () => {
+    const [joules, calories, thermal] = await Promise.all(
+      ['kJ/mol', 'kcal/mol', 'kT'].map(
+        async (unit) => (await invertJson(angleFile(), '--energy-unit', unit)).bins[30].energy ?? NaN,
+      ),
     )
     expect(calories).toBeCloseTo(joules / 4.184, 9)
     expect(thermal).toBeCloseTo(joules / KT, 9)
   })
 
-  it('takes the range and the rows asked for, in the unit asked for', () => {
-    const json = invertJson(angleFile(), '--rows', '13', '--from', '60', '--to', '180')
+  it('takes the range and the rows asked for, in the unit asked for', async () => {
+    const json = await invertJson(angleFile(), '--rows', '13', '--from', '60', '--to', '180')
     expect(json.table.map(({ coordinate }) => coordinate)).toEqual(
       Array.from({ length: 13 }, (_, row) => 60 + 10 * row),
     )
   })
 
-  it('knows no error of a density of unknown sample size, and says so', () => {
+  it('knows no error of a density of unknown sample size, and says so', async () => {
     const words = ['--kind', 'angle', '--temperature', '400', '--unit', 'degree', '--json']
-    const { printed, notes } = withTextFile(angleFile(), (path) =>
+    const { printed, notes } = await withTextFile(angleFile(), (path) =>
       runCommand('invert', path, ...words, '--columns', 'centre,density'),
     )
     const json = JSON.parse(printed) as InversionJson
@@ -95,20 +100,20 @@ describe('beadwright invert', () => {
     expect(notes).toContain('SAMPLE_SIZE_UNKNOWN')
   })
 
-  it('reports λ as it was given', () => {
-    const { smoothing } = invertJson(angleFile(), '--smoothing', '100')
+  it('reports λ as it was given', async () => {
+    const { smoothing } = await invertJson(angleFile(), '--smoothing', '100')
     expect(smoothing).toMatchObject({ mode: 'manual', lambda: 100 })
   })
 
-  it('counts per independent sample are the inefficiency', () => {
-    const json = invertJson(angleFile(), '--independent-samples', '1000')
+  it('counts per independent sample are the inefficiency', async () => {
+    const json = await invertJson(angleFile(), '--independent-samples', '1000')
     expect(json.independentSamples).toBe(1000)
     const total = json.bins.reduce((sum, { count }) => sum + (count ?? 0), 0)
     expect(json.inefficiency).toBeCloseTo(total / 1000, 6)
   })
 
-  it('says on standard error what it guessed', () => {
-    const { notes, printed } = withTextFile(angleFile(), (path) =>
+  it('says on standard error what it guessed', async () => {
+    const { notes, printed } = await withTextFile(angleFile(), (path) =>
       runCommand('invert', path, '--kind', 'angle', '--temperature', '400'),
     )
     expect(notes).toMatch(/^guessed: /m)
@@ -119,9 +124,9 @@ describe('beadwright invert', () => {
     ['text where a number should be', '1 2\n3 x\n5 6\n', /line 2, column 2/i, 'TEXT_NOT_A_NUMBER'],
     ['an angle outside its range', '178 1\n180 2\n182 3\n184 1\n186 2\n', /line/i, 'ANGLE_OUT_OF_RANGE'],
     ['an empty file', '', /./, 'FILE_EMPTY'],
-  ])('refuses %s with exit status 2, the file and the place', (_, text, place, code) => {
-    withTextFile(text, (path) => {
-      const { status, printed, notes } = runCommand('invert', path, ...INVERT)
+  ])('refuses %s with exit status 2, the file and the place', async (_, text, place, code) => {
+    await withTextFile(text, async (path) => {
+      const { status, printed, notes } = await runCommand('invert', path, ...INVERT)
       expect(status).toBe(2)
       expect(printed).toBe('')
       expect(notes).toContain(`beadwright: ${path}: `)
@@ -139,14 +144,14 @@ describe('beadwright invert', () => {
     [['--kind', 'angle', '--temperature', '400', '--smoothing', '-1'], /auto, off/],
     [['--kind', 'angle', '--temperature', '400', '--rows', '1.5'], /whole number/],
     [['--kind', 'angle', '--temperature', '400', '--colour'], /unknown option/],
-  ])('refuses the options %j with exit status 2', (words, sentence) => {
-    const { status, notes } = withTextFile(angleFile(), (path) => runCommand('invert', path, ...words))
+  ])('refuses the options %j with exit status 2', async (words, sentence) => {
+    const { status, notes } = await withTextFile(angleFile(), (path) => runCommand('invert', path, ...words))
     expect(status).toBe(2)
     expect(notes).toMatch(sentence)
   })
 
-  it('names a file that is not there', () => {
-    const { status, notes } = runCommand('invert', '/no/such/file.txt', ...INVERT)
+  it('names a file that is not there', async () => {
+    const { status, notes } = await runCommand('invert', '/no/such/file.txt', ...INVERT)
     expect(status).toBe(2)
     expect(notes).toContain('/no/such/file.txt: there is no such file')
   })

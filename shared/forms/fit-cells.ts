@@ -1,0 +1,167 @@
+import type { Potential } from '../inversion'
+import type { FormFit, FormName, FormRefusal, FormRefusalCode, TriedTerms } from './form'
+import type { FormDefinition, FormSolution } from './form-definition'
+import { FORM_DEFINITIONS } from './form-definitions'
+import { goodnessOfFit } from './goodness'
+import { largestDeviation } from './largest-deviation'
+import type { LikelihoodCells } from './likelihood-cells'
+import { RefusedForm } from './refused-form'
+
+/**
+ * Fits one form to cells.
+ *
+ * @param terms number of cosines or Gaussians; null chooses it by AIC
+ * @param reference potential that the largest deviation is taken from, or null
+ */
+export function fitCells(
+  cells: LikelihoodCells,
+  form: FormName,
+  terms: number | null,
+  reference: Potential | null,
+): FormFit | FormRefusal {
+  const definition = FORM_DEFINITIONS[form]
+  const limits = definition.terms
+  try {
+    if (limits === null) return fitted(cells, definition, 0, solve(cells, definition, 0, null), reference, [])
+    if (terms !== null) {
+      const solution = upTo(cells, definition, limits.least, terms).at(-1)?.result
+      if (solution instanceof RefusedForm) throw solution
+      if (solution !== undefined) return fitted(cells, definition, terms, solution, reference, [])
+    }
+    return chosenByAic(cells, definition, limits, reference)
+  } catch (error) {
+    if (error instanceof RefusedForm) return refusal(cells, form, terms, error)
+    throw error
+  }
+}
+
+interface Trial {
+  readonly terms: number
+  readonly result: FormSolution | RefusedForm
+}
+
+/** Fits with ascending numbers of terms, each from the one before. */
+function upTo(cells: LikelihoodCells, definition: FormDefinition, least: number, most: number): Trial[] {
+  const trials: Trial[] = []
+  let smaller: FormSolution | null = null
+  for (let terms = least; terms <= most; terms++) {
+    const result = attempt(() => solve(cells, definition, terms, smaller))
+    if (!(result instanceof RefusedForm)) smaller = result
+    trials.push({ terms, result })
+  }
+  return trials
+}
+
+function attempt(fit: () => FormSolution): FormSolution | RefusedForm {
+  try {
+    return fit()
+  } catch (error) {
+    if (error instanceof RefusedForm) return error
+    throw error
+  }
+}
+
+function chosenByAic(
+  cells: LikelihoodCells,
+  definition: FormDefinition,
+  { least, most }: { readonly least: number; readonly most: number },
+  reference: Potential | null,
+): FormFit {
+  const { independentSamples } = cells
+  if (independentSamples === null) {
+    throw new RefusedForm(
+      'SAMPLE_SIZE_UNKNOWN',
+      'The number of terms cannot be chosen without a sample size: give it, or state the number of independent samples.',
+    )
+  }
+  const trials = upTo(cells, definition, least, most)
+  const tried: TriedTerms[] = trials.map(({ terms, result }) => ({
+    terms,
+    aic: result instanceof RefusedForm ? null : akaike(definition, terms, result, independentSamples),
+  }))
+  let best: number | null = null
+  tried.forEach(({ aic }, index) => {
+    const lowest = best === null ? null : tried[best].aic
+    if (aic !== null && (lowest === null || aic < lowest)) best = index
+  })
+  const { terms, result } = trials[best ?? 0]
+  if (result instanceof RefusedForm) throw result
+  return fitted(cells, definition, terms, result, reference, tried)
+}
+
+function solve(
+  cells: LikelihoodCells,
+  definition: FormDefinition,
+  terms: number,
+  smaller: FormSolution | null,
+): FormSolution {
+  const parameters = definition.freeParameters(terms)
+  if (cells.filledBins <= parameters) {
+    throw new RefusedForm(
+      'TOO_FEW_BINS',
+      `Only ${cells.filledBins} bins hold data; ${parameters} parameters need at least ${parameters + 1}.`,
+    )
+  }
+  return definition.fit(cells, terms, smaller)
+}
+
+function akaike(
+  definition: FormDefinition,
+  terms: number,
+  { maximum }: FormSolution,
+  independentSamples: number,
+): number {
+  return 2 * definition.freeParameters(terms) - 2 * independentSamples * maximum.value
+}
+
+function fitted(
+  cells: LikelihoodCells,
+  definition: FormDefinition,
+  terms: number,
+  solution: FormSolution,
+  reference: Potential | null,
+  tried: readonly TriedTerms[],
+): FormFit {
+  const { kind, temperature, kT, independentSamples } = cells
+  const { values, maximum, atBound } = solution
+  const size = values.length
+  const freeParameters = definition.freeParameters(terms)
+  const covariance =
+    independentSamples === null ? null : solution.covariance.map((entry) => entry / independentSamples)
+  const energy = (coordinate: number) => definition.energy(values, coordinate, kT)
+  return {
+    outcome: 'fitted',
+    form: definition.form,
+    kind,
+    temperature,
+    terms: definition.terms && terms,
+    formula: definition.formula(kind, terms),
+    parameters: definition.parameters(kind, terms).map(({ name, dimension }, index) => ({
+      name,
+      value: values[index],
+      standardError:
+        covariance === null || atBound[index] ? null : Math.sqrt(covariance[index * size + index]),
+      dimension,
+      atBound: atBound[index],
+    })),
+    covariance,
+    freeParameters,
+    logLikelihood: independentSamples && independentSamples * maximum.value,
+    aic: independentSamples && akaike(definition, terms, solution, independentSamples),
+    goodness: goodnessOfFit(cells, maximum.probabilities, freeParameters),
+    largestDeviation: reference && largestDeviation(cells, energy, reference),
+    independentSamples,
+    tried,
+    populated: cells.populated,
+    variance: cells.deviation ** 2,
+  }
+}
+
+function refusal(
+  { kind }: LikelihoodCells,
+  form: FormName,
+  terms: number | null,
+  { code, message }: { code: FormRefusalCode; message: string },
+): FormRefusal {
+  return { outcome: 'refused', form, kind, terms, code, message }
+}

@@ -1,0 +1,24 @@
+export { cosinePowersFromSeries, cosineSeriesFromPowers } from './cosine-conversion'
+export type {
+  FormFit,
+  FormGoodness,
+  FormName,
+  FormParameter,
+  FormRefusal,
+  FormRefusalCode,
+  LargestDeviation,
+  ParameterDimension,
+  TriedTerms,
+} from './form'
+export { FORM_NAMES, formsOfKind, termLimits } from './form-definitions'
+export { formDeviations, formEnergy } from './form-energy'
+export { formPotential } from './form-potential'
+export { parametersInUnits, type ShownParameter } from './form-units'
+export {
+  fitForm,
+  type FitOptions,
+  type FormRanking,
+  type RankedFit,
+  rankForms,
+  type RankOptions,
+} from './rank-forms'

@@ -22,6 +22,13 @@ export const sourceFileSchema = z
   .meta({ id: 'SourceFile' })
 export type SourceFile = z.infer<typeof sourceFileSchema>
 
+/** Most blocks or chains of one distribution. */
+export const MAX_BLOCKS = 200
+/** All files of one upload together, in bytes. */
+export const MAX_UPLOAD_BYTES = 64 * 1024 * 1024
+
+export const blockKindSchema = z.enum(['time', 'chain']).meta({ id: 'BlockKind' })
+
 const columnSchema = z.number().int().nonnegative()
 const samplesSchema = z.number().positive().max(1e15).nullable()
 
@@ -37,6 +44,11 @@ export const intakeSettingsSchema = z
     columns: z.object({ low: columnSchema, high: columnSchema, value: columnSchema }),
     alreadyDivided: z.boolean(),
     independentSamples: samplesSchema,
+    /** Columns of counts, one per block: the distribution is their sum. */
+    blocks: z
+      .object({ kind: blockKindSchema, columns: z.array(columnSchema).min(1).max(MAX_BLOCKS).readonly() })
+      .nullable()
+      .optional(),
   })
   .meta({ id: 'IntakeSettings' })
 
@@ -53,9 +65,17 @@ export const jointIntakeSettingsSchema = z
   })
   .meta({ id: 'JointIntakeSettings' })
 
-/** POST /api/terms/:termId/distributions, multipart: file, and this as the JSON field `settings`. */
+/**
+ * POST /api/terms/:termId/distributions, multipart: `file`; any number of files `blocks` (stretches of time, in their order)
+ * and `chains`; and this as the JSON field `settings`. Block files are read with the settings of the file and have its grid.
+ */
 export const distributionUploadSchema = z
-  .object({ statePointId: idSchema, settings: intakeSettingsSchema })
+  .object({
+    statePointId: idSchema,
+    settings: intakeSettingsSchema,
+    /** `file` is the first block of this kind and the distribution the sum of all; null: `file` holds the whole. */
+    firstOf: blockKindSchema.nullable().optional(),
+  })
   .meta({ id: 'DistributionUpload' })
 export type DistributionUpload = z.infer<typeof distributionUploadSchema>
 
@@ -64,6 +84,37 @@ export const distributionUpdateSchema = z
   .object({ independentSamples: samplesSchema })
   .meta({ id: 'DistributionUpdate' })
 export type DistributionUpdate = z.infer<typeof distributionUpdateSchema>
+
+/** Statistical inefficiency of the counts, from the scatter between blocks or chains; the larger of several. */
+export const blockInefficiencySchema = z
+  .object({
+    kind: blockKindSchema,
+    count: z.number().int(),
+    inefficiency: z.number(),
+    deviation: z.number(),
+  })
+  .meta({ id: 'BlockInefficiency' })
+
+const blockingLevelSchema = z.object({
+  length: z.number().int(),
+  blocks: z.number().int(),
+  inefficiency: z.number(),
+  deviation: z.number(),
+})
+
+/** How strongly raw samples are correlated in their order in the file: evidence, not mixed into the inefficiency. */
+export const sampleInefficiencySchema = z
+  .object({
+    samples: z.number().int(),
+    autocorrelation: z.object({
+      inefficiency: z.number(),
+      deviation: z.number(),
+      window: z.number().int(),
+    }),
+    blocking: blockingLevelSchema.nullable(),
+    levels: z.array(blockingLevelSchema),
+  })
+  .meta({ id: 'SampleInefficiency' })
 
 /** A stored distribution in internal units (nm, rad). */
 export const distributionSchema = z
@@ -75,7 +126,10 @@ export const distributionSchema = z
     edges: numbersSchema,
     weights: numbersSchema,
     content: z.enum(['count', 'density', 'probability']),
+    /** What it stands for: as stated (`settings.independentSamples`), or the counts divided by the inefficiency of blocks. */
     independentSamples: z.number().nullable(),
+    blocks: blockInefficiencySchema.nullable(),
+    sampleInefficiency: sampleInefficiencySchema.nullable(),
     settings: intakeSettingsSchema,
     notes: z.array(z.string()),
     file: sourceFileSchema,

@@ -1,3 +1,4 @@
+export { type BlockFiles, type DistributionReading, type NamedText, NO_BLOCK_FILES } from './block-files'
 export { guessJointIntakeSettings } from './guess-joint-settings'
 export { guessIntakeSettings, type SettingsGuess } from './guess-settings'
 export type {
@@ -8,6 +9,7 @@ export type {
   PreviewLine,
 } from './intake-preview'
 export {
+  type BlockColumns,
   type IntakeColumns,
   type IntakeLayout,
   type IntakeSettings,
@@ -20,5 +22,7 @@ export {
 export type { NumericTable } from './numeric-table'
 export { previewDistribution, previewJointDistribution } from './preview'
 export { readColumns } from './read-columns'
-export { histogramFromTable, readHistogram, type ReadResult } from './read-histogram'
+export { distributionFromTable, readDistribution } from './read-distribution'
+export { histogramFromTable, readHistogram } from './read-histogram'
+export type { ReadResult } from './read-result'
 export { jointHistogramFromTable, MAX_CELLS, readJointHistogram } from './read-joint-histogram'

@@ -1,3 +1,4 @@
+import type { BlockKind } from '../histogram'
 import type { BinContent, CoordinateKind } from '../histogram/histogram'
 import type { CoordinateUnit } from '../units'
 
@@ -12,6 +13,12 @@ export interface IntakeColumns {
   readonly low: number
   readonly high: number
   readonly value: number
+}
+
+/** Columns that hold the counts of one block or chain each, counted from 0; at least one. */
+export interface BlockColumns {
+  readonly kind: BlockKind
+  readonly columns: readonly number[]
 }
 
 /**
@@ -30,10 +37,12 @@ export interface IntakeSettings {
   /** The values were divided by the Jacobian before they came here (r², sin θ). Asked at intake, default no. */
   readonly alreadyDivided: boolean
   /**
-   * Number of independent samples the file stands for, as the user states it; null when nobody said, which means the
-   * sum of the counts (g = 1) for counts and samples, and unknown for a density or probability.
+   * Number of independent samples the file stands for, as the user states it; null when nobody said: then blocks tell,
+   * or the counts are taken as independent; unknown for a density or probability.
    */
   readonly independentSamples: number | null
+  /** Where the file has a column of counts per block: the distribution is their sum, and `columns.value` without meaning. */
+  readonly blocks?: BlockColumns | null
 }
 
 /** Which column of a two-dimensional file holds what, counted from 0; `value` is without meaning for samples. */

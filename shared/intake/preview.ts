@@ -5,11 +5,12 @@ import { guessJointIntakeSettings } from './guess-joint-settings'
 import { guessIntakeSettings } from './guess-settings'
 import type { SettingsGuess } from './guess-settings'
 import type { DistributionPreview, IntakePreview, JointPreview } from './intake-preview'
+import { type BlockFiles, NO_BLOCK_FILES } from './block-files'
 import type { IntakeSettings, JointIntakeSettings } from './intake-settings'
 import type { NumericTable } from './numeric-table'
 import { readColumns } from './read-columns'
-import { histogramFromTable } from './read-histogram'
-import type { ReadResult } from './read-histogram'
+import { distributionFromTable } from './read-distribution'
+import type { ReadResult } from './read-result'
 import { jointHistogramFromTable } from './read-joint-histogram'
 
 /**
@@ -17,13 +18,20 @@ import { jointHistogramFromTable } from './read-joint-histogram'
  * preview, not thrown.
  *
  * @param settings null to have them guessed
+ * @param blockFiles files of its blocks or chains, read with the same settings
  */
 export function previewDistribution(
   text: string,
   kind: CoordinateKind,
   settings: IntakeSettings | null,
+  blockFiles: BlockFiles = NO_BLOCK_FILES,
 ): DistributionPreview {
-  return preview(text, settings, (table) => guessIntakeSettings(table, kind), histogramFromTable)
+  return preview(
+    text,
+    settings,
+    (table) => guessIntakeSettings(table, kind),
+    (table, known) => distributionFromTable(table, blockFiles, known),
+  )
 }
 
 /** As `previewDistribution`, for a two-dimensional file. */

@@ -10,7 +10,7 @@ import type { JointIntakeSettings } from './intake-settings'
 import { mergeDoubledColumns, mergeDoubledRows } from './merge-doubled'
 import type { NumericTable } from './numeric-table'
 import { readColumns } from './read-columns'
-import type { ReadResult } from './read-histogram'
+import type { ReadResult } from './read-result'
 import { readSamples } from './read-samples'
 
 /** Most cells a joint histogram may have. */

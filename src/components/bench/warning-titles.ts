@@ -3,6 +3,7 @@ import type { Warning, WarningCode } from '@shared/inversion'
 /** What a warning is called in three or four words; its sentence with the number stands under it. */
 export const WARNING_TITLES: Readonly<Record<WarningCode, string>> = {
   SAMPLE_SIZE_UNKNOWN: 'Sample size not stated',
+  COUNTS_TAKEN_AS_INDEPENDENT: 'Counts taken as independent',
   FEW_SAMPLES: 'Few independent samples',
   UNIT_DOUBTFUL: 'Perhaps another unit',
   BOND_AT_ZERO: 'Lengths down to zero',

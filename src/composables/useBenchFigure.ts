@@ -1,4 +1,5 @@
 import { computed, reactive, type ComputedRef } from 'vue'
+import { useMediaQuery } from '@vueuse/core'
 import type { Histogram } from '@shared/histogram'
 import { coordinateFromInternal, type CoordinateKind } from '@shared/units'
 import { coordinateUnitOf, type DisplayUnits } from '@/components/figure/coordinate-names'
@@ -41,6 +42,8 @@ export function useBenchFigure(source: FigureSource): BenchFigureState {
   const visible = reactive({
     measured: true,
     regenerated: true,
+    // On a phone the panels need the height: there the key brings it.
+    residual: useMediaQuery('(min-width: 600px)').value,
     potential: true,
     rings: true,
     comparison: true,

@@ -13,13 +13,26 @@ import type { Reading } from '@/components/bench/figure/reading'
 import { storedPotential } from '../../unit/src/components/bench/stored-records'
 
 const units: DisplayUnits = { length: 'nm', angle: 'degree', energy: 'kJ/mol' }
-const shown = { measured: true, regenerated: true, potential: true, rings: true, comparison: true }
+const shown = {
+  measured: true,
+  regenerated: true,
+  residual: true,
+  potential: true,
+  rings: true,
+  comparison: true,
+}
 const words = (text: string): string => text.replace(/\s+/g, ' ').trim()
 
 describe('BenchFigureKey', () => {
-  const key = (kind: 'angle' | 'dihedral', hasBand = true) =>
+  const key = (kind: 'angle' | 'dihedral', sampled = true) =>
     mount(BenchFigureKey, {
-      props: { visible: shown, names: coordinateNames(kind, units), hasBand, jacobian: true },
+      props: {
+        visible: shown,
+        names: coordinateNames(kind, units),
+        hasBand: sampled,
+        hasResidual: sampled,
+        jacobian: true,
+      },
     })
 
   it('names every curve and says which is switched off', async () => {
@@ -28,7 +41,8 @@ describe('BenchFigureKey', () => {
     expect(entries.map((entry) => words(entry.text()))).toEqual([
       'measured',
       'regenerated from U',
-      'U with 95 % band',
+      'residual',
+      'U, 95 % band',
       'bin by bin',
       'without sin θ',
     ])
@@ -37,15 +51,17 @@ describe('BenchFigureKey', () => {
       'true',
       'true',
       'true',
+      'true',
       'false',
       'true',
     ])
-    await entries[3].trigger('click')
+    await entries[4].trigger('click')
     expect(wrapper.emitted('toggle')).toEqual([['rings']])
   })
 
   it('says why there is no band, and offers no comparison where the Jacobian is constant', () => {
     expect(words(key('dihedral', false).text())).toContain('U, no band: sample size not stated')
+    expect(key('dihedral', false).text()).not.toContain('residual')
     expect(key('dihedral').text()).not.toContain('without')
   })
 })
@@ -59,6 +75,7 @@ describe('BenchReading', () => {
     counts: 2065,
     share: 0.0172,
     independent: 111.02,
+    residual: -1.24,
     energy: 3.8012,
     halfWidth: 0.4093,
     thermal: 1.143,
@@ -85,6 +102,7 @@ describe('BenchReading', () => {
       '130–132°',
       '2 065',
       '111',
+      '−1.2 σ',
       '3.80 ± 0.41 kJ/mol',
       '1.14',
       '0.385 kJ/mol/deg',
@@ -95,10 +113,14 @@ describe('BenchReading', () => {
   })
 
   it('shows the share of a density, and states neither samples nor error it does not know', () => {
-    const text = row({ counts: null, independent: null, halfWidth: null }).replaceAll('\u00a0', ' ')
+    const text = row({ counts: null, independent: null, residual: null, halfWidth: null }).replaceAll(
+      '\u00a0',
+      ' ',
+    )
     expect(text).toContain('share1.72 %')
     expect(text).toContain('independentnot stated')
     expect(text).not.toContain('±')
+    expect(text).not.toContain('residual')
   })
 })
 

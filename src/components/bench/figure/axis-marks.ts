@@ -3,6 +3,7 @@ import { linearScale, type LinearScale } from '@/components/figure/linear-scale'
 import { fixedText } from '@/components/figure/number-text'
 import type { FigureFrame, Panel } from './figure-frame'
 import type { FigureAxes } from './figure-model'
+import { RESIDUAL_LIMIT, RESIDUAL_LINES } from './residual-stems'
 
 /** A tick at a pixel, with its label where it has one. */
 export interface Mark {
@@ -15,10 +16,13 @@ export interface AxisMarks {
   readonly x: LinearScale
   readonly density: LinearScale
   readonly energy: LinearScale
+  /** In errors; null while the residual is not shown. */
+  readonly residual: LinearScale | null
   readonly spine: { readonly major: readonly Mark[]; readonly minor: readonly Mark[] }
   readonly densityTicks: readonly Mark[]
   readonly energyTicks: readonly Mark[]
   readonly secondTicks: readonly Mark[]
+  readonly residualTicks: readonly Mark[]
 }
 
 /** Height at the head of an axis that belongs to its quantity and unit. */
@@ -33,6 +37,7 @@ export function axisMarks(frame: FigureFrame, axes: FigureAxes): AxisMarks {
   const x = linearScale(axes.domain, [distribution.left, distribution.left + distribution.width])
   const density = vertical([0, axes.densityTop], distribution)
   const energy = vertical(axes.energyDomain, potential)
+  const residual = frame.residual && vertical([-RESIDUAL_LIMIT, RESIDUAL_LIMIT], frame.residual)
   const second = vertical(
     [axes.energyDomain[0] * axes.secondEnergy.perUnit, axes.energyDomain[1] * axes.secondEnergy.perUnit],
     potential,
@@ -43,6 +48,7 @@ export function axisMarks(frame: FigureFrame, axes: FigureAxes): AxisMarks {
     x,
     density,
     energy,
+    residual,
     spine: {
       major: spine.major.map((value) => {
         const at = x.at(value)
@@ -56,6 +62,10 @@ export function axisMarks(frame: FigureFrame, axes: FigureAxes): AxisMarks {
     ),
     energyTicks: headFree(potential, energy, valueTicks(energy, 38)),
     secondTicks: headFree(potential, second, valueTicks(second, 26), 22),
+    residualTicks:
+      residual === null
+        ? []
+        : RESIDUAL_LINES.map((line) => ({ at: residual.at(line), label: fixedText(line) })),
   }
 }
 

@@ -13,11 +13,11 @@ import {
   type CoordinateNames,
   type DisplayUnits,
 } from '@/components/figure/coordinate-names'
-import { measuredHeights } from '@/components/figure/measured-heights'
 import { steppedOutline, type Point } from '@/components/figure/stepped-outline'
-import { bandPolygons } from './band-polygon'
+import { BAND_DEVIATIONS, bandPolygons } from './band-polygon'
 import { dataRange } from './data-range'
 import { emptyRuns, populatedBins, type EmptyRun } from './empty-bins'
+import { figureBins, type FigureBins } from './figure-bins'
 import { densityTop, energyDomain, shownDomain } from './figure-domain'
 import { evenly, potentialCurve, type Comparison } from './potential-curve'
 import { regeneratedCurve } from './regenerated-curve'
@@ -37,7 +37,7 @@ export interface FigureAxes {
 
 /** Everything the figure draws, in the units shown. */
 export interface FigureModel extends FigureAxes {
-  readonly edges: Float64Array
+  readonly bins: FigureBins
   readonly empty: readonly EmptyRun[]
   readonly measured: readonly Point[]
   readonly regenerated: readonly Point[]
@@ -46,6 +46,8 @@ export interface FigureModel extends FigureAxes {
   readonly tails: readonly (readonly Point[])[]
   /** One polygon per stretch where the error is known; null without a stated sample size. */
   readonly band: readonly (readonly Point[])[] | null
+  /** Half width of the band at each point of the potential, NaN where it is not known; null without a stated sample size. */
+  readonly halfWidths: Float64Array | null
   readonly rings: readonly Point[]
   readonly comparison: readonly Point[] | null
   /** The comparison at any coordinate, in internal units. */
@@ -64,14 +66,13 @@ export function figureModel(inversion: Inversion, units: DisplayUnits): FigureMo
   const scaled = (xs: Float64Array, ys: Float64Array, factor: number): Point[] =>
     Array.from(xs, (x, index): Point => [shown(x), ys[index] * factor])
 
-  const edges = bins.edges.map(shown)
+  const seen = figureBins(inversion, shown, names.densityFactor, yFactor)
   const populated = populatedBins(bins.weights)
-  const domain = shownDomain(kind, edges, populated, unit)
-  const heights = measuredHeights(bins.weights, edges, names.densityFactor)
+  const domain = shownDomain(kind, seen.edges, populated, unit)
   const [low, high] = dataRange(inversion, populated)
   const curve = potentialCurve(inversion, low, high)
   const back = regeneratedCurve(inversion, bins.edges[populated.first], bins.edges[populated.last + 1])
-  const rings = ringPoints(inversion).map(([x, y]): Point => [shown(x), y * yFactor])
+  const rings = ringPoints(seen)
   const comparison = curve.comparison?.energies.map((energy) => energy * yFactor) ?? null
 
   return {
@@ -80,15 +81,15 @@ export function figureModel(inversion: Inversion, units: DisplayUnits): FigureMo
     energyUnit: units.energy,
     degrees: unit === 'degree',
     domain,
-    densityTop: densityTop(heights),
+    densityTop: densityTop(seen.measured),
     energyDomain: energyDomain(
       rings.map(([, energy]) => energy),
       comparison ?? [],
     ),
     secondEnergy: secondEnergy(units.energy, inversion.temperature),
-    edges,
+    bins: seen,
     empty: emptyRuns(bins.weights),
-    measured: steppedOutline(edges, heights),
+    measured: steppedOutline(seen.edges, seen.measured),
     regenerated: scaled(back.coordinates, back.densities, names.densityFactor / shown(1)),
     potential: scaled(curve.coordinates, curve.energies, yFactor),
     tails: tailRanges(
@@ -106,6 +107,7 @@ export function figureModel(inversion: Inversion, units: DisplayUnits): FigureMo
         curve.energies.map((energy) => energy * yFactor),
         curve.deviations.map((deviation) => deviation * yFactor),
       ),
+    halfWidths: curve.deviations?.map((deviation) => BAND_DEVIATIONS * deviation * yFactor) ?? null,
     rings,
     comparison: comparison && scaled(curve.coordinates, comparison, 1),
     comparisonAt: curve.comparison?.at ?? null,
@@ -119,12 +121,11 @@ export function secondEnergy(unit: EnergyUnit, temperature: number): FigureAxes[
   return { unit: 'kT', perUnit: 1 / (energyScale(unit, temperature) * kT) }
 }
 
-/** Bin by bin energies at their centroids, laid over the potential; bins without counts are left out. */
-function ringPoints({ bins, rawOffset }: Inversion): Point[] {
-  return Array.from(bins.centroids, (centroid, bin): Point => [
-    centroid,
-    bins.rawEnergies[bin] + rawOffset,
-  ]).filter(([, energy]) => Number.isFinite(energy))
+/** Bin by bin energies at their centroids; bins without counts are left out. */
+function ringPoints({ centroids, energies }: FigureBins): Point[] {
+  return Array.from(centroids, (centroid, bin): Point => [centroid, energies[bin]]).filter(([, energy]) =>
+    Number.isFinite(energy),
+  )
 }
 
 type Range = readonly [number, number]

@@ -5,8 +5,8 @@ import type { FigureFrame, Panel } from './figure-frame'
 import type { FigureAxes, FigureModel } from './figure-model'
 import { ringPath } from './ring-path'
 
-/** Curves that the key can switch off. */
-export const CURVES = ['measured', 'regenerated', 'potential', 'rings', 'comparison'] as const
+/** Curves that the key can switch off, in drawing order. */
+export const CURVES = ['measured', 'regenerated', 'residual', 'potential', 'rings', 'comparison'] as const
 export type CurveName = (typeof CURVES)[number]
 export type VisibleCurves = Readonly<Record<CurveName, boolean>>
 

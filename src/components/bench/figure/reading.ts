@@ -18,6 +18,8 @@ export interface Reading {
   readonly share: number
   /** Independent samples in the bin; null where their number is unknown. */
   readonly independent: number | null
+  /** Difference to the regenerated distribution in units of its error; null where no error is known. */
+  readonly residual: number | null
   readonly energy: number
   /** Half width of the 95 % band; null without a stated sample size or where the data say nothing. */
   readonly halfWidth: number | null
@@ -54,6 +56,7 @@ export function readingAt(
     counts: histogram.content === 'count' ? histogram.weights[bin] : null,
     share,
     independent: independentSamples === null ? null : share * independentSamples,
+    residual: residualAt(model, bin),
     energy: energy * scale,
     halfWidth:
       deviation === null || Number.isNaN(deviation) || !inData(potential.populated, midpoint)
@@ -64,6 +67,11 @@ export function readingAt(
     comparison: model.comparisonAt && model.comparisonAt(midpoint) * scale,
     density: densityAt(model.regenerated, coordinateFromInternal(midpoint, unit)),
   }
+}
+
+function residualAt({ bins }: FigureModel, bin: number): number | null {
+  const residual = bins.residuals?.[bin] ?? NaN
+  return Number.isNaN(residual) ? null : residual
 }
 
 const inData = ([low, high]: readonly [number, number], coordinate: number): boolean =>

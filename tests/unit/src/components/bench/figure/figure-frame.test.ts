@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { figureFrame, SPINE_HEIGHT } from '@/components/bench/figure/figure-frame'
+import { figureFrame, RESIDUAL_HEIGHT, SPINE_HEIGHT } from '@/components/bench/figure/figure-frame'
 
 describe('figureFrame', () => {
   it.each([
@@ -16,6 +16,18 @@ describe('figureFrame', () => {
     expect(potential.top + potential.height).toBeLessThanOrEqual(height)
     expect(distribution.left + distribution.width).toBeLessThanOrEqual(width)
     expect(potential.height).toBeGreaterThan(distribution.height)
+  })
+
+  it('puts the residual between distribution and spine, at the cost of both panels', () => {
+    const [plain, frame] = [figureFrame(652, 526), figureFrame(652, 526, true)]
+    const strip = frame.residual!
+    expect(plain.residual).toBeNull()
+    expect(strip.height).toBe(RESIDUAL_HEIGHT)
+    expect(strip.top + strip.height).toBe(frame.spineTop)
+    expect(strip.top).toBeGreaterThan(frame.distribution.top + frame.distribution.height)
+    expect(frame.potential.top + frame.potential.height).toBe(plain.potential.top + plain.potential.height)
+    expect(frame.distribution.height).toBeLessThan(plain.distribution.height)
+    expect(frame.potential.height).toBeLessThan(plain.potential.height)
   })
 
   it('gives a narrow figure smaller margins', () => {

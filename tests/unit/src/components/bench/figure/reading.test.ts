@@ -41,6 +41,15 @@ describe('readingAt', () => {
     expect(reading.share).toBeGreaterThan(0)
   })
 
+  it('reads the residual of the bin, and none without a sample size', () => {
+    const histogram = angleCounts()
+    const { inversion, reading } = read(histogram)
+    const independent = histogram.independentSamples!
+    const expected = inversion.regenerated[BIN] * independent
+    expect(reading.residual).toBeCloseTo((reading.independent! - expected) / Math.sqrt(expected), 9)
+    expect(read(withoutSampleSize(histogram)).reading.residual).toBeNull()
+  })
+
   it('gives an error where data are, and none where the curve is extrapolated', () => {
     expect(read().reading.halfWidth).toBeGreaterThan(0)
     expect(read(angleCounts(), 0).reading.halfWidth).toBeNull()

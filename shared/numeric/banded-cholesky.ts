@@ -35,9 +35,20 @@ export function factorBanded(
     // From far to near, so that columns ascend. The row holds L·D first and is divided by D at the end.
     for (let k = reach - 1; k >= 1; k--) {
       const other = (row - k) * stride - k
-      let entry = matrix[start + k]
-      for (let far = reach; far > k; far--) entry -= matrix[start + far] * matrix[other + far]
-      matrix[start + k] = entry
+      // Four sums side by side, so that none need wait for the one before it.
+      let one = 0
+      let two = 0
+      let three = 0
+      let four = 0
+      let far = k + 1
+      for (; far + 3 <= reach; far += 4) {
+        one += matrix[start + far] * matrix[other + far]
+        two += matrix[start + far + 1] * matrix[other + far + 1]
+        three += matrix[start + far + 2] * matrix[other + far + 2]
+        four += matrix[start + far + 3] * matrix[other + far + 3]
+      }
+      for (; far <= reach; far++) one += matrix[start + far] * matrix[other + far]
+      matrix[start + k] -= one + two + (three + four)
     }
     for (let k = 1; k <= reach; k++) {
       const entry = matrix[start + k]
@@ -84,27 +95,37 @@ export function bandedSolve(
  */
 export function selectedInverse({ size, halfBandwidth, values }: BandedFactor): Float64Array {
   const stride = halfBandwidth + 1
-  const inverse = new Float64Array(size * stride)
+  // Both triangles, entry (i, j) at i·width + j − i + p: the inner loop then runs along memory.
+  const width = 2 * halfBandwidth + 1
+  const inverse = new Float64Array(size * width)
+  const below = new Float64Array(stride)
   for (let column = size - 1; column >= 0; column--) {
     const reach = Math.min(halfBandwidth, size - 1 - column)
+    for (let k = 1; k <= reach; k++) below[k] = values[(column + k) * stride + k]
+    const own = column * width + halfBandwidth
+    let diagonal = 1 / values[column * stride]
     // Z(j, c) = −Σ_k L(k, c) Z(k, j) over the rows k below c; those Z lie in the band and are known.
     for (let k = 1; k <= reach; k++) {
-      const row = column + k
-      let sum = 0
-      for (let j = 1; j <= reach; j++) {
-        const below = column + j
-        const known =
-          below >= row ? inverse[below * stride + below - row] : inverse[row * stride + row - below]
-        sum -= values[below * stride + j] * known
+      const row = (column + k) * width + halfBandwidth - k
+      // Two sums side by side, so that one need not wait for the other.
+      let odd = 0
+      let even = 0
+      let j = 1
+      for (; j < reach; j += 2) {
+        odd -= below[j] * inverse[row + j]
+        even -= below[j + 1] * inverse[row + j + 1]
       }
-      inverse[row * stride + k] = sum
+      if (j === reach) odd -= below[j] * inverse[row + j]
+      const sum = odd + even
+      inverse[row] = sum
+      inverse[own + k] = sum
+      diagonal -= below[k] * sum
     }
-    let diagonal = 1 / values[column * stride]
-    for (let k = 1; k <= reach; k++) {
-      const entry = (column + k) * stride + k
-      diagonal -= values[entry] * inverse[entry]
-    }
-    inverse[column * stride] = diagonal
+    inverse[own] = diagonal
   }
-  return inverse
+  const lower = new Float64Array(size * stride)
+  for (let row = 0; row < size; row++) {
+    for (let k = 0; k <= halfBandwidth; k++) lower[row * stride + k] = inverse[row * width + halfBandwidth - k]
+  }
+  return lower
 }

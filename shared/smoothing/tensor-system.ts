@@ -110,11 +110,13 @@ function addPenalty(
  */
 export function tensorSums({ slots, twins, y }: TensorSystem, band: Float64Array): Float64Array {
   const ny = y.basis.size
-  return Float64Array.from(slots, (slot, index) => {
-    const sum = band[slot] + (twins[index] >= 0 ? band[twins[index]] : 0)
+  const sums = new Float64Array(slots.length)
+  for (let index = 0; index < slots.length; index++) {
+    const sum = band[slots[index]] + (twins[index] >= 0 ? band[twins[index]] : 0)
     const diagonal = index % 4 === 0 && Math.floor(index / (4 * ny)) % 4 === 0
-    return diagonal ? sum : 2 * sum
-  })
+    sums[index] = diagonal ? sum : 2 * sum
+  }
+  return sums
 }
 
 /** tr(Z S_m) for the penalty S_m of each axis, with the entries of Z as `tensorSums` gives them. */

@@ -2,9 +2,10 @@ import 'reflect-metadata'
 import { DataSource } from 'typeorm'
 import { entities } from './entities'
 import { Foundation1764547200000 } from './migrations/1764547200000-foundation'
+import { Blocks1764633600000 } from './migrations/1764633600000-blocks'
 
 /** In the order of their time stamps. */
-const migrations = [Foundation1764547200000]
+const migrations = [Foundation1764547200000, Blocks1764633600000]
 
 /** Any number, the same for every server on one database: whoever holds this lock migrates. */
 const MIGRATION_LOCK = 4_300_100

@@ -6,6 +6,7 @@ import {
 } from '@asteasolutions/zod-to-openapi'
 import { z } from 'zod'
 import { idSchema } from '../shared/contracts/common'
+import { MAX_BLOCKS } from '../shared/contracts/distribution'
 import { type ApiCode, errorSchema } from '../shared/contracts/error'
 import { statusOf } from './errors/http-error'
 import { SESSION_COOKIE } from './middleware/session'
@@ -63,7 +64,14 @@ function security({ method }: AnyRoute): Record<string, string[]> {
 function bodyOf({ upload }: AnyRoute, schema: z.ZodType) {
   if (!upload) return { 'application/json': { schema } }
   const file = z.string().meta({ format: 'binary', description: 'The file, 20 MB at most' })
-  const parts = z.object({ file, settings: schema })
+  const blocks = z
+    .array(z.string().meta({ format: 'binary' }))
+    .max(MAX_BLOCKS)
+    .optional()
+  const parts =
+    upload === 'single'
+      ? z.object({ file, settings: schema })
+      : z.object({ file, blocks, chains: blocks, settings: schema })
   return {
     'multipart/form-data': { schema: parts, encoding: { settings: { contentType: 'application/json' } } },
   }

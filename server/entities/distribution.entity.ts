@@ -38,9 +38,17 @@ export class Distribution {
   @Column('enum', { enum: ['count', 'density', 'probability'], enumName: 'bin_content' })
   content!: 'count' | 'density' | 'probability'
 
-  /** What the histogram stands for, stated or counted; null when nobody said. */
+  /** What the histogram stands for: as stated, or counts divided by the inefficiency of blocks; null when nobody knows. */
   @Column('double precision', { name: 'independent_samples', nullable: true })
   independentSamples!: number | null
+
+  /** Statistical inefficiency from the scatter between blocks or chains; null where none came. */
+  @Column('jsonb', { nullable: true })
+  blocks!: DistributionBody['blocks']
+
+  /** How correlated raw samples are in their order in the file; null for bins. */
+  @Column('jsonb', { name: 'sample_inefficiency', nullable: true })
+  sampleInefficiency!: DistributionBody['sampleInefficiency']
 
   /** How the file was read. */
   @Column('jsonb')

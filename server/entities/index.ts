@@ -1,4 +1,5 @@
 import { Decision } from './decision.entity'
+import { DistributionBlock } from './distribution-block.entity'
 import { Distribution } from './distribution.entity'
 import { Group } from './group.entity'
 import { JointDistribution } from './joint-distribution.entity'
@@ -18,6 +19,7 @@ import { User } from './user.entity'
 export const entities = [
   Decision,
   Distribution,
+  DistributionBlock,
   Group,
   JointDistribution,
   Mapping,

@@ -10,15 +10,16 @@ export const distributionRoutes = [
   route({
     method: 'post',
     path: '/api/terms/:termId/distributions',
-    summary: 'Bring in a file as the distribution of a term at a state point; an earlier one is superseded',
+    summary:
+      'Bring in a file as the distribution of a term at a state point, with those of its blocks; an earlier one is superseded',
     access: { may: 'write', at: 'term' },
     body: distributionUploadSchema,
-    upload: true,
+    upload: 'parted',
     answer: { status: 201, body: distributionSchema },
     errors: ['TERM_GONE'],
     readsContent: true,
-    handle: ({ services, member, params, body, file }) =>
-      services.distributions.add(member, params.termId, body, file),
+    handle: ({ services, member, params, body, file, blockFiles }) =>
+      services.distributions.add(member, params.termId, body, file, blockFiles),
   }),
   route({
     method: 'get',

@@ -12,7 +12,7 @@ export const jointDistributionRoutes = [
     summary: 'Bring in a file as the joint distribution of two terms; an earlier one is superseded',
     access: { may: 'write', at: 'mapping' },
     body: jointDistributionUploadSchema,
-    upload: true,
+    upload: 'single',
     answer: { status: 201, body: jointDistributionSchema },
     errors: ['TERM_GONE'],
     readsContent: true,

@@ -3,7 +3,7 @@ import { idSchema } from '../../shared/contracts/common'
 import { HttpError, notFound } from '../errors/http-error'
 import { requireCsrfToken } from '../middleware/csrf'
 import { readJson } from '../middleware/json-body'
-import { readUpload, uploadedFile } from '../middleware/upload'
+import { readUpload, uploadedFiles } from '../middleware/upload'
 import { visitorOf } from '../middleware/visitor'
 import type { Download, Member, Services } from '../services'
 import { RESOURCES } from '../services/access.service'
@@ -26,7 +26,7 @@ export function mountRoutes(router: Router, routes: readonly AnyRoute[], options
     if (route.access !== 'anyone') steps.push(options.sessions)
     if (route.method !== 'get') steps.push(requireCsrfToken)
     if (typeof route.access === 'object') steps.push(requireMember(route.access, options.services))
-    if (route.upload) steps.push(readUpload)
+    if (route.upload) steps.push(readUpload(route.upload))
     else if (route.body) steps.push(readJson)
     if (route.limited) steps.push(...options.signInLimits)
     router[route.method](route.path, ...steps, answerWith(route, options.services))
@@ -56,7 +56,7 @@ function answerWith(route: AnyRoute, services: Services): RequestHandler {
       params: request.params,
       query: route.query?.parse(request.query),
       body: route.body?.parse(request.body),
-      file: request.file && uploadedFile(request.file),
+      ...uploadedFiles(request),
       visitor: route.access === 'visitor' ? visitorOf(request) : undefined,
       member: response.locals.member as Member | undefined,
     }

@@ -1,7 +1,7 @@
 import type { z } from 'zod'
 import type { ApiCode } from '../../shared/contracts/error'
 import type { Visitor } from '../middleware/visitor'
-import type { Download, Member, Services, UploadedFile } from '../services'
+import type { Download, Member, Services, UploadedBlocks, UploadedFile } from '../services'
 import type { Resource } from '../services/access.service'
 
 /** Someone in the group of the record that the path names: everyone but collaborators reads, owner and modeller write. */
@@ -28,6 +28,8 @@ export type Context<Path extends string, Query, Body, Who extends Access> = {
   readonly body: Body
   /** The file of an upload route. */
   readonly file: UploadedFile
+  /** Files of blocks and chains, of a route that takes them. */
+  readonly blockFiles: UploadedBlocks
 } & (Who extends MemberAccess ? { readonly member: Member } : object) &
   (Who extends 'visitor' ? { readonly visitor: Visitor } : object)
 
@@ -57,8 +59,8 @@ export interface Route<
   readonly access: Who
   readonly query?: z.ZodType<Query>
   readonly body?: z.ZodType<Body>
-  /** The body comes as multipart: one file, and the rest as JSON in the field `settings`. */
-  readonly upload?: true
+  /** The body comes as multipart: one file, or one with files of its parts, and the rest as JSON in the field `settings`. */
+  readonly upload?: 'single' | 'parted'
   readonly limited?: 'sign-in'
   readonly answer: Answer<Result>
   /** Codes beyond those that follow from access and form. */

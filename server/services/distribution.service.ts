@@ -4,15 +4,22 @@ import type {
   DistributionUpdate,
   DistributionUpload,
 } from '../../shared/contracts/distribution'
-import { readHistogram } from '../../shared/intake'
+import { checkIndependentSamples, effectiveSamples, type Histogram } from '../../shared/histogram'
+import { readDistribution as readFiles } from '../../shared/intake'
 import { Distribution } from '../entities/distribution.entity'
 import { Group } from '../entities/group.entity'
 import { Potential } from '../entities/potential.entity'
 import { SourceFile } from '../entities/source-file.entity'
 import { Term } from '../entities/term.entity'
 import { HttpError, notFound } from '../errors/http-error'
-import { sha256 } from './hashes'
-import { contentSha256 } from './histograms'
+import {
+  blockFilesOf,
+  NO_UPLOADED_BLOCKS,
+  packBlocks,
+  storeBlocks,
+  type UploadedBlocks,
+} from './distribution-blocks'
+import { contentSha256, histogramOf } from './histograms'
 import type { Download, Member, UploadedFile } from './member'
 import { measuredSilhouette } from './silhouette'
 import { fileBody, packFile, textOf, unpackFile } from './source-files'
@@ -23,7 +30,8 @@ export class DistributionService {
   constructor(private readonly dataSource: DataSource) {}
 
   /**
-   * Reads a file as the distribution of a term at a state point and stores both. One that was there before is superseded.
+   * Reads a file as the distribution of a term at a state point, with files of its blocks or chains, and stores all of them.
+   * One that was there before is superseded.
    *
    * @throws {InvalidInputError} what the reader refuses, with line and column; nothing is stored then
    * @throws {HttpError} NOT_FOUND; TERM_GONE; VALIDATION_FAILED when the settings are for another kind of term
@@ -31,8 +39,9 @@ export class DistributionService {
   async add(
     { groupId, userId }: Member,
     termId: string,
-    { statePointId, settings }: DistributionUpload,
+    { statePointId, settings, firstOf = null }: DistributionUpload,
     file: UploadedFile,
+    blockFiles: UploadedBlocks = NO_UPLOADED_BLOCKS,
   ): Promise<DistributionBody> {
     const { kind } = await findTerm(this.dataSource.manager, groupId, termId)
     if (settings.kind !== kind) {
@@ -45,7 +54,23 @@ export class DistributionService {
       )
     }
     const packed = await packFile(file)
-    const reading = readFile(file.bytes, packed.sha256, settings)
+    const { histogram, notes, blocks, sampleInefficiency } = readFiles(
+      { name: file.name, text: textOf(file.bytes) },
+      blockFilesOf(blockFiles, firstOf),
+      settings,
+    )
+    const packedBlocks = await packBlocks(blocks, blockFiles)
+    const reading = {
+      ...recordOf(histogram, packed.sha256),
+      edges: [...histogram.edges],
+      weights: [...histogram.weights],
+      content: histogram.content,
+      blocks: histogram.blocks ?? null,
+      sampleInefficiency,
+      settings,
+      notes: [...notes],
+      silhouette: measuredSilhouette(histogram),
+    }
     return this.dataSource.transaction(async (manager) => {
       const { mapping } = await lockTerm(manager, groupId, termId)
       await findStatePoint(manager, groupId, mapping.polymerId, statePointId, 'statePointId')
@@ -59,6 +84,7 @@ export class DistributionService {
       const upload = { uploadedAt: now, uploadedById: userId, supersededAt: null }
       const { id } = await manager.save(Distribution, { ...place, ...reading, ...upload })
       await manager.insert(SourceFile, { groupId, distributionId: id, jointDistributionId: null, ...packed })
+      await storeBlocks(manager, groupId, id, packedBlocks)
       return readDistribution(manager, groupId, { id })
     })
   }
@@ -73,7 +99,7 @@ export class DistributionService {
   }
 
   /**
-   * States how many independent samples the distribution stands for, by reading the kept file again with that number.
+   * States how many independent samples the distribution stands for; null leaves it to blocks and counts.
    *
    * @throws {InvalidInputError} SETTING_INVALID when there are fewer counts than that
    */
@@ -86,9 +112,13 @@ export class DistributionService {
       const where = { id: distributionId, groupId }
       const distribution = await manager.findOne(Distribution, { where, lock: { mode: 'pessimistic_write' } })
       if (!distribution) throw notFound('distribution')
-      const file = await unpackFile(manager, groupId, { distributionId })
+      const { kind } = await manager.findOneByOrFail(Term, { id: distribution.termId })
+      const histogram = { ...histogramOf(kind, distribution), independentSamples }
+      const total = histogram.weights.reduce((sum, weight) => sum + weight, 0)
+      checkIndependentSamples(independentSamples, histogram.content === 'count' ? total : Infinity)
+      const { sha256 } = await manager.findOneByOrFail(SourceFile, { groupId, distributionId })
       const settings = { ...distribution.settings, independentSamples }
-      await manager.update(Distribution, where, readFile(file.bytes, sha256(file.bytes), settings))
+      await manager.update(Distribution, where, { settings, ...recordOf(histogram, sha256) })
       return readDistribution(manager, groupId, where)
     })
   }
@@ -115,16 +145,10 @@ export class DistributionService {
   }
 }
 
-function readFile(bytes: Uint8Array, fileSha256: string, settings: DistributionBody['settings']) {
-  const { histogram, notes } = readHistogram(textOf(bytes), settings)
+/** What follows from a histogram and what it stands for. */
+function recordOf(histogram: Histogram, fileSha256: string) {
   return {
-    edges: [...histogram.edges],
-    weights: [...histogram.weights],
-    content: histogram.content,
-    independentSamples: histogram.independentSamples,
-    settings,
-    notes: [...notes],
-    silhouette: measuredSilhouette(histogram),
+    independentSamples: effectiveSamples(histogram, null).independentSamples,
     contentSha256: contentSha256(histogram, fileSha256),
   }
 }
@@ -149,6 +173,7 @@ async function readDistribution(
   if (!distribution) throw notFound('distribution')
   const { id, termId, statePointId, edges, weights, content, independentSamples, settings, notes } =
     distribution
+  const { blocks, sampleInefficiency } = distribution
   const [term, group] = [
     await manager.findOneByOrFail(Term, { id: termId }),
     await manager.findOneByOrFail(Group, { id: groupId }),
@@ -162,6 +187,8 @@ async function readDistribution(
     weights,
     content,
     independentSamples,
+    blocks,
+    sampleInefficiency,
     settings,
     notes,
     file: await fileBody(manager, groupId, { distributionId: id }, distribution),

@@ -9,20 +9,25 @@ import { sha256 } from './hashes'
  * @param kind kind of its term
  */
 export function histogramOf(kind: CoordinateKind, distribution: Distribution): Histogram {
-  const { edges, weights, content, independentSamples } = distribution
+  const { edges, weights, content, blocks, settings } = distribution
   return {
     kind,
     edges: Float64Array.from(edges),
     weights: Float64Array.from(weights),
     content,
-    independentSamples,
+    independentSamples: settings.independentSamples,
+    blocks,
   }
 }
 
-/** SHA-256 of a histogram, bins and what they stand for, and of the file it came from. */
+/** SHA-256 of a histogram, bins and what they stand for (stated samples, blocks), and of the file it came from. */
 export function contentSha256(histogram: Histogram, fileSha256: string): string {
-  const { kind, edges, weights, content, independentSamples } = histogram
-  return sha256(JSON.stringify([kind, content, independentSamples, fileSha256, [...edges], [...weights]]))
+  const { kind, edges, weights, content, independentSamples, blocks = null } = histogram
+  // In the order of the contract: a database gives the keys of an object back in an order of its own.
+  const measured = blocks && [blocks.kind, blocks.count, blocks.inefficiency, blocks.deviation]
+  return sha256(
+    JSON.stringify([kind, content, independentSamples, measured, fileSha256, [...edges], [...weights]]),
+  )
 }
 
 /**

@@ -15,6 +15,7 @@ import { StatePointService } from './state-point.service'
 import { TableService } from './table.service'
 import { TermService } from './term.service'
 
+export type { UploadedBlocks } from './distribution-blocks'
 export type { Download, Member, UploadedFile } from './member'
 
 /** What the services are told beside the database. */

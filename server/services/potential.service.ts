@@ -1,5 +1,9 @@
 import type { DataSource, EntityManager } from 'typeorm'
-import type { PotentialSave, StoredPotential } from '../../shared/contracts/potential'
+import {
+  inversionSettingsSchema,
+  type PotentialSave,
+  type StoredPotential,
+} from '../../shared/contracts/potential'
 import { invert } from '../../shared/inversion'
 import { makeTable } from '../../shared/tables'
 import { Potential } from '../entities/potential.entity'
@@ -104,13 +108,13 @@ async function readPotential(
   })
   if (!potential) return null
   const input = await findInversionInput(manager, term, statePoint)
-  const { id, termId, statePointId, distributionId, settings, inputSha256, revision } = potential
+  const { id, termId, statePointId, distributionId, inputSha256, revision } = potential
   return {
     id,
     termId,
     statePointId,
     distributionId,
-    settings,
+    settings: inversionSettingsSchema.parse(potential.settings),
     inputSha256,
     stale: input?.sha256 !== inputSha256,
     revision,

@@ -1,5 +1,6 @@
 import { type Zippable, zipSync } from 'fflate'
 import type { DataSource } from 'typeorm'
+import { inversionSettingsSchema } from '../../shared/contracts/potential'
 import type { InversionSettings } from '../../shared/inversion'
 import { formatNumber } from '../../shared/tables'
 import { Group } from '../entities/group.entity'
@@ -108,8 +109,9 @@ export class TableService {
     const potential = await manager.findOneBy(Potential, { termId: term.id, statePointId: statePoint.id })
     if (!potential) return { reason: NOT_INVERTED }
     if (potential.inputSha256 !== input.sha256) return { reason: STALE }
-    const { settings, savedAt } = potential
-    return { reason: null, input, settings, savedAt }
+    // Settings saved before a choice existed take its default.
+    const settings = inversionSettingsSchema.parse(potential.settings)
+    return { reason: null, input, settings, savedAt: potential.savedAt }
   }
 }
 

@@ -112,7 +112,7 @@ export const sampleInefficiencySchema = z
       window: z.number().int(),
     }),
     blocking: blockingLevelSchema.nullable(),
-    levels: z.array(blockingLevelSchema),
+    levels: z.array(blockingLevelSchema).readonly(),
   })
   .meta({ id: 'SampleInefficiency' })
 

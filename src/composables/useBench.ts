@@ -33,9 +33,17 @@ export function useBench(term: () => Term | null, statePoint: () => StatePoint |
   const histogram = computed<Histogram | null>(() => {
     const distribution = stored.distribution.value
     if (distribution === null) return null
-    const { kind, content, independentSamples } = distribution
+    const { kind, content, blocks } = distribution
+    const { independentSamples } = distribution.settings
     const edges = Float64Array.from(distribution.edges)
-    return { kind, edges, weights: Float64Array.from(distribution.weights), content, independentSamples }
+    return {
+      kind,
+      edges,
+      weights: Float64Array.from(distribution.weights),
+      content,
+      independentSamples,
+      blocks,
+    }
   })
   const task = computed<InversionTask | null>(() => {
     const temperature = statePoint()?.temperature

@@ -19,6 +19,8 @@ export const storedDistribution = (
   weights: [...histogram.weights],
   content: histogram.content,
   independentSamples: histogram.independentSamples,
+  blocks: histogram.blocks ?? null,
+  sampleInefficiency: null,
   settings: {
     version: 1,
     kind: histogram.kind,

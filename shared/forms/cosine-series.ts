@@ -4,9 +4,9 @@ import type { LikelihoodCells } from './likelihood-cells'
 import { linearShape } from './linear-shape'
 import { solveForm } from './solve-form'
 
-const SERIES_TERMS = { least: 1, most: 6 }
+const SERIES_TERMS = { least: 1, most: 6, patience: null }
 /** The published form ends with the fifth power. */
-const POWER_TERMS = { least: 1, most: 5 }
+const POWER_TERMS = { least: 1, most: 5, patience: null }
 const SCANNED = 256
 const NARROWINGS = 60
 

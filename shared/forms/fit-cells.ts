@@ -1,6 +1,6 @@
 import type { Potential } from '../inversion'
 import type { FormFit, FormName, FormRefusal, FormRefusalCode, TriedTerms } from './form'
-import type { FormDefinition, FormSolution } from './form-definition'
+import type { FormDefinition, FormSolution, TermLimits } from './form-definition'
 import { FORM_DEFINITIONS } from './form-definitions'
 import { goodnessOfFit } from './goodness'
 import { largestDeviation } from './largest-deviation'
@@ -24,7 +24,7 @@ export function fitCells(
   try {
     if (limits === null) return fitted(cells, definition, 0, solve(cells, definition, 0, null), reference, [])
     if (terms !== null) {
-      const solution = upTo(cells, definition, limits.least, terms).at(-1)?.result
+      const solution = upTo(cells, definition, [limits.least, terms]).at(-1)?.result
       if (solution instanceof RefusedForm) throw solution
       if (solution !== undefined) return fitted(cells, definition, terms, solution, reference, [])
     }
@@ -40,11 +40,16 @@ interface Trial {
   readonly result: FormSolution | RefusedForm
 }
 
-/** Fits with ascending numbers of terms, each from the one before. */
-function upTo(cells: LikelihoodCells, definition: FormDefinition, least: number, most: number): Trial[] {
+/** Fits with ascending numbers of terms, each from the one before; `enough` may end the search early. */
+function upTo(
+  cells: LikelihoodCells,
+  definition: FormDefinition,
+  [least, most]: readonly [number, number],
+  enough: (trials: readonly Trial[]) => boolean = () => false,
+): Trial[] {
   const trials: Trial[] = []
   let smaller: FormSolution | null = null
-  for (let terms = least; terms <= most; terms++) {
+  for (let terms = least; terms <= most && !enough(trials); terms++) {
     const result = attempt(() => solve(cells, definition, terms, smaller))
     if (!(result instanceof RefusedForm)) smaller = result
     trials.push({ terms, result })
@@ -64,7 +69,7 @@ function attempt(fit: () => FormSolution): FormSolution | RefusedForm {
 function chosenByAic(
   cells: LikelihoodCells,
   definition: FormDefinition,
-  { least, most }: { readonly least: number; readonly most: number },
+  { least, most, patience }: TermLimits,
   reference: Potential | null,
 ): FormFit {
   const { independentSamples } = cells
@@ -74,19 +79,23 @@ function chosenByAic(
       'The number of terms cannot be chosen without a sample size: give it, or state the number of independent samples.',
     )
   }
-  const trials = upTo(cells, definition, least, most)
-  const tried: TriedTerms[] = trials.map(({ terms, result }) => ({
-    terms,
-    aic: result instanceof RefusedForm ? null : akaike(definition, terms, result, independentSamples),
-  }))
-  let best: number | null = null
-  tried.forEach(({ aic }, index) => {
-    const lowest = best === null ? null : tried[best].aic
-    if (aic !== null && (lowest === null || aic < lowest)) best = index
-  })
-  const { terms, result } = trials[best ?? 0]
-  if (result instanceof RefusedForm) throw result
-  return fitted(cells, definition, terms, result, reference, tried)
+  const aicOf = ({ terms, result }: Trial) =>
+    result instanceof RefusedForm ? null : akaike(definition, terms, result, independentSamples)
+  const lowest = (trials: readonly Trial[]) =>
+    trials.reduce((best, trial, index) => {
+      const [aic, least] = [aicOf(trial), best < 0 ? null : aicOf(trials[best])]
+      return aic !== null && (least === null || aic < least) ? index : best
+    }, -1)
+  const trials = upTo(
+    cells,
+    definition,
+    [least, most],
+    (made) => patience !== null && lowest(made) >= 0 && made.length - 1 - lowest(made) >= patience,
+  )
+  const best = trials[Math.max(0, lowest(trials))]
+  if (best.result instanceof RefusedForm) throw best.result
+  const tried = trials.map((trial): TriedTerms => ({ terms: trial.terms, aic: aicOf(trial) }))
+  return fitted(cells, definition, best.terms, best.result, reference, tried)
 }
 
 function solve(

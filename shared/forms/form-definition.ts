@@ -18,12 +18,20 @@ export interface FormSolution {
   readonly maximum: Maximum
 }
 
+/** How many terms a form may have, and how a search for their number ends. */
+export interface TermLimits {
+  readonly least: number
+  readonly most: number
+  /** The search ends after so many numbers in a row that do not lower AIC; null tries them all. */
+  readonly patience: number | null
+}
+
 /** An analytic form: what it is called, how it is written, evaluated and fitted. */
 export interface FormDefinition {
   readonly form: FormName
   readonly kinds: readonly CoordinateKind[]
   /** Limits of the number of terms; null where the form has none. */
-  readonly terms: { readonly least: number; readonly most: number } | null
+  readonly terms: TermLimits | null
   /** The formula in full; `terms` is 0 for a form without a number of terms. */
   readonly formula: (kind: CoordinateKind, terms: number) => string
   readonly parameters: (kind: CoordinateKind, terms: number) => readonly ParameterName[]

@@ -2,7 +2,7 @@ import type { CoordinateKind } from '../units'
 import { cosineHarmonic } from './cosine-harmonic'
 import { cosinePowers, cosineSeries, cosineSeriesPhases } from './cosine-series'
 import type { FormName } from './form'
-import type { FormDefinition } from './form-definition'
+import type { FormDefinition, TermLimits } from './form-definition'
 import { gaussians } from './gaussians'
 import { harmonic } from './harmonic'
 import { morse } from './morse'
@@ -35,8 +35,8 @@ export function formsOfKind(kind: CoordinateKind): readonly FormName[] {
 /**
  * Least and greatest number of terms (cosines or Gaussians) of a form; null for a form without such a number.
  *
- * @example termLimits('gaussians') // { least: 1, most: 4 }
+ * @example termLimits('gaussians') // { least: 1, most: 4, patience: 2 }
  */
-export function termLimits(form: FormName): { readonly least: number; readonly most: number } | null {
+export function termLimits(form: FormName): TermLimits | null {
   return FORM_DEFINITIONS[form].terms
 }

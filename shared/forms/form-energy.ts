@@ -11,9 +11,16 @@ const STEP = 1e-3
  * @param coordinate nm or rad, in the domain of the kind
  * @returns kJ/mol up to the constant of the formula; finite
  */
-export function formEnergy({ form, parameters, temperature }: FormFit, coordinate: number): number {
+export function formEnergy(fit: FormFit, coordinate: number): number {
+  return energyOf(fit)(coordinate)
+}
+
+/** `formEnergy` as a function of the coordinate alone, for many of them. */
+export function energyOf({ form, parameters, temperature }: FormFit): (coordinate: number) => number {
   const values = parameters.map(({ value }) => value)
-  return FORM_DEFINITIONS[form].energy(values, coordinate, thermalEnergy(temperature))
+  const kT = thermalEnergy(temperature)
+  const { energy } = FORM_DEFINITIONS[form]
+  return (coordinate) => energy(values, coordinate, kT)
 }
 
 /**
@@ -32,23 +39,25 @@ export function formDeviations(
   const kT = thermalEnergy(temperature)
   const { energy } = FORM_DEFINITIONS[form]
   const size = parameters.length
-  const moved = parameters.map(({ standardError }, index) => {
+  const values = parameters.map(({ value }) => value)
+  // Row after row: how U(q) − U(q0) changes with each parameter.
+  const slopes = new Float64Array(coordinates.length * size)
+  parameters.forEach(({ standardError }, j) => {
     const step = STEP * (standardError ?? 0)
+    if (!(step > 0)) return
     const [below, above] = [-step, step].map((shift) =>
-      parameters.map(({ value }, other) => (other === index ? value + shift : value)),
+      values.map((value, other) => (other === j ? value + shift : value)),
     )
-    return { below, above, width: 2 * step }
+    const slope = (q: number) => (energy(above, q, kT) - energy(below, q, kT)) / (2 * step)
+    const fixed = slope(origin)
+    for (let row = 0; row < coordinates.length; row++)
+      slopes[row * size + j] = slope(coordinates[row]) - fixed
   })
-  const slopes = (coordinate: number) =>
-    moved.map(({ below, above, width }) =>
-      width > 0 ? (energy(above, coordinate, kT) - energy(below, coordinate, kT)) / width : 0,
-    )
-  const fixed = slopes(origin)
-  return coordinates.map((coordinate) => {
-    const change = slopes(coordinate).map((slope, index) => slope - fixed[index])
+  return coordinates.map((_, row) => {
     let variance = 0
     for (let j = 0; j < size; j++) {
-      for (let k = 0; k < size; k++) variance += change[j] * covariance[j * size + k] * change[k]
+      for (let k = 0; k < size; k++)
+        variance += slopes[row * size + j] * covariance[j * size + k] * slopes[row * size + k]
     }
     return Math.sqrt(Math.max(0, variance))
   })

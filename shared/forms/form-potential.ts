@@ -2,7 +2,7 @@ import { coordinateDomain } from '../histogram'
 import { buildPotential, type Potential, potentialEnergy, tableDomain } from '../inversion'
 import { thermalEnergy } from '../units'
 import type { FormFit } from './form'
-import { formDeviations, formEnergy } from './form-energy'
+import { energyOf, formDeviations } from './form-energy'
 
 const FIRST_PIECES = 512
 const MOST_PIECES = 16_384
@@ -43,7 +43,7 @@ function splineThrough(fit: FormFit, [low, high]: readonly [number, number], pie
   const knots = Float64Array.from({ length: kind === 'dihedral' ? pieces : pieces + 1 }, (_, index) =>
     index === pieces ? high : low + ((high - low) * index) / pieces,
   )
-  const energies = knots.map((knot) => formEnergy(fit, knot))
+  const energies = knots.map(energyOf(fit))
   // The form holds over the whole range: no tail may take over before its end.
   const range = [low, high] as const
   return buildPotential(
@@ -55,10 +55,11 @@ function splineThrough(fit: FormFit, [low, high]: readonly [number, number], pie
 /** Whether the spline meets the form halfway between its knots. */
 function isClose(fit: FormFit, { potential, constant }: Built): boolean {
   const kT = thermalEnergy(fit.temperature)
+  const energy = energyOf(fit)
   const { knots } = potential
   for (let index = 1; index < knots.length; index++) {
     const middle = (knots[index - 1] + knots[index]) / 2
-    const exact = formEnergy(fit, middle) - constant
+    const exact = energy(middle) - constant
     const error = Math.abs(potentialEnergy(potential, middle) - exact)
     if (error > SPLINE_ERROR * Math.max(kT, FAR_SHARE * exact)) return false
   }

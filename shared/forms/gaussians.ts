@@ -11,14 +11,17 @@ const MOST_GAUSSIANS = 4
 /** Starts are compared on at most this many bins, to what they may still gain in log-likelihood. */
 const COARSE_BINS = 120
 const COARSE_GAIN = 0.02
-const COARSE_STEPS = 40
+const COARSE_STEPS = 25
 /** Gains are per sample of at least so many, also where their number is unknown. */
 const LEAST_SAMPLES = 10_000
-/** A mixture's last digits come slowly: its fit has arrived when less than this is left to gain in log-likelihood. */
-const ARRIVED_GAIN = 1e-3
-const FINAL = { decrement: 1e-16, mostSteps: 60 }
-/** A Gaussian narrower than this share of a bin describes one bin, not a state. */
-const LEAST_WIDTH = 0.5
+/**
+ * A fit has arrived when less than this is left to gain in log-likelihood. Gaussians that the data hardly tell apart come
+ * closer very slowly, by shares of standard errors that are huge then; well-separated ones arrive to the last digit.
+ */
+const ARRIVED_GAIN = 0.05
+const FINAL = { decrement: 1e-16, mostSteps: 30 }
+/** A Gaussian whose s is below this many bins describes single bins, not a state. */
+const LEAST_WIDTH = 1
 
 /**
  * p/J as a sum of Gaussians (Milano, Goudeau, Müller-Plathe, J. Polym. Sci. B 43 (2005) 871): U = −kT ln Σ (w/s)
@@ -29,7 +32,7 @@ const LEAST_WIDTH = 0.5
 export const gaussians: FormDefinition = {
   form: 'gaussians',
   kinds: ['bond', 'angle'],
-  terms: { least: 1, most: MOST_GAUSSIANS },
+  terms: { least: 1, most: MOST_GAUSSIANS, patience: 2 },
   formula: (kind, terms) => {
     const q = COORDINATE_SYMBOLS[kind]
     const one = (n: number) => `(w${n}/s${n}) exp[−(${q} − c${n})²/(2 s${n}²)]`

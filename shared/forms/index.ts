@@ -10,6 +10,7 @@ export type {
   ParameterDimension,
   TriedTerms,
 } from './form'
+export type { TermLimits } from './form-definition'
 export { FORM_NAMES, formsOfKind, termLimits } from './form-definitions'
 export { formDeviations, formEnergy } from './form-energy'
 export { formPotential } from './form-potential'

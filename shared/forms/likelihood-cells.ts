@@ -11,7 +11,7 @@ const BOND_TAIL = 0.4
 const TAIL_CELLS = 40
 
 /** With more bins than this they are so narrow that three points integrate as well as five. */
-const FINE_BINS = 200
+const FINE_BINS = 100
 /** Gauss–Legendre rule with three points (Abramowitz & Stegun, table 25.4), exact up to degree 5. */
 const THREE_POINTS = [
   { node: -Math.sqrt(3 / 5), weight: 5 / 9 },

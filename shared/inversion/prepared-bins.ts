@@ -7,12 +7,19 @@ import {
   effectiveSamples,
   type Histogram,
 } from '../histogram'
+import { IDENTITY_BINS } from '../smoothing'
 
 /** Fewest filled bins that an inversion accepts. */
 export const MINIMUM_FILLED_BINS = 5
 
 /** Files of expected counts hold fractions down to 1e-20; this many effective counts at an end say nothing (fewer of few). */
 const NO_COUNT = 1e-6
+
+/**
+ * The part of a turn that a histogram leaves out is divided into at most this many bins, and fewer, down to the other number,
+ * where all would be more than are smoothed one by one. Nothing happens there that needs narrower ones.
+ */
+const ADDED = { most: 180, least: 36 }
 
 /** A histogram laid out for inversion; for a dihedral the bins fill the turn. */
 export interface PreparedBins {
@@ -34,7 +41,7 @@ export interface PreparedBins {
 
 /**
  * Lays a histogram out for inversion. The part of a turn that a dihedral histogram does not cover is divided into bins of
- * its mean width without counts: a chain on the table then goes only where the histogram says. Counts are divided by their
+ * its mean width without counts, or wider ones where that would be very many: a chain on the table then goes only where the histogram says. Counts are divided by their
  * statistical inefficiency as `effectiveSamples` finds it; a density or probability without a stated number keeps null.
  *
  * @param stated the user's own g, at least 1; null takes what the histogram says
@@ -97,7 +104,10 @@ function filledRange(counts: Float64Array, negligible: number): [number, number]
 
 function missingEdges(edges: Float64Array): [number[], number[]] {
   const [first, last] = [edges[0], edges[edges.length - 1]]
-  const width = (last - first) / (edges.length - 1)
+  const bins = edges.length - 1
+  const most = Math.min(Math.max(IDENTITY_BINS - bins, ADDED.least), ADDED.most)
+  const missing = first + 2 * Math.PI - last
+  const width = Math.max((last - first) / bins, missing / most)
   const divide = (low: number, high: number) => {
     const bins = Math.max(1, Math.round((high - low) / width))
     return Array.from({ length: bins + 1 }, (_, edge) => low + ((high - low) * edge) / bins)

@@ -31,6 +31,8 @@ const SAFE_STEP = 0.25
  */
 const STIFFEST = 1e16
 const MOST_STEPS = 120
+/** A loose fit that has not settled by now, as beside a wall with a λ far too small, is good enough to look for a better λ. */
+const MOST_LOOSE_STEPS = 40
 const MOST_HALVINGS = 60
 
 /** A penalised Poisson fit: counts n_i with mean μ_i = V_i exp(η_i). */
@@ -59,7 +61,7 @@ export interface PenalisedFit {
  * @param offsets ln V, one per bin
  * @param lambda per bin index, above 0; from `stiffestWeight` on, the fit is the one at that weight
  * @param start coefficients to start from, or null
- * @param converged longest last step of Newton's method
+ * @param converged longest last step of Newton's method; above `NEWTON_STEP.final` a fit that does not settle is taken as it is
  * @throws {InvalidInputError} SINGULAR_SYSTEM when the counts do not determine a curve (too few filled bins)
  */
 export function penalisedFit(
@@ -83,6 +85,7 @@ export function penalisedFit(
     const scale = 1 + largest(state.eta)
     if (moved <= converged * scale || (moved < ROUNDING * scale && moved >= previous)) break
     if (step >= PATIENCE && felt < IMPATIENT_STEP) break
+    if (step === MOST_LOOSE_STEPS && converged > NEWTON_STEP.final) break
     if (step === MOST_STEPS) {
       throw new InvalidInputError('SINGULAR_SYSTEM', 'The counts do not determine a smooth curve.')
     }

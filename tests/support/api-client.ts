@@ -54,13 +54,22 @@ export class ApiClient {
     return body === undefined ? call : call.send(body)
   }
 
-  /** Sends a file with its settings, as the intake does. */
-  async upload(path: string, settings: unknown, file: TextFile): Promise<Response> {
-    return this.agent
+  /** Sends a file with its settings, and files of its blocks and chains, as the intake does. */
+  async upload(
+    path: string,
+    settings: unknown,
+    file: TextFile,
+    parts: { readonly blocks?: readonly TextFile[]; readonly chains?: readonly TextFile[] } = {},
+  ): Promise<Response> {
+    const call = this.agent
       .post(path)
       .set('X-CSRF-Token', this.token)
       .field('settings', JSON.stringify(settings))
       .attach('file', Buffer.from(file.text), file.name)
+    for (const [field, files] of Object.entries(parts)) {
+      for (const { name, text } of files) call.attach(field, Buffer.from(text), name)
+    }
+    return call
   }
 
   /** A request without the token, or with headers of one's own. */

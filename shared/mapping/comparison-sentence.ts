@@ -14,38 +14,35 @@ export function comparisonSentence(coarser: ComparedMapping, finer: ComparedMapp
 }
 
 function peaks(coarser: ComparedMapping, finer: ComparedMapping): string {
-  if (coarser.basinsCounted === 0 && finer.basinsCounted === 0) {
-    return `No basins were counted in ${coarser.name} or ${finer.name}, so nothing says whether ${finer.name} gets rid of many-peaked terms.`
+  const counts = [coarser, finer].map(({ terms }) => mendable(terms).length)
+  if (counts.every((count) => count === 0)) {
+    return `No basins of bonds or angles were counted in ${coarser.name} or ${finer.name}, so nothing says whether ${finer.name} gets rid of many-peaked terms.`
   }
-  const bonds = (terms: readonly ComparedTerm[]): readonly ComparedTerm[] =>
-    terms.filter(({ kind }) => kind !== 'dihedral')
-  // A dihedral has several basins by its nature; bonds and angles with several are what a finer mapping may mend.
-  const [before, after] = [bonds(coarser.manyPeaked), bonds(finer.manyPeaked)]
-  if (before.length === 0 && after.length === 0) {
-    return `Every bond and angle counted so far has a single peak in both ${coarser.name} and ${finer.name}.`
-  }
-  const first =
-    before.length === 0
-      ? `${coarser.name} has no many-peaked bond or angle among those counted`
-      : `${coarser.name} has ${named(before)}`
-  const second =
-    finer.basinsCounted === 0
-      ? `in ${finer.name} nobody counted`
-      : after.length === 0
-        ? `${finer.name} has none among the ${finer.basinsCounted} terms counted`
-        : `${finer.name} has ${named(after)}`
-  return `${first}; ${second}.`
+  return `In ${coarser.name} ${peaksOf(coarser)}; in ${finer.name} ${peaksOf(finer)}.`
 }
 
-function named(terms: readonly ComparedTerm[]): string {
-  const words = terms
+/** Counted bonds and angles: a dihedral has several basins by its nature, and no finer mapping mends that. */
+function mendable(terms: readonly ComparedTerm[]): ComparedTerm[] {
+  return terms.filter(({ kind, basins }) => kind !== 'dihedral' && basins !== null)
+}
+
+function peaksOf({ terms }: ComparedMapping): string {
+  const counted = mendable(terms)
+  const many = counted.filter(({ singlePeaked }) => singlePeaked === false)
+  if (counted.length === 0) return 'no basins were counted'
+  if (many.length === 0) {
+    return counted.length === 1
+      ? 'the one bond or angle counted has a single basin'
+      : `each of the ${counted.length} bonds and angles counted has a single basin`
+  }
+  const words = many
     .slice(0, MOST_NAMED)
     .map(
       ({ kind, name, basins }) =>
-        `the ${kind} ${name} (${basins?.count} basins deeper than ${basins?.depth} kT)`,
+        `the ${kind} ${name} has ${basins?.count} basins deeper than ${basins?.depth} kT`,
     )
-  const rest = terms.length - words.length
-  return `many-peaked ${listWords(rest > 0 ? [...words, `${rest} more`] : words)}`
+  const rest = many.length - words.length
+  return listWords(rest > 0 ? [...words, `${rest} more have several`] : words)
 }
 
 function coupling(coarser: ComparedMapping, finer: ComparedMapping): string {

@@ -1,12 +1,5 @@
 import { createHash } from 'node:crypto'
-import { Command, Option } from 'commander'
-import type { CoordinateKind } from '../../shared/histogram'
-import {
-  guessIntakeSettings,
-  histogramFromTable,
-  type IntakeSettings,
-  readColumns,
-} from '../../shared/intake'
+import { type Command, Option } from 'commander'
 import {
   DEFAULT_INVERSION_SETTINGS,
   invert,
@@ -15,31 +8,17 @@ import {
   type SmoothingSettings,
 } from '../../shared/inversion'
 import { formatRows, formatTable, makeTable, tableComments, type TableUnits } from '../../shared/tables'
-import {
-  coordinateToInternal,
-  type CoordinateUnit,
-  ENERGY_UNITS,
-  type EnergyUnit,
-  unitsOfKind,
-} from '../../shared/units'
+import { coordinateToInternal, type CoordinateUnit } from '../../shared/units'
+import { distributionCommand, type DistributionOptions, readDistribution } from './distribution-options'
 import { inversionJson } from './inversion-json'
 import type { Output } from './output'
-import { type ColumnChoice, columns } from './parse-columns'
-import { number, oneOf, positiveNumber, smoothing, wholeNumber } from './parse-options'
+import { number, oneOf, smoothing, wholeNumber } from './parse-options'
 import { type Input, readInput } from './read-input'
 import { withFileName } from './refused-file'
-import { UsageError } from './usage-error'
 
-interface InvertOptions {
-  readonly kind: CoordinateKind
-  readonly temperature: number
-  readonly unit?: CoordinateUnit
-  readonly columns?: ColumnChoice
-  readonly alreadyDivided?: boolean
+interface InvertOptions extends DistributionOptions {
   readonly jacobian: 'on' | 'off'
   readonly smoothing: SmoothingSettings
-  readonly independentSamples?: number
-  readonly energyUnit: EnergyUnit
   readonly rows: number
   readonly from?: number
   readonly to?: number
@@ -49,23 +28,8 @@ interface InvertOptions {
 /** `beadwright invert`: from the histogram of one coordinate to a table. */
 export function invertCommand(output: Output): Command {
   const { table, smoothing: proposed } = DEFAULT_INVERSION_SETTINGS
-  return new Command('invert')
+  return distributionCommand('invert')
     .description('Invert the distribution of a bond, angle or dihedral into a tabulated potential.')
-    .argument('<file>', 'text file with a histogram or raw samples; - for standard input')
-    .requiredOption('--kind <kind>', 'bond, angle or dihedral', oneOf(['bond', 'angle', 'dihedral'] as const))
-    .requiredOption('--temperature <K>', 'temperature of the samples in kelvin', positiveNumber)
-    .option(
-      '--unit <unit>',
-      'unit of the coordinate in the file and in the table: nm, angstrom, degree or radian (default: guessed)',
-      oneOf(['nm', 'angstrom', 'degree', 'radian'] as const),
-    )
-    .option(
-      '--columns <names>',
-      'columns from the left: centre,VALUE or low,high,VALUE with VALUE count, density or probability; or sample; ' +
-        'skip passes over a column (default: guessed)',
-      columns,
-    )
-    .option('--already-divided', 'the file was divided by its Jacobian before')
     .option(
       '--jacobian <on|off>',
       'divide by the exact volume of each bin',
@@ -80,12 +44,6 @@ export function invertCommand(output: Output): Command {
         .argParser(smoothing)
         .default(proposed, 'auto'),
     )
-    .option(
-      '--independent-samples <n>',
-      'number of independent samples the file stands for (default: the sum of the counts)',
-      positiveNumber,
-    )
-    .option('--energy-unit <unit>', 'kJ/mol, kcal/mol or kT', oneOf(ENERGY_UNITS), 'kJ/mol')
     .option('--rows <n>', 'rows of the table', wholeNumber(SETTING_LIMITS.rows.low), table.rows)
     .option('--from <x>', 'first coordinate of the table, in --unit', number)
     .option('--to <x>', 'last coordinate of the table, in --unit', number)
@@ -96,14 +54,11 @@ export function invertCommand(output: Output): Command {
 }
 
 function inverted(input: Input, options: InvertOptions, output: Output): string {
-  const columnsOfFile = readColumns(input.text)
-  const intake = intakeSettings(guessIntakeSettings(columnsOfFile, options.kind), options, output)
-  const { histogram, notes } = histogramFromTable(columnsOfFile, intake)
-  notes.forEach((note) => output.note(note))
-  const settings = inversionSettings(options, intake.unit)
+  const { histogram, unit } = readDistribution(input, options, output)
+  const settings = inversionSettings(options, unit)
   const inversion = invert(histogram, options.temperature, settings)
   const table = makeTable(inversion.potential, settings.table)
-  const units: TableUnits = { coordinateUnit: intake.unit, energyUnit: options.energyUnit }
+  const units: TableUnits = { coordinateUnit: unit, energyUnit: options.energyUnit }
   inversion.warnings.forEach(({ code, message, action }) => output.note(`${code}: ${message} ${action}`))
   if (options.json) {
     return `${JSON.stringify(inversionJson(histogram, inversion, table, units, input), null, 2)}\n`
@@ -127,27 +82,6 @@ function inverted(input: Input, options: InvertOptions, output: Output): string 
     savedOn: null,
   })
   return formatTable(table, units, comments)
-}
-
-/** What the options say, and guesses, said on standard error, for what they leave open. */
-function intakeSettings(
-  guess: ReturnType<typeof guessIntakeSettings>,
-  { kind, unit, columns, alreadyDivided, independentSamples }: InvertOptions,
-  output: Output,
-): IntakeSettings {
-  if (unit !== undefined && !unitsOfKind(kind).includes(unit)) {
-    throw new UsageError(`The unit of a ${kind} is ${unitsOfKind(kind).join(' or ')}, not ${unit}.`)
-  }
-  if (unit === undefined || columns === undefined) {
-    guess.reasons.forEach((reason) => output.note(`guessed: ${reason}`))
-  }
-  return {
-    ...guess.settings,
-    ...columns,
-    unit: unit ?? guess.settings.unit,
-    alreadyDivided: alreadyDivided ?? false,
-    independentSamples: independentSamples ?? null,
-  }
 }
 
 function inversionSettings(options: InvertOptions, unit: CoordinateUnit): InversionSettings {

@@ -34,6 +34,15 @@ export function positiveNumber(text: string): number {
   return value
 }
 
+/** A number from `low` to `high`. */
+export function numberWithin(low: number, high: number): (text: string) => number {
+  return (text) => {
+    const value = number(text)
+    if (value < low || value > high) throw new InvalidArgumentError(`Give a number from ${low} to ${high}.`)
+    return value
+  }
+}
+
 /** A whole number of at least `least`. */
 export function wholeNumber(least: number): (text: string) => number {
   return (text) => {

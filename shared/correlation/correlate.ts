@@ -1,9 +1,11 @@
+import { type BasinThreshold, DEFAULT_BASIN_THRESHOLD } from '../basins'
 import { InvalidInputError } from '../errors'
 import { binMidpoints, binVolumes } from '../histogram'
 import type { JointHistogram } from '../histogram/joint-histogram'
 import { binRanks, pearsonCoefficient } from './coefficients'
 import { conditionalMeans } from './conditional-mean'
 import type { Correlation } from './correlation'
+import { correlationBasins } from './correlation-basins'
 import { correlationWarnings } from './correlation-warnings'
 import { couplingMap, largestCoupling } from './coupling-map'
 import { mergeCells, mergeThinBins } from './merge-bins'
@@ -31,15 +33,17 @@ export interface CorrelateOptions {
   readonly seed?: number
   /** Overrides what the histogram says. */
   readonly independentSamples?: number | null
+  /** When a basin counts. */
+  readonly basinThreshold?: BasinThreshold
 }
 
 /**
  * Judges whether two coordinates may be treated one by one (methods §6): mutual information against tables with the same
- * margins, and the evidence around it. Counts without a stated number of independent samples are taken as independent;
+ * margins, the basins of both, and the evidence around them. Counts without a stated number of independent samples are taken as independent;
  * a density without one gets no verdict but 'undecided'.
  *
  * @throws {InvalidInputError} SETTING_INVALID for a number of independent samples below 2 or above the sum of counts, or
- *   a seed that is not a 32-bit whole number
+ *   a seed that is not a 32-bit whole number, or a basin threshold below 0
  */
 export function correlate(joint: JointHistogram, options: CorrelateOptions = {}): Correlation {
   const { kinds, content, xEdges, yEdges } = joint
@@ -57,7 +61,17 @@ export function correlate(joint: JointHistogram, options: CorrelateOptions = {})
     independentSamples === null
       ? null
       : nullDistribution(verdictGrid.masses, verdictRows, independentSamples, options.seed ?? DEFAULT_SEED)
-  const verdict = chance === null ? 'undecided' : verdictOf(measured, chance)
+  const basins =
+    independentSamples === null
+      ? null
+      : correlationBasins(
+          joint,
+          masses,
+          marginals,
+          independentSamples,
+          options.basinThreshold ?? DEFAULT_BASIN_THRESHOLD,
+        )
+  const verdict = chance === null ? 'undecided' : verdictOf(measured, chance, basins?.mapOnly ?? 0)
   const coupling = couplingMap(masses, marginals, xEdges, yEdges, independentSamples)
   const ordered = !kinds.includes('dihedral')
   return {
@@ -84,8 +98,9 @@ export function correlate(joint: JointHistogram, options: CorrelateOptions = {})
     totalVariationNullMean: chance?.totalVariationMean ?? null,
     pearson: ordered ? pearsonCoefficient(masses, binMidpoints(xEdges), binMidpoints(yEdges)) : null,
     spearman: ordered ? pearsonCoefficient(masses, binRanks(marginals.x), binRanks(marginals.y)) : null,
+    basins,
     verdict,
-    warnings: correlationWarnings(kinds, independentSamples, verdict, chance),
+    warnings: correlationWarnings(kinds, independentSamples, verdict, chance, basins),
   }
 }
 

@@ -1,6 +1,7 @@
 import type { CoordinateKind } from '../histogram/histogram'
 import type { CorrelationVerdict, CorrelationWarning } from './correlation'
-import { SEPARABLE_BELOW } from './correlation'
+import { JOINT_ABOVE, SEPARABLE_BELOW } from './correlation'
+import type { CorrelationBasins } from './correlation-basins'
 import type { NullDistribution } from './null-tables'
 
 /** What a reader of the verdict must know beside it. */
@@ -9,6 +10,7 @@ export function correlationWarnings(
   independentSamples: number | null,
   verdict: CorrelationVerdict,
   chance: NullDistribution | null,
+  basins: CorrelationBasins | null,
 ): CorrelationWarning[] {
   const warnings: CorrelationWarning[] = []
   if (chance === null) {
@@ -27,6 +29,17 @@ export function correlationWarnings(
         `With ${count} independent samples chance alone reaches ${hidden} nats, more than the ${SEPARABLE_BELOW} that ` +
         'would still be separable.',
       action: 'Sample longer, or pool chains, before deciding.',
+    })
+  }
+  if (verdict === 'joint' && basins !== null && basins.mapOnly > 0) {
+    const { mapOnly, depth } = basins
+    warnings.push({
+      code: 'BASINS_BEYOND_PRODUCT',
+      message:
+        `At a depth of ${depth} kT the map has ${mapOnly === 1 ? 'a basin' : `${mapOnly} basins`} that unrelated terms ` +
+        `with these distributions would lack: two separate potentials cannot make ${mapOnly === 1 ? 'it' : 'them'}, even ` +
+        `where the mutual information stays below ${JOINT_ABOVE} nats.`,
+      action: 'Use a joint potential, or look whether another mapping parts the basins.',
     })
   }
   if (kinds.includes('dihedral')) {

@@ -1,4 +1,5 @@
 import type { BinContent, CoordinateKind } from '../histogram/histogram'
+import type { CorrelationBasins } from './correlation-basins'
 
 /**
  * May two terms be treated one by one? 'undecided' means: too few samples to say, or nobody said how many there are.
@@ -14,7 +15,8 @@ export const JOINT_ABOVE = 0.1
 /** Share of null tables that may reach the measured mutual information before it counts as chance. */
 export const SIGNIFICANCE = 0.01
 
-export type CorrelationWarningCode = 'SAMPLE_SIZE_UNKNOWN' | 'TOO_FEW_SAMPLES' | 'CIRCULAR_COEFFICIENT'
+export type CorrelationWarningCode =
+  'SAMPLE_SIZE_UNKNOWN' | 'TOO_FEW_SAMPLES' | 'BASINS_BEYOND_PRODUCT' | 'CIRCULAR_COEFFICIENT'
 
 /** `message`: what and why, with the number; `action`: what to do about it. */
 export interface CorrelationWarning {
@@ -114,6 +116,8 @@ export interface Correlation {
   /** Null when one coordinate is a dihedral, which has no order, or does not vary. */
   readonly pearson: number | null
   readonly spearman: number | null
+  /** Null when the sample size is unknown, or one coordinate has data in too few bins for a smooth curve. */
+  readonly basins: CorrelationBasins | null
   readonly verdict: CorrelationVerdict
   readonly warnings: readonly CorrelationWarning[]
 }

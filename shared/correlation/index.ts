@@ -11,5 +11,7 @@ export {
   SIGNIFICANCE,
   type VerdictGrid,
 } from './correlation'
+export { type BasinsOfMap, type CorrelationBasins, type MatchedBasin } from './correlation-basins'
 export { correlate, type CorrelateOptions, DEFAULT_SEED } from './correlate'
+export { informationDeviation } from './information-deviation'
 export { NULL_TABLES } from './null-tables'

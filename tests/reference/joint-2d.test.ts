@@ -125,7 +125,7 @@ function threeBasins(): Case {
       const chosen = random.uniform()
       const [, mu, kappa, m, s] =
         components[chosen < components[0][0] ? 0 : chosen < components[0][0] + components[1][0] ? 1 : 2]
-      let phi = NaN
+      let phi: number
       do phi = Math.PI * (2 * random.uniform() - 1)
       while (random.uniform() > wave(phi, mu, kappa))
       return [phi, m * DEGREE + s * DEGREE * random.normal()]

@@ -18,9 +18,9 @@ export function verdictTitle({ verdict, independentSamples }: Correlation): stri
   return VERDICT_TITLES[verdict]
 }
 
-/** Nats with three decimals; an estimate below 0 is chance about 0 and is written as it is. */
+/** Nats with three decimals; an estimate below 0 is chance about 0 and is written as it is, and what rounds to 0 as a bound. */
 export function natsText(nats: number): string {
-  return fixedText(nats, 3)
+  return Math.abs(nats) < 0.0005 ? 'below 0.001' : fixedText(nats, 3)
 }
 
 /** The number of the verdict and its standard deviation to the digits it earns. */

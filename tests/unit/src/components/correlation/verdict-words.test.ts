@@ -17,9 +17,11 @@ describe('the words of a verdict', () => {
     expect(natsWithDeviation(0.30123, null)).toEqual({ value: '0.301', error: null })
   })
 
-  it('write an estimate below 0 as it is, with a real minus, and zero without one', () => {
+  it('write an estimate below 0 as it is, with a real minus, and what rounds to 0 as a bound', () => {
     expect(natsText(-0.0034)).toBe('−0.003')
-    expect(natsText(-0.0001)).toBe('0.000')
+    expect(natsText(-0.0001)).toBe('below 0.001')
+    expect(natsText(0.0004)).toBe('below 0.001')
+    expect(natsWithDeviation(-0.0001, 0.002).value).toBe('0.000')
   })
 
   it('say what treating the terms one by one costs', () => {

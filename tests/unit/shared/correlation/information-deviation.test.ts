@@ -1,21 +1,19 @@
 import { describe, expect, it } from 'vitest'
-import { correlate } from '@shared/correlation'
+import { correlate, informationDeviation } from '@shared/correlation'
 import { accumulateJoint, createJointHistogram } from '@shared/histogram'
 import { createRandom } from '@shared/numeric/random'
-import { informationDeviation } from '@/components/correlation/information-deviation'
-import { correlationOf } from './correlations'
 
 const edges = Float64Array.from({ length: 31 }, (_, i) => 1 + i * 0.02)
 
-/** 2 000 pairs of normal numbers with correlation ½ about 1.3. */
-function sample(seed: number) {
+/** Pairs of normal numbers with the correlation asked for, about 1.3. */
+function sample(seed: number, correlation = 0.5, pairs = 2000) {
   const random = createRandom(seed)
-  const xs = new Float64Array(2000)
-  const ys = new Float64Array(2000)
-  for (let i = 0; i < 2000; i += 1) {
+  const within = (value: number) => Math.min(1.59, Math.max(1.01, 1.3 + 0.06 * value))
+  const [xs, ys] = [new Float64Array(pairs), new Float64Array(pairs)]
+  for (let i = 0; i < pairs; i += 1) {
     const shared = random.normal()
-    xs[i] = Math.min(1.59, Math.max(1.01, 1.3 + 0.06 * shared))
-    ys[i] = Math.min(1.59, Math.max(1.01, 1.3 + 0.06 * (0.5 * shared + Math.sqrt(0.75) * random.normal())))
+    xs[i] = within(shared)
+    ys[i] = within(correlation * shared + Math.sqrt(1 - correlation ** 2) * random.normal())
   }
   const weights = accumulateJoint(xs, ys, edges, edges)
   return correlate(
@@ -42,13 +40,18 @@ describe('informationDeviation', () => {
   })
 
   it('does not vanish for unrelated terms, whose first-order variance does', () => {
-    expect(informationDeviation(correlationOf(0))).toBeGreaterThan(0.001)
+    expect(informationDeviation(sample(1, 0))).toBeGreaterThan(0.001)
   })
 
   it('falls with the square root of the number of samples', () => {
-    const few = informationDeviation(correlationOf(0.7, 1000))!
-    const many = informationDeviation(correlationOf(0.7, 4000))!
+    const few = informationDeviation(sample(1, 0.7, 2000))!
+    const many = informationDeviation(sample(1, 0.7, 8000))!
     expect(few / many).toBeGreaterThan(1.7)
     expect(few / many).toBeLessThan(2.4)
+  })
+
+  it('is unknown without a sample size', () => {
+    const counted = sample(1)
+    expect(informationDeviation({ ...counted, independentSamples: null })).toBeNull()
   })
 })

@@ -1,4 +1,5 @@
 import { Command } from 'commander'
+import { BASIN_DEVIATIONS, LEAST_BASIN_DEPTH } from '../../shared/basins'
 import { correlate, DEFAULT_SEED } from '../../shared/correlation'
 import type { CoordinateKind } from '../../shared/histogram'
 import {
@@ -22,6 +23,7 @@ interface CorrelateOptions {
   readonly units: [CoordinateUnit, CoordinateUnit]
   readonly columns?: JointColumnChoice
   readonly independentSamples?: number
+  readonly basinDepth: number
   readonly seed: number
   readonly json?: boolean
 }
@@ -52,8 +54,17 @@ export function correlateCommand(output: Output): Command {
       'number of independent samples the file stands for (default: the sum of the counts)',
       positiveNumber,
     )
+    .option(
+      '--basin-depth <kT>',
+      'how deep a basin must be to count, in kT; it must also exceed twice its own error',
+      positiveNumber,
+      LEAST_BASIN_DEPTH,
+    )
     .option('--seed <n>', 'seed of the unrelated tables', wholeNumber(0), DEFAULT_SEED)
-    .option('--json', 'print JSON instead of a report')
+    .option(
+      '--json',
+      'print JSON instead of a report; basins: {map, product, depth} holds the numbers of basins',
+    )
     .action((file: string, options: CorrelateOptions) => {
       withFileName(file, () => output.print(correlated(readInput(file), options, output)))
     })
@@ -64,7 +75,8 @@ function correlated(input: Input, options: CorrelateOptions, output: Output): st
   const settings = jointSettings(guessJointIntakeSettings(columnsOfFile, options.kinds), options, output)
   const { histogram, notes } = jointHistogramFromTable(columnsOfFile, settings)
   notes.forEach((note) => output.note(note))
-  const correlation = correlate(histogram, { seed: options.seed })
+  const basinThreshold = { depth: options.basinDepth, deviations: BASIN_DEVIATIONS }
+  const correlation = correlate(histogram, { seed: options.seed, basinThreshold })
   correlation.warnings.forEach(({ code, message, action }) => output.note(`${code}: ${message} ${action}`))
   const json = correlationJson(correlation, options.units, input)
   return options.json ? `${JSON.stringify(json, null, 2)}\n` : correlationReport(json)

@@ -218,6 +218,29 @@ describe('the terms of a mapping', () => {
     ).toBe(404)
   })
 
+  it('are several where their sequence is split by its places, and one again when it is pooled', async () => {
+    const flagged = ['A', 'A', 'B']
+    const splitting = { types: flagged, choice: 'split', reason: '' } as const
+    const split: MappingDocument = { ...DOCUMENT, poolings: [{ ...splitting, types: flagged }] }
+    const before = await terms()
+    expect((await save(split, 1)).status).toBe(200)
+    const parts = (await terms()).filter(({ types }) => types.join() === flagged.join())
+    expect(parts.map(({ name }) => name)).toEqual(['A–A–B (1)', 'A–A–B (2)'])
+    expect(new Set(parts.map(({ placeKey }) => placeKey)).size).toBe(2)
+    const renamed = {
+      ...split,
+      beads: withTypes({ B: 'C' }).beads,
+      poolings: [{ ...splitting, types: ['A', 'A', 'C'] }],
+    }
+    expect((await save(renamed, 2)).status).toBe(200)
+    const kept = (await terms()).filter(({ types }) => types.join() === 'A,A,C')
+    expect(kept.map(({ id, placeKey }) => [id, placeKey])).toEqual(
+      parts.map(({ id, placeKey }) => [id, placeKey]),
+    )
+    expect((await save(DOCUMENT, 3)).status).toBe(200)
+    expect((await terms()).map(({ name }) => name)).toEqual(before.map(({ name }) => name))
+  })
+
   it('never lose data to a save at the same moment', async () => {
     const ringAngle = termId(job.terms, 'A–A–B')
     const upload = { statePointId: job.statePointId, settings: ANGLE_SETTINGS }

@@ -24,8 +24,8 @@ export interface JointAxis {
  *
  * Beyond the first and the last coefficient of an axis (never of a dihedral) the coefficients of each line go on with
  * constant second differences: those of its last three, but at least `leastBend`, and enough to rise from the first step on.
- * Along that axis the surface is then exactly quadratic and never turns down. Beyond both axes the rise along one is added to
- * the rise along the other.
+ * Along that axis the surface is then exactly quadratic and never turns down. The three outermost lines go on as the steepest
+ * of them. Beyond both axes the rise along one is added to the rise along the other.
  */
 export interface JointSurface {
   /** State point it holds at, K. */
@@ -89,12 +89,12 @@ function sumOver(
   return sum
 }
 
-function coefficientAt({ axes: [x, y], coefficients }: JointSurface, ix: number, iy: number): number {
+function coefficientAt(surface: JointSurface, ix: number, iy: number): number {
+  const [x, y] = surface.axes
   const [column, row] = [nearest(x, ix), nearest(y, iy)]
-  const inside = coefficients[column * y.size + row]
-  if (x.periodic && y.periodic) return inside
-  const alongX = x.periodic ? 0 : rise(coefficients, column * y.size + row, y.size, ix - column, x.leastBend)
-  const alongY = y.periodic ? 0 : rise(coefficients, column * y.size + row, 1, iy - row, y.leastBend)
+  const inside = surface.coefficients[column * y.size + row]
+  const alongX = ix === column || x.periodic ? 0 : rise(surface, 0, row, ix - column)
+  const alongY = iy === row || y.periodic ? 0 : rise(surface, 1, column, iy - row)
   return inside + alongX + alongY
 }
 
@@ -104,19 +104,26 @@ function nearest({ size, periodic }: JointAxis, index: number): number {
   return Math.min(Math.max(index, 0), size - 1)
 }
 
-/** What a line of coefficients gains over `steps` beyond its end at `place`. */
-function rise(
-  coefficients: Float64Array,
-  place: number,
-  stride: number,
-  steps: number,
-  leastBend: number,
-): number {
-  if (steps === 0) return 0
+/** What a line of coefficients along an axis gains over `steps` beyond its end. */
+function rise({ axes, coefficients }: JointSurface, axis: 0 | 1, line: number, steps: number): number {
+  const { size, leastBend } = axes[axis]
+  const [stride, lineStride] = axis === 0 ? [axes[1].size, 1] : [1, axes[1].size]
+  const end = steps > 0 ? (size - 1) * stride : 0
   const inwards = steps > 0 ? -stride : stride
-  const [last, before, beforeThat] = [0, 1, 2].map((k) => coefficients[place + k * inwards])
-  const slope = last - before
-  const bend = Math.max(slope - (before - beforeThat), leastBend, leastBend - slope)
+  let [slope, bend] = [-Infinity, leastBend]
+  for (const each of linesThatRiseTogether(axes[axis === 0 ? 1 : 0], line)) {
+    const at = end + each * lineStride
+    const last = coefficients[at] - coefficients[at + inwards]
+    const before = coefficients[at + inwards] - coefficients[at + 2 * inwards]
+    slope = Math.max(slope, last)
+    bend = Math.max(bend, last - before, leastBend - last)
+  }
   const count = Math.abs(steps)
   return count * slope + (bend * count * (count + 1)) / 2
+}
+
+/** The three outermost lines rise as the steepest of them: otherwise the corner behind them would begin with a descent. */
+function linesThatRiseTogether({ size, periodic }: JointAxis, line: number): readonly number[] {
+  if (periodic || (line > 2 && line < size - 3)) return [line]
+  return line <= 2 ? [0, 1, 2] : [size - 3, size - 2, size - 1]
 }

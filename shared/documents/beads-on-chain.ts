@@ -1,5 +1,5 @@
 import { type ChainMatch, type RepeatUnit, smilesOrder } from '../chemistry'
-import { BEAD_COLOURS, type Bead, type Site } from '../mapping'
+import { BEAD_COLOURS, type Bead, type BeadAtom } from '../mapping'
 import { filePath, type MappingFileError } from './mapping-file-error'
 import type { MappingFile } from './mapping-file-schema'
 
@@ -25,43 +25,43 @@ export function beadsOnChain(
 ): PlacedBeads | { readonly ok: false; readonly errors: readonly MappingFileError[] } {
   const order = smilesOrder(own)
   const image = (atom: number) => matches[order[atom] as number]
-  const errors: MappingFileError[] = []
-  const moves: number[] = []
-  const beads = file.beads.map((bead, index): Bead => {
-    const placed = bead.atoms.map(({ atom, weight, offset }) => ({
+  const placed = file.beads.map(({ atoms }) =>
+    atoms.map(({ atom, weight, offset }) => ({
       atom: image(atom).atom,
       weight,
       unit: direction * offset + image(atom).shift,
-    }))
-    const units = placed.map(({ unit }) => unit)
-    const [least, most] = [Math.min(0, ...units), Math.max(0, ...units)]
-    const fits = least >= -1 && most <= 1
-    // A bead that already lies around its unit stays; another one counts to the unit it begins in.
-    const move = fits && units.includes(0) ? 0 : Math.min(...units) + (spread(units) > 1 ? 1 : 0)
-    const shift = units.length === 0 ? 0 : move
-    moves.push(shift)
-    if (spread(units) > 2) {
-      const message = `On the other SMILES bead ${bead.name} would reach over more than the neighbouring units.`
-      errors.push({ code: 'BEAD_TOO_LONG', message, path: filePath(['beads', index]) })
-    }
-    const site: Site =
-      bead.site.rule === 'atom' ? { rule: 'atom', atom: image(bead.site.atom).atom } : bead.site
-    return {
-      id: `b${index + 1}`,
-      name: bead.name,
-      type: bead.type,
-      label: bead.label,
-      colour: bead.colour ?? index % BEAD_COLOURS.length,
-      site,
-      ...(bead.endGroup && { endGroup: bead.endGroup }),
-      atoms: placed
-        .map((held) => ({ ...held, unit: held.unit - shift }))
-        .sort((a, b) => a.unit - b.unit || a.atom - b.atom),
-    }
+    })),
+  )
+  const errors = file.beads.flatMap(({ name }, index): MappingFileError[] => {
+    if (spread(placed[index]) <= 2) return []
+    const message = `On the other SMILES bead ${name} would reach over more than the neighbouring units.`
+    return [{ code: 'BEAD_TOO_LONG', message, path: filePath(['beads', index]) }]
   })
-  return errors.length > 0 ? { ok: false, errors } : { ok: true, beads, moves }
+  if (errors.length > 0) return { ok: false, errors }
+  const moves = placed.map(moveOf)
+  const beads = file.beads.map(({ name, type, label, colour, site, endGroup }, index): Bead => ({
+    id: `b${index + 1}`,
+    name,
+    type,
+    label,
+    colour: colour ?? index % BEAD_COLOURS.length,
+    site: site.rule === 'atom' ? { rule: 'atom', atom: image(site.atom).atom } : site,
+    ...(endGroup && { endGroup }),
+    atoms: placed[index]
+      .map((held) => ({ ...held, unit: held.unit - moves[index] }))
+      .sort((a, b) => a.unit - b.unit || a.atom - b.atom),
+  }))
+  return { ok: true, beads, moves }
 }
 
-function spread(units: readonly number[]): number {
+/** A bead that lies around its unit stays; another one counts to the unit it begins in, or to the middle one of three. */
+function moveOf(atoms: readonly BeadAtom[]): number {
+  const units = atoms.map(({ unit }) => unit)
+  if (units.length === 0 || (units.includes(0) && units.every((unit) => Math.abs(unit) <= 1))) return 0
+  return Math.min(...units) + (spread(atoms) > 1 ? 1 : 0)
+}
+
+function spread(atoms: readonly BeadAtom[]): number {
+  const units = atoms.map(({ unit }) => unit)
   return units.length === 0 ? 0 : Math.max(...units) - Math.min(...units)
 }

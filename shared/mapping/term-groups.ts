@@ -54,38 +54,45 @@ export function termGroups(
   }
   const typeOf = new Map(document.beads.map(({ id, type }) => [id, type]))
   return (['angle', 'dihedral'] as const).flatMap((kind) =>
-    connected(terms.filter((term) => term.kind === kind)).flatMap(({ members, centres }): TermGroup[] => {
-      const found = [...centres].sort().map((key): TermCentre => {
-        const counts = members.map((term) => centreKeys(term).filter((each) => each === key).length)
+    connected(terms.filter((term) => term.kind === kind)).flatMap((members): TermGroup[] => {
+      const keys = [...new Set(members.flatMap(({ counts }) => [...counts.keys()]))].sort()
+      const centres = keys.map((key): TermCentre => {
         const place = placeOf(key)
         const around = neighbours.get(place[0].bead) as number
         const degrees = kind === 'dihedral' || around === 2 ? 1 : 2 * around - 3
-        return { place, places: sum(counts), degrees }
+        return { place, places: sum(members.map(({ counts }) => counts.get(key) ?? 0)), degrees }
       })
-      const keys = found.map(({ place }) => placeKey(place))
-      const places = sum(found.map((centre) => centre.places))
-      if (members.length === 1 && found.every((centre) => centre.places === 1)) return []
-      const degrees = sum(found.map((centre) => centre.degrees))
-      const grouped = members.map((term) => ({
+      if (members.length === 1 && centres.every(({ places }) => places === 1)) return []
+      const grouped = members.map(({ term, counts }) => ({
         term,
-        copies: keys.map((key) => centreKeys(term).filter((each) => each === key).length),
+        copies: keys.map((key) => counts.get(key) ?? 0),
       }))
-      const centre = termName(found[0].place.map(({ bead }) => typeOf.get(bead) as string))
-      const surplus = sum(found.map((each) => Math.max(0, each.places - each.degrees)))
-      return [{ kind, centre, centres: found, terms: grouped, places, degrees, surplus }]
+      const centre = termName(centres[0].place.map(({ bead }) => typeOf.get(bead) as string))
+      const places = sum(centres.map((each) => each.places))
+      const degrees = sum(centres.map((each) => each.degrees))
+      const surplus = sum(centres.map((each) => Math.max(0, each.places - each.degrees)))
+      return [{ kind, centre, centres, terms: grouped, places, degrees, surplus }]
     }),
   )
 }
 
-/** The centre of each place of an angle or dihedral, as text; a bond reads the same from both ends. */
-function centreKeys({ places }: DerivedTerm): string[] {
-  return places.map((place) => {
+/** A term with how often it stands at each of its centres. */
+interface CentredTerm {
+  readonly term: DerivedTerm
+  readonly counts: ReadonlyMap<string, number>
+}
+
+/** The centre of each place of an angle or dihedral as text, counted; a bond reads the same from both ends. */
+function centreCounts({ places }: DerivedTerm): Map<string, number> {
+  const counts = new Map<string, number>()
+  for (const place of places) {
     const middle = place.slice(1, -1)
     const least = Math.min(...middle.map(({ unit }) => unit))
     const shifted = middle.map(({ bead, unit }) => ({ bead, unit: unit - least }))
-    const [forth, back] = [placeKey(shifted), placeKey(shifted.toReversed())]
-    return forth <= back ? forth : back
-  })
+    const key = [placeKey(shifted), placeKey(shifted.toReversed())].sort()[0]
+    counts.set(key, (counts.get(key) ?? 0) + 1)
+  }
+  return counts
 }
 
 function placeOf(key: string): Place {
@@ -95,19 +102,20 @@ function placeOf(key: string): Place {
   })
 }
 
-/** Terms joined by common centres, in the order of their first members. */
-function connected(terms: readonly DerivedTerm[]): { members: DerivedTerm[]; centres: Set<string> }[] {
-  let sets: { members: DerivedTerm[]; centres: Set<string> }[] = []
+/** Terms joined by common centres; sets and their terms in the order of the terms. */
+function connected(terms: readonly DerivedTerm[]): CentredTerm[][] {
+  let sets: { members: CentredTerm[]; centres: Set<string> }[] = []
   for (const term of terms) {
-    const keys = centreKeys(term)
-    const joined = sets.filter(({ centres }) => keys.some((key) => centres.has(key)))
-    const members = [...joined.flatMap((set) => set.members), term]
-    const centres = new Set([...joined.flatMap((set) => [...set.centres]), ...keys])
+    const counts = centreCounts(term)
+    const joined = sets.filter(({ centres }) => [...counts.keys()].some((key) => centres.has(key)))
+    const members = [...joined.flatMap((set) => set.members), { term, counts }]
+    const centres = new Set([...joined.flatMap((set) => [...set.centres]), ...counts.keys()])
     sets = [...sets.filter((set) => !joined.includes(set)), { members, centres }]
   }
-  const place = (term: DerivedTerm): number => terms.indexOf(term)
-  for (const { members } of sets) members.sort((a, b) => place(a) - place(b))
-  return sets.sort((a, b) => place(a.members[0]) - place(b.members[0]))
+  const rank = ({ term }: CentredTerm): number => terms.indexOf(term)
+  return sets
+    .map(({ members }) => members.sort((a, b) => rank(a) - rank(b)))
+    .sort((a, b) => rank(a[0]) - rank(b[0]))
 }
 
 function sum(values: readonly number[]): number {

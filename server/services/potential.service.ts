@@ -4,7 +4,7 @@ import {
   type PotentialSave,
   type StoredPotential,
 } from '../../shared/contracts/potential'
-import { invert } from '../../shared/inversion'
+import { derivePotential } from '../../shared/forms'
 import { makeTable } from '../../shared/tables'
 import { Potential } from '../entities/potential.entity'
 import type { StatePoint } from '../entities/state-point.entity'
@@ -57,8 +57,8 @@ export class PotentialService {
           'There are no data for this term at this state point: bring them in first.',
         )
       }
-      const { potential, regenerated } = invert(input.histogram, statePoint.temperature, settings)
-      makeTable(potential, settings.table)
+      const { inversion } = derivePotential(input.histogram, statePoint.temperature, settings)
+      makeTable(inversion.potential, settings.table)
       const record = {
         groupId,
         termId,
@@ -66,7 +66,7 @@ export class PotentialService {
         distributionId: input.distribution.id,
         settings,
         inputSha256: input.sha256,
-        silhouette: derivedSilhouette(regenerated, input.histogram),
+        silhouette: derivedSilhouette(inversion.regenerated, input.histogram),
         revision: (revision ?? 0) + 1,
         savedAt: new Date(),
         savedById: userId,

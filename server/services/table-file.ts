@@ -1,5 +1,6 @@
 import type { TableQuery } from '../../shared/contracts/potential'
-import { type Inversion, invert, type InversionSettings } from '../../shared/inversion'
+import { derivePotential } from '../../shared/forms'
+import type { Inversion, InversionSettings } from '../../shared/inversion'
 import { termName } from '../../shared/mapping'
 import {
   formatNumber,
@@ -41,7 +42,7 @@ export interface TableFile {
 /** Writes the table of a saved inversion: the same source and units give the same text. */
 export function writeTableFile(source: TableSource, units: TableFileUnits): TableFile {
   const { polymer, mapping, statePoint, term, input, settings } = source
-  const inversion = invert(input.histogram, statePoint.temperature, settings)
+  const { inversion, form } = derivePotential(input.histogram, statePoint.temperature, settings)
   const table = makeTable(inversion.potential, settings.table)
   const tableUnits: TableUnits = {
     coordinateUnit: term.kind === 'bond' ? units.length : units.angle,
@@ -59,6 +60,7 @@ export function writeTableFile(source: TableSource, units: TableFileUnits): Tabl
     units: tableUnits,
     settings,
     smoothing: inversion.smoothing,
+    form,
     independentSamples: inversion.independentSamples,
     warnings: inversion.warnings,
     input: input.file,

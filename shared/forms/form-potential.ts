@@ -14,6 +14,12 @@ const TAIL_STIFFNESS = 0.5
 /** Rows do not matter where only the bounds of the default table are wanted. */
 const BOUNDS_ONLY = { rows: 2, low: null, high: null }
 
+/** A form as a potential, and where that is least, nm or rad. */
+export interface FormCurve {
+  readonly potential: Potential
+  readonly minimum: number
+}
+
 /**
  * A fitted form as a potential, so that it can take the place of the smoothed curve in a table. Knots are doubled until the
  * spline is within 1e-7 kT of the form between them. An angle is covered from 0 to π, a dihedral over the turn, a bond
@@ -23,6 +29,11 @@ const BOUNDS_ONLY = { rows: 2, low: null, high: null }
  * @param range for a bond: more of the coordinate that has to be covered by the form itself, nm, above 0
  */
 export function formPotential(fit: FormFit, range?: readonly [low: number, high: number]): Potential {
+  return formCurve(fit, range).potential
+}
+
+/** `formPotential` with the place of its least value. */
+export function formCurve(fit: FormFit, range?: readonly [low: number, high: number]): FormCurve {
   const { populated } = fit
   const covered = coveredRange(fit, range)
   let pieces = FIRST_PIECES
@@ -32,7 +43,7 @@ export function formPotential(fit: FormFit, range?: readonly [low: number, high:
     built = splineThrough(fit, covered, pieces)
   }
   const deviations = formDeviations(fit, built.potential.knots, built.minimum)
-  return { ...built.potential, deviations, populated }
+  return { potential: { ...built.potential, deviations, populated }, minimum: built.minimum }
 }
 
 type Built = ReturnType<typeof buildPotential>

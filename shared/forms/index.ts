@@ -1,4 +1,6 @@
+export { type ChosenForm, fitChosenForm } from './chosen-form'
 export { cosinePowersFromSeries, cosineSeriesFromPowers } from './cosine-conversion'
+export { type DerivedPotential, derivePotential, withForm } from './derive-potential'
 export type {
   FormFit,
   FormGoodness,
@@ -13,7 +15,7 @@ export type {
 export type { TermLimits } from './form-definition'
 export { FORM_NAMES, formsOfKind, termLimits } from './form-definitions'
 export { formDeviations, formEnergy } from './form-energy'
-export { formPotential } from './form-potential'
+export { formCurve, type FormCurve, formPotential } from './form-potential'
 export { parametersInUnits, type ShownParameter } from './form-units'
 export {
   fitForm,
@@ -23,3 +25,4 @@ export {
   rankForms,
   type RankOptions,
 } from './rank-forms'
+export type { FormWarning, FormWarningCode } from './ranking-warnings'

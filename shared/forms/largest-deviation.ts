@@ -14,7 +14,7 @@ const LIVING_SHARE = 0.01
  * @returns null when no bin qualifies
  */
 export function largestDeviation(
-  { edges, volumes, populated, kT }: LikelihoodCells,
+  { edges, volumes, populated, kT }: Pick<LikelihoodCells, 'edges' | 'volumes' | 'populated' | 'kT'>,
   energy: (coordinate: number) => number,
   reference: Potential,
 ): LargestDeviation | null {

@@ -56,7 +56,11 @@ function dataAtEdge({ kind, bins }: Omit<Inversion, 'warnings'>, kT: number): Wa
     }))
 }
 
-function slopeAtStraightAngle({ kind, potential }: Omit<Inversion, 'warnings'>, kT: number): Warning[] {
+/** A slope at 180° that is not small although straight angles are populated. */
+export function slopeAtStraightAngle(
+  { kind, potential }: Pick<Inversion, 'kind' | 'potential'>,
+  kT: number,
+): Warning[] {
   if (kind !== 'angle' || potential.populated[1] < Math.PI - STRAIGHT_REACH) return []
   if (potentialEnergy(potential, Math.PI) > STRAIGHT_DEPTH * kT) return []
   const change = Math.abs(potentialSlope(potential, Math.PI)) * STRAIGHT_REACH

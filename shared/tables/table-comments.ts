@@ -1,7 +1,9 @@
+import type { FormFit } from '../forms'
 import type { InversionSettings, SmoothingResult, Warning } from '../inversion'
 import { type CoordinateKind, unitWord } from '../units'
 import { coordinateSentence, jacobianSentence } from './coordinate-sentences'
 import { formatNumber } from './format-number'
+import { deviationSentence, parameterSentence, plainLetters } from './form-sentences'
 import type { TableUnits } from './table'
 
 /** What the comment lines of a table state; null leaves a line out. All of it comes in as an argument. */
@@ -22,6 +24,8 @@ export interface TableCommentInput {
   readonly units: TableUnits
   readonly settings: InversionSettings
   readonly smoothing: SmoothingResult
+  /** The analytic form the rows are written from; null or left out for the smoothed curve. */
+  readonly form?: FormFit | null
   readonly independentSamples: number | null
   readonly warnings: readonly Warning[]
   /** Name and SHA-256 of the file the distribution came from. */
@@ -53,7 +57,7 @@ export function tableComments(input: TableCommentInput): string[] {
       input.settings.jacobian ? jacobianSentence(input.kind) : 'off: bins divided by their width only',
     ),
     line('smoothing', smoothingSentence(input)),
-    line('form', input.settings.form),
+    ...formLines(input),
     line('straight angle', straightAngleSentence(input)),
     line('tails', tailSentence(input)),
     line('cap', capSentence(input)),
@@ -93,12 +97,26 @@ function smoothingSentence({ smoothing, independentSamples }: TableCommentInput)
   return `log10 lambda ${smoothing.log10Lambda.toFixed(2)}, ${choice}; effective dimension ${dimension}; ${samples}`
 }
 
-function straightAngleSentence({ kind, settings }: TableCommentInput): string | null {
-  return kind === 'angle' && settings.straightAngle === 'level' ? 'made to level off at 180 deg' : null
+function formLines({ form = null, units }: TableCommentInput): (string | false)[] {
+  if (form === null) return []
+  return [
+    line(
+      'form',
+      `${form.form}, ${plainLetters(form.formula)}; the rows are this form, not the smoothed curve`,
+    ),
+    line('parameters', parameterSentence(form, units)),
+    line('form deviates', deviationSentence(form, units)),
+  ]
 }
 
-function tailSentence({ kind, settings }: TableCommentInput): string | null {
-  if (kind === 'dihedral') return null
+function straightAngleSentence({ kind, settings, form = null }: TableCommentInput): string | null {
+  return form === null && kind === 'angle' && settings.straightAngle === 'level'
+    ? 'made to level off at 180 deg'
+    : null
+}
+
+function tailSentence({ kind, settings, form = null }: TableCommentInput): string | null {
+  if (kind === 'dihedral' || form !== null) return null
   return `quadratic, curvature at least ${formatNumber(settings.tails.stiffness)} kT / variance of the data`
 }
 

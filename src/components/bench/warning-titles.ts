@@ -18,6 +18,7 @@ export const WARNING_TITLES: Readonly<Record<WarningCode, string>> = {
   GAPS_BRIDGED: 'Gaps in the data are bridged',
   BARRIER_UNSAMPLED: 'A barrier without samples',
   CURVE_MISSES_DATA: 'The curve misses the data',
+  FORM_MISSES_DATA: 'The form misses the data',
   EXTRAPOLATION_DOMINATES: 'More is extrapolated than measured',
   TABLE_CUTS_DATA: 'The table cuts off data',
   TABLE_TOO_COARSE: 'The table is too coarse',

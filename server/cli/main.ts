@@ -1,6 +1,7 @@
 import { Command, CommanderError } from 'commander'
 import { InvalidInputError } from '../../shared/errors'
 import { correlateCommand } from './correlate-command'
+import { fitCommand } from './fit-command'
 import { invertCommand } from './invert-command'
 import { mappingCommand } from './mapping-command'
 import { type Output, processOutput } from './output'
@@ -24,7 +25,13 @@ export async function run(words: readonly string[], output: Output = processOutp
   const program = new Command('beadwright')
     .description('Bonded distributions to tabulated potentials, on a terminal.')
     .addHelpText('after', CLOSING)
-  for (const command of [program, invertCommand(output), correlateCommand(output), mappingCommand(output)]) {
+  for (const command of [
+    program,
+    invertCommand(output),
+    fitCommand(output),
+    correlateCommand(output),
+    mappingCommand(output),
+  ]) {
     command
       .exitOverride()
       .configureOutput({ writeOut: output.print, writeErr: (text) => output.note(text.trimEnd()) })

@@ -1,4 +1,11 @@
-import { binVolumes, coordinateDomain, type CoordinateKind, type Histogram, jacobian } from '../histogram'
+import {
+  type AppliedInefficiency,
+  binVolumes,
+  coordinateDomain,
+  type CoordinateKind,
+  type Histogram,
+  jacobian,
+} from '../histogram'
 import { prepareBins, type PreparedBins } from '../inversion'
 import { GAUSS_LEGENDRE } from '../numeric'
 import { thermalEnergy } from '../units'
@@ -49,6 +56,8 @@ export interface LikelihoodCells {
   readonly region: readonly [low: number, high: number]
   readonly populated: readonly [low: number, high: number]
   readonly independentSamples: number | null
+  /** What counts were divided by; null for a density or a probability. */
+  readonly inefficiency: AppliedInefficiency | null
   /** Sides on which the histogram cuts the distribution off. */
   readonly cutOff: readonly [low: boolean, high: boolean]
 }
@@ -79,13 +88,13 @@ export function likelihoodCells(
   const edges = prepared.edges.slice(first, end + 1)
   const populated = [prepared.edges[prepared.filled[0]], prepared.edges[prepared.filled[1] + 1]] as const
   const region = regionOf(kind, edges, populated, cutOff)
-  const { independentSamples } = prepared
   return {
     ...layOut({ kind, useJacobian, region }, edges, prepared.counts.subarray(first, end)),
     temperature,
     kT,
     populated,
-    independentSamples,
+    independentSamples: prepared.independentSamples,
+    inefficiency: prepared.inefficiency,
     cutOff,
   }
 }

@@ -1,11 +1,12 @@
 import { InvalidInputError } from '../errors'
-import type { Histogram } from '../histogram'
-import type { Potential } from '../inversion'
+import type { AppliedInefficiency, Histogram } from '../histogram'
+import { type Potential, SETTING_LIMITS } from '../inversion'
 import type { CoordinateKind } from '../units'
 import { fitCells } from './fit-cells'
 import type { FormFit, FormName, FormRefusal } from './form'
 import { formsOfKind, termLimits } from './form-definitions'
 import { likelihoodCells } from './likelihood-cells'
+import { type FormWarning, rankingWarnings } from './ranking-warnings'
 
 /** What may be asked of a fit. */
 export interface FitOptions {
@@ -37,10 +38,13 @@ export interface FormRanking {
   /** K */
   readonly temperature: number
   readonly independentSamples: number | null
+  /** What counts were divided by; null for a density or a probability. */
+  readonly inefficiency: AppliedInefficiency | null
   /** Sides on which the histogram cuts the distribution off; the fits are conditional on the range there. */
   readonly cutOff: readonly [low: boolean, high: boolean]
   /** By ascending AIC, equal ones the simplest first; without AIC the simplest first. Refused forms last. */
   readonly candidates: readonly (RankedFit | FormRefusal)[]
+  readonly warnings: readonly FormWarning[]
 }
 
 /**
@@ -52,7 +56,7 @@ export interface FormRanking {
  *
  * @param temperature K
  * @throws {InvalidInputError} TEMPERATURE_INVALID; TOO_FEW_BINS with fewer than 5 filled bins; TOO_FEW_SAMPLES when counts
- *   add up to less than 1; SETTING_INVALID when a number of terms is outside its limits
+ *   add up to less than 1; SETTING_INVALID when a number of terms or the inefficiency is outside its limits
  */
 export function rankForms(
   histogram: Histogram,
@@ -62,20 +66,28 @@ export function rankForms(
   const { kind } = histogram
   const forms = formsOfKind(kind)
   forms.forEach((form) => checkTerms(form, terms[form] ?? null))
+  checkInefficiency(inefficiency)
   const cells = likelihoodCells(histogram, temperature, jacobian, inefficiency)
   const results = forms.map((form) => fitCells(cells, form, terms[form] ?? null, reference))
   const fits = results.filter((result) => result.outcome === 'fitted')
   const least = fits.reduce((lowest, { aic }) => Math.min(lowest, aic ?? Infinity), Infinity)
   const ranked = fits
     .map((fit): RankedFit => ({ ...fit, deltaAic: fit.aic === null ? null : fit.aic - least }))
-    .sort((one, other) => (one.deltaAic ?? 0) - (other.deltaAic ?? 0))
+    .sort((one, other) => rankOf(one) - rankOf(other))
   return {
     kind,
     temperature,
     independentSamples: cells.independentSamples,
+    inefficiency: cells.inefficiency,
     cutOff: cells.cutOff,
     candidates: [...ranked, ...results.filter((result) => result.outcome === 'refused')],
+    warnings: rankingWarnings(cells, ranked.at(0) ?? null),
   }
+}
+
+/** ΔAIC to a thousandth: the same model in other words differs by rounding only. */
+function rankOf({ deltaAic }: RankedFit): number {
+  return Math.round((deltaAic ?? 0) * 1000)
 }
 
 /**
@@ -98,6 +110,7 @@ export function fitForm(
     )
   }
   checkTerms(form, terms)
+  checkInefficiency(inefficiency)
   return fitCells(likelihoodCells(histogram, temperature, jacobian, inefficiency), form, terms, reference)
 }
 
@@ -109,4 +122,14 @@ function checkTerms(form: FormName, terms: number | null): void {
   throw new InvalidInputError('SETTING_INVALID', `The form ${form} ${allowed}, not ${terms}.`, {
     field: 'terms',
   })
+}
+
+function checkInefficiency(inefficiency: number | null): void {
+  const { low, high } = SETTING_LIMITS.inefficiency
+  if (inefficiency === null || (inefficiency >= low && inefficiency <= high)) return
+  throw new InvalidInputError(
+    'SETTING_INVALID',
+    `The statistical inefficiency must lie between ${low} and ${high}.`,
+    { field: 'inefficiency' },
+  )
 }

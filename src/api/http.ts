@@ -154,12 +154,19 @@ export const http = {
   },
 }
 
-/** A multipart body: the file, and the rest as one JSON field. */
-export const uploadForm = (file: File, fields: Record<string, unknown>): FormData => {
+/** A multipart body: the file, the rest as one JSON field, and any number of further files in fields of their own. */
+export const uploadForm = (
+  file: File,
+  fields: Record<string, unknown>,
+  parts: Record<string, readonly File[]> = {},
+): FormData => {
   const form = new FormData()
   for (const [name, value] of Object.entries(fields)) {
     form.append(name, typeof value === 'string' ? value : JSON.stringify(value))
   }
   form.append('file', file, file.name)
+  for (const [name, files] of Object.entries(parts)) {
+    files.forEach((part) => form.append(name, part, part.name))
+  }
   return form
 }

@@ -6,7 +6,16 @@ import { storeDistribution } from '@/api/distributions'
 import { storeJointDistribution } from '@/api/joint-distributions'
 import { guessStatePoint, guessTarget, type IntakeTarget } from '@/components/intake/guess-target'
 import { useWorkbenchStore } from '@/stores/workbench'
-import { startIntakeWorker, type IntakeAnswer, type IntakeTask, type IntakeWorker } from '@/workers/intake'
+import {
+  startIntakeWorker,
+  type BlockFilesTask,
+  type IntakeAnswer,
+  type IntakeTask,
+  type IntakeWorker,
+} from '@/workers/intake'
+
+/** Files of time blocks or chains that go with a file. */
+export type IntakeBlockFiles = BlockFilesTask
 
 /** A file that was brought and not yet stored. */
 export interface IntakeItem {
@@ -16,6 +25,7 @@ export interface IntakeItem {
   /** The name of the file said what it is. */
   readonly guessed: boolean
   statePointId: string
+  blocks: IntakeBlockFiles | null
   answer: IntakeAnswer | null
   /** Why the settings were guessed as they are; kept when one of them is changed by hand. */
   reasons: readonly string[]
@@ -43,6 +53,8 @@ export interface Intake {
   drop(item: IntakeItem): void
   aim(item: IntakeItem, target: IntakeTarget): void
   read(item: IntakeItem, settings: IntakeSettings | JointIntakeSettings | null): Promise<void>
+  /** Takes files of blocks or chains along, or none, and reads again. */
+  takeBlocks(item: IntakeItem, blocks: IntakeBlockFiles | null): Promise<void>
   store(item: IntakeItem): Promise<boolean>
 }
 
@@ -71,7 +83,8 @@ export function useIntake(
     if (item.target === null) return null
     if (item.target.type === 'term') {
       const kind = kindOf(item.target.termId)
-      return kind ? { kinds: [kind], settings: settings as IntakeSettings | null } : null
+      if (!kind) return null
+      return { kinds: [kind], settings: settings as IntakeSettings | null, blocks: item.blocks }
     }
     const first = kindOf(item.target.firstTermId)
     const second = kindOf(item.target.secondTermId)
@@ -109,6 +122,7 @@ export function useIntake(
         target: named ?? asked,
         guessed: named !== null,
         statePointId: guessStatePoint(file.name, workbench.statePoints)?.id ?? workbench.statePoint?.id ?? '',
+        blocks: null,
         answer: null,
         reasons: [],
         reading: false,
@@ -129,6 +143,11 @@ export function useIntake(
     if (currentId.value === item.id) currentId.value = items[Math.min(place, items.length - 1)]?.id ?? null
   }
 
+  const takeBlocks = (item: IntakeItem, blocks: IntakeBlockFiles | null): Promise<void> => {
+    item.blocks = blocks
+    return read(item, settingsOf(item))
+  }
+
   const aim = (item: IntakeItem, target: IntakeTarget): void => {
     const before = taskFor(item, null)?.kinds.join()
     item.target = target
@@ -139,8 +158,15 @@ export function useIntake(
   const send = async (item: IntakeItem, target: IntakeTarget): Promise<void> => {
     const statePointId = item.statePointId
     if (target.type === 'term' && item.answer?.single?.settings) {
-      const upload = { statePointId, settings: item.answer.single.settings }
-      await storeDistribution(target.termId, item.file, upload)
+      const { blocks } = item
+      const settings = item.answer.single.settings
+      if (blocks === null) {
+        await storeDistribution(target.termId, item.file, { statePointId, settings })
+        return
+      }
+      const upload = { statePointId, settings, firstOf: blocks.isFirst ? blocks.kind : null }
+      const parts = blocks.kind === 'time' ? { blocks: blocks.files } : { chains: blocks.files }
+      await storeDistribution(target.termId, item.file, upload, parts)
     } else if (target.type === 'pair' && item.answer?.joint?.settings) {
       const { kinds, units, ...rest } = item.answer.joint.settings
       await storeJointDistribution(workbench.mapping?.id ?? '', item.file, {
@@ -170,5 +196,5 @@ export function useIntake(
     }
   }
 
-  return { items, current, currentId, bring, drop, aim, read, store }
+  return { items, current, currentId, bring, drop, aim, read, takeBlocks, store }
 }

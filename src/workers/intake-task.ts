@@ -1,6 +1,9 @@
+import type { BlockKind } from '@shared/histogram'
 import type { CoordinateKind } from '@shared/units'
 import {
+  type BlockFiles,
   MAX_FILE_BYTES,
+  NO_BLOCK_FILES,
   previewDistribution,
   previewJointDistribution,
   type DistributionPreview,
@@ -10,9 +13,21 @@ import {
   type JointPreview,
 } from '@shared/intake'
 
+/** Files of time blocks or of chains that come with a distribution. */
+export interface BlockFilesTask {
+  readonly kind: BlockKind
+  readonly files: readonly File[]
+  /** The main file is the first block, and the distribution the sum of all. */
+  readonly isFirst: boolean
+}
+
 /** What a file is to be read as: the distribution of one coordinate, or of two. null has the settings guessed. */
 export type IntakeTask =
-  | { readonly kinds: readonly [CoordinateKind]; readonly settings: IntakeSettings | null }
+  | {
+      readonly kinds: readonly [CoordinateKind]
+      readonly settings: IntakeSettings | null
+      readonly blocks?: BlockFilesTask | null
+    }
   | {
       readonly kinds: readonly [CoordinateKind, CoordinateKind]
       readonly settings: JointIntakeSettings | null
@@ -68,14 +83,28 @@ export async function readFile(id: number, file: Blob, task: IntakeTask): Promis
   }
   const reading = texts.get(id) ?? file.text()
   texts.set(id, reading)
-  return readText(await reading, task)
+  return readText(await reading, task, await readBlockFiles(task))
+}
+
+/** The texts of the block files of a task. */
+export async function readBlockFiles(task: IntakeTask): Promise<BlockFiles> {
+  const blocks = 'blocks' in task ? task.blocks : null
+  if (!blocks) return NO_BLOCK_FILES
+  const texts = await Promise.all(
+    blocks.files.map(async (file) => ({ name: file.name, text: await file.text() })),
+  )
+  return { ...NO_BLOCK_FILES, [blocks.kind]: texts, firstOf: blocks.isFirst ? blocks.kind : null }
 }
 
 /** Reads the text of a file as asked; whatever is wrong with it is part of the answer. */
-export function readText(text: string, task: IntakeTask): IntakeAnswer {
+export function readText(
+  text: string,
+  task: IntakeTask,
+  blockFiles: BlockFiles = NO_BLOCK_FILES,
+): IntakeAnswer {
   const isSingle = (given: IntakeTask): given is Extract<IntakeTask, { kinds: readonly [CoordinateKind] }> =>
     given.kinds.length === 1
-  const single = isSingle(task) ? previewDistribution(text, task.kinds[0], task.settings) : null
+  const single = isSingle(task) ? previewDistribution(text, task.kinds[0], task.settings, blockFiles) : null
   const joint = isSingle(task) ? null : previewJointDistribution(text, task.kinds, task.settings)
   const line = (single ?? joint)?.error?.place.line
   return { single, joint, badLine: line === undefined ? null : lineOf(text, line) }

@@ -1,8 +1,8 @@
 import { releaseProxy, wrap } from 'comlink'
 import type * as intakeTask from './intake-task'
-import type { IntakeAnswer, IntakeTask } from './intake-task'
+import type { BlockFilesTask, IntakeAnswer, IntakeTask } from './intake-task'
 
-export type { IntakeAnswer, IntakeTask }
+export type { BlockFilesTask, IntakeAnswer, IntakeTask }
 
 /** Reads files off the main thread: one of 20 MB does not freeze the page. */
 export interface IntakeWorker {

@@ -89,6 +89,8 @@ describe('IntakeSamples', () => {
 
   it('says what an empty answer means, with and without counts', () => {
     expect(open(null, 24000).text()).toContain('all 24\u00a0000 counts are taken as independent')
+    const measured = mount(IntakeSamples, { props: { stated: null, counts: 24000, fromBlocks: true } })
+    expect(measured.text()).toContain('divided by the inefficiency of the blocks')
     expect(open(null, null).text()).toContain('nothing is smoothed and no band is drawn')
   })
 

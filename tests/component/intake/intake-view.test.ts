@@ -6,13 +6,13 @@ import { useNoticesStore } from '@/stores/notices'
 import { useWorkbenchStore } from '@/stores/workbench'
 import IntakeView from '@/views/IntakeView.vue'
 import type { IntakeWorker } from '@/workers/intake'
-import { readText } from '@/workers/intake-task'
+import { readBlockFiles, readText } from '@/workers/intake-task'
 import { mappingDocument, term } from '../../unit/src/components/bench/bench-terms'
 import { click, control, fakeApi, freshStores, mountAt, pageText } from '../../support/mount'
 
 vi.mock('@/workers/intake', () => ({
   startIntakeWorker: (): IntakeWorker => ({
-    readFile: async (_id, blob, task) => readText(await blob.text(), task),
+    readFile: async (_id, blob, task) => readText(await blob.text(), task, await readBlockFiles(task)),
     forgetFile: () => Promise.resolve(),
     stop: () => undefined,
   }),
@@ -70,9 +70,11 @@ const open = async (
   const stage = await mountAt('intake', `/polymers/p/mappings/mapping/intake${query}`, IntakeView, pinia)
   return { ...stage, sent }
 }
-const bring = async (name: string, content: string): Promise<void> => {
-  const picker = document.querySelector<HTMLInputElement>('#intake-files')!
-  Object.defineProperty(picker, 'files', { value: [new File([content], name)], configurable: true })
+const bring = (name: string, content: string): Promise<void> =>
+  pick('#intake-files', [new File([content], name)])
+const pick = async (selector: string, files: readonly File[]): Promise<void> => {
+  const picker = document.querySelector<HTMLInputElement>(selector)!
+  Object.defineProperty(picker, 'files', { value: files, configurable: true })
   picker.dispatchEvent(new Event('change', { bubbles: true }))
   await flushPromises()
   await flushPromises()
@@ -111,6 +113,53 @@ describe('IntakeView', () => {
     await here('Line 3, column 2 cannot be read')
     expect(pageText()).toContain('0.32 abc')
     expect((control('Store distribution') as HTMLButtonElement).disabled).toBe(true)
+  })
+
+  it('shows what files of chains say about correlation, and sends them with the file', async () => {
+    const { sent } = await open('', {}, { [`POST /api/terms/${bond.id}/distributions`]: { status: 201 } })
+    const counts = [12, 15, 18, 14, 9]
+    // Ten chains that lean one way or the other: far more scatter than independent counts have.
+    const chains = Array.from({ length: 10 }, (_, chain) => {
+      const lean = chain % 2 === 0 ? 0.5 : 1.5
+      return counts.map((count, bin) => 100 * count * (bin < 2 ? lean : 2 - lean))
+    })
+    const content = (values: readonly number[]) =>
+      values.map((value, bin) => `${(0.3 + 0.01 * bin).toFixed(2)} ${value}\n`).join('')
+    const files = chains.map((values, chain) => new File([content(values)], `chain${chain}.txt`))
+    await bring('B-E.txt', content(counts.map((_, bin) => chains.reduce((sum, each) => sum + each[bin], 0))))
+    await here('reads well')
+    await pick('#intake-block-files', files.slice(0, 9))
+    await here('There are 9 blocks; at least 10 are needed')
+    expect((control('Store distribution') as HTMLButtonElement).disabled).toBe(true)
+    await pick('#intake-block-files', files.slice(9))
+    await here(/Statistical inefficiency g [1-9]\d+ ± \d/)
+    document.querySelector<HTMLInputElement>('.intake-blocks input[value=chain]')!.click()
+    await flushPromises()
+    await here('10 files')
+    // 68 000 counts over a g near 478.
+    await here(/Independent samples1[34]\dAdd/)
+    await click('Store distribution')
+    await vi.waitFor(() => expect(sent.some(({ method }) => method === 'POST')).toBe(true))
+    const upload = sent.find(({ method }) => method === 'POST')!.body as FormData
+    expect(upload.getAll('chains').map((each) => (each as File).name)).toEqual(files.map(({ name }) => name))
+    expect(upload.getAll('blocks')).toEqual([])
+    expect(JSON.parse(upload.get('settings') as string)).toMatchObject({ firstOf: null })
+  })
+
+  it('adds the file and its blocks up when it is the first of them', async () => {
+    await open()
+    const part = (shift: number) => text.replaceAll(/ (\d+)/g, (_, count) => ` ${Number(count) + shift}`)
+    await bring('B-E.txt', part(0))
+    await here('reads well')
+    await pick(
+      '#intake-block-files',
+      Array.from({ length: 9 }, (_, block) => new File([part(block + 1)], `block${block}.txt`)),
+    )
+    await here('There are 9 blocks')
+    document.querySelector<HTMLInputElement>('.intake-blocks input[type=checkbox]')!.click()
+    await here('The counts of 10 files were added up.')
+    await click('Take off')
+    await here('Histograms of 10 or more stretches of time')
   })
 
   it('asks what a file is when its name does not say', async () => {

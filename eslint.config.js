@@ -26,6 +26,7 @@ const sharedLayerRules = sharedLayers.flatMap((folders, level) => {
     'intake',
     'forms',
     'basins',
+    'flatness',
     'correlation',
     'joint-potential',
     'tables',

@@ -1,19 +1,21 @@
 import { Command } from 'commander'
 import { BASIN_DEVIATIONS, LEAST_BASIN_DEPTH } from '../../shared/basins'
 import { correlate, DEFAULT_SEED } from '../../shared/correlation'
-import type { CoordinateKind } from '../../shared/histogram'
+import type { CoordinateKind, JointHistogram } from '../../shared/histogram'
 import {
   guessJointIntakeSettings,
   jointHistogramFromTable,
   type JointIntakeSettings,
   readColumns,
 } from '../../shared/intake'
-import { type CoordinateUnit, unitsOfKind } from '../../shared/units'
+import { DEFAULT_JOINT_ROWS, JOINT_ROWS } from '../../shared/joint-potential'
+import { type CoordinateUnit, ENERGY_UNITS, type EnergyUnit, unitsOfKind } from '../../shared/units'
 import { correlationJson } from './correlation-json'
 import { correlationReport } from './correlation-report'
-import type { Output } from './output'
+import { jointTableText } from './joint-table-text'
+import { type Output, writeText } from './output'
 import { type JointColumnChoice, jointColumns } from './parse-columns'
-import { pairOf, positiveNumber, wholeNumber } from './parse-options'
+import { oneOf, pairOf, positiveNumber, rowPair, wholeNumber } from './parse-options'
 import { type Input, readInput } from './read-input'
 import { withFileName } from './refused-file'
 import { UsageError } from './usage-error'
@@ -26,6 +28,10 @@ interface CorrelateOptions {
   readonly basinDepth: number
   readonly seed: number
   readonly json?: boolean
+  readonly jointTable?: string
+  readonly temperature?: number
+  readonly energyUnit: EnergyUnit
+  readonly jointRows?: [number, number]
 }
 
 /** `beadwright correlate`: may two coordinates be treated one by one? */
@@ -65,21 +71,56 @@ export function correlateCommand(output: Output): Command {
       '--json',
       'print JSON instead of a report; basins: {map, product, depth} holds the numbers of basins',
     )
+    .option(
+      '--joint-table <file>',
+      'write the smoothed joint potential as a grid of energies and both forces; - prints it in place of the report. ' +
+        'Needs --temperature',
+    )
+    .option('--temperature <K>', 'temperature of the samples in kelvin, for --joint-table', positiveNumber)
+    .option(
+      '--energy-unit <unit>',
+      'kJ/mol, kcal/mol or kT, for --joint-table',
+      oneOf(ENERGY_UNITS),
+      'kJ/mol',
+    )
+    .option(
+      '--joint-rows <first,second>',
+      `rows of the joint table along both coordinates (default: ${DEFAULT_JOINT_ROWS.bond} for a bond, ` +
+        `${DEFAULT_JOINT_ROWS.angle} for an angle or a dihedral)`,
+      rowPair(JOINT_ROWS.low, JOINT_ROWS.high),
+    )
     .action((file: string, options: CorrelateOptions) => {
-      withFileName(file, () => output.print(correlated(readInput(file), options, output)))
+      withFileName(file, () => correlated(readInput(file), options, output))
     })
 }
 
-function correlated(input: Input, options: CorrelateOptions, output: Output): string {
+function correlated(input: Input, options: CorrelateOptions, output: Output): void {
   const columnsOfFile = readColumns(input.text)
   const settings = jointSettings(guessJointIntakeSettings(columnsOfFile, options.kinds), options, output)
   const { histogram, notes } = jointHistogramFromTable(columnsOfFile, settings)
   notes.forEach((note) => output.note(note))
+  writeJointTable(histogram, options, input, output)
+  if (options.jointTable === '-') return
   const basinThreshold = { depth: options.basinDepth, deviations: BASIN_DEVIATIONS }
   const correlation = correlate(histogram, { seed: options.seed, basinThreshold })
   correlation.warnings.forEach(({ code, message, action }) => output.note(`${code}: ${message} ${action}`))
   const json = correlationJson(correlation, options.units, input)
-  return options.json ? `${JSON.stringify(json, null, 2)}\n` : correlationReport(json)
+  output.print(options.json ? `${JSON.stringify(json, null, 2)}\n` : correlationReport(json))
+}
+
+function writeJointTable(
+  histogram: JointHistogram,
+  { jointTable: path, temperature, ...options }: CorrelateOptions,
+  input: Input,
+  output: Output,
+): void {
+  if (path === undefined) return
+  if (temperature === undefined) {
+    throw new UsageError(
+      'A joint table is an energy at a temperature: give --temperature with --joint-table.',
+    )
+  }
+  writeText(path, jointTableText(histogram, { ...options, temperature }, input, output), output)
 }
 
 function jointSettings(

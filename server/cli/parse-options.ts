@@ -54,6 +54,20 @@ export function wholeNumber(least: number): (text: string) => number {
   }
 }
 
+/** Two whole numbers from `least` to `most`, separated by a comma. */
+export function rowPair(least: number, most: number): (text: string) => [number, number] {
+  return (text) => {
+    const values = text.split(',').map(number)
+    if (
+      values.length !== 2 ||
+      !values.every((each) => Number.isInteger(each) && each >= least && each <= most)
+    ) {
+      throw new InvalidArgumentError(`Give two whole numbers from ${least} to ${most} separated by a comma.`)
+    }
+    return [values[0], values[1]]
+  }
+}
+
 /** 'auto', 'off' or λ. */
 export function smoothing(text: string): SmoothingSettings {
   if (text === 'auto') return { mode: 'auto', criterion: 'likelihood' }

@@ -19,12 +19,11 @@ const forbid = (files, ...patterns) => ({
 })
 
 /** Inside shared/: evidence and tables → inversion → smoothing → histogram → numeric → errors, units. */
-const sharedLayers = [['errors', 'units', 'numeric'], ['histogram'], ['smoothing'], ['inversion']]
+const sharedLayers = [['errors', 'units', 'numeric'], ['histogram'], ['smoothing'], ['inversion'], ['forms']]
 const sharedLayerRules = sharedLayers.flatMap((folders, level) => {
   const above = [
     ...sharedLayers.slice(level + 1).flat(),
     'intake',
-    'forms',
     'basins',
     'flatness',
     'correlation',

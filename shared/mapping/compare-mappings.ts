@@ -1,12 +1,10 @@
 import type { RepeatUnit } from '../chemistry'
+import { FLAT_BELOW } from '../flatness'
 import { comparisonSentence } from './comparison-sentence'
 import type { ComparedMapping, ComparedTerm, MappingComparison, MappingEvidence } from './comparison'
 import { mappingNumbers, type MappingNumbers } from './mapping-numbers'
 import { multiplicity } from './term'
 import { usedTerms } from './term-use'
-
-/** Amplitude in kT below which a dihedral may be dropped: common practice, adjustable. */
-export const FLAT_AMPLITUDE = 0.5
 
 /**
  * Compares mappings of one repeat unit by their own terms in use and by what their data say. The cost is that of pairs that are
@@ -19,7 +17,7 @@ export const FLAT_AMPLITUDE = 0.5
 export function compareMappings(
   unit: RepeatUnit,
   evidence: readonly MappingEvidence[],
-  flatAmplitude = FLAT_AMPLITUDE,
+  flatAmplitude = FLAT_BELOW,
 ): MappingComparison {
   const numbers = evidence.map(({ document }) => mappingNumbers(unit, document))
   const fewest = Math.min(...numbers.map((each) => each?.beads ?? Infinity))

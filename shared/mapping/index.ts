@@ -4,7 +4,7 @@ export { beadGraph, type BeadGraph } from './bead-graph'
 export { beadLinks, type BeadLink } from './bead-links'
 export { beadPieces } from './bead-pieces'
 export { checkMapping } from './check-mapping'
-export { compareMappings, FLAT_AMPLITUDE } from './compare-mappings'
+export { compareMappings } from './compare-mappings'
 export type {
   ComparedMapping,
   ComparedTerm,

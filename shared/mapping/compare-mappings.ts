@@ -1,5 +1,4 @@
 import type { RepeatUnit } from '../chemistry'
-import { FLAT_BELOW } from '../flatness'
 import { comparisonSentence } from './comparison-sentence'
 import type { ComparedMapping, ComparedTerm, MappingComparison, MappingEvidence } from './comparison'
 import { mappingNumbers, type MappingNumbers } from './mapping-numbers'
@@ -11,19 +10,14 @@ import { usedTerms } from './term-use'
  * not bonded, at one density, cutoff and time step: it goes as the square of the number of beads.
  *
  * @param evidence one entry per mapping
- * @param flatAmplitude kT below which a dihedral may be dropped
  * @throws {InvalidInputError} MAPPING_INVALID for an atom the unit does not have
  */
-export function compareMappings(
-  unit: RepeatUnit,
-  evidence: readonly MappingEvidence[],
-  flatAmplitude = FLAT_BELOW,
-): MappingComparison {
+export function compareMappings(unit: RepeatUnit, evidence: readonly MappingEvidence[]): MappingComparison {
   const numbers = evidence.map(({ document }) => mappingNumbers(unit, document))
   const fewest = Math.min(...numbers.map((each) => each?.beads ?? Infinity))
   const mappings = evidence.map((each, index): ComparedMapping => {
     const own = numbers[index]
-    return compared(each, own, own && (own.beads / fewest) ** 2, flatAmplitude)
+    return compared(each, own, own && (own.beads / fewest) ** 2)
   })
   return { mappings, summary: summaryOf(mappings) }
 }
@@ -32,11 +26,10 @@ function compared(
   { name, document, terms, findings, pairs }: MappingEvidence,
   numbers: MappingNumbers | null,
   cost: number | null,
-  flatAmplitude: number,
 ): ComparedMapping {
   const used = usedTerms(document, terms)
   const rows = used.map((term): ComparedTerm => {
-    const { basins = null, deviation = null, amplitude = null } = findings.get(term.name) ?? {}
+    const { basins = null, deviation = null, flatness = null } = findings.get(term.name) ?? {}
     return {
       kind: term.kind,
       name: term.name,
@@ -45,7 +38,7 @@ function compared(
       basins,
       singlePeaked: basins && basins.count <= 1,
       deviation,
-      droppable: term.kind === 'dihedral' && amplitude !== null ? amplitude < flatAmplitude : null,
+      droppable: flatness === 'flat' ? true : flatness === 'keep' ? false : null,
     }
   })
   const names = new Set(used.map((term) => term.name))

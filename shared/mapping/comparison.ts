@@ -1,3 +1,4 @@
+import type { FlatnessVerdict } from '../flatness'
 import type { CoordinateKind } from '../histogram/histogram'
 import type { MappingDocument } from './mapping-document'
 import type { MappingNumbers } from './mapping-numbers'
@@ -9,8 +10,8 @@ export interface TermFinding {
   readonly basins: { readonly count: number; readonly depth: number } | null
   /** Standard deviation in nm or rad; circular for a dihedral. */
   readonly deviation: number | null
-  /** Amplitude of a dihedral's potential over its populated range, kT; null for others. */
-  readonly amplitude: number | null
+  /** Whether a dihedral may be dropped, as `dihedralFlatness` judges it; null for others and where nobody judged. */
+  readonly flatness: FlatnessVerdict | null
 }
 
 /** What is known of a pair of terms. */
@@ -40,7 +41,7 @@ export interface ComparedTerm {
   readonly basins: TermFinding['basins']
   readonly singlePeaked: boolean | null
   readonly deviation: number | null
-  /** A dihedral that is flat enough to be dropped; null without an amplitude. */
+  /** A dihedral that is flat enough to be dropped; null where that is not known. */
   readonly droppable: boolean | null
 }
 

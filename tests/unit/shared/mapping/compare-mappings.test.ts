@@ -15,7 +15,7 @@ const acrylate = await parseRepeatUnit(HEXYL_ACRYLATE)
 const finding = (count: number, change: Partial<TermFinding> = {}): TermFinding => ({
   basins: { count, depth: 0.5 },
   deviation: 0.02,
-  amplitude: null,
+  flatness: null,
   ...change,
 })
 
@@ -37,7 +37,7 @@ function evidence(
 const coarse = evidence(
   '3-to-1',
   THREE_TO_ONE,
-  { 'B–E': finding(1), 'E–H': finding(3), 'B–B–B–B': finding(3, { amplitude: 4 }) },
+  { 'B–E': finding(1), 'E–H': finding(3), 'B–B–B–B': finding(3, { flatness: 'keep' }) },
   [{ first: 'E–H', second: 'B–E–H', nats: 0.31 }],
 )
 const fine = evidence(
@@ -48,7 +48,7 @@ const fine = evidence(
     'E–S1': finding(1),
     'S1–S2': finding(1),
     'S2–S3': finding(1),
-    'E–S1–S2–S3': finding(1, { amplitude: 0.3 }),
+    'E–S1–S2–S3': finding(1, { flatness: 'flat' }),
   },
   [
     { first: 'E–S1', second: 'B–E–S1', nats: 0.01 },
@@ -84,8 +84,11 @@ describe('comparing mappings', () => {
     expect(second.cost).toBeCloseTo(25 / 9, 12)
   })
 
-  it('drops dihedrals below the amplitude asked for', () => {
-    expect(compareMappings(acrylate, [coarse, fine], 0.2).mappings[1].droppable).toEqual([])
+  it('drops no dihedral that nobody could judge', () => {
+    const undecided = evidence('5-to-1', FIVE_TO_ONE, { 'E–S1–S2–S3': finding(1, { flatness: 'undecided' }) })
+    const [column] = compareMappings(acrylate, [undecided]).mappings
+    expect(column.droppable).toEqual([])
+    expect(column.terms.find(({ name }) => name === 'E–S1–S2–S3')?.droppable).toBeNull()
   })
 
   it('counts only terms in use, and pairs between them', () => {

@@ -9,11 +9,10 @@ import {
   replacedWarnings,
   type Warning,
 } from '../inversion'
-import { thermalEnergy } from '../units'
 import { type ChosenForm, fitChosenForm } from './chosen-form'
 import type { FormFit } from './form'
-import { energyOf, formDeviations } from './form-energy'
-import { largestDeviation } from './largest-deviation'
+import { formDeviation } from './form-deviation'
+import { formDeviations } from './form-energy'
 
 /** Pearson's χ² of a form this many of its own deviations above its mean is no accident. */
 const MISFIT_DEVIATIONS = 6
@@ -53,18 +52,9 @@ export function derivePotential(
  */
 export function withForm(smooth: Inversion, chosen: ChosenForm | null): DerivedPotential {
   if (chosen === null) return { inversion: smooth, smooth, form: null, smoothOffset: 0 }
-  const { kind, bins, temperature, jacobian } = smooth
+  const { kind, bins, jacobian } = smooth
   const { potential, minimum } = chosen
-  const cells = {
-    edges: bins.edges,
-    volumes: bins.volumes,
-    populated: smooth.potential.populated,
-    kT: thermalEnergy(temperature),
-  }
-  const form: FormFit = {
-    ...chosen.fit,
-    largestDeviation: largestDeviation(cells, energyOf(chosen.fit), smooth.potential),
-  }
+  const form: FormFit = { ...chosen.fit, largestDeviation: formDeviation(chosen.fit, smooth) }
   const smoothOffset = meanDifference(smooth, chosen)
   const replaced: Inversion = {
     ...smooth,

@@ -14,6 +14,7 @@ export type {
 } from './form'
 export type { TermLimits } from './form-definition'
 export { FORM_NAMES, formsOfKind, termLimits } from './form-definitions'
+export { comparedRanking, curveAic, formDeviation } from './form-deviation'
 export { formDeviations, formEnergy } from './form-energy'
 export { formCurve, type FormCurve, formPotential } from './form-potential'
 export { parametersInUnits, type ShownParameter } from './form-units'

@@ -1,13 +1,14 @@
 import { releaseProxy, wrap } from 'comlink'
 import { InvalidInputError } from '@shared/errors'
 import type * as inversionTask from './inversion-task'
-import type { InversionAnswer, InversionTask, Outcome } from './inversion-task'
+import type { InversionAnswer, InversionTask, Outcome, RankingAnswer } from './inversion-task'
 
-export type { InversionAnswer, InversionTask }
+export type { InversionAnswer, InversionTask, RankingAnswer }
 
 /** Inversions off the main thread. Input the core refuses rejects with InvalidInputError, as it would on this side. */
 export interface InversionWorker {
   runInversion(task: InversionTask): Promise<InversionAnswer>
+  runRanking(task: InversionTask): Promise<RankingAnswer>
   findAutomatic(task: InversionTask): Promise<number | null>
   stop(): void
 }
@@ -25,6 +26,7 @@ export const startInversionWorker = (): InversionWorker => {
   broken.catch(() => undefined)
   return {
     runInversion: async (task) => unwrap(await Promise.race([remote.runInversion(task), broken])),
+    runRanking: async (task) => unwrap(await Promise.race([remote.runRanking(task), broken])),
     findAutomatic: async (task) => unwrap(await Promise.race([remote.findAutomatic(task), broken])),
     stop: () => {
       remote[releaseProxy]()

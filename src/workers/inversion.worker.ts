@@ -1,4 +1,4 @@
 import { expose } from 'comlink'
-import { findAutomatic, runInversion } from './inversion-task'
+import { findAutomatic, runInversion, runRanking } from './inversion-task'
 
-expose({ runInversion, findAutomatic })
+expose({ runInversion, runRanking, findAutomatic })

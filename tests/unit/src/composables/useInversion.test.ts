@@ -15,6 +15,7 @@ const unwrap = <Answer>(outcome: Outcome<Answer>): Answer => {
 
 const set = (settings: Partial<InversionSettings> = {}) => {
   const worker = {
+    runRanking: vi.fn<InversionWorker['runRanking']>(),
     runInversion: vi.fn<InversionWorker['runInversion']>(async (task) => {
       await Promise.resolve()
       return unwrap(runInversion(task))
@@ -28,6 +29,7 @@ const set = (settings: Partial<InversionSettings> = {}) => {
   const task = shallowRef<InversionTask | null>({
     histogram: angleCounts(),
     temperature: TEMPERATURE,
+    basinDepth: 0.5,
     settings: { ...DEFAULT_INVERSION_SETTINGS, ...settings },
   })
   const scope = effectScope()

@@ -6,7 +6,12 @@ import { startInversionWorker } from '@/workers'
 import * as inversionTask from '@/workers/inversion-task'
 import { angleCounts, TEMPERATURE } from '../components/bench/distributions'
 
-const task = { histogram: angleCounts(), temperature: TEMPERATURE, settings: DEFAULT_INVERSION_SETTINGS }
+const task = {
+  histogram: angleCounts(),
+  temperature: TEMPERATURE,
+  settings: DEFAULT_INVERSION_SETTINGS,
+  basinDepth: 0.5,
+}
 
 /** A worker as the page sees it, its far end in the same thread: everything still crosses by structured clone. */
 class NearWorker extends EventTarget {

@@ -1,11 +1,12 @@
 import { describe, expect, it } from 'vitest'
-import { binCentroids, binVolumes } from '@shared/histogram'
+import { binCentroids, binVolumes, createHistogram } from '@shared/histogram'
 import { DEFAULT_INVERSION_SETTINGS, invert } from '@shared/inversion'
-import { edgesOf, exactHistogram, type ExactCase, largestError } from '../support/exact-histograms'
+import { edgesOf, exactHistogram, type ExactCase, largestError, ragged } from '../support/exact-histograms'
 import angleCosine from './fixtures/angle-cosine.json'
 import angleHarmonic from './fixtures/angle-harmonic.json'
 import angleIdeal from './fixtures/angle-ideal.json'
 import harmonicBond from './fixtures/harmonic-bond.json'
+import iterativeUpdate from './fixtures/iterative-update.json'
 import ryckaertBellemans from './fixtures/dihedral-rb.json'
 import vonMises from './fixtures/dihedral-vonmises.json'
 
@@ -72,6 +73,8 @@ describe('the automatic inversion of exact bin probabilities', () => {
     ['a dihedral in one cosine', cosineWell],
   ])('is within 0.01 kT of the true potential wherever that is below 6 kT: %s', (_, exact) => {
     expect(largestError(exact)).toBeLessThan(0.01)
+    // Bins of one and two widths in turns.
+    expect(largestError(ragged(exact, [1, 2, 1, 1]))).toBeLessThan(0.01)
   })
 
   it('is flat for freely jointed angles', () => {
@@ -115,6 +118,34 @@ describe('bins of the reference files', () => {
     // The fixture rounds probabilities to twelve digits: 1e-8 kJ/mol.
     bins.rawEnergies.forEach((energy, bin) => {
       expect(Math.abs(energy - (energies[bin] - least))).toBeLessThan(1e-8)
+    })
+  })
+})
+
+/**
+ * Sampling −kT ln p, which leaves the Jacobian out, gives the volumes once more; one update U + kT ln(P/P_target) then repairs
+ * exactly that (Soper, Chem. Phys. 202 (1996) 295; Reith, Pütz, Müller-Plathe, J. Comput. Chem. 24 (2003) 1624).
+ */
+describe('an inversion without the Jacobian', () => {
+  const { inputs, expected, tolerance } = iterativeUpdate
+  const target = expected.angle_target_bin_probability
+  const edges = edgesOf(0, Math.PI, inputs.angle.n_bins)
+  const histogram = createHistogram({ kind: 'angle', edges, weights: target, content: 'probability' })
+  const { bins, uncorrectedEnergies } = invert(histogram, inputs.angle.T, DEFAULT_INVERSION_SETTINGS)
+  const { kT } = inputs.angle
+
+  it('is sampled with the volumes twice', () => {
+    const masses = uncorrectedEnergies.map((energy, bin) => bins.volumes[bin] * Math.exp(-energy / kT))
+    const total = masses.reduce((sum, mass) => sum + mass, 0)
+    expected.angle_sampled_bin_probability_before.forEach((probability, bin) => {
+      // The fixture rounds target and result to twelve digits each.
+      expect(Math.abs(masses[bin] / total / probability - 1)).toBeLessThan(tolerance.rel)
+    })
+  })
+
+  it('becomes the inversion with the Jacobian after one update', () => {
+    expected.angle_U2_minus_its_minimum.forEach((energy, bin) => {
+      expect(Math.abs(bins.rawEnergies[bin] - energy)).toBeLessThan(1e-8)
     })
   })
 })

@@ -8,8 +8,8 @@ import {
 import { STUDY_DENSITIES } from '../support/study-densities'
 
 const SAMPLES = [1000, 10_000, 100_000]
-const ERROR_REPEATS = 40
-const BAND_REPEATS = 60
+const ERROR_REPEATS = 200
+const BAND_REPEATS = 500
 const SEED = 20_261_201
 
 const grouped = (value: number): string => value.toLocaleString('en-US')

@@ -3,6 +3,8 @@ import { DEFAULT_INVERSION_SETTINGS, invert, potentialEnergy } from '@shared/inv
 
 /** Counts so many that their noise is far below anything that is judged: exact bin probabilities. */
 const EXACT_SAMPLES = 1e8
+/** Samples that the accuracy of inversion is promised for. */
+const JUDGED_SAMPLES = 1e7
 
 /** A potential whose exact bin probabilities are known. */
 export interface ExactCase {
@@ -28,7 +30,7 @@ export function exactHistogram(exact: ExactCase, samples = EXACT_SAMPLES): Histo
  */
 export function largestError(exact: ExactCase): number {
   const { kT, temperature, edges, energy } = exact
-  const { potential } = invert(exactHistogram(exact), temperature, DEFAULT_INVERSION_SETTINGS)
+  const { potential } = invert(exactHistogram(exact, JUDGED_SAMPLES), temperature, DEFAULT_INVERSION_SETTINGS)
   const [low, high] = [edges[0], edges[edges.length - 1]]
   const places = Array.from({ length: 4001 }, (_, place) => low + ((high - low) * place) / 4000)
   const truth = places.map(energy)
@@ -38,6 +40,23 @@ export function largestError(exact: ExactCase): number {
     return above < 6 * kT ? [Math.abs(potentialEnergy(potential, place) - above) / kT] : []
   })
   return Math.max(...errors)
+}
+
+/**
+ * The same density on bins of unequal width: neighbours are put together in turns of the given lengths.
+ *
+ * @param lengths whole numbers from 1
+ */
+export function ragged(exact: ExactCase, lengths: readonly number[]): ExactCase {
+  const edges = [exact.edges[0]]
+  const probabilities: number[] = []
+  for (let bin = 0, turn = 0; bin < exact.probabilities.length; turn++) {
+    const end = Math.min(bin + lengths[turn % lengths.length], exact.probabilities.length)
+    probabilities.push(exact.probabilities.slice(bin, end).reduce((sum, probability) => sum + probability, 0))
+    edges.push(exact.edges[end])
+    bin = end
+  }
+  return { ...exact, edges, probabilities }
 }
 
 /** `bins` + 1 equally spaced edges. */

@@ -1,6 +1,6 @@
 import { z } from 'zod'
 import { idSchema } from '../../shared/contracts/common'
-import { pairSchema } from '../../shared/contracts/distribution'
+import { pairListSchema } from '../../shared/contracts/distribution'
 import {
   mappingCreateSchema,
   mappingSchema,
@@ -73,12 +73,11 @@ export const mappingRoutes = [
   route({
     method: 'get',
     path: '/api/mappings/:mappingId/pairs',
-    summary: 'Bond–angle pairs that share a bead, with what is known of each at a state point',
+    summary: 'Pairs of terms that share a bead, with what is known of each at a state point',
     access: { may: 'read', at: 'mapping' },
     query: atStatePoint,
-    answer: { status: 200, body: z.object({ pairs: z.array(pairSchema) }) },
-    handle: async ({ services, member, params, query }) => ({
-      pairs: await services.pairs.list(member, params.mappingId, query.statePoint),
-    }),
+    answer: { status: 200, body: pairListSchema },
+    handle: ({ services, member, params, query }) =>
+      services.pairs.list(member, params.mappingId, query.statePoint),
   }),
 ]

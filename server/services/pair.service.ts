@@ -1,5 +1,5 @@
 import { type DataSource, In, IsNull } from 'typeorm'
-import type { Pair as PairBody } from '../../shared/contracts/distribution'
+import type { Pair as PairBody, PairList } from '../../shared/contracts/distribution'
 import { termName } from '../../shared/mapping'
 import { Decision } from '../entities/decision.entity'
 import { JointDistribution } from '../entities/joint-distribution.entity'
@@ -7,15 +7,21 @@ import { Mapping } from '../entities/mapping.entity'
 import { Term } from '../entities/term.entity'
 import { notFound } from '../errors/http-error'
 import type { Member } from './member'
-import { bondAnglePairs } from './bond-angle-pairs'
 import { findStatePoint } from './term-context'
+import { termPairs } from './term-pairs'
 
-/** Bond–angle pairs of a mapping and what is known of each. */
+/** Most pairs that one answer lists: our limit. A branched mapping of 40 beads would have a hundred thousand. */
+export const MOST_PAIRS = 500
+
+/** Pairs of terms of a mapping and what is known of each. */
 export class PairService {
   constructor(private readonly dataSource: DataSource) {}
 
-  /** The pairs whose two terms share a bead, those first whose bond is a side of the angle. */
-  async list({ groupId }: Member, mappingId: string, statePointId: string): Promise<PairBody[]> {
+  /**
+   * The pairs whose two terms share a bead, in the order of `termPairs`: those that have data, and of the others as many as
+   * make up 500.
+   */
+  async list({ groupId }: Member, mappingId: string, statePointId: string): Promise<PairList> {
     const { manager } = this.dataSource
     const mapping = await manager.findOneBy(Mapping, { id: mappingId, groupId })
     if (!mapping) throw notFound('mapping')
@@ -32,19 +38,27 @@ export class PairService {
       jointDistributionId: In(joints.map(({ id }) => id)),
       supersededAt: IsNull(),
     })
-    return bondAnglePairs(terms).map(({ bond, angle }) => {
+    const all = termPairs(terms).map(({ first, second }): PairBody => {
       const joint = joints.find(({ firstTermId, secondTermId }) =>
-        [firstTermId, secondTermId].every((id) => id === bond.id || id === angle.id),
+        [firstTermId, secondTermId].every((id) => id === first.id || id === second.id),
       )
       const decision = decisions.find(({ jointDistributionId }) => jointDistributionId === joint?.id)
       return {
-        firstTermId: joint?.firstTermId ?? bond.id,
-        secondTermId: joint?.secondTermId ?? angle.id,
-        name: `${termName(bond.types)} · ${termName(angle.types)}`,
+        firstTermId: joint?.firstTermId ?? first.id,
+        secondTermId: joint?.secondTermId ?? second.id,
+        name: `${termName(first.types)} · ${termName(second.types)}`,
         jointDistributionId: joint?.id ?? null,
         numbers: joint?.numbers ?? null,
         decision: decision?.choice ?? null,
       }
     })
+    return listed(all)
   }
+}
+
+function listed(all: readonly PairBody[]): PairList {
+  const withData = all.filter(({ jointDistributionId }) => jointDistributionId !== null).length
+  let room = Math.max(0, MOST_PAIRS - withData)
+  const pairs = all.filter(({ jointDistributionId }) => jointDistributionId !== null || room-- > 0)
+  return { pairs, leftOut: all.length - pairs.length }
 }

@@ -212,7 +212,7 @@ export const jointDistributionSchema = z
   .meta({ id: 'JointDistribution' })
 export type JointDistribution = z.infer<typeof jointDistributionSchema>
 
-/** GET /api/mappings/:mappingId/pairs?statePoint=: bond–angle pairs that share a bead, with what is known. */
+/** Two terms that share a bead, with what is known of them together. */
 export const pairSchema = z
   .object({
     firstTermId: idSchema,
@@ -224,3 +224,12 @@ export const pairSchema = z
   })
   .meta({ id: 'Pair' })
 export type Pair = z.infer<typeof pairSchema>
+
+/**
+ * GET /api/mappings/:mappingId/pairs?statePoint=: pairs of terms that share a bead, bonds with angles first; `leftOut` counts
+ * pairs without data that a long list was cut by.
+ */
+export const pairListSchema = z
+  .object({ pairs: z.array(pairSchema), leftOut: z.number().int().nonnegative() })
+  .meta({ id: 'PairList' })
+export type PairList = z.infer<typeof pairListSchema>

@@ -6,7 +6,7 @@ import type {
 } from '@shared/contracts/distribution'
 import { apiUrl, http, uploadForm } from './http'
 
-/** Bond–angle pairs that share a bead, with what is known of each at one state point. */
+/** Pairs of terms that share a bead, bonds with angles first, with what is known of each at one state point. */
 export const listPairs = async (mappingId: string, statePointId: string): Promise<Pair[]> =>
   (await http.get<{ pairs: Pair[] }>(`/mappings/${mappingId}/pairs`, { query: { statePoint: statePointId } }))
     .pairs

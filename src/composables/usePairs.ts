@@ -4,7 +4,7 @@ import { ApiError } from '@/api/http'
 import { listPairs } from '@/api/joint-distributions'
 import { useWorkbenchStore } from '@/stores/workbench'
 
-/** The bond–angle pairs of the mapping on screen at its state point, and why they could not be fetched. */
+/** The pairs of terms of the mapping on screen at its state point, and why they could not be fetched. */
 export function usePairs(): {
   pairs: ShallowRef<readonly Pair[]>
   failure: Ref<string>

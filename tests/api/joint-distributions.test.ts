@@ -189,10 +189,49 @@ describe('a joint distribution', () => {
 })
 
 describe('the pairs of a mapping', () => {
-  it('are bonds and angles that share a bead, those first whose bond is a side of the angle', async () => {
-    const names = (await pairs()).map(({ name }) => name)
-    expect(names).toEqual(['A–A · A–A–A', 'A–A · A–A–B', 'A–B · A–A–B', 'A–B · A–A–A'])
-    const [first] = await pairs()
-    expect(first.firstTermId).toBe(termId(job.terms, 'A–A'))
+  it('are bonds and angles that share a bead, those first whose bond is a side of the angle, then all other kinds', async () => {
+    const all = await pairs()
+    const names = all.map(({ name }) => name)
+    expect(names.slice(0, 4)).toEqual(['A–A · A–A–A', 'A–A · A–A–B', 'A–B · A–A–B', 'A–B · A–A–A'])
+    expect(all[0].firstTermId).toBe(termId(job.terms, 'A–A'))
+    const kindOf = (id: string) => job.terms.find((term) => term.id === id)?.kind
+    const kinds = all.map(({ firstTermId, secondTermId }) => `${kindOf(firstTermId)} ${kindOf(secondTermId)}`)
+    const blocks = kinds.filter((kind, index) => kind !== kinds[index - 1])
+    // Each combination in one block, and none of a term with itself.
+    expect(blocks).toEqual([
+      'bond angle',
+      'bond bond',
+      'angle angle',
+      'angle dihedral',
+      'dihedral dihedral',
+      'bond dihedral',
+    ])
+    expect(all.every(({ firstTermId, secondTermId }) => firstTermId !== secondTermId)).toBe(true)
+  })
+
+  it('of two angles, and of a dihedral with an angle, take their data and get a verdict', async () => {
+    const all = await pairs()
+    const termOf = (id: string) => job.terms.find((term) => term.id === id)!
+    for (const wanted of ['angle angle', 'angle dihedral']) {
+      const pair = all.find(
+        ({ firstTermId, secondTermId }) =>
+          `${termOf(firstTermId).kind} ${termOf(secondTermId).kind}` === wanted,
+      )!
+      const { text } = jointFile()
+      const degrees = text.replace(/^(\d\S*) /gm, (_, bond: string) => `${Math.round(Number(bond) * 400)} `)
+      const kinds = wanted.split(' ')
+      const response = await bring(
+        { name: `${kinds.join('-')}.txt`, text: degrees },
+        {
+          firstTermId: pair.firstTermId,
+          secondTermId: pair.secondTermId,
+          settings: { ...JOINT_SETTINGS, kinds, units: ['degree', 'degree'] },
+        },
+      )
+      expect(response.status, response.text).toBe(201)
+      const { id } = response.body as JointDistribution
+      const known = (await pairs()).find(({ jointDistributionId }) => jointDistributionId === id)
+      expect(known?.numbers?.verdict).toBeDefined()
+    }
   })
 })

@@ -56,15 +56,17 @@ export const guessTarget = (
   pairs: readonly Pair[],
 ): IntakeTarget | null => {
   const name = fileName.replace(/\.[A-Za-z]+$/, '')
+  const guess = guessTerm(name, terms)
   for (const { firstTermId, secondTermId } of pairs) {
     const [first, second] = [firstTermId, secondTermId].map((id) => terms.find((term) => term.id === id))
     if (!first || !second) continue
+    // A dihedral's name holds those of two bonds side by side.
+    if (guess !== null && guess.term.types.length >= first.types.length + second.types.length) continue
     const inner = findSequence(name, second.types)
     if (inner === null) continue
     const rest = `${name.slice(0, inner.start)}|${name.slice(inner.end)}`
     if (findSequence(rest, first.types) !== null) return { type: 'pair', firstTermId, secondTermId }
   }
-  const guess = guessTerm(name, terms)
   return guess === null ? null : { type: 'term', termId: guess.term.id }
 }
 

@@ -74,7 +74,7 @@ describe('seedDemo', () => {
     const [polymer] = await services.polymers.list(member)
     const [point] = await services.statePoints.list(member, polymer.id)
     const [threeToOne] = await services.mappings.list(member, polymer.id)
-    const pairs = await services.pairs.list(member, threeToOne.id, point.id)
+    const { pairs } = await services.pairs.list(member, threeToOne.id, point.id)
     const known = pairs.filter(({ jointDistributionId }) => jointDistributionId !== null)
     expect(known.map(({ numbers, decision }) => [numbers?.verdict, decision])).toEqual(
       expect.arrayContaining([

@@ -4,7 +4,11 @@ import type { Pair } from '@shared/contracts/distribution'
 import type { Term } from '@shared/contracts/mapping'
 import CorrelationRail from '@/components/correlation/CorrelationRail.vue'
 
-const terms = ['B–E', 'E–H', 'B–E–H'].map((name) => ({ id: name, name })) as Term[]
+const terms = ['B–E', 'E–H', 'B–E–H', 'B–E–H–T'].map((name) => ({
+  id: name,
+  name,
+  kind: (['bond', 'angle', 'dihedral'] as const)[name.split('–').length - 2],
+})) as Term[]
 const numbers = {
   verdict: 'joint',
   mutualInformation: 0.55,
@@ -41,6 +45,19 @@ describe('CorrelationRail', () => {
     expect(rows[1].text()).toContain('E–H with B–E–H')
     expect(rows[1].text()).toContain('0.493')
     expect(rows[1].text()).toContain('Joint potential advised, 0.493 nats')
+  })
+
+  it('parts the pairs by the kinds of their terms, whichever a file named first', () => {
+    const pair = (firstTermId: string, secondTermId: string): Pair => ({
+      ...pairs[0],
+      firstTermId,
+      secondTermId,
+    })
+    const all = [...pairs, pair('B–E–H', 'B–E'), pair('B–E', 'E–H'), pair('B–E–H', 'B–E–H–T')]
+    const wrapper = mount(CorrelationRail, { props: { pairs: all, chosen: all[0], terms } })
+    const headings = wrapper.findAll('h3').map((heading) => heading.text())
+    expect(headings).toEqual(['Bond with angle', 'Bond with bond', 'Angle with dihedral'])
+    expect(wrapper.findAll('button')).toHaveLength(5)
   })
 
   it('is one tab stop on the chosen pair, and arrows choose the neighbours', async () => {

@@ -46,6 +46,13 @@ describe('guessTarget', () => {
     expect(guess('B-E-S1.grid')).toBe('angle-BES1')
   })
 
+  it('does not take a dihedral for the two bonds at its ends', () => {
+    const bonds = [...terms, term('bond', 'B', 'B')]
+    const ends = { firstTermId: 'bond-BB', secondTermId: 'bond-ES1' } as Pair
+    expect(guessTarget('B_B_E_S1.txt', bonds, [ends])).toEqual({ type: 'term', termId: 'dihedral-BBES1' })
+    expect(guessTarget('B-B with E-S1.txt', bonds, [ends])).toMatchObject({ type: 'pair', ...ends })
+  })
+
   it('does not find a term inside a word or a longer type', () => {
     expect(guess('BEFORE.txt')).toBeNull()
     expect(guess('E-S12.txt')).toBeNull()

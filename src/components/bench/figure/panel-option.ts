@@ -14,7 +14,8 @@ export type VisibleCurves = Readonly<Record<CurveName, boolean>>
 const LAYERS = ['measured', 'regenerated', 'band', 'comparison', 'rings', 'potential', 'tail'] as const
 type Layer = (typeof LAYERS)[number]
 
-const RING_RADIUS = 2.1
+/** Radius of a bin by bin point, in pixels. */
+export const RING_RADIUS = 2.1
 const DISTRIBUTION = 0
 const POTENTIAL = 1
 

@@ -42,7 +42,7 @@ export const morse: FormDefinition = {
 }
 
 /** η = −½ k g² with g = (1 − exp(−a d))/a, d = x − x0; β is ln k, a, x0. */
-function morseShape({ points, mean, deviation }: LikelihoodCells): Shape {
+export function morseShape({ points, mean, deviation }: LikelihoodCells): Shape {
   return {
     size: 3,
     fill: ([logStiffness, a, centre], eta, gradient) => {

@@ -250,7 +250,7 @@ describe('the region of the likelihood', () => {
       return (value - 5000) / (standardError ?? NaN)
     })
     const mean = errors.reduce((sum, error) => sum + error, 0) / repeats
-    // Conditional on the range the mean would be about −0.5; a k from 500 samples has a bias of +0.1 of its error.
+    // Conditional on the range the mean is −0.35; a k from 500 samples has a bias of +0.1 of its error.
     expect(Math.abs(mean - 0.1)).toBeLessThan(4 / Math.sqrt(repeats))
   })
 

@@ -1,9 +1,10 @@
 import { Command, Option } from 'commander'
 import type { CoordinateKind } from '../../shared/histogram'
 import {
+  distributionFromTable,
   guessIntakeSettings,
-  histogramFromTable,
   type IntakeSettings,
+  NO_BLOCK_FILES,
   readColumns,
 } from '../../shared/intake'
 import { SETTING_LIMITS } from '../../shared/inversion'
@@ -11,7 +12,7 @@ import { type CoordinateUnit, ENERGY_UNITS, type EnergyUnit, unitsOfKind } from 
 import type { Output } from './output'
 import { type ColumnChoice, columns } from './parse-columns'
 import { numberWithin, oneOf, positiveNumber } from './parse-options'
-import type { Input } from './read-input'
+import { type Input, readInput } from './read-input'
 import { UsageError } from './usage-error'
 
 /** What every command on the distribution of one coordinate is told about its file. */
@@ -22,6 +23,8 @@ export interface DistributionOptions {
   readonly columns?: ColumnChoice
   readonly alreadyDivided?: boolean
   readonly independentSamples?: number
+  readonly blocks?: readonly string[]
+  readonly chains?: readonly string[]
   readonly energyUnit: EnergyUnit
 }
 
@@ -45,9 +48,14 @@ export function distributionCommand(name: string): Command {
     .option('--already-divided', 'the file was divided by its Jacobian before')
     .option(
       '--independent-samples <n>',
-      'number of independent samples the file stands for (default: the sum of the counts)',
+      'number of independent samples the file stands for (default: what --blocks and --chains say, else the counts)',
       positiveNumber,
     )
+    .option(
+      '--blocks <files...>',
+      'files of 10 or more stretches of time, in their order, on the bins of the file',
+    )
+    .option('--chains <files...>', 'files of 10 or more single chains, on the bins of the file')
     .option('--energy-unit <unit>', 'kJ/mol, kcal/mol or kT', oneOf(ENERGY_UNITS), 'kJ/mol')
 }
 
@@ -61,7 +69,7 @@ export function inefficiencyOption(): Option {
 }
 
 /**
- * The histogram of a file as the options say, and guesses for what they leave open; both guesses and notes of the intake
+ * The histogram of a file, and of its blocks and chains, as the options say, and guesses for what they leave open; both guesses and notes of the intake
  * are said on standard error.
  *
  * @throws {UsageError} when the unit does not belong to the kind
@@ -70,9 +78,14 @@ export function inefficiencyOption(): Option {
 export function readDistribution(input: Input, options: DistributionOptions, output: Output) {
   const columnsOfFile = readColumns(input.text)
   const intake = intakeSettings(guessIntakeSettings(columnsOfFile, options.kind), options, output)
-  const { histogram, notes } = histogramFromTable(columnsOfFile, intake)
+  const named = (paths: readonly string[] = []) => paths.map(readInput)
+  const { histogram, notes, sampleInefficiency } = distributionFromTable(
+    columnsOfFile,
+    { ...NO_BLOCK_FILES, time: named(options.blocks), chain: named(options.chains) },
+    intake,
+  )
   notes.forEach((note) => output.note(note))
-  return { histogram, unit: intake.unit }
+  return { histogram, sampleInefficiency, unit: intake.unit }
 }
 
 function intakeSettings(

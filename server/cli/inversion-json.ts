@@ -1,5 +1,12 @@
-import { binVolumes, type CoordinateKind, type Histogram } from '../../shared/histogram'
-import type { Inversion } from '../../shared/inversion'
+import { type FormFit, parametersInUnits, type ShownParameter } from '../../shared/forms'
+import {
+  type BlockInefficiency,
+  binVolumes,
+  type CoordinateKind,
+  type Histogram,
+} from '../../shared/histogram'
+import type { InefficiencySource, Inversion } from '../../shared/inversion'
+import type { SeriesInefficiency } from '../../shared/numeric'
 import { type Table, tableRows, type TableUnits } from '../../shared/tables'
 import { coordinateFromInternal, type CoordinateUnit, energyScale } from '../../shared/units'
 
@@ -13,6 +20,20 @@ export interface InversionJson {
   readonly independentSamples: number | null
   /** Counts per independent sample. */
   readonly inefficiency: number | null
+  /** Who says so; null for a density or a probability. */
+  readonly inefficiencySource: InefficiencySource | null
+  /** Standard deviation of the inefficiency; null unless it was measured. */
+  readonly inefficiencyError: number | null
+  /** What blocks or chains say, whichever kind gives more; null without such files. */
+  readonly blocks: BlockInefficiency | null
+  /** From the order of raw samples, as evidence; null for a histogram. */
+  readonly sampleInefficiency: { readonly inefficiency: number; readonly error: number } | null
+  /** The analytic form the table follows, in the units asked for; null for the smoothed curve. */
+  readonly form: {
+    readonly name: string
+    readonly formula: string
+    readonly parameters: readonly ShownParameter[]
+  } | null
   readonly bins: readonly {
     readonly low: number
     readonly high: number
@@ -30,21 +51,29 @@ export interface InversionJson {
     readonly effectiveDimension: number | null
   }
   readonly warnings: readonly { readonly code: string; readonly message: string }[]
+  /** Worth knowing, but no doubt about this result. */
+  readonly notes: readonly { readonly code: string; readonly message: string }[]
+}
+
+/** What an inversion rests on, and the form in its place. */
+export interface InversionEvidence {
+  readonly histogram: Histogram
+  readonly sampleInefficiency: SeriesInefficiency | null
+  readonly form: FormFit | null
+  readonly input: { readonly name: string; readonly sha256: string }
 }
 
 /** The JSON of an inversion. */
 export function inversionJson(
-  histogram: Histogram,
   inversion: Inversion,
+  { histogram, sampleInefficiency, form, input }: InversionEvidence,
   table: Table,
   units: TableUnits,
-  input: { readonly name: string; readonly sha256: string },
 ): InversionJson {
-  const { kind, temperature, jacobian, bins, independentSamples, minimum } = inversion
+  const { kind, temperature, jacobian, bins, independentSamples, inefficiency, minimum } = inversion
   const { mode, lambda, effectiveDimension } = inversion.smoothing
   const energyFactor = energyScale(units.energyUnit, temperature)
   const isCount = histogram.content === 'count'
-  const total = histogram.weights.reduce((sum, count) => sum + count, 0)
   const shown = (value: number) => coordinateFromInternal(value, units.coordinateUnit)
   const energy = (value: number | undefined) =>
     value === undefined || Number.isNaN(value) ? null : value * energyFactor
@@ -56,7 +85,19 @@ export function inversionJson(
     jacobian,
     input: { name: input.name, sha256: input.sha256 },
     independentSamples,
-    inefficiency: isCount && independentSamples !== null ? total / independentSamples : null,
+    inefficiency: inefficiency && inefficiency.value,
+    inefficiencySource: inefficiency && inefficiency.source,
+    inefficiencyError: inefficiency && inefficiency.deviation,
+    blocks: histogram.blocks ?? null,
+    sampleInefficiency: sampleInefficiency && {
+      inefficiency: sampleInefficiency.autocorrelation.inefficiency,
+      error: sampleInefficiency.autocorrelation.deviation,
+    },
+    form: form && {
+      name: form.form,
+      formula: form.formula,
+      parameters: parametersInUnits(form, units.coordinateUnit, units.energyUnit),
+    },
     bins: Array.from(bins.weights, (weight, bin) => ({
       low: shown(bins.edges[bin]),
       high: shown(bins.edges[bin + 1]),
@@ -70,6 +111,7 @@ export function inversionJson(
     minimum: { coordinate: shown(minimum.coordinate), energy: minimum.energy * energyFactor },
     smoothing: { mode, lambda, effectiveDimension },
     warnings: inversion.warnings.map(({ code, message }) => ({ code, message })),
+    notes: inversion.notes.map(({ code, message }) => ({ code, message })),
   }
 }
 

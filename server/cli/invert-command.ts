@@ -1,24 +1,35 @@
 import { createHash } from 'node:crypto'
 import { type Command, Option } from 'commander'
+import { derivePotential, FORM_NAMES, type FormName } from '../../shared/forms'
 import {
   DEFAULT_INVERSION_SETTINGS,
-  invert,
   type InversionSettings,
   SETTING_LIMITS,
   type SmoothingSettings,
+  type StraightAngle,
 } from '../../shared/inversion'
 import { formatRows, formatTable, makeTable, tableComments, type TableUnits } from '../../shared/tables'
-import { coordinateToInternal, type CoordinateUnit } from '../../shared/units'
-import { distributionCommand, type DistributionOptions, readDistribution } from './distribution-options'
+import { coordinateToInternal, type CoordinateUnit, energyScale } from '../../shared/units'
+import {
+  distributionCommand,
+  type DistributionOptions,
+  inefficiencyOption,
+  readDistribution,
+} from './distribution-options'
 import { inversionJson } from './inversion-json'
 import type { Output } from './output'
-import { number, oneOf, smoothing, wholeNumber } from './parse-options'
+import { number, numberWithin, oneOf, positiveNumber, smoothing, wholeNumber } from './parse-options'
 import { type Input, readInput } from './read-input'
 import { withFileName } from './refused-file'
 
 interface InvertOptions extends DistributionOptions {
   readonly jacobian: 'on' | 'off'
   readonly smoothing: SmoothingSettings
+  readonly inefficiency?: number
+  readonly straightAngle: StraightAngle
+  readonly tailStiffness: number
+  readonly form?: FormName
+  readonly cap?: number
   readonly rows: number
   readonly from?: number
   readonly to?: number
@@ -27,7 +38,8 @@ interface InvertOptions extends DistributionOptions {
 
 /** `beadwright invert`: from the histogram of one coordinate to a table. */
 export function invertCommand(output: Output): Command {
-  const { table, smoothing: proposed } = DEFAULT_INVERSION_SETTINGS
+  const { table, smoothing: proposed, straightAngle, tails } = DEFAULT_INVERSION_SETTINGS
+  const { low: softest, high: stiffest } = SETTING_LIMITS.tailStiffness
   return distributionCommand('invert')
     .description('Invert the distribution of a bond, angle or dihedral into a tabulated potential.')
     .option(
@@ -44,6 +56,25 @@ export function invertCommand(output: Output): Command {
         .argParser(smoothing)
         .default(proposed, 'auto'),
     )
+    .addOption(inefficiencyOption())
+    .option(
+      '--straight-angle <free|level>',
+      'leave the slope of an angle at 180 degrees to the data, or make it vanish there',
+      oneOf(['free', 'level'] as const),
+      straightAngle,
+    )
+    .option(
+      '--tail-stiffness <x>',
+      `least curvature of the tails in kT/variance of the data, ${softest} to ${stiffest}`,
+      numberWithin(softest, stiffest),
+      tails.stiffness,
+    )
+    .option(
+      '--form <name>',
+      `write the table of an analytic form: ${FORM_NAMES.join(', ')} (default: the smoothed curve)`,
+      oneOf(FORM_NAMES),
+    )
+    .option('--cap <e>', 'highest energy of the table, in --energy-unit (default: none)', positiveNumber)
     .option('--rows <n>', 'rows of the table', wholeNumber(SETTING_LIMITS.rows.low), table.rows)
     .option('--from <x>', 'first coordinate of the table, in --unit', number)
     .option('--to <x>', 'last coordinate of the table, in --unit', number)
@@ -54,14 +85,16 @@ export function invertCommand(output: Output): Command {
 }
 
 function inverted(input: Input, options: InvertOptions, output: Output): string {
-  const { histogram, unit } = readDistribution(input, options, output)
+  const { histogram, sampleInefficiency, unit } = readDistribution(input, options, output)
   const settings = inversionSettings(options, unit)
-  const inversion = invert(histogram, options.temperature, settings)
+  const { inversion, form } = derivePotential(histogram, options.temperature, settings)
   const table = makeTable(inversion.potential, settings.table)
   const units: TableUnits = { coordinateUnit: unit, energyUnit: options.energyUnit }
-  inversion.warnings.forEach(({ code, message, action }) => output.note(`${code}: ${message} ${action}`))
+  const remarks = [...inversion.warnings, ...inversion.notes]
+  remarks.forEach(({ code, message, action }) => output.note(`${code}: ${message} ${action}`))
   if (options.json) {
-    return `${JSON.stringify(inversionJson(histogram, inversion, table, units, input), null, 2)}\n`
+    const evidence = { histogram, sampleInefficiency, form, input }
+    return `${JSON.stringify(inversionJson(inversion, evidence, table, units), null, 2)}\n`
   }
   const comments = tableComments({
     invented: false,
@@ -75,7 +108,9 @@ function inverted(input: Input, options: InvertOptions, output: Output): string 
     units,
     settings,
     smoothing: inversion.smoothing,
+    form,
     independentSamples: inversion.independentSamples,
+    inefficiency: inversion.inefficiency,
     warnings: inversion.warnings,
     input,
     rowsSha256: createHash('sha256').update(formatRows(table, units)).digest('hex'),
@@ -87,10 +122,15 @@ function inverted(input: Input, options: InvertOptions, output: Output): string 
 function inversionSettings(options: InvertOptions, unit: CoordinateUnit): InversionSettings {
   const bound = (value: number | undefined) =>
     value === undefined ? null : coordinateToInternal(value, unit)
+  const cap = options.cap && options.cap / energyScale(options.energyUnit, options.temperature)
   return {
     ...DEFAULT_INVERSION_SETTINGS,
     jacobian: options.jacobian === 'on',
     smoothing: options.smoothing,
-    table: { rows: options.rows, low: bound(options.from), high: bound(options.to), cap: null },
+    inefficiency: options.inefficiency ?? null,
+    straightAngle: options.straightAngle,
+    tails: { stiffness: options.tailStiffness },
+    form: options.form ?? null,
+    table: { rows: options.rows, low: bound(options.from), high: bound(options.to), cap: cap ?? null },
   }
 }

@@ -1,9 +1,10 @@
 import type { FormFit } from '../forms'
-import type { InversionSettings, SmoothingResult, Warning } from '../inversion'
+import type { AppliedInefficiency, InversionSettings, SmoothingResult, Warning } from '../inversion'
 import { type CoordinateKind, unitWord } from '../units'
 import { coordinateSentence, jacobianSentence } from './coordinate-sentences'
 import { formatNumber } from './format-number'
 import { deviationSentence, parameterSentence, plainLetters } from './form-sentences'
+import { inefficiencySentence } from './inefficiency-sentence'
 import type { TableUnits } from './table'
 
 /** What the comment lines of a table state; null leaves a line out. All of it comes in as an argument. */
@@ -27,6 +28,8 @@ export interface TableCommentInput {
   /** The analytic form the rows are written from; null or left out for the smoothed curve. */
   readonly form?: FormFit | null
   readonly independentSamples: number | null
+  /** What counts were divided by; null or left out for a density or a probability. */
+  readonly inefficiency?: AppliedInefficiency | null
   readonly warnings: readonly Warning[]
   /** Name and SHA-256 of the file the distribution came from. */
   readonly input: { readonly name: string; readonly sha256: string } | null
@@ -57,6 +60,7 @@ export function tableComments(input: TableCommentInput): string[] {
       input.settings.jacobian ? jacobianSentence(input.kind) : 'off: bins divided by their width only',
     ),
     line('smoothing', smoothingSentence(input)),
+    line('inefficiency', input.inefficiency ? inefficiencySentence(input.inefficiency) : null),
     ...formLines(input),
     line('straight angle', straightAngleSentence(input)),
     line('tails', tailSentence(input)),

@@ -62,6 +62,7 @@ export function writeTableFile(source: TableSource, units: TableFileUnits): Tabl
     smoothing: inversion.smoothing,
     form,
     independentSamples: inversion.independentSamples,
+    inefficiency: inversion.inefficiency,
     warnings: inversion.warnings,
     input: input.file,
     rowsSha256: sha256(formatRows(table, tableUnits)),

@@ -28,7 +28,7 @@ export interface RankOptions extends Omit<FitOptions, 'terms'> {
 
 /** A fitted form with its place in the ranking. */
 export interface RankedFit extends FormFit {
-  /** AIC above the least of the ranking; null when the number of independent samples is unknown. */
+  /** AIC above the least of the ranking, to a thousandth; null when the number of independent samples is unknown. */
   readonly deltaAic: number | null
 }
 
@@ -72,8 +72,8 @@ export function rankForms(
   const fits = results.filter((result) => result.outcome === 'fitted')
   const least = fits.reduce((lowest, { aic }) => Math.min(lowest, aic ?? Infinity), Infinity)
   const ranked = fits
-    .map((fit): RankedFit => ({ ...fit, deltaAic: fit.aic === null ? null : fit.aic - least }))
-    .sort((one, other) => rankOf(one) - rankOf(other))
+    .map((fit): RankedFit => ({ ...fit, deltaAic: fit.aic === null ? null : rounded(fit.aic - least) }))
+    .sort((one, other) => (one.deltaAic ?? 0) - (other.deltaAic ?? 0))
   return {
     kind,
     temperature,
@@ -86,8 +86,8 @@ export function rankForms(
 }
 
 /** ΔAIC to a thousandth: the same model in other words differs by rounding only. */
-function rankOf({ deltaAic }: RankedFit): number {
-  return Math.round((deltaAic ?? 0) * 1000)
+function rounded(deltaAic: number): number {
+  return Math.round(deltaAic * 1000) / 1000
 }
 
 /**

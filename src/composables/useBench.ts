@@ -1,4 +1,5 @@
 import { computed, ref, watch } from 'vue'
+import { LEAST_BASIN_DEPTH } from '@shared/basins'
 import type { StatePoint } from '@shared/contracts/polymer'
 import type { Term } from '@shared/contracts/mapping'
 import { InvalidInputError } from '@shared/errors'
@@ -9,6 +10,7 @@ import type { InversionTask } from '@/workers'
 import { useBenchReading } from './useBenchReading'
 import { useBenchTerm, type BenchPlace } from './useBenchTerm'
 import { useDelayed } from './useDelayed'
+import { useFormRanking } from './useFormRanking'
 import { useInversion } from './useInversion'
 import { useInversionDrafts } from './useInversionDrafts'
 import { useSavePotential } from './useSavePotential'
@@ -45,12 +47,20 @@ export function useBench(term: () => Term | null, statePoint: () => StatePoint |
       blocks,
     }
   })
+  /** A way of looking, not a setting: it changes no table. */
+  const basinDepth = ref(LEAST_BASIN_DEPTH)
   const task = computed<InversionTask | null>(() => {
     const temperature = statePoint()?.temperature
     if (histogram.value === null || temperature === undefined) return null
-    return { histogram: histogram.value, temperature, settings: draft.settings.value }
+    return {
+      histogram: histogram.value,
+      temperature,
+      settings: draft.settings.value,
+      basinDepth: basinDepth.value,
+    }
   })
   const { answer, automatic, error } = useInversion(() => task.value)
+  const { ranking, error: rankingError } = useFormRanking(() => task.value)
   const reading = useBenchReading(
     () => histogram.value,
     () => answer.value,
@@ -111,6 +121,9 @@ export function useBench(term: () => Term | null, statePoint: () => StatePoint |
     histogram,
     answer,
     automatic,
+    ranking,
+    rankingError,
+    basinDepth,
     inversionError: error,
     refusal,
     waiting,
@@ -121,9 +134,7 @@ export function useBench(term: () => Term | null, statePoint: () => StatePoint |
     takeTheirs,
     sampleError,
     stateSamples,
-    changeTable: (table: InversionSettings['table']) => draft.change({ ...draft.settings.value, table }),
-    changeSmoothing: (smoothing: InversionSettings['smoothing']) =>
-      draft.change({ ...draft.settings.value, smoothing }),
-    changeJacobian: (jacobian: boolean) => draft.change({ ...draft.settings.value, jacobian }),
+    changeSettings: (change: Partial<InversionSettings>) =>
+      draft.change({ ...draft.settings.value, ...change }),
   }
 }

@@ -3,6 +3,7 @@ import type { Distribution } from '@shared/contracts/distribution'
 import type { Mapping, Term } from '@shared/contracts/mapping'
 import type { Polymer, StatePoint } from '@shared/contracts/polymer'
 import { benchCsv } from '@/components/bench/figure/bench-csv'
+import type { BasinSign } from '@/components/bench/figure/basin-signs'
 import { benchPicture } from '@/components/bench/figure/bench-picture'
 import type { FigureModel } from '@/components/bench/figure/figure-model'
 import type { VisibleCurves } from '@/components/bench/figure/panel-option'
@@ -21,6 +22,7 @@ export interface BenchExportSource {
   readonly statePoint: () => StatePoint
   readonly distribution: () => Distribution | null
   readonly model: () => FigureModel | null
+  readonly basins: () => readonly BasinSign[]
   readonly answer: () => InversionAnswer | null
   readonly visible: VisibleCurves
 }
@@ -47,7 +49,7 @@ export function useBenchExport(source: BenchExportSource): ComputedRef<FigureFil
     }
     return {
       name: () => fileNameOf(polymer.name, mapping.name, term.kind, term.name, `${statePoint.temperature}K`),
-      picture: () => benchPicture(model, source.visible, jacobian, caption),
+      picture: () => benchPicture(model, source.basins(), source.visible, jacobian, caption),
       csv: () => benchCsv(model, distribution.content, jacobian, caption),
     }
   })

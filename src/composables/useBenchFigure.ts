@@ -3,6 +3,7 @@ import { useMediaQuery } from '@vueuse/core'
 import type { Histogram } from '@shared/histogram'
 import { coordinateFromInternal, type CoordinateKind } from '@shared/units'
 import { coordinateUnitOf, type DisplayUnits } from '@/components/figure/coordinate-names'
+import { basinSigns, type BasinSign } from '@/components/bench/figure/basin-signs'
 import { emptyAxes } from '@/components/bench/figure/empty-axes'
 import { figureModel, type FigureAxes, type FigureModel } from '@/components/bench/figure/figure-model'
 import type { CurveName, VisibleCurves } from '@/components/bench/figure/panel-option'
@@ -20,6 +21,8 @@ export interface BenchFigureState {
   readonly decimals: ComputedRef<number>
   /** Width of the bins, null where they differ. */
   readonly binWidth: ComputedRef<number | null>
+  /** Basins of the smooth curve, from left to right. */
+  readonly basins: ComputedRef<BasinSign[]>
   /** Where warnings point at the axis, in the unit shown. */
   readonly wedges: ComputedRef<number[]>
   readonly visible: VisibleCurves
@@ -45,12 +48,17 @@ export function useBenchFigure(source: FigureSource): BenchFigureState {
     // On a phone the panels need the height: there the key brings it.
     residual: useMediaQuery('(min-width: 600px)').value,
     potential: true,
+    smooth: true,
     rings: true,
     comparison: true,
   })
   const chosenUnits = computed<DisplayUnits>(() => ({ ...units }))
   const inversion = computed(() => source.answer()?.inversion ?? null)
-  const model = computed(() => inversion.value && figureModel(inversion.value, chosenUnits.value))
+  const model = computed(() => {
+    const answer = source.answer()
+    if (answer === null) return null
+    return figureModel(answer.inversion, chosenUnits.value, answer.form === null ? null : answer)
+  })
   const unit = computed(() => coordinateUnitOf(source.kind(), units))
   const edges = computed(
     () => source.histogram()?.edges.map((edge) => coordinateFromInternal(edge, unit.value)) ?? null,
@@ -66,6 +74,10 @@ export function useBenchFigure(source: FigureSource): BenchFigureState {
     }),
     decimals: computed(() => (edges.value === null ? 0 : edgeDecimals(edges.value))),
     binWidth: computed(() => edges.value && evenWidth(edges.value)),
+    basins: computed(() => {
+      const answer = source.answer()
+      return answer === null || model.value === null ? [] : basinSigns(answer.basins, unit.value, model.value)
+    }),
     wedges: computed(() => {
       const histogram = source.histogram()
       if (histogram === null || inversion.value === null) return []

@@ -13,12 +13,19 @@ import { storedDistribution } from '../../unit/src/components/bench/stored-recor
 
 const units: DisplayUnits = { length: 'nm', angle: 'degree', energy: 'kJ/mol' }
 const names = coordinateNames('angle', units)
+const open = (wrapper: VueWrapper, title: string): Promise<void> =>
+  wrapper
+    .findAll('button[aria-expanded]')
+    .find((button) => button.text() === title)!
+    .trigger('click')
 const histogram = angleCounts()
-const { inversion, table } = runInversion({
+const answer = runInversion({
   histogram,
   temperature: TEMPERATURE,
   settings: DEFAULT_INVERSION_SETTINGS,
+  basinDepth: 0.5,
 }).answer!
+const { inversion, table } = answer
 
 afterEach(() => {
   document.body.innerHTML = ''
@@ -33,6 +40,9 @@ describe('BenchSettings', () => {
         result: inversion.smoothing,
         automatic: inversion.smoothing.log10Lambda,
         sampleSizeKnown: true,
+        energyUnit: 'kJ/mol',
+        temperature: TEMPERATURE,
+        refusal: null,
         readonly: false,
         ...change,
       },
@@ -49,7 +59,7 @@ describe('BenchSettings', () => {
     const wrapper = settings()
     expect(wrapper.text()).toContain('sin θ, exact per bin')
     choose(wrapper, 'Jacobian', 'off')
-    expect(wrapper.emitted('jacobian')).toEqual([[false]])
+    expect(wrapper.emitted('change')).toEqual([[{ jacobian: false }]])
   })
 
   it('takes over by hand where automatic smoothing sits', () => {
@@ -57,10 +67,10 @@ describe('BenchSettings', () => {
     choose(wrapper, 'Smoothing', 'manual')
     choose(wrapper, 'Smoothing', 'aic')
     choose(wrapper, 'Smoothing', 'off')
-    expect(wrapper.emitted('smoothing')).toEqual([
-      [{ mode: 'manual', log10Lambda: inversion.smoothing.log10Lambda }],
-      [{ mode: 'auto', criterion: 'aic' }],
-      [{ mode: 'off' }],
+    expect(wrapper.emitted('change')).toEqual([
+      [{ smoothing: { mode: 'manual', log10Lambda: inversion.smoothing.log10Lambda } }],
+      [{ smoothing: { mode: 'auto', criterion: 'aic' } }],
+      [{ smoothing: { mode: 'off' } }],
     ])
   })
 
@@ -89,13 +99,16 @@ describe('BenchEvidence', () => {
     mount(BenchEvidence, {
       props: {
         distribution: storedDistribution(histogram),
-        inversion,
+        answer,
         temperature: TEMPERATURE,
         names,
         coordinateUnit: 'degree',
         decimals: 1,
+        basinDepth: 0.5,
+        inefficiency: null,
         readonly: false,
         sampleError: '',
+        inefficiencyError: '',
         ...change,
       },
     })
@@ -106,14 +119,14 @@ describe('BenchEvidence', () => {
     const total = histogram.weights.reduce((sum, weight) => sum + weight, 0)
     expect(text).toContain(plain(total.toLocaleString('en-GB').replaceAll(',', ' ')))
     expect(text).toContain('20 000')
-    expect(text).toMatch(/inefficiency g\s*10\.0/)
+    expect(text).toMatch(/Inefficiency g\s*10\.00, from the stated samples/)
     expect(text).toContain(`${inversion.smoothing.effectiveDimension?.toFixed(1)} of 60 bins`)
     expect(text).toMatch(/Lowest U at\s*1(09|10)\.\d°/)
   })
 
   it('lets the number of independent samples be stated', async () => {
     const density = storedDistribution(withoutSampleSize(histogram))
-    const wrapper = evidence({ distribution: density, inversion: null })
+    const wrapper = evidence({ distribution: density, answer: null })
     expect(wrapper.text()).toContain('none: a probability')
     const input = wrapper.find('input')
     expect(input.attributes('placeholder')).toBe('not stated')
@@ -123,9 +136,38 @@ describe('BenchEvidence', () => {
     expect(wrapper.emitted('samples')).toEqual([[500]])
   })
 
-  it('says that counts without a stated number are all taken as independent', () => {
-    const counts = storedDistribution({ ...histogram, independentSamples: null })
-    expect(evidence({ distribution: counts }).find('input').attributes('placeholder')).toBe('every count')
+  it('says that counts without a stated number are taken as independent', () => {
+    const unstated = { ...histogram, independentSamples: null }
+    const found = runInversion({
+      histogram: unstated,
+      temperature: TEMPERATURE,
+      settings: DEFAULT_INVERSION_SETTINGS,
+      basinDepth: 0.5,
+    }).answer
+    const text = evidence({ distribution: storedDistribution(unstated), answer: found }).text()
+    expect(text).toContain('1.00, taken as independent')
+  })
+
+  it('takes another inefficiency for these settings', async () => {
+    const wrapper = evidence()
+    await open(wrapper, 'State the sample size')
+    const input = wrapper.findAll('input')[1]
+    await input.trigger('focus')
+    await input.setValue('7.5')
+    await input.trigger('keydown', { key: 'Enter' })
+    expect(wrapper.emitted('inefficiency')).toEqual([[7.5]])
+  })
+
+  it('asks for basins at another depth, and shows how their number falls with it', async () => {
+    const wrapper = evidence()
+    expect(wrapper.text()).toMatch(/deeper than 0\.5 kT\s*1/)
+    await open(wrapper, 'Basins against depth')
+    expect(wrapper.find('svg[role=img]').attributes('aria-label')).toMatch(/1 at 0\.5 kT/)
+    const input = wrapper.find('input')
+    await input.trigger('focus')
+    await input.setValue('1')
+    await input.trigger('keydown', { key: 'Enter' })
+    expect(wrapper.emitted('depth')).toEqual([[1]])
   })
 })
 
@@ -138,7 +180,6 @@ describe('BenchTable', () => {
         names,
         coordinateUnit: 'degree',
         energyUnit: 'kJ/mol',
-        temperature: TEMPERATURE,
         reading: Math.PI / 2,
         readonly: false,
         refusal: null,
@@ -168,10 +209,9 @@ describe('BenchTable', () => {
     const wrapper = shown()
     expect(field(wrapper, 'From').placeholder).toBe('0')
     expect(field(wrapper, 'To').placeholder).toBe('180')
-    expect(field(wrapper, 'Energy capped at').placeholder).toBe('no cap')
   })
 
-  it('takes ends and cap in the units shown and hands them on in internal ones', async () => {
+  it('takes ends in the units shown and hands them on in internal ones', async () => {
     const wrapper = shown({ energyUnit: 'kcal/mol' })
     const type = async (label: string, text: string): Promise<InversionSettings['table']> => {
       const input = field(wrapper, label)
@@ -183,7 +223,6 @@ describe('BenchTable', () => {
       return wrapper.emitted<[InversionSettings['table']]>('change')!.at(-1)![0]
     }
     expect((await type('From', '90')).low).toBeCloseTo(Math.PI / 2, 12)
-    expect((await type('Energy capped at', '10')).cap).toBeCloseTo(41.84, 9)
     expect((await type('Rows', '500')).rows).toBe(500)
   })
 

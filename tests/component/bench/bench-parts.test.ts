@@ -10,7 +10,8 @@ import BenchSmoothing from '@/components/bench/BenchSmoothing.vue'
 import BenchWarnings from '@/components/bench/BenchWarnings.vue'
 import { coordinateNames, type DisplayUnits } from '@/components/figure/coordinate-names'
 import type { Reading } from '@/components/bench/figure/reading'
-import { storedPotential } from '../../unit/src/components/bench/stored-records'
+import { angleCounts } from '../../unit/src/components/bench/distributions'
+import { storedDistribution, storedPotential } from '../../unit/src/components/bench/stored-records'
 
 const units: DisplayUnits = { length: 'nm', angle: 'degree', energy: 'kJ/mol' }
 const shown = {
@@ -18,6 +19,7 @@ const shown = {
   regenerated: true,
   residual: true,
   potential: true,
+  smooth: true,
   rings: true,
   comparison: true,
 }
@@ -30,6 +32,7 @@ describe('BenchFigureKey', () => {
         visible: shown,
         names: coordinateNames(kind, units),
         hasBand: sampled,
+        hasSmooth: false,
         hasResidual: sampled,
         jacobian: true,
       },
@@ -186,10 +189,11 @@ describe('BenchSmoothing', () => {
 })
 
 describe('BenchWarnings', () => {
+  const given = { distribution: storedDistribution(angleCounts()), smooth: true, readonly: false }
   const warning = { code: 'SAMPLE_SIZE_UNKNOWN', message: 'Nobody said.', action: 'State it.' } as const
 
   it('says what is wrong, why, and what to do, with the way to do it', async () => {
-    const wrapper = mount(BenchWarnings, { props: { warnings: [warning], stale: null, readonly: false } })
+    const wrapper = mount(BenchWarnings, { props: { ...given, warnings: [warning], stale: null } })
     expect(wrapper.text()).toContain('Sample size not stated')
     expect(wrapper.text()).toContain('Nobody said.')
     await wrapper.find('button').trigger('click')
@@ -198,19 +202,35 @@ describe('BenchWarnings', () => {
 
   it('says that the data changed since the potential was saved', () => {
     const stale = storedPotential({ stale: true })
-    const wrapper = mount(BenchWarnings, { props: { warnings: [], stale, readonly: false } })
-    expect(wrapper.text()).toContain('The data changed since this was saved')
-    expect(wrapper.text()).toContain('Revision 3')
+    const wrapper = mount(BenchWarnings, { props: { ...given, warnings: [], stale } })
+    expect(words(wrapper.text())).toContain(
+      'Out of date Revision 3 was saved on 12 June 2026; its temperature',
+    )
+  })
+
+  it('says on which day the distribution was replaced', () => {
+    const stale = storedPotential({ stale: true, distributionId: '00000000-0000-4000-8000-000000000099' })
+    const wrapper = mount(BenchWarnings, { props: { ...given, warnings: [], stale } })
+    expect(words(wrapper.text())).toContain('the distribution was replaced on 12 June 2026')
+  })
+
+  it('sets the slope at 180° to zero, unless a form has its own', async () => {
+    const slope = { ...warning, code: 'SLOPE_AT_STRAIGHT_ANGLE' } as const
+    const wrapper = mount(BenchWarnings, { props: { ...given, warnings: [slope], stale: null } })
+    await wrapper.find('button').trigger('click')
+    expect(wrapper.emitted('levelSlope')).toHaveLength(1)
+    await wrapper.setProps({ smooth: false })
+    expect(wrapper.find('button').exists()).toBe(false)
   })
 
   it('offers no act to someone who only reads, and nothing at all without warnings', () => {
     const stale = storedPotential({ stale: true })
     expect(
-      mount(BenchWarnings, { props: { warnings: [warning], stale, readonly: true } })
+      mount(BenchWarnings, { props: { ...given, warnings: [warning], stale, readonly: true } })
         .find('button')
         .exists(),
     ).toBe(false)
-    expect(mount(BenchWarnings, { props: { warnings: [], stale: null, readonly: false } }).text()).toBe('')
+    expect(mount(BenchWarnings, { props: { ...given, warnings: [], stale: null } }).text()).toBe('')
   })
 })
 

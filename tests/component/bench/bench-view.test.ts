@@ -14,7 +14,7 @@ import { useShortcutsStore } from '@/stores/shortcuts'
 import { useWorkbenchStore } from '@/stores/workbench'
 import BenchView from '@/views/BenchView.vue'
 import type { InversionWorker } from '@/workers'
-import { findAutomatic, runInversion } from '@/workers/inversion-task'
+import { findAutomatic, runInversion, runRanking } from '@/workers/inversion-task'
 import { mappingDocument, term } from '../../unit/src/components/bench/bench-terms'
 import { angleCounts, bondCounts } from '../../unit/src/components/bench/distributions'
 import { storedDistribution, storedPotential } from '../../unit/src/components/bench/stored-records'
@@ -22,6 +22,7 @@ import { storedDistribution, storedPotential } from '../../unit/src/components/b
 vi.mock('@/workers', () => ({
   startInversionWorker: (): InversionWorker => ({
     runInversion: (task) => Promise.resolve(runInversion(task).answer!),
+    runRanking: (task) => Promise.resolve(runRanking(task).answer!),
     findAutomatic: (task) => Promise.resolve(findAutomatic(task).answer),
     stop: () => undefined,
   }),

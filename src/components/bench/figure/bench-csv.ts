@@ -2,11 +2,10 @@ import type { BinContent } from '@shared/histogram'
 import type { CoordinateKind } from '@shared/units'
 import { csvText, type CsvColumn } from '@/components/figure/csv-text'
 import { captionSentences, type FigureCaption } from '@/components/figure/figure-caption'
+import { PLAIN_SYMBOLS } from '@/components/figure/plain-symbols'
 import type { Point } from '@/components/figure/stepped-outline'
 import type { FigureModel } from './figure-model'
 
-/** Names of the coordinates in plain letters, as every spreadsheet reads them. */
-const COORDINATES: Record<CoordinateKind, string> = { bond: 'r', angle: 'theta', dihedral: 'phi' }
 const JACOBIANS: Record<CoordinateKind, string> = { bond: 'r^2', angle: 'sin theta', dihedral: '' }
 
 const NOTES = [
@@ -36,7 +35,7 @@ export function benchCsv(
 }
 
 function binColumns({ kind, names, energyUnit, bins }: FigureModel, content: BinContent): CsvColumn[] {
-  const coordinate = COORDINATES[kind]
+  const coordinate = PLAIN_SYMBOLS[kind]
   const unit = `(${names.axisUnit})`
   const last = bins.edges.length - 1
   const total = bins.weights.reduce((sum, weight) => sum + weight, 0)
@@ -56,7 +55,7 @@ function binColumns({ kind, names, energyUnit, bins }: FigureModel, content: Bin
 
 /** Tails and data in one ascending row of points. */
 function potentialColumns(model: FigureModel, jacobian: boolean): CsvColumn[] {
-  const { kind, names, energyUnit, potential, halfWidths, comparison, tails } = model
+  const { kind, names, energyUnit, potential, halfWidths, smooth, comparison, tails } = model
   const start = potential[0][0]
   // A tail shares its inner end with the curve.
   const before = tails.filter((tail) => tail[0][0] < start).flatMap((tail) => tail.slice(0, -1))
@@ -69,11 +68,17 @@ function potentialColumns(model: FigureModel, jacobian: boolean): CsvColumn[] {
   ]
   const edge = (side: number) => within(([, energy], index) => energy + side * (halfWidths?.[index] ?? NaN))
   return [
-    { header: `${COORDINATES[kind]} (${names.axisUnit})`, values: points.map(([coordinate]) => coordinate) },
+    {
+      header: `${PLAIN_SYMBOLS[kind]} (${names.axisUnit})`,
+      values: points.map(([coordinate]) => coordinate),
+    },
     { header: `U (${energyUnit})`, values: points.map(([, energy]) => energy) },
     { header: 'range', values: within(() => 'data').map((range) => range ?? 'tail') },
     { header: `U band low (${energyUnit})`, values: edge(-1) },
     { header: `U band high (${energyUnit})`, values: edge(1) },
+    ...(smooth === null
+      ? []
+      : [{ header: `U smooth curve (${energyUnit})`, values: within((_, index) => smooth[index][1]) }]),
     ...(comparison === null
       ? []
       : [

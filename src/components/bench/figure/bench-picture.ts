@@ -2,11 +2,13 @@ import { captionSentences, captionText, type FigureCaption } from '@/components/
 import type { Picture } from '@/components/figure/picture'
 import { svgElement } from '@/components/figure/svg-writer'
 import { axisMarks } from './axis-marks'
+import type { BasinSign } from './basin-signs'
 import { emptyBrackets } from './empty-brackets'
 import { figureFrame } from './figure-frame'
 import type { FigureModel } from './figure-model'
 import type { VisibleCurves } from './panel-option'
 import { pictureAxes, pictureGrounds } from './picture-axes'
+import { pictureBasins } from './picture-basins'
 import { pictureCurves } from './picture-curves'
 import { pictureKey } from './picture-key'
 
@@ -14,7 +16,7 @@ const WIDTH = 760
 const MARGIN = 20
 const FIGURE_HEIGHT = 560
 const GAP = 10
-const RESIDUAL_REMARK = 'Residual: (n − expected)/√expected of the independent samples'
+const RESIDUAL_REMARK = 'Residual: (n\u00a0−\u00a0expected)/√expected of the independent samples'
 
 /**
  * The bench figure as a picture that stands alone: key, both panels on their shared axis, caption. It is laid out anew from
@@ -22,6 +24,7 @@ const RESIDUAL_REMARK = 'Residual: (n − expected)/√expected of the independe
  */
 export function benchPicture(
   model: FigureModel,
+  basins: readonly BasinSign[],
   visible: VisibleCurves,
   jacobian: boolean,
   caption: FigureCaption,
@@ -48,6 +51,7 @@ export function benchPicture(
         pictureGrounds(frame, marks),
         pictureCurves(frame, model, marks, visible),
         pictureAxes(frame, model, marks, empty),
+        pictureBasins(frame, marks, basins),
       ),
       text.body,
     ].join(''),

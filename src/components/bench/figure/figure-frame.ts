@@ -27,7 +27,8 @@ export const SPINE_HEIGHT = 38
 export const RESIDUAL_HEIGHT = 46
 const RESIDUAL_GAP = 8
 const TOP = 6
-const BOTTOM = 8
+/** Holds the rings of the basins and what stands under them. */
+const BOTTOM = 30
 /** Part of the panels' height that the distribution takes. */
 const DISTRIBUTION_SHARE = 0.41
 export const NARROW_BELOW = 480

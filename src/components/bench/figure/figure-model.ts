@@ -49,6 +49,8 @@ export interface FigureModel extends FigureAxes {
   /** Half width of the band at each point of the potential, NaN where it is not known; null without a stated sample size. */
   readonly halfWidths: Float64Array | null
   readonly rings: readonly Point[]
+  /** The smooth curve a form stands for; null while the potential is that curve. */
+  readonly smooth: readonly Point[] | null
   readonly comparison: readonly Point[] | null
   /** The comparison at any coordinate, in internal units. */
   readonly comparisonAt: Comparison['at'] | null
@@ -56,8 +58,18 @@ export interface FigureModel extends FigureAxes {
 
 const TAIL_POINTS = 60
 
+/** The smooth inversion behind a form, and what lays its energies over it, kJ/mol. */
+export interface SmoothBehind {
+  readonly smooth: Inversion
+  readonly smoothOffset: number
+}
+
 /** Turns an inversion into axes and curves in the units shown. */
-export function figureModel(inversion: Inversion, units: DisplayUnits): FigureModel {
+export function figureModel(
+  inversion: Inversion,
+  units: DisplayUnits,
+  behind: SmoothBehind | null = null,
+): FigureModel {
   const { kind, bins } = inversion
   const names = coordinateNames(kind, units)
   const unit = coordinateUnitOf(kind, units)
@@ -109,9 +121,22 @@ export function figureModel(inversion: Inversion, units: DisplayUnits): FigureMo
       ),
     halfWidths: curve.deviations?.map((deviation) => BAND_DEVIATIONS * deviation * yFactor) ?? null,
     rings,
+    smooth: behind && smoothPoints(behind, curve.coordinates, shown, yFactor),
     comparison: comparison && scaled(curve.coordinates, comparison, 1),
     comparisonAt: curve.comparison?.at ?? null,
   }
+}
+
+function smoothPoints(
+  { smooth, smoothOffset }: SmoothBehind,
+  coordinates: Float64Array,
+  shown: (coordinate: number) => number,
+  yFactor: number,
+): Point[] {
+  return Array.from(coordinates, (coordinate): Point => [
+    shown(coordinate),
+    (potentialEnergy(smooth.potential, coordinate) + smoothOffset) * yFactor,
+  ])
 }
 
 /** The axis at the right: kT beside a molar unit, kJ/mol beside kT. */

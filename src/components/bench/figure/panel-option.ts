@@ -6,16 +6,35 @@ import type { FigureAxes, FigureModel } from './figure-model'
 import { ringPath } from './ring-path'
 
 /** Curves that the key can switch off, in drawing order. */
-export const CURVES = ['measured', 'regenerated', 'residual', 'potential', 'rings', 'comparison'] as const
+export const CURVES = [
+  'measured',
+  'regenerated',
+  'residual',
+  'potential',
+  'smooth',
+  'rings',
+  'comparison',
+] as const
 export type CurveName = (typeof CURVES)[number]
 export type VisibleCurves = Readonly<Record<CurveName, boolean>>
 
 /** From back to front. */
-const LAYERS = ['measured', 'regenerated', 'band', 'comparison', 'rings', 'potential', 'tail'] as const
+const LAYERS = [
+  'measured',
+  'regenerated',
+  'band',
+  'comparison',
+  'rings',
+  'smooth',
+  'potential',
+  'tail',
+] as const
 type Layer = (typeof LAYERS)[number]
 
 /** Radius of a bin by bin point, in pixels. */
 export const RING_RADIUS = 2.1
+/** The smooth curve stays in sight behind a form, but faint. */
+export const SMOOTH_OPACITY = 0.55
 const DISTRIBUTION = 0
 const POTENTIAL = 1
 
@@ -69,6 +88,10 @@ function curves(model: FigureModel, visible: VisibleCurves): Series[] {
     series.push(line('comparison', POTENTIAL, model.comparison, style))
   }
   if (visible.rings) series.push(rings(model.rings))
+  if (visible.smooth && model.smooth) {
+    const style = { color: token('model'), width: 1.25, opacity: SMOOTH_OPACITY }
+    series.push(line('smooth', POTENTIAL, model.smooth, style))
+  }
   if (visible.potential) {
     const style = { color: token('model'), width: 1.75 }
     const dots = { color: token('model'), width: 1.5, type: [2, 3.5] }

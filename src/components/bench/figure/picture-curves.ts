@@ -6,7 +6,7 @@ import { svgElement, svgPath, type Svg, type SvgAttributes } from '@/components/
 import type { AxisMarks } from './axis-marks'
 import type { FigureFrame, Panel } from './figure-frame'
 import type { FigureModel } from './figure-model'
-import { RING_RADIUS, type VisibleCurves } from './panel-option'
+import { RING_RADIUS, SMOOTH_OPACITY, type VisibleCurves } from './panel-option'
 import { residualStems, stemPath } from './residual-stems'
 import { ringPath } from './ring-path'
 
@@ -52,6 +52,7 @@ function stems({ bins }: FigureModel, { x, residual }: AxisMarks): Svg {
 
 function potentialCurves(model: FigureModel, { x, energy }: AxisMarks, visible: VisibleCurves): Svg {
   const plain = { stroke: token.plain, 'stroke-width': 1.25, 'stroke-dasharray': '5 3.5' }
+  const faint = { stroke: token.model, 'stroke-width': 1.25, 'stroke-opacity': SMOOTH_OPACITY }
   const dots = { stroke: token.model, 'stroke-width': 1.5, 'stroke-dasharray': '2 3.5' }
   const centres = model.rings.map(([across, up]) => [x.at(across), energy.at(up)])
   const band = (model.band ?? []).map((polygon) =>
@@ -63,6 +64,7 @@ function potentialCurves(model: FigureModel, { x, energy }: AxisMarks, visible: 
     visible.rings
       ? svgPath(ringPath(centres, RING_RADIUS), { fill: token.plotGround, stroke: token.raw })
       : '',
+    visible.smooth && model.smooth ? curve(model.smooth, x, energy, faint) : '',
     visible.potential ? curve(model.potential, x, energy, { stroke: token.model, 'stroke-width': 1.75 }) : '',
     ...(visible.potential ? model.tails.map((tail) => curve(tail, x, energy, dots)) : []),
   ].join('')

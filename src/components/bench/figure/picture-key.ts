@@ -2,7 +2,7 @@ import { lightTokens as token } from '@/components/figure/light-tokens'
 import { italic, svgElement, svgEscape, svgPath, type Svg } from '@/components/figure/svg-writer'
 import { textWidth } from '@/components/figure/text-width'
 import type { FigureModel } from './figure-model'
-import { CURVES, type CurveName, type VisibleCurves } from './panel-option'
+import { CURVES, type CurveName, SMOOTH_OPACITY, type VisibleCurves } from './panel-option'
 import { ringPath } from './ring-path'
 
 /** An entry of the key: its swatch in a field of 22 × 12, and its words plain (for their width) and set. */
@@ -59,6 +59,17 @@ function entryOf(name: CurveName, model: FigureModel, jacobian: boolean): Entry 
     return named(residualSwatch(), 'residual')
   }
   if (name === 'potential') return potentialEntry(model.band !== null)
+  if (name === 'smooth') {
+    if (model.smooth === null) return null
+    return named(
+      svgPath('M1 8C7 8 9 4 12 4s6 3 9 3', {
+        stroke: token.model,
+        'stroke-width': 1.25,
+        'stroke-opacity': SMOOTH_OPACITY,
+      }),
+      'smooth curve',
+    )
+  }
   if (name === 'rings') {
     const centres = [
       [6, 8],

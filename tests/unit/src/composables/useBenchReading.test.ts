@@ -8,7 +8,12 @@ import { runInversion } from '@/workers/inversion-task'
 import { angleCounts, bondCounts, TEMPERATURE } from '../components/bench/distributions'
 
 const answerTo = (histogram: Histogram): InversionAnswer =>
-  runInversion({ histogram, temperature: TEMPERATURE, settings: DEFAULT_INVERSION_SETTINGS }).answer!
+  runInversion({
+    histogram,
+    temperature: TEMPERATURE,
+    settings: DEFAULT_INVERSION_SETTINGS,
+    basinDepth: 0.5,
+  }).answer!
 
 const set = () => {
   const histogram = shallowRef<Histogram | null>(angleCounts())

@@ -20,7 +20,7 @@ const caption = {
 }
 const histograms = { bond: bondCounts, angle: angleCounts, dihedral: dihedralCounts }
 const drawn = (kind: CoordinateKind, visible: VisibleCurves = all, histogram = histograms[kind]()) =>
-  svgDocument(benchPicture(figureModel(inverted(histogram), units), visible, true, caption))
+  svgDocument(benchPicture(figureModel(inverted(histogram), units), [], visible, true, caption))
 /** What can be read in it, without the markup. */
 const words = (svg: string) => svg.replace(/<[^>]+>/g, ' ').replace(/\s+/g, ' ')
 

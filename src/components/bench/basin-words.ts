@@ -1,0 +1,41 @@
+import type { CurveBasin, CurveBasins } from '@shared/basins'
+import { thermalEnergy } from '@shared/units'
+import { errorText } from './error-text'
+
+/** A basin with its number along the coordinate, as the figure numbers it. */
+export interface NumberedBasin extends CurveBasin {
+  readonly number: number
+}
+
+/** Basins from left to right. */
+export function numberedBasins({ basins }: CurveBasins): NumberedBasin[] {
+  return [...basins]
+    .sort((one, other) => one.coordinate - other.coordinate)
+    .map((basin, index) => ({ ...basin, number: index + 1 }))
+}
+
+/**
+ * The barriers in a line: between two basins as seen from each of them, with more from each that is not the lowest.
+ *
+ * @param temperature K
+ * @returns null with one basin
+ */
+export function barrierLine(
+  basins: readonly NumberedBasin[],
+  temperature: number,
+): { readonly label: string; readonly text: string; readonly two: boolean } | null {
+  const left = basins.filter(({ depth }) => depth !== null)
+  const [only] = left
+  if (only === undefined) return null
+  if (basins.length !== 2) {
+    const numbers = left.map(({ number }) => number).join(', ')
+    const text = left.map(({ depth, deviation }) => errorText(depth!, deviation)).join(', ')
+    return { label: `Barrier from basin ${numbers}`, text, two: false }
+  }
+  const height = (only.barrier?.energy ?? 0) / thermalEnergy(temperature)
+  // From the lowest basin, whose energy may differ from 0 by what lies outside the data.
+  const fromOther = basins.map(({ depth, energy, deviation }) =>
+    errorText(depth ?? height - energy / thermalEnergy(temperature), deviation ?? only.deviation),
+  )
+  return { label: 'Barrier from basin 1, 2', text: fromOther.join(', '), two: true }
+}

@@ -49,23 +49,33 @@ const LEAST_EXPECTED = 0.5
 /** The same where nobody stated a sample size, as a share. */
 const LEAST_EXPECTED_SHARE = 1e-4
 
-/**
- * Cells of the file's grid by the coupling of the cell of the coupling map that holds them. Those too thin to judge are left
- * out, also at the rim, where a merged cell of the coupling map reaches far beyond the samples.
- */
+/** Cells of the file's grid by the coupling drawn in them. */
 export function couplingCells(correlation: Correlation, model: MapModel, steps: number): MapCell[] {
+  const limit = couplingLimit(correlation.coupling.values)
+  const { values } = drawnCoupling(correlation)
+  return mapCells(model.x.edges, model.y.edges, (index) =>
+    Number.isNaN(values[index]) ? null : couplingStep(values[index], limit, steps),
+  )
+}
+
+/**
+ * The coupling of each cell of the file's grid, with its standard deviation: that of the cell of the coupling map that holds
+ * it. NaN where it is too thin to judge, also at the rim, where a merged cell of the coupling map reaches far beyond the
+ * samples.
+ */
+export function drawnCoupling(correlation: Correlation): { values: Float64Array; deviations: Float64Array } {
   const { coupling, marginals, independentSamples, xEdges, yEdges } = correlation
-  const limit = couplingLimit(coupling.values)
   const columns = holders(xEdges, coupling.xEdges)
   const rows = holders(yEdges, coupling.yEdges)
   const least = independentSamples === null ? LEAST_EXPECTED_SHARE : LEAST_EXPECTED / independentSamples
-  return mapCells(model.x.edges, model.y.edges, (index) => {
-    const ix = Math.floor(index / rows.length)
-    const iy = index % rows.length
-    const value = coupling.values[columns[ix] * (coupling.yEdges.length - 1) + rows[iy]]
-    if (Number.isNaN(value) || marginals.x[ix] * marginals.y[iy] < least) return null
-    return couplingStep(value, limit, steps)
-  })
+  const taken = (from: Float64Array): Float64Array =>
+    Float64Array.from({ length: columns.length * rows.length }, (_, index) => {
+      const ix = Math.floor(index / rows.length)
+      const iy = index % rows.length
+      if (marginals.x[ix] * marginals.y[iy] < least) return NaN
+      return from[columns[ix] * (coupling.yEdges.length - 1) + rows[iy]]
+    })
+  return { values: taken(coupling.values), deviations: taken(coupling.deviations) }
 }
 
 /** For each fine bin the coarse one that holds its middle. */

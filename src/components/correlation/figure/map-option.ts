@@ -10,7 +10,7 @@ const ABOVE = 1
 const RIGHT = 2
 
 /** Head room above the highest bin of a distribution alone. */
-const ALONE_TOP = 1.04
+export const ALONE_TOP = 1.04
 
 /** Colours are the page's tokens as CSS variables; only the cells take theirs from a ramp. */
 const token = (name: string): string => `var(--${name})`

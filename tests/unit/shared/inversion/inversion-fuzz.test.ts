@@ -120,4 +120,4 @@ it('gives a finite table or a named error for any bins, counts and settings, in 
   // Both ends are tried often, or the cases would prove little.
   expect(outcomes.table).toBeGreaterThan(CASES / 4)
   expect(outcomes.refused).toBeGreaterThan(CASES / 20)
-}, 120_000)
+}, 300_000)

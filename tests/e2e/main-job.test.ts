@@ -177,6 +177,25 @@ describe('the main job, for a polymer of one’s own', () => {
     expect(await opened.picture(`job-bench-${name.length}`)).toBeTruthy()
   })
 
+  it('exports the figure of the bench as a picture and as numbers', async () => {
+    const exported = (format: string) =>
+      downloaded(page.waitForEvent('download'), async () => {
+        await page.getByRole('button', { name: 'Export figure' }).click()
+        await page.getByRole('menuitem', { name: format }).click()
+      })
+    const svg = Buffer.from(await exported('SVG')).toString('utf8')
+    expect(svg).toContain('poly(vinyl acetate), 2-to-1: dihedral V–V–V–V at 420 K, melt.')
+    expect(await page.evaluate(rootOf, svg)).toBe('svg')
+    const png = Buffer.from(await exported('PNG'))
+    expect(png.subarray(0, 8).toString('hex')).toBe('89504e470d0a1a0a')
+    // Width and height stand in the first chunk: twice those of the SVG.
+    expect([png.readUInt32BE(16), png.readUInt32BE(20)]).toEqual(
+      ['width', 'height'].map((side) => 2 * Number(new RegExp(`^<svg [^>]*${side}="(\\d+)"`).exec(svg)?.[1])),
+    )
+    const csv = Buffer.from(await exported('CSV')).toString('utf8')
+    expect(csv).toMatch(/^phi low \(deg\),phi high \(deg\),count,p measured \(%\/deg\),/m)
+  })
+
   it('judges the bond–angle map separable and records the decision', async () => {
     await enter(page, 'Correlation')
     await page.getByRole('heading', { name: 'Separable' }).waitFor()
@@ -282,6 +301,12 @@ async function paint(page: Page): Promise<void> {
   await page.getByText('is in no bead').waitFor({ state: 'detached' })
   await page.getByRole('heading', { name: 'Terms that follow, 7' }).waitFor()
   await page.getByText('Saved', { exact: true }).waitFor()
+}
+
+/** The root of a document read as XML, which takes no error: "svg", or what says what is wrong. Runs in the page. */
+const rootOf = (text: string): string => {
+  const document = new DOMParser().parseFromString(text, 'image/svg+xml')
+  return document.querySelector('parsererror')?.textContent ?? document.documentElement.localName
 }
 
 async function downloaded(waiting: Promise<Download>, act: () => Promise<void>): Promise<Uint8Array> {

@@ -28,7 +28,7 @@ const open = async () => {
   await wrapper.get('button').trigger('click')
   await flushPromises()
   const choose = async (format: string): Promise<void> => {
-    const items = [...document.querySelectorAll<HTMLElement>('.v-list-item')]
+    const items = [...document.querySelectorAll<HTMLElement>('[role=menu] [role=menuitem]')]
     items.find((item) => item.textContent?.includes(format))!.click()
     await flushPromises()
   }
@@ -40,7 +40,7 @@ describe('FigureExport', () => {
     const { wrapper } = await open()
     const button = wrapper.get('button')
     expect(button.attributes('aria-label')).toBe('Export figure')
-    expect(button.attributes('aria-haspopup')).toBeTruthy()
+    expect(button.attributes('aria-haspopup')).toBe('menu')
   })
 
   it('saves the picture as an SVG document and the numbers as text, under the name of the figure', async () => {

@@ -3,15 +3,16 @@ import type { MixtureComponent } from './expectation-maximisation'
 import { mixtureStarts } from './gaussian-starts'
 import { gaussianShape } from './gaussian-shape'
 import { type LikelihoodCells, mergeCells } from './likelihood-cells'
-import { maximiseLikelihood } from './maximise-likelihood'
+import { type Maximum, maximiseLikelihood } from './maximise-likelihood'
 import { RefusedForm } from './refused-form'
 import { solutionAt } from './solve-form'
 
 const MOST_GAUSSIANS = 4
-/** Starts are compared on at most this many bins, to what they may still gain in log-likelihood. */
-const COARSE_BINS = 120
+/** Starts are compared after some steps on at most this many bins; the best goes on, until less is left to gain in ln L. */
+const COARSE_BINS = 90
+const FIRST_STEPS = 24
 const COARSE_GAIN = 0.02
-const COARSE_STEPS = 25
+const COARSE_STEPS = 12
 /** Gains are per sample of at least so many, also where their number is unknown. */
 const LEAST_SAMPLES = 10_000
 /**
@@ -20,6 +21,9 @@ const LEAST_SAMPLES = 10_000
  */
 const ARRIVED_GAIN = 0.05
 const FINAL = { decrement: 1e-16, mostSteps: 30 }
+/** A fit that has not arrived, but gained more in ln L than its three new parameters may by chance, gets more time. */
+const WORTH_WAITING = 6
+const PATIENT = { decrement: 1e-16, mostSteps: 300 }
 /** A Gaussian whose s is below this many bins describes single bins, not a state. */
 const LEAST_WIDTH = 1
 
@@ -47,9 +51,15 @@ export const gaussians: FormDefinition = {
   freeParameters: (terms) => 3 * terms - 1,
   energy: gaussianEnergy,
   fit: (cells, terms, smaller) => {
-    const start = bestStart(cells, terms, smaller)
-    const maximum = maximiseLikelihood(cells, gaussianShape(cells, terms), start, FINAL)
-    if (!(maximum.decrement < ARRIVED_GAIN / Math.max(LEAST_SAMPLES, cells.independentSamples ?? 0))) {
+    const samples = Math.max(LEAST_SAMPLES, cells.independentSamples ?? 0)
+    const shape = gaussianShape(cells, terms)
+    const hasArrived = ({ decrement }: Maximum) => decrement * samples < ARRIVED_GAIN
+    let maximum = maximiseLikelihood(cells, shape, bestStart(cells, terms, smaller), FINAL)
+    const gain = samples * (maximum.value - (smaller?.maximum.value ?? -Infinity))
+    if (!hasArrived(maximum) && gain > WORTH_WAITING) {
+      maximum = maximiseLikelihood(cells, shape, maximum.beta, PATIENT)
+    }
+    if (!hasArrived(maximum)) {
       throw new RefusedForm('NOT_CONVERGED', `The fit of ${terms} Gaussians does not settle.`)
     }
     const solution = solutionAt(maximum, (beta) => naturalOf(beta, cells, terms))
@@ -62,13 +72,13 @@ export const gaussians: FormDefinition = {
 function bestStart(cells: LikelihoodCells, terms: number, smaller: FormSolution | null): Float64Array {
   const coarse = mergeCells(cells, COARSE_BINS)
   const shape = gaussianShape(coarse, terms)
-  const limits = {
-    decrement: COARSE_GAIN / Math.max(LEAST_SAMPLES, cells.independentSamples ?? 0),
-    mostSteps: COARSE_STEPS,
-  }
-  const best = mixtureStarts(coarse, terms, smaller && components(smaller, coarse))
-    .map((start) => maximiseLikelihood(coarse, shape, start, limits))
+  const decrement = COARSE_GAIN / Math.max(LEAST_SAMPLES, cells.independentSamples ?? 0)
+  const improved = (start: Float64Array, mostSteps: number) =>
+    maximiseLikelihood(coarse, shape, start, { decrement, mostSteps })
+  const first = mixtureStarts(coarse, terms, smaller && components(smaller, coarse))
+    .map((start) => improved(start, FIRST_STEPS))
     .reduce((one, other) => (other.value > one.value ? other : one))
+  const best = improved(first.beta, COARSE_STEPS)
   // The scale of β is that of the cells' own mean and deviation.
   const ratio = coarse.deviation / cells.deviation
   const shift = (coarse.mean - cells.mean) / cells.deviation

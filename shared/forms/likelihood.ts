@@ -22,6 +22,8 @@ export interface LikelihoodPoint {
 
 /** Below this share of the largest density a cell's sum has lost its digits or vanished. */
 const VANISHED = 1e-280
+/** In kT: exp(−50) is below the rounding of the sums. */
+const NEGLIGIBLE = 50
 
 /**
  * Evaluates the multinomial likelihood of binned data under a form: π_c = ∫_c J exp(η) dq / Z. The returned function fills
@@ -58,6 +60,14 @@ export function likelihoodOf(cells: LikelihoodCells, { size, fill }: Shape) {
     return mass
   }
 
+  /** An empty cell so high up that it adds nothing to any sum. */
+  const isEmpty = (cell: number, top: number): boolean => {
+    for (let p = cell * pointsPerCell; p < (cell + 1) * pointsPerCell; p++) {
+      if (eta[p] - top > -NEGLIGIBLE) return false
+    }
+    return true
+  }
+
   const evaluate = (point: LikelihoodPoint): void => {
     fill(point.beta, eta, gradient)
     let top = -Infinity
@@ -65,6 +75,10 @@ export function likelihoodOf(cells: LikelihoodCells, { size, fill }: Shape) {
     let total = 0
     meanGradient.fill(0)
     for (let cell = 0; cell < count; cell++) {
+      if (shares[cell] === 0 && isEmpty(cell, top)) {
+        point.probabilities[cell] = 0
+        continue
+      }
       const mass = integrate(cell, top)
       point.probabilities[cell] = mass
       total += mass
@@ -91,6 +105,7 @@ export function likelihoodOf(cells: LikelihoodCells, { size, fill }: Shape) {
     for (let cell = 0; cell < count; cell++) {
       const start = cell * size
       const share = shares[cell]
+      if (share === 0 && probabilities[cell] === 0) continue
       const probability = (probabilities[cell] /= total)
       if (share > 0) value += share * (logs[cell] - logTotal)
       for (let j = 0; j < size; j++) {

@@ -6,6 +6,7 @@ import { mapModel } from '@/components/correlation/figure/map-model'
 import {
   correlationOf,
   correlationWithoutSampleSize,
+  twoBasins,
 } from '../../unit/src/components/correlation/correlations'
 
 const card = (correlation: Correlation) =>
@@ -33,6 +34,24 @@ describe('CorrelationVerdict', () => {
       expect(text).toContain(evidence)
     }
     expect(text).toContain('are our defaults')
+  })
+
+  it('says what each number is, in a sentence tied to it', () => {
+    const wrapper = card(correlationOf(0.8))
+    const [first] = wrapper.findAll('dd button')
+    const sentence = wrapper.get(`[id="${first.attributes('aria-describedby')}"]`)
+    expect(sentence.attributes('role')).toBe('tooltip')
+    expect(sentence.text()).toContain('unrelated terms')
+  })
+
+  it('counts the basins of map and product with the depth asked for, and lists them one step away', async () => {
+    const wrapper = card(twoBasins())
+    expect(wrapper.text()).toMatch(/Basins, map and product\s*2 and 4,\s*deeper than 0\.5 kT/)
+    await wrapper.get('button[aria-expanded]').trigger('click')
+    const rows = wrapper.findAll('tbody tr').map((row) => row.findAll('td').map((cell) => cell.text()))
+    expect(rows.map(([number]) => number)).toEqual(['1', '2', '', ''])
+    expect(rows[0].slice(2)).toEqual(['60 %', 'lowest', 'both'])
+    expect(rows.slice(2).every(([, , , , kind]) => kind === 'product only')).toBe(true)
   })
 
   it('puts the bead of the scale further right the stronger the coupling', () => {

@@ -9,6 +9,7 @@ import {
 } from '@/components/figure/coordinate-names'
 import { contourLines, type ContourLine } from './contour-lines'
 import { adaptiveDensity } from './adaptive-density'
+import { mapBasins, type MapBasin } from './map-basins'
 import { axisWindow, shareOutside } from './map-window'
 import { smoothDensity } from './smooth-density'
 
@@ -43,6 +44,7 @@ export interface MapModel {
   readonly averaged: boolean
   /** Lines at 1, 2 and 3 kT above the lowest free energy, from the averaged density. */
   readonly contours: readonly ContourLine[]
+  readonly basins: readonly MapBasin[]
   /** Highest density of the cells as coloured, and where it is, in the units shown. */
   readonly highest: { readonly density: number; readonly x: number; readonly y: number }
   /** Share of the samples outside the frame. */
@@ -78,6 +80,7 @@ export function mapModel(correlation: Correlation, units: DisplayUnits): MapMode
     averaged: correlation.independentSamples !== null,
     mean: meanPoints(correlation, x, y),
     contours: contours(x, y, smooth),
+    basins: mapBasins(correlation, x, y),
     highest: highestCell(shown, x, y),
     outside: shareOutside(x.edges, y.edges, masses, x.window, y.window),
   }

@@ -94,10 +94,29 @@ function keyLines(correlation: Correlation, model: MapModel, view: MapView): Key
   return [
     mean,
     view === 'density' ? contour : { swatch: thinSwatch(), words: 'too thin to judge' },
+    ...basinLines(model),
     ...(view === 'density' && model.averaged
       ? [remark(`thin cells averaged until they hold ${SAMPLES_AVERAGED} independent samples`)]
       : []),
     ...(outside === null ? [] : [remark(outside)]),
+  ]
+}
+
+function basinLines({ basins }: MapModel): KeyLine[] {
+  const ring = (dash: string): Svg =>
+    svgElement('circle', {
+      cx: 11,
+      cy: 6,
+      r: 6,
+      fill: token.plotGround,
+      stroke: token.ink,
+      'stroke-dasharray': dash,
+    })
+  return [
+    ...(basins.length > 0 ? [{ swatch: ring('none'), words: 'basin of the map' }] : []),
+    ...(basins.some(({ number }) => number === null)
+      ? [{ swatch: ring('3 2'), words: 'basin of the product only' }]
+      : []),
   ]
 }
 

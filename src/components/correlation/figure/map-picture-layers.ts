@@ -4,6 +4,7 @@ import { linePath } from '@/components/figure/line-path'
 import { linearScale } from '@/components/figure/linear-scale'
 import { steppedOutline, type Point } from '@/components/figure/stepped-outline'
 import { svgElement, svgNumber, svgPath, type Svg } from '@/components/figure/svg-writer'
+import { BASIN_RADIUS } from './map-basins'
 import type { MapCell } from './map-cells'
 import type { Area, MapFrame } from './map-frame'
 import type { MapMarks } from './map-marks'
@@ -27,6 +28,7 @@ export function mapLayers(
       cellPaths(cells, marks, view),
       view === 'density' ? contours(model, marks) : '',
       means(model, marks),
+      basinRings(model, marks),
     ),
     cut('above', frame.above, alone(model.x, frame.above, marks, 'above')),
     cut('right', frame.right, alone(model.y, frame.right, marks, 'right')),
@@ -99,6 +101,27 @@ function means({ mean }: MapModel, { x, y }: MapMarks): Svg {
     stroke(bars, token.ink, 1.25) +
     stroke(line, token.ink, 1.75)
   )
+}
+
+/** Numbered rings, and dashed ones where only the product has a basin. */
+function basinRings({ basins }: MapModel, { x, y }: MapMarks): Svg {
+  return basins
+    .map((basin) => {
+      const [cx, cy] = [svgNumber(x.at(basin.x)), svgNumber(y.at(basin.y))]
+      const ring = (style: Record<string, string | number>): Svg =>
+        svgElement('circle', { cx, cy, r: BASIN_RADIUS, ...style })
+      if (basin.number === null) {
+        return (
+          ring({ fill: 'none', stroke: token.plotGround, 'stroke-width': 3.5 }) +
+          ring({ fill: 'none', stroke: token.ink, 'stroke-width': 1.25, 'stroke-dasharray': '3 2' })
+        )
+      }
+      const text = { x: cx, y: svgNumber(y.at(basin.y) + 4), 'text-anchor': 'middle', fill: token.ink }
+      return (
+        ring({ fill: token.plotGround, stroke: token.ink }) + svgElement('text', text, String(basin.number))
+      )
+    })
+    .join('')
 }
 
 /** The stepped area of one coordinate alone; right of the map it lies on its side. */

@@ -32,3 +32,17 @@ export const correlationOf = (strength: number, independentSamples?: number | nu
 /** The same as a probability of which nobody said how many samples it stands for. */
 export const correlationWithoutSampleSize = (strength: number): Correlation =>
   correlate(jointHistogram(strength, null, 'probability'))
+
+/** Two basins on a diagonal, of which the product of the two distributions makes four; 30 by 30 cells. */
+export function twoBasins(): Correlation {
+  const { kinds, xEdges, yEdges, content } = jointHistogram(0)
+  const bell = (ix: number, iy: number, at: number) =>
+    Math.exp(-((ix - at) ** 2 + (iy - at) ** 2) / 2 / 2.2 ** 2)
+  const weights = Float64Array.from({ length: 900 }, (_, index) => {
+    const [ix, iy] = [Math.floor(index / 30), index % 30]
+    return Math.round(300 * bell(ix, iy, 8) + 200 * bell(ix, iy, 21))
+  })
+  return correlate(
+    createJointHistogram({ kinds, xEdges, yEdges, weights, content, independentSamples: null }),
+  )
+}

@@ -5,7 +5,7 @@ import { mapPicture } from '@/components/correlation/figure/map-picture'
 import type { MapView } from '@/components/correlation/figure/map-view'
 import { lightTokens } from '@/components/figure/light-tokens'
 import { svgDocument } from '@/components/figure/picture'
-import { correlationOf, correlationWithoutSampleSize } from '../correlations'
+import { correlationOf, correlationWithoutSampleSize, twoBasins } from '../correlations'
 
 const units = { length: 'nm', angle: 'degree', energy: 'kJ/mol' } as const
 const caption = {
@@ -30,6 +30,13 @@ describe('mapPicture', () => {
     expect(text).toContain('1, 2, 3 kT above the lowest')
     expect(text).toContain('bond A–B with angle A–B–C at 400 K, melt. 12 000 counts.')
     expect(text).toContain('Invented data (demonstration).')
+  })
+
+  it('rings the basins of the map and, with dashes, those of the product only, and says so in the key', () => {
+    const svg = drawn('density', twoBasins())
+    expect(words(svg)).toContain('basin of the map basin of the product only')
+    // Two on the map and one in the key.
+    expect(svg.match(/<circle[^>]+stroke-dasharray="3 2"/g)).toHaveLength(3)
   })
 
   it('shows the coupling in kT about zero, without contours, thin cells stippled', () => {

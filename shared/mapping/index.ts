@@ -35,6 +35,7 @@ export type { MappingProblem, MappingProblemCode } from './mapping-problem'
 export { placeFlags, type PlaceFlag } from './place-flags'
 export { acceptProposal, proposeTerms, type TermProposal } from './propose-terms'
 export { poolingOf } from './split-terms'
+export { renewBeadIds } from './renew-bead-ids'
 export { termGroups, type GroupedTerm, type TermCentre, type TermGroup } from './term-groups'
 export { rotatableBonds, type CutBond } from './rotatable-bonds'
 export {

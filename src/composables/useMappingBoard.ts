@@ -13,6 +13,7 @@ import {
   type MappingDocument,
   type MappingProblem,
   removeBead,
+  renewBeadIds,
 } from '@shared/mapping'
 import { useHistory, type History } from './useHistory'
 
@@ -35,6 +36,10 @@ export interface MappingBoard {
   readonly remove: (beadId: string) => void
   readonly give: (atoms: readonly number[], beadId: string) => void
   readonly free: (atoms: readonly number[]) => void
+  /** Any other change of the document as one step; the same document is none. */
+  readonly edit: (change: (document: MappingDocument) => MappingDocument) => void
+  /** Takes over another mapping of the unit in place of what stands, its beads as new ones. */
+  readonly adopt: (from: MappingDocument) => void
 }
 
 /** The state of the mapping board. Strokes and changes are steps of the history; what follows from them is derived live. */
@@ -98,6 +103,12 @@ export function useMappingBoard(unit: Ref<RepeatUnit>, first: MappingDocument): 
     remove: (beadId) => history.push(removeBead(document.value, beadId)),
     give: (atoms, beadId) => history.push(giveAtoms(document.value, beadId, atoms)),
     free: (atoms) => history.push(freeAtoms(document.value, atoms)),
+    edit: (change) => history.push(change(document.value)),
+    adopt: (from) => {
+      const taken = renewBeadIds(from, `${newBeadId()}-`)
+      chosen.value = taken.beads[0]?.id ?? null
+      history.push(taken)
+    },
   }
 }
 

@@ -49,6 +49,22 @@ export function boardLayout(unit: RepeatUnit, layout: RepeatUnitLayout): BoardLa
   }
 }
 
+/** Where the atoms of a unit are drawn, counted from the drawn one. */
+export function positionsIn(board: BoardLayout, unit: number): readonly Point[] {
+  return unit === 0 ? board.positions : board.positions.map((_, atom) => atomPoint(board, atom, unit))
+}
+
+/** Where an atom of a unit is drawn, counted from the drawn one. */
+export function atomPoint(
+  { positions, neighbours: [before, after] }: BoardLayout,
+  atom: number,
+  unit: number,
+): Point {
+  let point = positions[atom]
+  for (let step = 0; step < Math.abs(unit); step++) point = moved(unit < 0 ? before : after, point)
+  return point
+}
+
 /** The atoms on the shortest path from head to tail, with all rings that it runs through. */
 export function backboneAtoms({ atoms, bonds, attachments: [head, tail], rings }: RepeatUnit): Set<number> {
   const before = new Map<number, number>([[head, head]])

@@ -3,10 +3,11 @@ import { layoutRepeatUnit, parseRepeatUnit } from '@shared/chemistry'
 import { addBead, giveAtoms } from '@shared/mapping'
 import { atomName, atomWords } from '@/components/mapping/atom-words'
 import { atomTowards } from '@/components/mapping/drawing/atom-towards'
-import { backboneAtoms, boardLayout, HALO_RADIUS } from '@/components/mapping/drawing/board-layout'
+import { atomPoint, backboneAtoms, boardLayout, HALO_RADIUS } from '@/components/mapping/drawing/board-layout'
 import { bondLines } from '@/components/mapping/drawing/bond-lines'
 import { letterPlace, notePlace } from '@/components/mapping/drawing/free-places'
-import { haloPath, sitePoint } from '@/components/mapping/drawing/halo-path'
+import { beadShapes } from '@/components/mapping/drawing/bead-shapes'
+import { beadPath, haloPath, sitePoint } from '@/components/mapping/drawing/halo-path'
 
 const ACRYLATE = '*CC(*)C(=O)OCCCCCC'
 const unit = await parseRepeatUnit(ACRYLATE)
@@ -50,17 +51,34 @@ describe('a halo', () => {
 
   it('has its site where the rule says', () => {
     const [bead] = mapping.beads
-    const middle = sitePoint(unit, board.positions, { ...bead, site: { rule: 'geometry' } })
+    const middle = sitePoint(unit, board, { ...bead, site: { rule: 'geometry' } })
     expect(middle?.x).toBeCloseTo((board.positions[0].x + board.positions[1].x) / 2, 9)
-    const mass = sitePoint(unit, board.positions, bead)
+    const mass = sitePoint(unit, board, bead)
     // CH2 is heavier than CH: the site leans towards it.
     expect(Math.abs((mass?.x ?? 0) - board.positions[0].x)).toBeLessThan(
       Math.abs((middle?.x ?? 0) - board.positions[0].x),
     )
-    expect(sitePoint(unit, board.positions, { ...bead, site: { rule: 'atom', atom: 1 } })).toEqual(
-      board.positions[1],
-    )
-    expect(sitePoint(unit, board.positions, { ...bead, atoms: [] })).toBeNull()
+    expect(sitePoint(unit, board, { ...bead, site: { rule: 'atom', atom: 1 } })).toEqual(board.positions[1])
+    expect(sitePoint(unit, board, { ...bead, atoms: [] })).toBeNull()
+  })
+
+  it('reaches over the border where its bead holds atoms of the next unit', () => {
+    const across = [
+      { atom: 1, weight: 1, unit: 0 },
+      { atom: 0, weight: 1, unit: 1 },
+    ]
+    // A dot for each atom, and the bond between the units.
+    expect(beadPath(unit, board, across).match(/M/g)).toHaveLength(3)
+    const reaching = { ...mapping.beads[0], atoms: across, site: { rule: 'geometry' as const } }
+    const { x } = sitePoint(unit, board, reaching) ?? { x: 0 }
+    expect(x).toBeCloseTo((board.positions[1].x + atomPoint(board, 0, 1).x) / 2, 9)
+    expect(x).toBeGreaterThan(board.positions[1].x)
+    const [shape] = beadShapes(unit, board, { version: 1, beads: [reaching] })
+    const rims = across.map(({ atom, unit: at }) => {
+      const point = atomPoint(board, atom, at)
+      return Math.hypot(point.x - (shape.letter?.x ?? 0), point.y - (shape.letter?.y ?? 0))
+    })
+    expect(Math.min(...rims)).toBeCloseTo(HALO_RADIUS + 2, 6)
   })
 
   it('has its letter on the rim, off every atom', () => {

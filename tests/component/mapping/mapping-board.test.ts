@@ -1,0 +1,113 @@
+import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest'
+import { flushPromises } from '@vue/test-utils'
+import { layoutRepeatUnit, parseRepeatUnit } from '@shared/chemistry'
+import type { Mapping } from '@shared/contracts/mapping'
+import { h } from 'vue'
+import type { MappingDocument } from '@shared/mapping'
+import MappingBoard from '@/components/mapping/MappingBoard.vue'
+import { HEXYL_ACRYLATE, THREE_TO_ONE } from '../../unit/shared/mapping/hexyl-acrylate'
+import { click, control, fakeApi, mountAt, pageText, type SentRequest } from '../../support/mount'
+
+const drawn = {
+  unit: await parseRepeatUnit(HEXYL_ACRYLATE),
+  layout: await layoutRepeatUnit(HEXYL_ACRYLATE),
+}
+const mappingOf = (document: MappingDocument): Mapping => ({
+  id: 'm',
+  polymerId: 'p',
+  name: '3-to-1',
+  document,
+  revision: 1,
+  savedAt: '2026-01-05T10:00:00.000Z',
+  savedBy: null,
+  counts: { beads: 3, terms: 10, termsWithData: 0 },
+})
+
+let sent: SentRequest[]
+const open = async (document: MappingDocument, canWrite = true) => {
+  const mapping = mappingOf(document)
+  sent = fakeApi({ 'PUT /api/mappings/m': { body: mapping } })
+  const view = { render: () => h(MappingBoard, { drawn, mapping, canWrite }) }
+  return mountAt('mapping', '/polymers/p/mappings/m/mapping', view)
+}
+const beadNames = (): (string | undefined)[] =>
+  [...document.querySelectorAll('tbody tr:not(.editor, .loose)')].map((row) =>
+    row.querySelector('td .base-bead-disc')?.textContent?.trim(),
+  )
+/** The saved document, once the pause after the last change is over. */
+const savedDocument = async (): Promise<MappingDocument> => {
+  await vi.advanceTimersByTimeAsync(1000)
+  await flushPromises()
+  return (sent.at(-1)?.body as { document: MappingDocument }).document
+}
+
+beforeEach(() => {
+  vi.useFakeTimers({ toFake: ['setTimeout', 'clearTimeout'] })
+})
+afterEach(() => {
+  vi.useRealTimers()
+  vi.unstubAllGlobals()
+  document.body.innerHTML = ''
+})
+
+describe('suggestions on the board', () => {
+  it('starts an empty mapping: a suggestion is shown with its reason, accepted, and taken back by Undo', async () => {
+    await open({ version: 1, beads: [] })
+    await click('start from a suggestion')
+    expect(pageText()).toContain('Suggestion with 3 beads')
+    expect(pageText()).toMatch(/Cut at .*, which can turn\. Kept whole: ester\./)
+    expect(document.querySelectorAll('.halo--offered')).toHaveLength(3)
+    expect(beadNames()).toEqual([])
+    expect(document.activeElement).toBe(control('Accept'))
+    await click('Accept')
+    expect(document.querySelectorAll('.halo--offered')).toHaveLength(0)
+    expect(beadNames()).toHaveLength(3)
+    expect(pageText()).not.toContain('is in no bead')
+    await click('Undo')
+    expect(beadNames()).toEqual([])
+  })
+
+  it('goes on to the next number of beads, to a chosen one, and leaves what was painted alone', async () => {
+    await open(THREE_TO_ONE)
+    await click('Suggest')
+    expect(pageText()).toContain('Accepting replaces what is painted')
+    await click('Next')
+    expect(pageText()).toContain('Suggestion with 4 beads')
+    await click('1 bead')
+    expect(pageText()).toContain('Suggestion with 1 bead')
+    expect(document.querySelectorAll('.halo--offered')).toHaveLength(1)
+    await click('Leave')
+    expect(pageText()).not.toContain('Suggestion with')
+    expect(beadNames()).toEqual(['B', 'E', 'H'])
+  })
+
+  it('leaves by Escape, and when painting goes on', async () => {
+    await open(THREE_TO_ONE)
+    await click('Suggest')
+    control('Accept').dispatchEvent(new KeyboardEvent('keydown', { key: 'Escape', bubbles: true }))
+    await flushPromises()
+    expect(pageText()).not.toContain('Suggestion with')
+    await click('Suggest')
+    const atom = document.querySelector('[data-atom="0"]')
+    atom?.dispatchEvent(new PointerEvent('pointerdown', { button: 0, bubbles: true, cancelable: true }))
+    await flushPromises()
+    expect(pageText()).not.toContain('Suggestion with')
+  })
+
+  it('gives accepted beads ids that never stood before', async () => {
+    await open(THREE_TO_ONE)
+    const ids: string[] = []
+    for (let time = 0; time < 2; time++) {
+      await click('Suggest')
+      await click('Accept')
+      ids.push(...(await savedDocument()).beads.map(({ id }) => id))
+    }
+    expect(new Set(ids).size).toBe(6)
+  })
+
+  it('is not offered to those who read', async () => {
+    await open({ version: 1, beads: [] }, false)
+    expect(() => control('Suggest')).toThrow()
+    expect(() => control('start from a suggestion')).toThrow()
+  })
+})

@@ -15,6 +15,8 @@ interface TermFacts {
   readonly distribution: Pick<Distribution, 'id' | 'silhouette'>
   /** The saved inversion, unless its input has changed since. */
   readonly potential: Potential | undefined
+  /** One is saved whose input has changed since. */
+  readonly stale: boolean
 }
 
 /** Terms of a mapping with how far each is. */
@@ -62,8 +64,9 @@ export class TermService {
       distributions.map((distribution) => {
         const { termId, contentSha256 } = distribution
         const input = inputSha256(contentSha256, point.temperature)
-        const potential = potentials.find((saved) => saved.termId === termId && saved.inputSha256 === input)
-        return [termId, { distribution, potential }]
+        const saved = potentials.find((each) => each.termId === termId)
+        const stale = saved !== undefined && saved.inputSha256 !== input
+        return [termId, { distribution, potential: stale ? undefined : saved, stale }]
       }),
     )
   }
@@ -93,5 +96,6 @@ function termBody(term: Term, number: number | undefined, facts: TermFacts | und
       ? { measured: distribution.silhouette, derived: potential?.silhouette ?? null }
       : null,
     distributionId: distribution?.id ?? null,
+    stale: facts?.stale ?? false,
   }
 }

@@ -152,6 +152,8 @@ export const termSchema = z
     standing: standingSchema,
     silhouette: silhouetteSchema.nullable(),
     distributionId: idSchema.nullable(),
+    /** An inversion is saved, but its input has changed since: the standing is that of the data. */
+    stale: z.boolean().optional(),
   })
   .meta({ id: 'Term' })
 export type Term = z.infer<typeof termSchema>

@@ -1,5 +1,5 @@
-import { refDebounced } from '@vueuse/core'
-import { computed, onScopeDispose, type ComputedRef } from 'vue'
+import { watchDebounced } from '@vueuse/core'
+import { computed, onScopeDispose, shallowRef, type ComputedRef } from 'vue'
 import { startInversionWorker, type InversionTask, type InversionWorker, type RankingAnswer } from '@/workers'
 import { useLatest } from './useLatest'
 
@@ -30,7 +30,8 @@ export function useFormRanking(
     const next = task()
     return before && next && sameQuestion(before, next) ? before : next
   })
-  const rested = refDebounced(current, REST_MILLISECONDS)
+  const rested = shallowRef<InversionTask | null>(null)
+  watchDebounced(current, (task) => (rested.value = task), { debounce: REST_MILLISECONDS, immediate: true })
   const latest = useLatest(
     () => rested.value,
     (question) => worker.runRanking(question),

@@ -2,6 +2,9 @@ import type { CurveBasin, CurveBasins } from '@shared/basins'
 import { thermalEnergy } from '@shared/units'
 import { errorText } from './error-text'
 
+/** A hundredth of kT is as fine as a barrier is ever known. */
+const DECIMALS = 2
+
 /** A basin with its number along the coordinate, as the figure numbers it. */
 export interface NumberedBasin extends CurveBasin {
   readonly number: number
@@ -29,13 +32,12 @@ export function barrierLine(
   if (only === undefined) return null
   if (basins.length !== 2) {
     const numbers = left.map(({ number }) => number).join(', ')
-    const text = left.map(({ depth, deviation }) => errorText(depth!, deviation)).join(', ')
+    const text = left.map(({ depth, deviation }) => errorText(depth!, deviation, DECIMALS)).join('; ')
     return { label: `Barrier from basin ${numbers}`, text, two: false }
   }
   const height = (only.barrier?.energy ?? 0) / thermalEnergy(temperature)
-  // From the lowest basin, whose energy may differ from 0 by what lies outside the data.
-  const fromOther = basins.map(({ depth, energy, deviation }) =>
-    errorText(depth ?? height - energy / thermalEnergy(temperature), deviation ?? only.deviation),
-  )
-  return { label: 'Barrier from basin 1, 2', text: fromOther.join(', '), two: true }
+  const fromEach = basins.map(({ depth, energy }) => depth ?? height - energy / thermalEnergy(temperature))
+  // Both share the top and its error.
+  const text = `${errorText(fromEach[0], null, DECIMALS)}, ${errorText(fromEach[1], only.deviation, DECIMALS)}`
+  return { label: 'Barrier from basin 1, 2', text, two: true }
 }

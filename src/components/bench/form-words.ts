@@ -22,6 +22,7 @@ export function formName(form: FormName): string {
 /** A fitted form in a few words: "two Gaussians in p/sin θ", "cosine series, 3 terms". */
 export function formWords({ form, kind, terms }: Pick<FormFit, 'form' | 'kind' | 'terms'>): string {
   if (terms === null) return NAMES[form]
+  if (form === 'cosine-series-phases') return `${NAMES[form]}, ${terms}`
   if (form !== 'gaussians') return `${NAMES[form]}, ${terms} ${terms === 1 ? 'term' : 'terms'}`
   return `${NUMBERS[terms]} ${terms === 1 ? 'Gaussian' : 'Gaussians'} in ${JACOBIANS[kind]}`
 }

@@ -111,3 +111,18 @@ describe('suggestions on the board', () => {
     expect(() => control('start from a suggestion')).toThrow()
   })
 })
+
+describe('decisions about places on the board', () => {
+  it('are stored with the mapping and taken back by Undo', async () => {
+    await open(THREE_TO_ONE)
+    await click('Split into two terms')
+    expect(pageText()).toContain('B–B–E is split by place into two terms.')
+    expect(pageText()).toContain('B–B–E (2)')
+    expect((await savedDocument()).poolings).toEqual([
+      { types: ['B', 'B', 'E'], choice: 'split', reason: '' },
+    ])
+    await click('Undo')
+    expect(pageText()).not.toContain('B–B–E (2)')
+    expect((await savedDocument()).poolings).toBeUndefined()
+  })
+})

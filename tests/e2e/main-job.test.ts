@@ -193,7 +193,7 @@ describe('the main job, for a polymer of one’s own', () => {
       ['width', 'height'].map((side) => 2 * Number(new RegExp(`^<svg [^>]*${side}="(\\d+)"`).exec(svg)?.[1])),
     )
     const csv = Buffer.from(await exported('CSV')).toString('utf8')
-    expect(csv).toMatch(/^phi low \(deg\),phi high \(deg\),count,p measured \(%\/deg\),/m)
+    expect(csv).toMatch(/^phi low \(deg\),phi high \(deg\),share,p measured \(%\/deg\),/m)
   })
 
   it('judges the bond–angle map separable and records the decision', async () => {

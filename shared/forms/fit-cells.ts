@@ -2,8 +2,7 @@ import type { Potential } from '../inversion'
 import type { FormFit, FormName, FormRefusal, FormRefusalCode, TriedTerms } from './form'
 import type { FormDefinition, FormSolution, TermLimits } from './form-definition'
 import { FORM_DEFINITIONS } from './form-definitions'
-import { goodnessOfFit } from './goodness'
-import { largestDeviation } from './largest-deviation'
+import { akaike, fitRecord } from './fit-record'
 import type { LikelihoodCells } from './likelihood-cells'
 import { RefusedForm } from './refused-form'
 
@@ -22,11 +21,12 @@ export function fitCells(
   const definition = FORM_DEFINITIONS[form]
   const limits = definition.terms
   try {
-    if (limits === null) return fitted(cells, definition, 0, solve(cells, definition, 0, null), reference, [])
+    if (limits === null)
+      return fitRecord(cells, definition, 0, solve(cells, definition, 0, null), reference, [])
     if (terms !== null) {
       const solution = upTo(cells, definition, [limits.least, terms]).at(-1)?.result
       if (solution instanceof RefusedForm) throw solution
-      if (solution !== undefined) return fitted(cells, definition, terms, solution, reference, [])
+      if (solution !== undefined) return fitRecord(cells, definition, terms, solution, reference, [])
     }
     return chosenByAic(cells, definition, limits, reference)
   } catch (error) {
@@ -95,7 +95,7 @@ function chosenByAic(
   const best = trials[Math.max(0, lowest(trials))]
   if (best.result instanceof RefusedForm) throw best.result
   const tried = trials.map((trial): TriedTerms => ({ terms: trial.terms, aic: aicOf(trial) }))
-  return fitted(cells, definition, best.terms, best.result, reference, tried)
+  return fitRecord(cells, definition, best.terms, best.result, reference, tried)
 }
 
 function solve(
@@ -112,58 +112,6 @@ function solve(
     )
   }
   return definition.fit(cells, terms, smaller)
-}
-
-function akaike(
-  definition: FormDefinition,
-  terms: number,
-  { maximum }: FormSolution,
-  independentSamples: number,
-): number {
-  return 2 * definition.freeParameters(terms) - 2 * independentSamples * maximum.value
-}
-
-function fitted(
-  cells: LikelihoodCells,
-  definition: FormDefinition,
-  terms: number,
-  solution: FormSolution,
-  reference: Potential | null,
-  tried: readonly TriedTerms[],
-): FormFit {
-  const { kind, temperature, kT, independentSamples } = cells
-  const { values, maximum, atBound } = solution
-  const size = values.length
-  const freeParameters = definition.freeParameters(terms)
-  const covariance =
-    independentSamples === null ? null : solution.covariance.map((entry) => entry / independentSamples)
-  const energy = (coordinate: number) => definition.energy(values, coordinate, kT)
-  return {
-    outcome: 'fitted',
-    form: definition.form,
-    kind,
-    temperature,
-    terms: definition.terms && terms,
-    formula: definition.formula(kind, terms),
-    parameters: definition.parameters(kind, terms).map(({ name, dimension }, index) => ({
-      name,
-      value: values[index],
-      standardError:
-        covariance === null || atBound[index] ? null : Math.sqrt(covariance[index * size + index]),
-      dimension,
-      atBound: atBound[index],
-    })),
-    covariance,
-    freeParameters,
-    logLikelihood: independentSamples && independentSamples * maximum.value,
-    aic: independentSamples && akaike(definition, terms, solution, independentSamples),
-    goodness: goodnessOfFit(cells, maximum.probabilities, freeParameters),
-    largestDeviation: reference && largestDeviation(cells, energy, reference),
-    independentSamples,
-    tried,
-    populated: cells.populated,
-    variance: cells.deviation ** 2,
-  }
 }
 
 function refusal(

@@ -1,31 +1,12 @@
-import {
-  type AppliedInefficiency,
-  binVolumes,
-  coordinateDomain,
-  type CoordinateKind,
-  type Histogram,
-  jacobian,
-} from '../histogram'
+import { type AppliedInefficiency, coordinateDomain, type CoordinateKind, type Histogram } from '../histogram'
 import { prepareBins, type PreparedBins } from '../inversion'
-import { GAUSS_LEGENDRE } from '../numeric'
 import { thermalEnergy } from '../units'
+import { layOut } from './lay-out-cells'
 
 /** More effective counts than this in the outermost bin, and the distribution goes on beyond it: the histogram cuts it off. */
 const CUT_OFF_COUNT = 3
 /** Share of the populated range that a bond may reach beyond a histogram that does not cut it off; as for a bond table. */
 const BOND_TAIL = 0.4
-/** Most cells a tail is divided into. */
-const TAIL_CELLS = 40
-
-/** With more bins than this they are so narrow that three points integrate as well as five. */
-const FINE_BINS = 100
-/** Gauss–Legendre rule with three points (Abramowitz & Stegun, table 25.4), exact up to degree 5. */
-const THREE_POINTS = [
-  { node: -Math.sqrt(3 / 5), weight: 5 / 9 },
-  { node: 0, weight: 8 / 9 },
-  { node: Math.sqrt(3 / 5), weight: 5 / 9 },
-]
-
 /**
  * What a likelihood is computed on: cells that partition the region a form is normalised over, each with the
  * same number of Gauss–Legendre points. Cells ascend: those of a lower tail, which hold no counts, the histogram's bins, an upper tail.
@@ -118,37 +99,6 @@ export function mergeCells(cells: LikelihoodCells, most: number): LikelihoodCell
   return { ...cells, ...layOut(cells, merged, counts) }
 }
 
-function layOut(
-  { kind, useJacobian, region }: Pick<LikelihoodCells, 'kind' | 'useJacobian' | 'region'>,
-  edges: Float64Array,
-  counts: Float64Array,
-) {
-  const total = counts.reduce((sum, count) => sum + count, 0)
-  const last = edges[edges.length - 1]
-  const width = (last - edges[0]) / counts.length
-  const below = divide(region[0], edges[0], width)
-  const own = Array.from(counts, (_, bin): [number, number] => [edges[bin], edges[bin + 1]])
-  const cells = [...below, ...own, ...divide(last, region[1], width)]
-  const shares = new Float64Array(cells.length)
-  counts.forEach((count, bin) => (shares[below.length + bin] = count / total))
-  const middle = (bin: number) => (edges[bin] + edges[bin + 1]) / 2
-  const mean = counts.reduce((sum, count, bin) => sum + count * middle(bin), 0) / total
-  const square = counts.reduce((sum, count, bin) => sum + count * (middle(bin) - mean) ** 2, 0) / total
-  return {
-    kind,
-    useJacobian,
-    region,
-    ...quadrature(kind, cells, useJacobian),
-    shares,
-    bins: [below.length, below.length + counts.length] as const,
-    edges,
-    volumes: binVolumes(kind, edges, useJacobian),
-    filledBins: counts.reduce((sum, count) => sum + (count > 0 ? 1 : 0), 0),
-    mean,
-    deviation: Math.sqrt(square),
-  }
-}
-
 function sidesCutOff(kind: CoordinateKind, prepared: PreparedBins): [boolean, boolean] {
   const { counts, edges, independentSamples } = prepared
   const [first, end] = ownBins(prepared, [true, true])
@@ -177,27 +127,4 @@ function regionOf(
       ? [Math.max(0, Math.min(first, populated[0] - tail)), Math.max(last, populated[1] + tail)]
       : coordinateDomain(kind)
   return [cutOff[0] ? first : low, cutOff[1] ? last : high]
-}
-
-function divide(low: number, high: number, width: number): [number, number][] {
-  if (!(high > low)) return []
-  const cells = Math.min(TAIL_CELLS, Math.ceil((high - low) / width))
-  const edge = (index: number) => low + ((high - low) * index) / cells
-  return Array.from({ length: cells }, (_, cell) => [edge(cell), edge(cell + 1)])
-}
-
-function quadrature(kind: CoordinateKind, cells: readonly [number, number][], useJacobian: boolean) {
-  const rule = cells.length > FINE_BINS ? THREE_POINTS : GAUSS_LEGENDRE
-  const pointsPerCell = rule.length
-  const points = new Float64Array(cells.length * pointsPerCell)
-  const measures = new Float64Array(points.length)
-  cells.forEach(([low, high], cell) => {
-    const half = (high - low) / 2
-    rule.forEach(({ node, weight }, index) => {
-      const place = cell * pointsPerCell + index
-      points[place] = low + half + node * half
-      measures[place] = weight * half * (useJacobian ? jacobian(kind, points[place]) : 1)
-    })
-  })
-  return { points, pointsPerCell, measures }
 }

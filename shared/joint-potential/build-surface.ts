@@ -1,3 +1,4 @@
+import { coordinateDomain, foldDihedral } from '../histogram'
 import type { SmoothJointDensity } from '../smoothing'
 import { thermalEnergy } from '../units'
 import { holdUp } from './hold-up'
@@ -6,6 +7,8 @@ import { type JointAxis, jointEnergy, type JointSurface } from './joint-surface'
 
 /** Beyond its data a surface bends at least by this share of kT/σ², the stiffness of a spring with the spread of the data. */
 const LEAST_STIFFNESS = 0.5
+/** A surface that still falls at the end of its bins turns within its last splines, so many segments beyond. */
+const SEARCH_BEYOND = 3
 /** The least value is looked for on a grid of so many points a side, which then shrinks by this factor so many times. */
 const SEARCH_POINTS = 9
 const SEARCH_SHRINK = 4
@@ -62,33 +65,48 @@ function varianceOf({ alone: { counts, midpoints } }: JointAxisBins): number {
   return counts.reduce((sum, count, bin) => sum + count * (midpoints[bin] - mean) ** 2, 0) / total
 }
 
-/** The lowest of all midpoints and corners of the fitted cells, then ever finer grids around it. */
+/** The lowest of all midpoints and corners of the fitted cells and those beside them, then ever finer grids around it. */
 function leastPoint(surface: JointSurface, { axes: [x, y] }: JointBins): SurfacePoint {
-  let best = lowest(surface, placesOf(x), placesOf(y))
-  let reach = [widest(x.geometry.edges), widest(y.geometry.edges)]
+  const [xPlaces, yPlaces] = [placesOf(surface.axes[0], x), placesOf(surface.axes[1], y)]
+  let best = lowest(surface, xPlaces, yPlaces)
+  let reach = [widest(xPlaces), widest(yPlaces)]
   for (let round = 0; round < SEARCH_ROUNDS; round++) {
-    const finer = lowest(surface, around(x, best.x, reach[0]), around(y, best.y, reach[1]))
+    const finer = lowest(
+      surface,
+      around(xPlaces, surface.axes[0], best.x, reach[0]),
+      around(yPlaces, surface.axes[1], best.y, reach[1]),
+    )
     if (finer.energy < best.energy) best = finer
     reach = reach.map((length) => length / SEARCH_SHRINK)
   }
   return best
 }
 
-function placesOf({ geometry: { edges, midpoints } }: JointAxisBins): number[] {
-  return [...edges, ...midpoints]
+/** Ascending; inside the domain of the kind. */
+function placesOf({ kind, segment, periodic }: JointAxis, { geometry }: JointAxisBins): number[] {
+  const { edges, midpoints } = geometry
+  const [low, high] = coordinateDomain(kind)
+  const halves = periodic
+    ? []
+    : Array.from({ length: 2 * SEARCH_BEYOND }, (_, half) => (half + 1) * 0.5 * segment)
+  const below = halves.map((distance) => Math.max(low, edges[0] - distance))
+  const above = halves.map((distance) => Math.min(high, edges[edges.length - 1] + distance))
+  return [...new Set([...edges, ...midpoints, ...below, ...above])].sort((one, other) => one - other)
 }
 
-function widest(edges: Float64Array): number {
-  return edges.reduce((most, edge, index) => (index === 0 ? 0 : Math.max(most, edge - edges[index - 1])), 0)
+function widest(places: readonly number[]): number {
+  return places.reduce(
+    (most, place, index) => (index === 0 ? 0 : Math.max(most, place - places[index - 1])),
+    0,
+  )
 }
 
-function around({ geometry: { edges, period } }: JointAxisBins, centre: number, reach: number): number[] {
+function around(places: readonly number[], { periodic }: JointAxis, centre: number, reach: number): number[] {
   const half = (SEARCH_POINTS - 1) / 2
-  const [low, high] = [edges[0], edges[edges.length - 1]]
+  const [low, high] = [places[0], places[places.length - 1]]
   return Array.from({ length: SEARCH_POINTS }, (_, point) => {
     const place = centre + ((point - half) / half) * reach
-    if (period === null) return Math.min(Math.max(place, low), high)
-    return place < low ? place + period : place >= high ? place - period : place
+    return periodic ? foldDihedral(place) : Math.min(Math.max(place, low), high)
   })
 }
 

@@ -70,12 +70,18 @@ interface Line {
 
 /** Steps along the axes from each coefficient to the nearest supported one. */
 function cityBlockDistances([x, y]: readonly [JointAxis, JointAxis], supported: boolean[]): Int32Array {
-  const distances = new Int32Array(supported.length).fill(x.size + y.size)
+  const unknown = x.size + y.size
+  const distances = new Int32Array(supported.length).fill(unknown)
   let front = Array.from(supported.keys()).filter((place) => supported[place])
-  for (let steps = 0; front.length > 0; steps++) {
-    const reached = front.filter((place) => distances[place] > steps)
-    reached.forEach((place) => (distances[place] = steps))
-    front = reached.flatMap((place) => neighbours([x, y], place))
+  front.forEach((place) => (distances[place] = 0))
+  for (let steps = 1; front.length > 0; steps++) {
+    const next: number[] = []
+    for (const place of front.flatMap((each) => neighbours([x, y], each))) {
+      if (distances[place] !== unknown) continue
+      distances[place] = steps
+      next.push(place)
+    }
+    front = next
   }
   return distances
 }

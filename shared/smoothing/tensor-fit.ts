@@ -1,9 +1,10 @@
 import { InvalidInputError } from '../errors'
-import { type BandedFactor, bandedSolve, selectedInverse } from '../numeric'
+import { type BandedFactor, bandedSolve } from '../numeric'
 import { NEWTON_STEP } from './penalised-fit'
-import { axisRoughness, penaltyRanks, type PerAxis } from './tensor-penalty'
-import { tensorProject, tensorQuadratic, tensorValues } from './tensor-products'
-import { factorTensor, penaltyTraces, type TensorSystem, tensorSums } from './tensor-system'
+import { type TensorEvidence, tensorEvidence } from './tensor-evidence'
+import { axisRoughness, type PerAxis } from './tensor-penalty'
+import { tensorProject, tensorValues } from './tensor-products'
+import { factorTensor, type TensorSystem } from './tensor-system'
 
 /** Below this a step that no longer shrinks is rounding. */
 const ROUNDING = 1e-6
@@ -16,22 +17,14 @@ const MOST_STEPS = 120
 const MOST_HALVINGS = 60
 
 /** A penalised Poisson fit of a surface: counts n with mean μ = V exp(η) in each cell, η = B_x C B_y′. */
-export interface TensorFit {
+export interface TensorFit extends TensorEvidence {
   /** C, index ix · size_y + iy. */
   readonly coefficients: Float64Array
   /** η at the cell midpoints. */
   readonly eta: Float64Array
   readonly means: Float64Array
-  /** Posterior variance of η in each cell, b′H⁻¹b. */
-  readonly variances: Float64Array
-  /** tr(H⁻¹ B′ diag(μ) B) */
-  readonly effectiveDimension: number
   /** |Dβ|² along each axis. */
   readonly roughnesses: PerAxis<number>
-  /** Effective parameters each penalty leaves of those it sees: λ tr(S⁻S_m) − λ tr(H⁻¹S_m). */
-  readonly excesses: PerAxis<number>
-  /** 2 Σ [n ln(n/μ) − (n − μ)] */
-  readonly deviance: number
   readonly factor: BandedFactor
 }
 
@@ -70,7 +63,9 @@ export function tensorFit(
     if (step === MOST_STEPS) throw undetermined()
     previous = moved
   }
-  return { ...judged(problem, state, factor), factor }
+  const { coefficients, eta, means, roughnesses } = state
+  const evidence = tensorEvidence(system, counts, means, lambdas, factor)
+  return { coefficients, eta, means, roughnesses, ...evidence, factor }
 }
 
 interface Problem {
@@ -140,34 +135,6 @@ function firstGuess({ system, counts, offsets, lambdas }: Problem): Float64Array
   pull.forEach((value, index) => (right[places[index]] = value + hold.strength * hold.level))
   const solved = bandedSolve(factorTensor(system, weights, lambdas), right)
   return pull.map((_, index) => solved[places[index]])
-}
-
-function judged(
-  { system, counts, lambdas }: Problem,
-  state: State,
-  factor: BandedFactor,
-): Omit<TensorFit, 'factor'> {
-  const { x, y } = system
-  const sums = tensorSums(system, selectedInverse(factor))
-  const variances = tensorQuadratic(x.basis, y.basis, sums)
-  const ranks = penaltyRanks(x, y, lambdas)
-  const traces = penaltyTraces(system, sums)
-  let [effectiveDimension, deviance] = [0, 0]
-  for (let cell = 0; cell < counts.length; cell++) {
-    const [count, mean] = [counts[cell], state.means[cell]]
-    effectiveDimension += mean * variances[cell]
-    deviance += 2 * (mean - count + (count > 0 ? count * Math.log(count / mean) : 0))
-  }
-  return {
-    coefficients: state.coefficients,
-    eta: state.eta,
-    means: state.means,
-    variances,
-    effectiveDimension,
-    roughnesses: state.roughnesses,
-    excesses: [ranks[0] - lambdas[0] * traces[0], ranks[1] - lambdas[1] * traces[1]],
-    deviance,
-  }
 }
 
 function largest(values: Float64Array): number {

@@ -11,6 +11,11 @@ import { tensorGram } from './tensor-products'
  * Newton's method goes by the gradient.
  */
 const LEAST_PIVOT = 1e-15
+/**
+ * Where even that is lost, as around a cell that outweighs all others, the diagonal is strengthened by the first of these shares
+ * that helps: steps along the lost directions then come out shorter, and Newton's method takes more of them.
+ */
+const DAMPINGS = [0, 1e-13, 1e-11, 1e-9]
 
 /** The matrix H = B′WB + λx Dx′Dx ⊗ I + λy I ⊗ Dy′Dy + hold of a tensor basis as a band. */
 export interface TensorSystem {
@@ -72,16 +77,17 @@ export function factorTensor(
   const { x, y, hold, size, halfBandwidth, slots, twins } = system
   const products = tensorGram(x.basis, y.basis, weights)
   addPenalty(system, products, lambdas, hold.strength)
-  const matrix = new Float64Array(size * (halfBandwidth + 1))
-  for (let index = 0; index < products.length; index++) {
-    matrix[slots[index]] += products[index]
-    if (twins[index] >= 0) matrix[twins[index]] += products[index]
+  for (const damping of DAMPINGS) {
+    const matrix = new Float64Array(size * (halfBandwidth + 1))
+    for (let index = 0; index < products.length; index++) {
+      matrix[slots[index]] += products[index]
+      if (twins[index] >= 0) matrix[twins[index]] += products[index]
+    }
+    for (let row = 0; row < size; row++) matrix[row * (halfBandwidth + 1)] *= 1 + damping
+    const factor = factorBanded(matrix, size, halfBandwidth, LEAST_PIVOT)
+    if (factor !== null) return factor
   }
-  const factor = factorBanded(matrix, size, halfBandwidth, LEAST_PIVOT)
-  if (factor === null) {
-    throw new InvalidInputError('SINGULAR_SYSTEM', 'The counts do not determine a smooth surface.')
-  }
-  return factor
+  throw new InvalidInputError('SINGULAR_SYSTEM', 'The counts do not determine a smooth surface.')
 }
 
 function addPenalty(

@@ -7,6 +7,7 @@ import {
   jointPotential,
   type JointPotentialSettings,
   jointSlopes,
+  jointTable,
 } from '@shared/joint-potential'
 import { createRandom } from '@shared/numeric'
 import { thermalEnergy } from '@shared/units'
@@ -33,6 +34,7 @@ const ANGLE_TURN: JointCase = {
   yEdges: edgesOf(-Math.PI, Math.PI, 36),
   energy: (theta, phi) => 0.5 * ((theta - 1.9) / 0.2 - 0.6 * Math.cos(phi)) ** 2 + Math.cos(3 * phi),
 }
+const ANY = { low: null, high: null }
 const bondAngle = (seed = 1) => jointCase(BOND_ANGLE, 20_000, seed)
 const angleTurn = (seed = 1) => jointCase(ANGLE_TURN, 20_000, seed)
 const potentialOf = (joint: JointHistogram, settings = GIVEN) => jointPotential(joint, 400, settings)
@@ -176,6 +178,33 @@ describe('a joint potential', { timeout: 60_000 }, () => {
         const energies = Array.from({ length: 50 }, (_, step) => line(step / 49))
         energies.slice(1).forEach((energy, step) => expect(energy).toBeGreaterThan(energies[step]))
       }
+    }
+  })
+
+  it('is finite with least value 0 for scattered counts, a spike, a wall and a thin ridge', () => {
+    const random = createRandom(11)
+    const shapes: ((ix: number, iy: number) => number)[] = [
+      () => (random.uniform() < 0.05 ? 1 + random.integer(4) : 0),
+      (ix, iy) => (ix === 3 && iy === 3 ? 1e9 : random.poisson(0.3)),
+      (ix, iy) => (ix > 14 && iy > 10 ? 1e5 : 0),
+      (ix, iy) => random.poisson(1e6 * Math.exp(-0.5 * ((ix - iy) / 0.8) ** 2)),
+    ]
+    for (const shape of shapes) {
+      const { xEdges, yEdges } = BOND_ANGLE
+      const joint = createJointHistogram({
+        kinds: ['bond', 'angle'],
+        xEdges,
+        yEdges,
+        weights: Array.from({ length: 32 * 36 }, (_, cell) => shape(Math.floor(cell / 36), cell % 36)),
+        content: 'count',
+      })
+      const { surface, knots, smoothing } = potentialOf(joint, DEFAULT_JOINT_SETTINGS)
+      const table = jointTable(surface, { x: { ...ANY, rows: 41 }, y: { ...ANY, rows: 41 } })
+      const values = [...table.energies, ...table.xForces, ...table.yForces, ...knots.deviations]
+      expect(values.every(Number.isFinite)).toBe(true)
+      // Rounding of energies up to a million kJ/mol.
+      expect(Math.min(...table.energies)).toBeGreaterThan(-1e-6)
+      expect(smoothing.effectiveDimension).toBeGreaterThan(8.9)
     }
   })
 

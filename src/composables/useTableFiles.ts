@@ -59,9 +59,9 @@ export function useTableFiles(query: () => TableUnitQuery | null): {
   let leaving = new AbortController()
   onScopeDispose(() => leaving.abort())
 
-  const ready = computed(() => workbench.terms.filter(({ standing }) => standing === 'inverted'))
+  const ready = computed(() => workbench.usedTerms.filter(({ standing }) => standing === 'inverted'))
   const missing = computed(() =>
-    workbench.terms.filter(({ standing, current }) => current && standing !== 'inverted'),
+    workbench.usedTerms.filter(({ standing, current }) => current && standing !== 'inverted'),
   )
   const joint = computed(() => pairs.value.filter(({ decision }) => decision === 'joint'))
 

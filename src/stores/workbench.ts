@@ -2,6 +2,7 @@ import { computed, shallowRef } from 'vue'
 import { defineStore } from 'pinia'
 import type { Mapping, Term } from '@shared/contracts/mapping'
 import type { Polymer, StatePoint } from '@shared/contracts/polymer'
+import { usedTerms as termsInUse } from '@shared/mapping'
 import { getMapping, listMappings, listTerms } from '@/api/mappings'
 import { getPolymer } from '@/api/polymers'
 import { listStatePoints } from '@/api/state-points'
@@ -17,6 +18,10 @@ export const useWorkbenchStore = defineStore('workbench', () => {
   const statePoint = shallowRef<StatePoint | null>(null)
   const terms = shallowRef<readonly Term[]>([])
 
+  /** The terms that the mapping does not leave out: what the rooms after the board work with. */
+  const usedTerms = computed(() =>
+    mapping.value === null ? terms.value : termsInUse(mapping.value.document, terms.value),
+  )
   const canWrite = computed(() => session.canWrite(polymer.value?.groupId))
 
   /** Only the answer to the latest question counts: a slow earlier one must not overwrite it. */
@@ -101,6 +106,7 @@ export const useWorkbenchStore = defineStore('workbench', () => {
     mapping,
     statePoint,
     terms,
+    usedTerms,
     canWrite,
     clear,
     loadPolymer,

@@ -51,12 +51,16 @@ beforeEach(() => {
 })
 enableAutoUnmount(afterEach)
 
-const open = async (shown: Term | null, role: 'modeller' | 'reviewer' = 'modeller') => {
+const open = async (
+  shown: Term | null,
+  role: 'modeller' | 'reviewer' = 'modeller',
+  document: Mapping['document'] = mappingDocument,
+) => {
   const membership = { groupId: 'group', groupName: 'Adhesives', role, demo: false }
   useSessionStore().user = { id: 'me', name: 'Mo', email: 'mo@example.org', memberships: [membership] }
   const workbench = useWorkbenchStore()
   workbench.polymer = { id: 'polymer', groupId: 'group' } as Polymer
-  workbench.mapping = { id: 'mapping', document: mappingDocument } as Mapping
+  workbench.mapping = { id: 'mapping', document } as Mapping
   workbench.statePoints = [statePoint]
   workbench.statePoint = statePoint
   workbench.terms = [bond, angle, bare]
@@ -65,6 +69,7 @@ const open = async (shown: Term | null, role: 'modeller' | 'reviewer' = 'modelle
     routes: [
       { path: '/bench/:termId?', name: 'bench', component: BenchView },
       { path: '/intake', name: 'intake', component: { template: '<p />' } },
+      { path: '/mapping', name: 'mapping', component: { template: '<p />' } },
     ],
   })
   await router.push(`/bench/${shown?.id ?? ''}?statePoint=hot`)
@@ -87,6 +92,16 @@ describe('BenchView', () => {
     const { router, wrapper } = await open(null)
     expect(router.currentRoute.value.params['termId']).toBe(bond.id)
     expect(wrapper.find('h1').text()).toBe('B–E')
+  })
+
+  it('keeps terms that the mapping leaves out off the rail, and says so at their address', async () => {
+    const { types } = bond
+    const termChoices = [{ types, placeKey: '', use: 'left out' as const, reason: 'why' }]
+    const { router, wrapper } = await open(bond, 'modeller', { ...mappingDocument, termChoices })
+    expect(wrapper.text()).toContain('B–E is left out of the mapping')
+    await router.push('/bench?statePoint=hot')
+    await vi.waitFor(() => expect(router.currentRoute.value.params['termId']).toBe(angle.id))
+    expect(wrapper.find(`[data-term="${bond.id}"]`).exists()).toBe(false)
   })
 
   it('goes from term to term with J and K', async () => {

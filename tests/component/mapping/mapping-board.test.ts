@@ -126,3 +126,55 @@ describe('decisions about places on the board', () => {
     expect((await savedDocument()).poolings).toBeUndefined()
   })
 })
+
+describe('terms that share a bond or a bead', () => {
+  const heads = (): string[] =>
+    [...document.querySelectorAll('.group__title')].map((each) => (each.textContent ?? '').trim())
+  const checkbox = (name: string): HTMLInputElement => {
+    const label = [...document.querySelectorAll<HTMLLabelElement>('.group__use')].find(
+      (each) => each.textContent?.trim() === name,
+    )
+    if (!label) throw new Error(`No term is called ${name}`)
+    return label.querySelector('input') as HTMLInputElement
+  }
+
+  it('are proposed without redundancy; the proposal is taken in one step and counts in the coverage', async () => {
+    await open(THREE_TO_ONE)
+    expect(heads()).toContain('Dihedrals about B–B')
+    expect(pageText()).toContain('Each unit has 9 degrees of freedom')
+    await click(/^Take the proposal for Dihedrals about B–B/)
+    expect(checkbox('B–B–B–B').checked).toBe(true)
+    expect(checkbox('B–B–B–E').checked).toBe(false)
+    expect(document.querySelector('[data-term="dihedral B–B–B–E"]')?.textContent).toContain('left out')
+    expect(pageText()).toMatch(/none has data yet, \d left out/)
+    expect(pageText()).toMatch(/Left out: .*B–B–B–E/)
+    const { termChoices } = await savedDocument()
+    expect(termChoices?.find(({ types }) => types.join() === 'B,B,B,E')).toMatchObject({ use: 'left out' })
+    await click('Undo')
+    expect(pageText()).not.toMatch(/\d left out/)
+  })
+
+  it('can be chosen one by one, each with a reason', async () => {
+    await open(THREE_TO_ONE)
+    checkbox('B–B–B–E').click()
+    await flushPromises()
+    expect(pageText()).toContain('none has data yet, 1 left out')
+    const why = document.querySelector<HTMLInputElement>('[aria-label="Why B–B–B–E is left out"]')
+    if (!why) throw new Error('The reason has a field.')
+    why.value = 'turns with B–B–B–B'
+    why.dispatchEvent(new Event('change', { bubbles: true }))
+    await flushPromises()
+    expect((await savedDocument()).termChoices).toEqual([
+      { types: ['B', 'B', 'B', 'E'], placeKey: '', use: 'left out', reason: 'turns with B–B–B–B' },
+    ])
+    checkbox('B–B–B–E').click()
+    await flushPromises()
+    expect(pageText()).not.toMatch(/\d left out/)
+  })
+
+  it('are only shown to those who read', async () => {
+    await open(THREE_TO_ONE, false)
+    expect(checkbox('B–B–B–E').disabled).toBe(true)
+    expect(() => control(/^Take the proposal/)).toThrow()
+  })
+})

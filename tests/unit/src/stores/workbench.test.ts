@@ -44,6 +44,18 @@ describe('useWorkbenchStore', () => {
     expect(listTerms).toHaveBeenCalledWith('mapping', null)
   })
 
+  it('keeps terms that the mapping leaves out apart from those in use', async () => {
+    const [used, gone] = ['B–B', 'B–E'].map((name) => ({ id: name, types: name.split('–') }) as Term)
+    const choice = { types: ['B', 'E'], placeKey: '', use: 'left out' as const, reason: 'why' }
+    const document = { version: 1 as const, beads: [], termChoices: [choice] }
+    vi.spyOn(mappings, 'getMapping').mockResolvedValue({ ...board, document })
+    listTerms.mockResolvedValue([used, gone])
+    const workbench = useWorkbenchStore()
+    await workbench.load('polymer', 'mapping', 'cold')
+    expect(workbench.terms).toEqual([used, gone])
+    expect(workbench.usedTerms).toEqual([used])
+  })
+
   it('does not let a slow answer overwrite a later one', async () => {
     const workbench = useWorkbenchStore()
     await workbench.load('polymer', 'mapping', 'cold')

@@ -3,6 +3,7 @@ import {
   jointDistributionSchema,
   jointDistributionUploadSchema,
 } from '../../shared/contracts/distribution'
+import { jointTableQuerySchema } from '../../shared/contracts/potential'
 import { route } from './route'
 
 export const jointDistributionRoutes = [
@@ -45,6 +46,17 @@ export const jointDistributionRoutes = [
     answer: { status: 200, download: 'application/octet-stream' },
     handle: ({ services, member, params }) =>
       services.jointDistributions.file(member, params.jointDistributionId),
+  }),
+  route({
+    method: 'get',
+    path: '/api/joint-distributions/:jointDistributionId/table',
+    summary: 'The table of the smoothed joint potential as text: both coordinates, energy, both forces',
+    access: { may: 'read', at: 'jointDistribution' },
+    query: jointTableQuerySchema,
+    answer: { status: 200, download: 'text/plain; charset=utf-8' },
+    readsContent: true,
+    handle: ({ services, member, params, query }) =>
+      services.jointTables.forPair(member, params.jointDistributionId, query),
   }),
   route({
     method: 'put',

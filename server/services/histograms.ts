@@ -1,6 +1,7 @@
-import type { Histogram } from '../../shared/histogram'
+import type { Histogram, JointHistogram } from '../../shared/histogram'
 import type { CoordinateKind } from '../../shared/units'
 import type { Distribution } from '../entities/distribution.entity'
+import type { JointDistribution } from '../entities/joint-distribution.entity'
 import { sha256 } from './hashes'
 
 /**
@@ -17,6 +18,19 @@ export function histogramOf(kind: CoordinateKind, distribution: Distribution): H
     content,
     independentSamples: settings.independentSamples,
     blocks,
+  }
+}
+
+/** A stored joint distribution as the core takes it: it was validated by the reader when it came in. */
+export function jointHistogramOf(joint: JointDistribution): JointHistogram {
+  const { settings, xEdges, yEdges, weights, content, independentSamples } = joint
+  return {
+    kinds: settings.kinds,
+    xEdges: Float64Array.from(xEdges),
+    yEdges: Float64Array.from(yEdges),
+    weights: Float64Array.from(weights),
+    content,
+    independentSamples,
   }
 }
 

@@ -72,7 +72,7 @@ export function writeTableFile(source: TableSource, units: TableFileUnits): Tabl
 }
 
 /** The beads of the term with their unit along the chain, at each place where it stands. */
-function beadOrder({ document }: Mapping, { places }: Term): string {
+export function beadOrder({ document }: Mapping, { places }: Term): string {
   const names = new Map(document.beads.map(({ id, name }) => [id, name]))
   return places
     .map((place) => place.map(({ bead, unit }) => `${names.get(bead) ?? bead}(${unit})`).join(' '))

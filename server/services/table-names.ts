@@ -14,14 +14,25 @@ export function tableFileName({ kind, types, temperature }: NamedTable): string 
   return `${kind}_${types.join('-')}_${formatNumber(temperature)}K.txt`
 }
 
+/** What the name of a joint table file says: the bead types of both terms. */
+export interface NamedJointTable {
+  readonly types: readonly [readonly string[], readonly string[]]
+  /** K */
+  readonly temperature: number
+}
+
+/** As in joint_B-E_B-E-H_400K.txt. */
+export function jointTableFileName({ types, temperature }: NamedJointTable): string {
+  return `joint_${types.map((each) => each.join('-')).join('_')}_${formatNumber(temperature)}K.txt`
+}
+
 /**
  * Names for files that lie in one folder. Names that differ by capitals only count as equal, since some systems take them so:
  * the second one gets _2.
  */
-export function tableFileNames(tables: readonly NamedTable[]): string[] {
+export function namesInOneFolder(names: readonly string[]): string[] {
   const taken = new Set<string>()
-  return tables.map((table) => {
-    const name = tableFileName(table)
+  return names.map((name) => {
     let free = name
     for (let copy = 2; taken.has(free.toLowerCase()); copy++) free = name.replace(/\.txt$/, `_${copy}.txt`)
     taken.add(free.toLowerCase())

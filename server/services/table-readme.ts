@@ -9,12 +9,21 @@ export interface ReadmeInput {
   readonly source: Pick<TableSource, 'polymer' | 'mapping' | 'statePoint' | 'invented'>
   readonly units: TableFileUnits
   readonly files: readonly { readonly name: string; readonly term: Term; readonly warnings: number }[]
+  /** Tables of two terms together. */
+  readonly joint: readonly {
+    readonly name: string
+    readonly terms: readonly [Term, Term]
+    readonly warnings: number
+  }[]
   /** Terms without a table, and why. */
   readonly missing: readonly { readonly term: Term; readonly reason: string }[]
+  /** Pairs that a joint potential was decided for, but whose data give none, and why. */
+  readonly jointMissing: readonly { readonly terms: readonly [Term, Term]; readonly reason: string }[]
 }
 
 /** The text that lies beside the tables of an archive and explains them to whoever did not make them. */
-export function writeReadme({ source, units, files, missing }: ReadmeInput): string {
+export function writeReadme(input: ReadmeInput): string {
+  const { source, units, files, joint, missing } = input
   const { polymer, mapping, statePoint } = source
   const rest = statePointText(statePoint)
   const [length, angle, energy] = [unitWord(units.length), unitWord(units.angle), unitWord(units.energy)]
@@ -29,7 +38,11 @@ export function writeReadme({ source, units, files, missing }: ReadmeInput): str
     'Files',
     ...files.map(
       ({ name, term, warnings }) =>
-        `  ${name}\n    ${term.kind} ${termName(term.types)}${warnings > 0 ? `; ${warnings} warning${warnings > 1 ? 's' : ''}, stated in the file` : ''}`,
+        `  ${name}\n    ${term.kind} ${termName(term.types)}${warningCount(warnings)}`,
+    ),
+    ...joint.map(
+      ({ name, terms: [x, y], warnings }) =>
+        `  ${name}\n    joint potential of ${x.kind} ${termName(x.types)} (x) with ${y.kind} ${termName(y.types)} (y); it takes the place of both${warningCount(warnings)}`,
     ),
     '',
     ...(missing.length > 0
@@ -39,8 +52,20 @@ export function writeReadme({ source, units, files, missing }: ReadmeInput): str
           '',
         ]
       : ['Every term of the mapping has a table.', '']),
+    ...input.jointMissing.flatMap(({ terms: [x, y], reason }) => [
+      `A joint potential was decided for ${x.kind} ${termName(x.types)} with ${y.kind} ${termName(y.types)}, but there is no table:`,
+      `  ${reason}`,
+      '',
+    ]),
     'Columns',
-    '  Each file has three columns, separated by blanks: coordinate, energy, force. Lines that start with # are comments.',
+    '  The file of a term has three columns, separated by blanks: coordinate, energy, force. Lines that start with # are comments.',
+    ...(joint.length > 0
+      ? [
+          '  A joint file has five: x, y, energy, and the forces along x and along y. x stays within a block; blocks are parted by',
+          '  blank lines. It is the smoothed joint potential at one state point: use it in place of both single tables, not beside',
+          '  them, and validate it first.',
+        ]
+      : []),
     `  A bond is the distance between two beads in ${length}.`,
     `  An angle is the internal angle at the middle bead in ${angle}: ${units.angle === 'degree' ? '180' : 'pi'} is straight.`,
     `  A dihedral is in ${angle}: 0 is cis, ${units.angle === 'degree' ? '180' : 'pi'} is trans, its sign follows the right-hand rule (IUPAC).`,
@@ -60,4 +85,8 @@ export function writeReadme({ source, units, files, missing }: ReadmeInput): str
     '  The checksum in each file is the SHA-256 of its rows, without the comment lines.',
     '',
   ].join('\n')
+}
+
+function warningCount(warnings: number): string {
+  return warnings > 0 ? `; ${warnings} warning${warnings > 1 ? 's' : ''}, stated in the file` : ''
 }

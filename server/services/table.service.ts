@@ -11,9 +11,10 @@ import type { StatePoint } from '../entities/state-point.entity'
 import { Term } from '../entities/term.entity'
 import { HttpError, notFound } from '../errors/http-error'
 import { findInversionInput, type InversionInput } from './inversion-input'
+import { type JointOutcome, jointOutcomes, jointTableName } from './joint-table.service'
 import type { Download, Member } from './member'
 import { type TableFileUnits, type TableSource, writeTableFile } from './table-file'
-import { fileNamePart, tableFileName, tableFileNames } from './table-names'
+import { fileNamePart, namesInOneFolder, tableFileName } from './table-names'
 import { writeReadme } from './table-readme'
 import { findStatePoint, findTerm } from './term-context'
 
@@ -63,7 +64,7 @@ export class TableService {
   }
 
   /**
-   * All tables of a mapping at a state point as a zip archive, with a README.
+   * All tables of a mapping at a state point as a zip archive, joint ones where that was decided, with a README.
    *
    * @throws {HttpError} NOT_FOUND when no term has a table
    */
@@ -85,10 +86,11 @@ export class TableService {
       if (outcome.reason === null) sources.push({ ...background, ...outcome, term })
       else missing.push({ term, reason: outcome.reason })
     }
-    if (sources.length === 0) {
+    const joint = await jointOutcomes(this.dataSource.manager, background, units)
+    if (sources.length === 0 && joint.every(({ file }) => file === null)) {
       throw new HttpError('NOT_FOUND', 'No term has a table yet: save a potential on the bench first.')
     }
-    return pack(background, sources, missing, units)
+    return pack({ background, sources, joint, missing }, units)
   }
 
   private async background(groupId: string, mappingId: string, statePointId: string): Promise<Background> {
@@ -115,26 +117,44 @@ export class TableService {
   }
 }
 
-function pack(
-  background: Background,
-  sources: readonly TableSource[],
-  missing: readonly { readonly term: Term; readonly reason: string }[],
-  units: TableFileUnits,
-): Download {
+/** What goes into an archive. */
+interface Contents {
+  readonly background: Background
+  readonly sources: readonly TableSource[]
+  /** Pairs that a joint potential was decided for. */
+  readonly joint: readonly JointOutcome[]
+  readonly missing: readonly { readonly term: Term; readonly reason: string }[]
+}
+
+function pack({ background, sources, joint, missing }: Contents, units: TableFileUnits): Download {
   const { polymer, mapping, statePoint } = background
   const { temperature } = statePoint
-  const names = tableFileNames(sources.map(({ term }) => ({ ...term, temperature })))
-  const tables = sources.map((source) => writeTableFile(source, units))
-  const files = sources.map(({ term }, index) => ({
-    name: names[index],
-    term,
-    warnings: tables[index].inversion.warnings.length,
-  }))
-  const readme = writeReadme({ source: background, units, files, missing })
-  const latest = new Date(Math.max(...sources.map(({ savedAt }) => savedAt.getTime())))
+  const tables = sources.map((source) => {
+    const { text, inversion } = writeTableFile(source, units)
+    return { text, time: source.savedAt, term: source.term, warnings: inversion.warnings.length }
+  })
+  const jointTables = joint.flatMap(({ source, file }) =>
+    file === null ? [] : [{ ...file, time: source.joint.uploadedAt, terms: source.terms }],
+  )
+  const all = [...tables, ...jointTables]
+  const names = namesInOneFolder([
+    ...tables.map(({ term }) => tableFileName({ ...term, temperature })),
+    ...jointTables.map(({ terms }) => jointTableName({ terms, statePoint })),
+  ])
+  const readme = writeReadme({
+    source: background,
+    units,
+    files: tables.map((table, index) => ({ ...table, name: names[index] })),
+    joint: jointTables.map((table, index) => ({ ...table, name: names[tables.length + index] })),
+    missing,
+    jointMissing: joint.flatMap(({ source: { terms }, reason }) =>
+      reason === null ? [] : [{ terms, reason }],
+    ),
+  })
+  const latest = new Date(Math.max(...all.map(({ time }) => time.getTime())))
   const archive: Zippable = { 'README.txt': [Buffer.from(readme), { mtime: archiveTime(latest) }] }
-  sources.forEach(({ savedAt }, index) => {
-    archive[names[index]] = [Buffer.from(tables[index].text), { mtime: archiveTime(savedAt) }]
+  all.forEach(({ text, time }, index) => {
+    archive[names[index]] = [Buffer.from(text), { mtime: archiveTime(time) }]
   })
   const parts = [fileNamePart(polymer.name), fileNamePart(mapping.name), `${formatNumber(temperature)}K`]
   return {

@@ -92,3 +92,9 @@ export const tableQuerySchema = z
   })
   .meta({ id: 'TableQuery' })
 export type TableQuery = z.input<typeof tableQuerySchema>
+
+/** Query of GET /api/joint-distributions/:jointDistributionId/table, whose state point is that of the data. */
+export const jointTableQuerySchema = tableQuerySchema
+  .omit({ statePoint: true })
+  .meta({ id: 'JointTableQuery' })
+export type JointTableQuery = z.input<typeof jointTableQuerySchema>

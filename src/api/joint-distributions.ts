@@ -4,6 +4,7 @@ import type {
   JointDistributionUpload,
   Pair,
 } from '@shared/contracts/distribution'
+import type { JointTableQuery } from '@shared/contracts/potential'
 import { apiUrl, http, uploadForm } from './http'
 
 /** Pairs of terms that share a bead, bonds with angles first, with what is known of each at one state point. */
@@ -33,6 +34,10 @@ export const recordDecision = (
   decision: DecisionWrite,
 ): Promise<JointDistribution> =>
   http.put(`/joint-distributions/${jointDistributionId}/decision`, { json: decision })
+
+/** Address of the table of the joint potential as a file; follow it to download. */
+export const jointTableUrl = (jointDistributionId: string, query: JointTableQuery): string =>
+  apiUrl(`/joint-distributions/${jointDistributionId}/table`, { ...query })
 
 export const jointDistributionFileUrl = (jointDistributionId: string): string =>
   apiUrl(`/joint-distributions/${jointDistributionId}/file`)

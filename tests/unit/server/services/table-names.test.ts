@@ -1,5 +1,10 @@
 import { describe, expect, it } from 'vitest'
-import { fileNamePart, tableFileName, tableFileNames } from '../../../../server/services/table-names'
+import {
+  fileNamePart,
+  jointTableFileName,
+  namesInOneFolder,
+  tableFileName,
+} from '../../../../server/services/table-names'
 
 const table = (types: string[], temperature = 400) => ({ kind: 'bond' as const, types, temperature })
 
@@ -9,8 +14,18 @@ describe('names of table files', () => {
     expect(tableFileName(table(['B', 'E'], 298.15))).toBe('bond_B-E_298.15K.txt')
   })
 
+  it('of two terms together say both', () => {
+    const types = [
+      ['B', 'E'],
+      ['B', 'E', 'H'],
+    ] as const
+    expect(jointTableFileName({ types, temperature: 400 })).toBe('joint_B-E_B-E-H_400K.txt')
+  })
+
   it('stay apart where capitals do not count', () => {
-    const names = tableFileNames([table(['B', 'E']), table(['b', 'E']), table(['b', 'e']), table(['X', 'Y'])])
+    const names = namesInOneFolder(
+      [table(['B', 'E']), table(['b', 'E']), table(['b', 'e']), table(['X', 'Y'])].map(tableFileName),
+    )
     expect(names).toEqual([
       'bond_B-E_400K.txt',
       'bond_b-E_400K_2.txt',

@@ -1,5 +1,6 @@
 import { z } from 'zod'
 import { openApiDocument } from '../openapi'
+import { comparisonRoutes } from './comparison.routes'
 import { distributionRoutes } from './distribution.routes'
 import { healthRoutes } from './health.routes'
 import { jointDistributionRoutes } from './joint-distribution.routes'
@@ -27,6 +28,7 @@ export const routes: readonly AnyRoute[] = [
   ...sessionRoutes,
   ...polymerRoutes,
   ...mappingRoutes,
+  ...comparisonRoutes,
   ...distributionRoutes,
   ...jointDistributionRoutes,
   ...potentialRoutes,

@@ -1,5 +1,6 @@
 import type { DataSource } from 'typeorm'
 import { AccessService } from './access.service'
+import { ComparisonService } from './comparison.service'
 import { DistributionService } from './distribution.service'
 import { GroupService } from './group.service'
 import { HealthService } from './health.service'
@@ -31,6 +32,7 @@ export function createServices(dataSource: DataSource, { demo, version }: Servic
   const groups = new GroupService(dataSource)
   return {
     access: new AccessService(dataSource),
+    comparisons: new ComparisonService(dataSource),
     distributions: new DistributionService(dataSource),
     groups,
     health: new HealthService(dataSource, version),

@@ -1,6 +1,5 @@
 import { type DataSource, In, IsNull } from 'typeorm'
 import type { Term as TermBody } from '../../shared/contracts/mapping'
-import { termName } from '../../shared/mapping'
 import { Distribution } from '../entities/distribution.entity'
 import { Mapping } from '../entities/mapping.entity'
 import { Potential } from '../entities/potential.entity'
@@ -8,6 +7,7 @@ import { Term } from '../entities/term.entity'
 import { notFound } from '../errors/http-error'
 import { inputSha256 } from './histograms'
 import type { Member } from './member'
+import { storedTermName } from './stored-term-name'
 import { findStatePoint } from './term-context'
 
 /** What is known of a term at one state point. */
@@ -38,7 +38,7 @@ export class TermService {
     })
     const facts =
       statePointId === null ? new Map<string, TermFacts>() : await this.facts(mapping, terms, statePointId)
-    return terms.map((term) => termBody(term, numberOf(term, terms), facts.get(term.id)))
+    return terms.map((term) => termBody(term, storedTermName(term, terms), facts.get(term.id)))
   }
 
   private async facts(
@@ -72,14 +72,7 @@ export class TermService {
   }
 }
 
-/** The number of one of several terms of a split sequence: they follow one another in the order of their numbers. */
-function numberOf(term: Term, terms: readonly Term[]): number | undefined {
-  if (term.placeKey === '' || !term.current) return undefined
-  const sequence = term.types.join('\n')
-  return terms.filter(({ current, types }) => current && types.join('\n') === sequence).indexOf(term) + 1
-}
-
-function termBody(term: Term, number: number | undefined, facts: TermFacts | undefined): TermBody {
+function termBody(term: Term, name: string, facts: TermFacts | undefined): TermBody {
   const { id, mappingId, kind, types, places, placeKey, current } = term
   const { distribution, potential } = facts ?? {}
   return {
@@ -87,7 +80,7 @@ function termBody(term: Term, number: number | undefined, facts: TermFacts | und
     mappingId,
     kind,
     types,
-    name: termName(types, number),
+    name,
     places,
     placeKey,
     current,

@@ -14,6 +14,7 @@ export { coordinateDomain, foldDihedral } from './coordinate-domain'
 export { checkIndependentSamples, createHistogram, type HistogramInput } from './create-histogram'
 export { type AppliedInefficiency, effectiveSamples, type InefficiencySource } from './effective-samples'
 export type { BinContent, CoordinateKind, Histogram } from './histogram'
+export { histogramDeviation } from './histogram-deviation'
 export { jacobian } from './jacobian'
 export {
   accumulateJoint,

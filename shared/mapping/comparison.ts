@@ -26,7 +26,7 @@ export interface PairFinding {
 export interface MappingEvidence {
   readonly name: string
   readonly document: MappingDocument
-  readonly terms: readonly DerivedTerm[]
+  readonly terms: readonly Omit<DerivedTerm, 'placeClasses'>[]
   /** Terms with data only. */
   readonly findings: ReadonlyMap<string, TermFinding>
   readonly pairs: readonly PairFinding[]

@@ -37,6 +37,9 @@ const SAMPLES: Readonly<Record<string, (job: Job) => Sample>> = {
   'delete /api/state-points/:statePointId': () => ({}),
   'get /api/polymers/:polymerId/mappings': () => ({}),
   'post /api/polymers/:polymerId/mappings': () => ({ body: { name: 'Another' } }),
+  'get /api/polymers/:polymerId/comparison': ({ mappingId, statePointId }) => ({
+    query: `mappings=${mappingId},${otherMappingId}&statePoint=${statePointId}`,
+  }),
   'get /api/mappings/:mappingId': () => ({}),
   'put /api/mappings/:mappingId': () => ({ body: { revision: 1, name: 'Saved', document: DOCUMENT } }),
   'delete /api/mappings/:mappingId': () => ({}),
@@ -78,12 +81,16 @@ let server: ApiServer
 let group: TestGroup
 let strangers: TestGroup
 let shared: Job
+/** A second mapping of the shared polymer. */
+let otherMappingId: string
 
 beforeAll(async () => {
   server = await openApiServer()
   group = await buildGroup(server)
   strangers = await buildGroup(server)
   shared = await buildJob(server.services, group.modeller.member)
+  const other = { name: 'Two beads again', document: DOCUMENT }
+  otherMappingId = (await server.services.mappings.create(group.modeller.member, shared.polymerId, other)).id
 })
 
 afterAll(() => server.close())
@@ -240,6 +247,10 @@ describe('ids named in the content of a request', () => {
     for (const path of [`mappings/${shared.mappingId}/terms`, `mappings/${shared.mappingId}/pairs`]) {
       expect((await client.get(`/api/${path}?statePoint=${job.statePointId}`)).status).toBe(404)
     }
+    const both = `mappings=${shared.mappingId},${job.mappingId}&statePoint=${shared.statePointId}`
+    const comparison = await client.get(`/api/polymers/${shared.polymerId}/comparison?${both}`)
+    expect(comparison.status).toBe(404)
+    expect(comparison.body).toMatchObject({ code: 'NOT_FOUND', field: 'mappings' })
     for (const path of [`terms/${shared.bondId}/table`, `mappings/${shared.mappingId}/tables.zip`]) {
       expect((await client.get(`/api/${path}?statePoint=${job.statePointId}`)).status).toBe(404)
     }
@@ -270,7 +281,7 @@ describe('ids named in the content of a request', () => {
     const response = await group.owner.client.get(`/api/polymers/${shared.polymerId}`)
     expect(response.body).toMatchObject({
       revision: 1,
-      counts: { distributions: 1, potentials: 1, mappings: 1 },
+      counts: { distributions: 1, potentials: 1, mappings: 2 },
     })
   })
 })

@@ -87,6 +87,26 @@ describe('seedDemo', () => {
     expect(new TextDecoder().decode(file.bytes)).toMatch(/^# INVENTED data/)
   })
 
+  it('shows side by side that the hexyl bond of 3-to-1 is many-peaked, and what 5-to-1 costs', async () => {
+    const member = await demoMember()
+    const [polymer] = await services.polymers.list(member)
+    const [point] = await services.statePoints.list(member, polymer.id)
+    const ids = (await services.mappings.list(member, polymer.id)).map(({ id }) => id)
+    const { mappings, summary } = await services.comparisons.compare(member, polymer.id, ids, point.id)
+    const [coarse, fine] = mappings
+    const hexyl = coarse.terms.find(({ name }) => name === 'E–H')
+    expect(hexyl).toMatchObject({ kind: 'bond', coverage: 'here', problem: null })
+    expect(hexyl?.basins?.count).toBeGreaterThan(1)
+    const bonds = fine.terms.filter(({ kind }) => kind === 'bond')
+    expect(bonds.map(({ basins }) => basins?.count)).toEqual(bonds.map(() => 1))
+    expect(summary).toHaveLength(1)
+    expect(summary[0]).toMatch(/In 3-to-1 the bond E–H has \d+ basins deeper than 0\.5 kT/)
+    expect(summary[0]).toContain('5-to-1 costs 2 beads more per unit')
+    // (5/3)² pairs per step, at one density.
+    expect([coarse.cost, fine.cost]).toEqual([1, (5 / 3) ** 2])
+    expect(mappings.flatMap(({ terms }) => terms.map(({ coverage }) => coverage))).not.toContain('missing')
+  })
+
   it('offers one person per role, none of whom has a password', async () => {
     const people = await services.sessions.demoUsers()
     expect(people.map(({ role }) => role).toSorted()).toEqual([

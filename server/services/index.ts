@@ -5,6 +5,7 @@ import { DistributionService } from './distribution.service'
 import { GroupService } from './group.service'
 import { HealthService } from './health.service'
 import { JointDistributionService } from './joint-distribution.service'
+import { JointTableService } from './joint-table.service'
 import { MappingService } from './mapping.service'
 import { PairService } from './pair.service'
 import { PolymerService } from './polymer.service'
@@ -37,6 +38,7 @@ export function createServices(dataSource: DataSource, { demo, version }: Servic
     groups,
     health: new HealthService(dataSource, version),
     jointDistributions: new JointDistributionService(dataSource),
+    jointTables: new JointTableService(dataSource),
     mappings: new MappingService(dataSource),
     pairs: new PairService(dataSource),
     polymers: new PolymerService(dataSource),

@@ -67,6 +67,7 @@ const SAMPLES: Readonly<Record<string, (job: Job) => Sample>> = {
   'get /api/joint-distributions/:jointDistributionId': () => ({}),
   'delete /api/joint-distributions/:jointDistributionId': () => ({}),
   'get /api/joint-distributions/:jointDistributionId/file': () => ({}),
+  'get /api/joint-distributions/:jointDistributionId/table': () => ({}),
   'put /api/joint-distributions/:jointDistributionId/decision': () => ({
     body: { choice: 'separate', reason: 'They move on their own.' },
   }),

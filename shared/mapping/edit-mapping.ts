@@ -17,7 +17,9 @@ export function giveAtoms(
   return withBeads(document, (bead) => {
     const kept = bead.atoms.filter(({ atom }) => !atoms.includes(atom))
     if (bead.id !== beadId) return kept.length === bead.atoms.length ? bead : { ...bead, atoms: kept }
-    const whole = atoms.every((atom) => bead.atoms.some((held) => held.atom === atom && held.weight === 1))
+    const whole = atoms.every((atom) =>
+      bead.atoms.some((held) => held.atom === atom && held.weight === 1 && held.unit === 0),
+    )
     if (whole) return bead
     const given = atoms.map((atom) => ({ atom, weight: 1, unit: 0 }))
     return { ...bead, atoms: [...kept, ...given].sort((one, other) => one.atom - other.atom) }

@@ -6,14 +6,18 @@ import {
   type BeadChange,
   changeBead,
   checkMapping,
+  type AtomPlace,
   type DerivedTerm,
   deriveTerms,
   freeAtoms,
+  giveAtomAcross,
   giveAtoms,
   type MappingDocument,
   type MappingProblem,
   removeBead,
   renewBeadIds,
+  setShare,
+  shareAtom,
 } from '@shared/mapping'
 import { useHistory, type History } from './useHistory'
 
@@ -35,6 +39,14 @@ export interface MappingBoard {
   readonly change: (beadId: string, change: BeadChange) => void
   readonly remove: (beadId: string) => void
   readonly give: (atoms: readonly number[], beadId: string) => void
+  /** Shares an atom between the beads that hold it and the one in hand; takes that one out of the sharing when it is in. */
+  readonly share: (atom: number) => void
+  /** Sets the share that a bead holds of an atom; where two share it, the other holds the rest. */
+  readonly weigh: (beadId: string, place: AtomPlace, weight: number) => void
+  /** Gives an atom of a neighbouring unit to the bead in hand, or takes it away where that bead holds it. */
+  readonly reach: (place: AtomPlace) => void
+  /** Gives atoms to the bead in hand, a first one when there is none. */
+  readonly gather: (atoms: readonly number[]) => void
   readonly free: (atoms: readonly number[]) => void
   /** Any other change of the document as one step; the same document is none. */
   readonly edit: (change: (document: MappingDocument) => MappingDocument) => void
@@ -73,7 +85,7 @@ export function useMappingBoard(unit: Ref<RepeatUnit>, first: MappingDocument): 
   const begin = (atom: number): void => {
     const start = document.value.beads.length === 0 ? newBead(document.value) : document.value
     stroke.value = start
-    erasing = selected.value?.atoms.some((held) => held.atom === atom) ?? false
+    erasing = selected.value?.atoms.some((held) => held.atom === atom && held.unit === 0) ?? false
     paintOver(atom)
   }
   const paintOver = (atom: number): void => {
@@ -86,6 +98,40 @@ export function useMappingBoard(unit: Ref<RepeatUnit>, first: MappingDocument): 
     if (stroke.value !== null) history.push(stroke.value)
     stroke.value = null
   }
+
+  /** A change with the bead in hand, which is made when there is none. */
+  const withBead = (change: (document: MappingDocument, bead: Bead) => MappingDocument): void => {
+    const start = document.value.beads.length === 0 ? newBead(document.value) : document.value
+    const bead = start.beads.find(({ id }) => id === chosen.value) ?? start.beads[0]
+    history.push(change(start, bead))
+  }
+  const share = (atom: number): void =>
+    withBead((from, bead) => {
+      const holders = from.beads.filter((each) => each.atoms.some((held) => held.atom === atom))
+      const ids = holders.map(({ id }) => id)
+      if (!ids.includes(bead.id)) return shareAtom(from, atom, [...ids, bead.id])
+      return ids.length === 1
+        ? from
+        : shareAtom(
+            from,
+            atom,
+            ids.filter((id) => id !== bead.id),
+          )
+    })
+  const weigh = (beadId: string, place: AtomPlace, weight: number): void => {
+    const others = document.value.beads.flatMap(({ id, atoms }) =>
+      id === beadId ? [] : atoms.filter(({ atom }) => atom === place.atom).map((held) => ({ id, held })),
+    )
+    const set = setShare(document.value, beadId, place, weight)
+    history.push(
+      others.length === 1 && weight < 1 ? setShare(set, others[0].id, others[0].held, 1 - weight) : set,
+    )
+  }
+  const reach = (place: AtomPlace): void =>
+    withBead((from, bead) => {
+      const held = bead.atoms.some(({ atom, unit: at }) => atom === place.atom && at === place.unit)
+      return held ? freeAtoms(from, [place.atom]) : giveAtomAcross(from, bead.id, place)
+    })
 
   return {
     document,
@@ -102,6 +148,10 @@ export function useMappingBoard(unit: Ref<RepeatUnit>, first: MappingDocument): 
     change: (beadId, change) => history.push(changeBead(document.value, beadId, change)),
     remove: (beadId) => history.push(removeBead(document.value, beadId)),
     give: (atoms, beadId) => history.push(giveAtoms(document.value, beadId, atoms)),
+    share,
+    weigh,
+    reach,
+    gather: (atoms) => withBead((from, bead) => giveAtoms(from, bead.id, atoms)),
     free: (atoms) => history.push(freeAtoms(document.value, atoms)),
     edit: (change) => history.push(change(document.value)),
     adopt: (from) => {

@@ -27,11 +27,24 @@ export function atomWords(unit: RepeatUnit, bead: Bead): string {
   return parts.join(', ')
 }
 
-/** What an atom is called where it can be painted: 'C3, in bead E', 'C9, in no bead'. */
-export function atomName(unit: RepeatUnit, document: MappingDocument, atom: number): string {
-  const holders = document.beads.filter((bead) => bead.atoms.some((held) => held.atom === atom))
-  const where = holders.length === 0 ? 'no bead' : `bead ${holders.map(({ name }) => name).join(' and ')}`
-  return `${unit.atoms[atom].label}, in ${where}`
+/**
+ * What an atom is called where it can be painted: 'C3, in bead E', 'C9, in no bead', 'C1, in bead B of the unit before', and in
+ * a neighbouring unit 'C1 of the next unit, in bead B'.
+ *
+ * @param shown which unit it is drawn in
+ */
+export function atomName(unit: RepeatUnit, document: MappingDocument, atom: number, shown = 0): string {
+  const holders = document.beads.flatMap(({ name, atoms }) =>
+    atoms.filter((held) => held.atom === atom).map((held) => `${name}${unitWords(shown - held.unit)}`),
+  )
+  const where = holders.length === 0 ? 'no bead' : `bead ${holders.join(' and ')}`
+  return `${unit.atoms[atom].label}${unitWords(shown)}, in ${where}`
+}
+
+function unitWords(shift: number): string {
+  if (shift === 0) return ''
+  const far = Math.abs(shift) > 1 ? 'but one ' : ''
+  return shift > 0 ? ` of the next unit ${far}`.trimEnd() : ` of the unit before ${far}`.trimEnd()
 }
 
 function follows(

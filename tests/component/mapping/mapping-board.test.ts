@@ -41,6 +41,29 @@ const savedDocument = async (): Promise<MappingDocument> => {
   return (sent.at(-1)?.body as { document: MappingDocument }).document
 }
 
+const target = (name: RegExp): SVGElement => {
+  const found = [...document.querySelectorAll<SVGElement>('[data-target]')].find((each) =>
+    name.test(each.getAttribute('aria-label') ?? ''),
+  )
+  if (!found) throw new Error(`No atom is called ${String(name)}`)
+  return found
+}
+const pointer = async (on: Element, type: string, init: PointerEventInit = {}): Promise<void> => {
+  on.dispatchEvent(new PointerEvent(type, { button: 0, bubbles: true, cancelable: true, ...init }))
+  await flushPromises()
+}
+const press = async (name: RegExp, init: PointerEventInit = {}): Promise<void> => {
+  // Its name changes with what holds it.
+  const atom = target(name)
+  await pointer(atom, 'pointerdown', init)
+  await pointer(atom, 'pointerup', init)
+}
+const key = async (on: Element, name: string, shiftKey = false): Promise<void> => {
+  on.dispatchEvent(new KeyboardEvent('keydown', { key: name, shiftKey, bubbles: true, cancelable: true }))
+  await flushPromises()
+}
+const drawing = (): SVGSVGElement => document.querySelector('.canvas > svg') as SVGSVGElement
+
 beforeEach(() => {
   vi.useFakeTimers({ toFake: ['setTimeout', 'clearTimeout'] })
 })
@@ -176,5 +199,159 @@ describe('terms that share a bond or a bead', () => {
     await open(THREE_TO_ONE, false)
     expect(checkbox('B–B–B–E').disabled).toBe(true)
     expect(() => control(/^Take the proposal/)).toThrow()
+  })
+})
+
+describe('atoms shared between beads', () => {
+  it('are made by Shift and a press, drawn in two tones, named in the legend, and taken back the same way', async () => {
+    await open(THREE_TO_ONE)
+    await press(/^C3, in bead E/, { shiftKey: true })
+    expect(target(/^C3, in bead B and E$/)).toBeTruthy()
+    expect(document.querySelectorAll('.sector')).toHaveLength(2)
+    expect(pageText()).toContain('atom shared by beads')
+    expect((await savedDocument()).beads.map(({ atoms }) => atoms.find(({ atom }) => atom === 2))).toEqual([
+      { atom: 2, weight: 0.5, unit: 0 },
+      { atom: 2, weight: 0.5, unit: 0 },
+      undefined,
+    ])
+    await press(/^C3, in/, { shiftKey: true })
+    expect(target(/^C3, in bead E$/)).toBeTruthy()
+    expect(pageText()).not.toContain('atom shared by beads')
+  })
+
+  it('are made by keys, and by a button where there is no Shift', async () => {
+    await open(THREE_TO_ONE)
+    await key(target(/^C1, /), 'ArrowRight')
+    const focused = document.activeElement
+    expect(focused?.getAttribute('aria-label')).toBe('C2, in bead B')
+    await key(target(/^C3, /), 'ArrowDown')
+    target(/^C3, /).focus()
+    await key(target(/^C3, /), ' ', true)
+    expect(target(/^C3, in bead B and E$/)).toBeTruthy()
+    await click('Share')
+    expect(control('Share').getAttribute('aria-pressed')).toBe('true')
+    await press(/^O1, /)
+    expect(target(/^O1, in bead B and E$/)).toBeTruthy()
+  })
+
+  it('have weights in the bead editor, and two that share always hold one atom', async () => {
+    await open(THREE_TO_ONE)
+    await press(/^C3, in bead E/, { shiftKey: true })
+    const share = document.querySelector<HTMLInputElement>('.shares input')
+    if (!share) throw new Error('The share has a field.')
+    const set = async (text: string): Promise<void> => {
+      share.value = text
+      share.dispatchEvent(new Event('change', { bubbles: true }))
+      await flushPromises()
+    }
+    await set('0.25')
+    expect(pageText()).toContain('C3 × 0.25')
+    expect(pageText()).toContain('C3 × 0.75')
+    await set('2')
+    expect(document.querySelector('.shares [role=alert]')?.textContent).toContain('between 0 and 1')
+    expect(pageText()).toContain('C3 × 0.25')
+  })
+})
+
+describe('atoms across the border', () => {
+  it('go to the bead in hand with an offset, and back when they are pressed again', async () => {
+    await open(THREE_TO_ONE)
+    await press(/^C1 of the next unit/)
+    expect(target(/^C1 of the next unit, in bead B$/).getAttribute('aria-pressed')).toBe('true')
+    expect(target(/^C1, in bead B of the unit before$/)).toBeTruthy()
+    const [b] = (await savedDocument()).beads
+    expect(b.atoms).toEqual([
+      { atom: 1, weight: 1, unit: 0 },
+      { atom: 0, weight: 1, unit: 1 },
+    ])
+    await press(/^C1 of the next unit/)
+    expect(target(/^C1, in no bead$/)).toBeTruthy()
+  })
+
+  it('are reached by the arrows, and painted whole again in their own unit', async () => {
+    await open(THREE_TO_ONE)
+    target(/^C2, /).focus()
+    await flushPromises()
+    await key(target(/^C2, /), 'ArrowRight')
+    expect(document.activeElement?.getAttribute('aria-label')).toMatch(/^C1 of the next unit/)
+    await key(document.activeElement as Element, 'Enter')
+    expect(target(/^C1, in bead B of the unit before$/)).toBeTruthy()
+    await press(/^C1, /)
+    expect(target(/^C1, in bead B$/)).toBeTruthy()
+  })
+})
+
+describe('the drawing', () => {
+  /** The window that the test DOM does not have. */
+  const box = (): void => {
+    const [x, y, width, height] = (drawing().getAttribute('viewBox') ?? '').split(' ').map(Number)
+    drawing().getBoundingClientRect = () => new DOMRect(x, y, width, height)
+  }
+  const viewBox = (): number[] => (drawing().getAttribute('viewBox') ?? '').split(' ').map(Number)
+
+  it('gives the atoms inside a loop to the bead in hand, as one step', async () => {
+    await open({ version: 1, beads: [] })
+    box()
+    const [first, second] = [target(/^C1, /), target(/^C2, /)]
+    const at = (each: SVGElement) => ({
+      x: Number(each.getAttribute('cx')),
+      y: Number(each.getAttribute('cy')),
+    })
+    const [left, right] = [at(first).x - 15, at(second).x + 15]
+    const [top, bottom] = [Math.min(at(first).y, at(second).y) - 15, Math.max(at(first).y, at(second).y) + 15]
+    await pointer(drawing(), 'pointerdown', { clientX: left, clientY: top })
+    for (const [x, y] of [
+      [right, top],
+      [right, bottom],
+      [left, bottom],
+    ]) {
+      await pointer(drawing(), 'pointermove', { clientX: x, clientY: y })
+    }
+    expect(document.querySelector('.canvas__lasso')).not.toBeNull()
+    await pointer(drawing(), 'pointerup')
+    expect(document.querySelector('.canvas__lasso')).toBeNull()
+    expect(target(/^C1, in bead A$/)).toBeTruthy()
+    expect(target(/^C2, in bead A$/)).toBeTruthy()
+    expect(target(/^C3, in no bead$/)).toBeTruthy()
+    await click('Undo')
+    expect(target(/^C1, in no bead$/)).toBeTruthy()
+  })
+
+  it('is magnified by buttons, keys and the wheel, moved by Shift and arrows, and fitted again', async () => {
+    await open(THREE_TO_ONE)
+    box()
+    const whole = viewBox()
+    expect(control('Fit the drawing').hasAttribute('disabled')).toBe(true)
+    await click('Zoom in')
+    expect(viewBox()[2]).toBeCloseTo(whole[2] / 1.25, 6)
+    const before = viewBox()
+    await key(target(/^C1, /), 'ArrowRight', true)
+    expect(viewBox()[0]).toBeCloseTo(before[0] + 0.1 * before[2], 6)
+    await click('Fit the drawing')
+    expect(viewBox()).toEqual(whole)
+    const rolled = new WheelEvent('wheel', { deltaY: 100, cancelable: true })
+    // The test DOM gives a wheel no modifier.
+    drawing().dispatchEvent(Object.defineProperty(rolled, 'ctrlKey', { value: true }))
+    await flushPromises()
+    expect(viewBox()[2]).toBeCloseTo(whole[2] * 1.25, 6)
+  })
+
+  it('is turned and mirrored, which the browser keeps for the polymer and the mapping does not', async () => {
+    const { wrapper } = await open(THREE_TO_ONE)
+    const places = (): number[] =>
+      [target(/^C1, /), target(/^C2, /)].map((each) => Number(each.getAttribute('cx')))
+    const [one, two] = places()
+    await click('Mirror the drawing')
+    const [mirroredOne, mirroredTwo] = places()
+    expect(mirroredTwo - mirroredOne).toBeCloseTo(one - two, 6)
+    await click('Turn by 30 degrees')
+    expect(JSON.parse(localStorage.getItem('beadwright.drawing.p') ?? '')).toEqual({
+      degrees: 30,
+      mirrored: true,
+    })
+    await click('Level')
+    expect(places()).toEqual([one, two])
+    expect(sent).toEqual([])
+    wrapper.unmount()
   })
 })

@@ -9,7 +9,10 @@ const UNIT_VECTORS: Record<Direction, Point> = {
   ArrowDown: { x: 0, y: 1 },
 }
 
-/** The nearest atom in a direction, being off to the side counting double; the same atom when there is none. */
+/**
+ * The nearest atom in a direction; the same atom when there is none. Being off to the side counts half as much again: enough to
+ * stay on course, and too little to skip the next atom of a zigzag.
+ */
 export function atomTowards(positions: readonly Point[], from: number, direction: Direction): number {
   const { x: ux, y: uy } = UNIT_VECTORS[direction]
   let chosen = from
@@ -18,7 +21,7 @@ export function atomTowards(positions: readonly Point[], from: number, direction
     const [dx, dy] = [x - positions[from].x, y - positions[from].y]
     const ahead = dx * ux + dy * uy
     if (ahead < 1) return
-    const cost = ahead + 2 * Math.abs(dx * uy - dy * ux)
+    const cost = ahead + 1.5 * Math.abs(dx * uy - dy * ux)
     if (cost < least) [least, chosen] = [cost, atom]
   })
   return chosen

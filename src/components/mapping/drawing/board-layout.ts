@@ -20,6 +20,8 @@ export interface BoardLayout {
   readonly ends: readonly [Point, Point]
   /** Carries the unit onto the one before and the one after. */
   readonly neighbours: readonly [Isometry, Isometry]
+  /** How the drawing was turned and mirrored from the level one. */
+  readonly turn: Isometry
   /** Atoms that the neighbours show: the backbone with its rings; side groups are left out. */
   readonly backbone: ReadonlySet<number>
   readonly box: Box
@@ -32,10 +34,18 @@ export interface Box {
   readonly height: number
 }
 
-/** Scales a layout to the board and frames it with its neighbours. */
-export function boardLayout(unit: RepeatUnit, layout: RepeatUnitLayout): BoardLayout {
-  const scaled = ({ x, y }: Point): Point => ({ x: x * BOND_LENGTH, y: y * BOND_LENGTH })
-  const next = { ...layout.next, e: layout.next.e * BOND_LENGTH, f: layout.next.f * BOND_LENGTH }
+/** As laid out. */
+const LEVEL: Isometry = { a: 1, b: 0, c: 0, d: 1, e: 0, f: 0 }
+
+/**
+ * Scales a layout to the board and frames it with its neighbours.
+ *
+ * @param turn turns or mirrors the drawing about the origin
+ */
+export function boardLayout(unit: RepeatUnit, layout: RepeatUnitLayout, turn = LEVEL): BoardLayout {
+  const scaled = ({ x, y }: Point): Point => moved(turn, { x: x * BOND_LENGTH, y: y * BOND_LENGTH })
+  const level = { ...layout.next, e: layout.next.e * BOND_LENGTH, f: layout.next.f * BOND_LENGTH }
+  const next = product(product(turn, level), inverse(turn))
   const positions = layout.positions.map(scaled)
   const neighbours = [inverse(next), next] as const
   const backbone = backboneAtoms(unit)
@@ -44,6 +54,7 @@ export function boardLayout(unit: RepeatUnit, layout: RepeatUnitLayout): BoardLa
     positions,
     ends: [scaled(layout.ends[0]), scaled(layout.ends[1])],
     neighbours,
+    turn,
     backbone,
     box: frame([...positions, ...ghosts]),
   }
@@ -84,6 +95,14 @@ export function backboneAtoms({ atoms, bonds, attachments: [head, tail], rings }
   }
   const joined = rings.filter((ring) => ring.filter((atom) => path.has(atom)).length > 1)
   return new Set([...path, ...joined.flat()])
+}
+
+/** The motion that does the second, then the first. */
+function product(first: Isometry, second: Isometry): Isometry {
+  const linear = (x: number, y: number): Point => moved({ ...first, e: 0, f: 0 }, { x, y })
+  const [along, down] = [linear(second.a, second.b), linear(second.c, second.d)]
+  const { x, y } = moved(first, { x: second.e, y: second.f })
+  return { a: along.x, b: along.y, c: down.x, d: down.y, e: x, f: y }
 }
 
 function frame(points: readonly Point[]): Box {

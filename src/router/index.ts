@@ -86,6 +86,12 @@ const routes: RouteRecordRaw[] = [
     meta: { title: 'Polymer' },
   },
   {
+    path: '/polymers/:polymerId/comparison',
+    name: 'comparison',
+    component: () => import('@/views/ComparisonView.vue'),
+    meta: { title: 'Mappings side by side' },
+  },
+  {
     path: '/polymers/:polymerId/mappings/:mappingId',
     component: () => import('@/views/WorkbenchView.vue'),
     meta: { title: 'Mapping' },

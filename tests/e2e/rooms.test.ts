@@ -17,6 +17,7 @@ const VIEWS = [
 const ROOMS = [
   ['front desk', '/', 'poly('],
   ['polymer', '/polymers/P', 'State points'],
+  ['comparison', '/polymers/P/comparison', 'Correlation left behind'],
   ['new polymer', '/polymers/new', 'How a repeat unit is written'],
   ['mapping', '/polymers/P/mappings/M/mapping', 'Terms that follow'],
   ['intake', '/polymers/P/mappings/M/intake', 'Choose files'],

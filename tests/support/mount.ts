@@ -17,6 +17,7 @@ const ADDRESSES: Readonly<Record<string, string>> = {
   'set-up': '/set-up/:token',
   'polymer-new': '/polymers/new',
   polymer: '/polymers/:polymerId',
+  comparison: '/polymers/:polymerId/comparison',
   mapping: '/polymers/:polymerId/mappings/:mappingId/mapping',
   intake: '/polymers/:polymerId/mappings/:mappingId/intake',
   bench: '/polymers/:polymerId/mappings/:mappingId/bench/:termId?',

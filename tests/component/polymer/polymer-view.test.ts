@@ -153,6 +153,17 @@ describe('PolymerView', () => {
     await vi.waitFor(() => expect(router.currentRoute.value.params['mappingId']).toBe('copy'))
   })
 
+  it('offers to compare mappings once there are two, to a reviewer as well', async () => {
+    const { wrapper } = await open('reviewer')
+    await here('9 of 10 terms')
+    expect(() => control('Compare mappings')).toThrow()
+    wrapper.unmount()
+    const mappings = [mapping, { ...mapping, id: 'n', name: '5-to-1' }]
+    await open('reviewer', { 'GET /api/polymers/p/mappings': { body: { mappings } } })
+    await here('5-to-1')
+    expect(control('Compare mappings').getAttribute('href')).toBe('/polymers/p/comparison')
+  })
+
   it('deletes the polymer by its name and goes to the front desk', async () => {
     const { router, writes } = await open('modeller', { 'DELETE /api/polymers/p': { status: 204 } })
     await here('3-to-1')

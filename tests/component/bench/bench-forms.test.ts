@@ -151,7 +151,8 @@ describe('BenchMoreSettings', () => {
     const wrapper = more()
     await enter(wrapper, 0, '1.5')
     await enter(wrapper, 1, '10')
-    wrapper.findComponent({ name: 'BaseChoice' }).vm.$emit('update:modelValue', 'level')
+    const choice = wrapper.findComponent({ name: 'BaseChoice' }) as unknown as VueWrapper
+    choice.vm.$emit('update:modelValue', 'level')
     const changes = wrapper.emitted<[Partial<InversionSettings>]>('change')!.map(([change]) => change)
     expect(changes[0]).toEqual({ tails: { stiffness: 1.5 } })
     expect(changes[1].table?.cap).toBeCloseTo(41.84, 9)

@@ -22,10 +22,10 @@ export interface Comparison {
   readonly at: (coordinate: number) => number
 }
 
-const LEAST_POINTS = 400
-const POINTS_PER_BIN = 3
-/** More than a point per pixel is not seen. */
-const MOST_POINTS = 800
+const LEAST_POINTS = 300
+const POINTS_PER_BIN = 2
+/** A point every pixel and a half is as smooth as can be seen, and each costs under a moving slider. */
+const MOST_POINTS = 480
 
 /** Evenly spaced coordinates from low to high, both included. */
 export function evenly(low: number, high: number, count: number): Float64Array {

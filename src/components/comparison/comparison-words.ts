@@ -38,7 +38,7 @@ export function rowNote(row: ComparisonRow, mappings: readonly ComparedMapping[]
     const depth = depthOf(mappings)
     const width =
       row === 'dihedral'
-        ? 'standard deviation on the circle, above some 100° next to no preference'
+        ? 'standard deviation on the circle, above some 100° hardly any preference'
         : 'standard deviation'
     return depth === null ? width : `basins deeper than ${depth} kT; ${width}`
   }
@@ -66,9 +66,9 @@ export function termCounts({ terms, leftOut }: ComparedMapping): string {
 }
 
 /** Whether a term has one peak, as far as anybody counted. */
-export function peaksText({ kind, basins, coverage, problem }: ComparedTerm): string {
-  if (coverage !== 'here') return coverage === 'elsewhere' ? 'data elsewhere only' : 'no data'
-  if (basins === null) return problem === null ? 'not counted' : 'basins not counted'
+export function peaksText({ kind, basins, coverage }: ComparedTerm): string {
+  if (coverage !== 'here') return coverage === 'elsewhere' ? 'only elsewhere' : 'no data'
+  if (basins === null) return 'not counted'
   if (basins.count <= 1) return kind === 'dihedral' ? '1 basin' : 'single-peaked'
   return `${basins.count} basins`
 }

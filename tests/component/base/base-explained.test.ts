@@ -54,6 +54,19 @@ describe('BaseExplained', () => {
     expect(isOpen(wrapper)).toBe(false)
   })
 
+  it('goes when the page scrolls under the pointer, and stays with a number that has the focus', async () => {
+    const wrapper = explained()
+    await wrapper.trigger('pointerenter')
+    document.dispatchEvent(new Event('scroll'))
+    await nextTick()
+    expect(isOpen(wrapper)).toBe(false)
+    wrapper.find('button').element.focus()
+    await nextTick()
+    document.dispatchEvent(new Event('scroll'))
+    await nextTick()
+    expect(isOpen(wrapper)).toBe(true)
+  })
+
   it('leaves the tab stop to a control that it explains, and shows nothing without a sentence', async () => {
     const wrapper = mount(BaseExplained, {
       props: { sentence: '', control: true },

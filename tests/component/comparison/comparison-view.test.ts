@@ -130,7 +130,7 @@ describe('ComparisonView', () => {
     await here('Bonds')
     expect(pageText()).toContain('basins deeper than 0.5 kT; standard deviation')
     expect(cells('Bonds')[0]).toMatch(/E–H ?3 basins ?0\.012 nm/)
-    expect(cells('Bonds')[1]).toMatch(/S1–S2 × 2 per unit ?single-peaked ?0\.012 nm/)
+    expect(cells('Bonds')[1]).toMatch(/S1–S2 2 per unit ?single-peaked ?0\.012 nm/)
     expect(cells('Bonds')[1]).toContain('Too few bins are filled.')
     expect(cells('Angles')[1]).toBe('none')
     expect(control('E–H').getAttribute('href')).toBe(
@@ -189,6 +189,31 @@ describe('ComparisonView', () => {
     // 5.4² pairs, and steps five times as long: 145.8, of which an estimate earns two digits.
     expect(second).toContain('about 150 times less work than all atoms')
     expect(cells('Terms')[0]).toBe('2 bonds, 1 angle, 1 dihedral; 1 left out')
+  })
+
+  it('shows one mapping after the other on a phone', async () => {
+    vi.stubGlobal('matchMedia', (media: string) =>
+      Object.assign(new EventTarget(), { matches: media === '(max-width: 599.98px)', media }),
+    )
+    await open()
+    await here('Beads per unit')
+    expect(document.querySelector('table')).toBeNull()
+    const entries = [...document.querySelectorAll('section[aria-labelledby^="entry"]')]
+    expect(entries.map((entry) => entry.querySelector('h2')?.textContent)).toEqual(['3-to-1', '5-to-1'])
+    expect(entries.map((entry) => entry.querySelectorAll('dt').length)).toEqual([10, 10])
+    expect(entries[0].textContent).toContain('2 of 4 terms here')
+    expect(entries[1].textContent).toContain('2 of 2 terms here')
+  })
+
+  it('opens long lists of terms on demand', async () => {
+    const terms = Array.from({ length: 15 }, (_, index) => term(`A${index}–B`))
+    const body = { ...comparison, mappings: [column('3-to-1', { terms }), fine] }
+    await open(ADDRESS, { 'GET /api/polymers/p/comparison': { body } })
+    await here('Show 3 more')
+    expect(cells('Bonds')[0]).not.toContain('A14–B')
+    control('Show 3 more').click()
+    await here('A14–B')
+    expect(cells('Bonds')[0]).not.toContain('more')
   })
 
   it('compares what the address names, at its state point, and says when a mapping is gone', async () => {

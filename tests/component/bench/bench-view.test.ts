@@ -54,13 +54,13 @@ enableAutoUnmount(afterEach)
 const open = async (
   shown: Term | null,
   role: 'modeller' | 'reviewer' = 'modeller',
-  document: Mapping['document'] = mappingDocument,
+  painted: Mapping['document'] = mappingDocument,
 ) => {
   const membership = { groupId: 'group', groupName: 'Adhesives', role, demo: false }
   useSessionStore().user = { id: 'me', name: 'Mo', email: 'mo@example.org', memberships: [membership] }
   const workbench = useWorkbenchStore()
   workbench.polymer = { id: 'polymer', groupId: 'group' } as Polymer
-  workbench.mapping = { id: 'mapping', document } as Mapping
+  workbench.mapping = { id: 'mapping', document: painted } as Mapping
   workbench.statePoints = [statePoint]
   workbench.statePoint = statePoint
   workbench.terms = [bond, angle, bare]

@@ -3,7 +3,9 @@ import { flushPromises } from '@vue/test-utils'
 import { layoutRepeatUnit, parseRepeatUnit } from '@shared/chemistry'
 import type { Mapping } from '@shared/contracts/mapping'
 import { h } from 'vue'
+import { readMappingFile, writeMappingFile } from '@shared/documents'
 import type { MappingDocument } from '@shared/mapping'
+import * as saving from '@/components/figure/save-file'
 import MappingBoard from '@/components/mapping/MappingBoard.vue'
 import { HEXYL_ACRYLATE, THREE_TO_ONE } from '../../unit/shared/mapping/hexyl-acrylate'
 import { click, control, fakeApi, mountAt, pageText, type SentRequest } from '../../support/mount'
@@ -353,5 +355,74 @@ describe('the drawing', () => {
     expect(places()).toEqual([one, two])
     expect(sent).toEqual([])
     wrapper.unmount()
+  })
+})
+
+describe('how far the mapping goes', () => {
+  it('is said in numbers, the gain as an estimate with its assumptions', async () => {
+    await open(THREE_TO_ONE)
+    const line = document.querySelector('[aria-label="How far the mapping goes"]')
+    const said = [...(line?.querySelectorAll('button') ?? [])].map((each) => each.textContent?.trim())
+    // 9 C, 16 H and 2 O make 27 atoms: 9 a bead, and (27/3)² × 5 = 405 times less work.
+    expect(said).toEqual([
+      '3 beads a unit',
+      '9.0 atoms a bead',
+      '9 of 81 degrees of freedom kept',
+      'about 410 times less work',
+    ])
+    const explained = document.getElementById(
+      line?.querySelectorAll('button')[3].getAttribute('aria-describedby') ?? '',
+    )
+    expect(explained?.textContent).toMatch(/An estimate, not measured: .*time step is taken as 5 times/)
+  })
+})
+
+describe('the mapping as a file', () => {
+  const choose = async (text: string): Promise<void> => {
+    const input = document.querySelector<HTMLInputElement>('input[type=file]')
+    if (!input) throw new Error('A file can be chosen.')
+    const file = new File([text], 'other.json', { type: 'application/json' })
+    Object.defineProperty(input, 'files', { value: [file], configurable: true })
+    input.dispatchEvent(new Event('change', { bubbles: true }))
+    await vi.waitFor(() => expect(document.querySelector('.files')?.textContent).toMatch(/Undo|Nothing/))
+  }
+
+  it('is saved as JSON that reads back', async () => {
+    const save = vi.spyOn(saving, 'saveFile').mockImplementation(() => undefined)
+    await open(THREE_TO_ONE)
+    await click('Save the mapping file')
+    const [name, content] = save.mock.calls[0]
+    expect(name).toMatch(/_3-to-1\.json$/)
+    const reading = readMappingFile(await content.text())
+    expect(reading.ok && reading.file.beads.map((bead) => bead.name)).toEqual(['B', 'E', 'H'])
+    save.mockRestore()
+  })
+
+  it('is taken over in one step that Undo takes back', async () => {
+    await open({ version: 1, beads: [] })
+    await choose(writeMappingFile(drawn.unit, THREE_TO_ONE, 'other'))
+    await vi.waitFor(() => expect(beadNames()).toEqual(['B', 'E', 'H']))
+    expect(pageText()).toContain('other.json is on the board')
+    await click('Undo')
+    expect(beadNames()).toEqual([])
+  })
+
+  it('is refused with what is wrong and where, and nothing changes', async () => {
+    await open(THREE_TO_ONE)
+    const file = JSON.parse(writeMappingFile(drawn.unit, THREE_TO_ONE, 'other')) as {
+      beads: { name: string }[]
+    }
+    file.beads[1].name = 'much too long'
+    await choose(JSON.stringify(file))
+    expect(pageText()).toContain('The mapping file could not be taken over')
+    expect(document.querySelector('.files [role=alert]')?.textContent).toContain('beads[1].name')
+    expect(beadNames()).toEqual(['B', 'E', 'H'])
+  })
+
+  it('is saved by those who read, too, but not opened', async () => {
+    await open(THREE_TO_ONE, false)
+    expect(control('Save the mapping file')).toBeTruthy()
+    expect(control('Export figure')).toBeTruthy()
+    expect(() => control('Open a mapping file')).toThrow()
   })
 })

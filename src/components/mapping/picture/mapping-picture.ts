@@ -1,0 +1,90 @@
+import { compositionMass, formulaText, type RepeatUnit } from '@shared/chemistry'
+import { beadComposition, type MappingDocument } from '@shared/mapping'
+import { lightTokens } from '@/components/figure/light-tokens'
+import type { Picture } from '@/components/figure/picture'
+import { italic, svgElement, svgEscape, type Svg } from '@/components/figure/svg-writer'
+import { brokenLines } from '@/components/figure/text-width'
+import { chemicalNameParts } from '@/format/chemical-name'
+import { formatFixed } from '@/format/numbers'
+import type { BoardLayout } from '../drawing/board-layout'
+import { beadDisc, cross, drawingLayers } from './drawing-layers'
+
+/** What the picture of a mapping says besides what it shows. */
+export interface MappingCaption {
+  readonly polymer: string
+  readonly mapping: string
+  /** Of the demonstration. */
+  readonly invented: boolean
+}
+
+const MARGIN = 20
+const LEAST_WIDTH = 420
+const ROW = 28
+const SIZE = 13
+const LINE_HEIGHT = 18
+
+/** The drawing of a mapping with a legend of its beads and a caption, as a picture that stands alone. */
+export function mappingPicture(
+  unit: RepeatUnit,
+  board: BoardLayout,
+  document: MappingDocument,
+  caption: MappingCaption,
+): Picture {
+  const { box } = board
+  const width = Math.max(LEAST_WIDTH, Math.ceil(box.width) + 2 * MARGIN)
+  const left = (width - box.width) / 2 - box.x
+  const legendTop = MARGIN + box.height + ROW / 2
+  const captionTop = legendTop + (document.beads.length + 1) * ROW
+  const lines = brokenLines(captionText(unit, document, caption), width - 2 * MARGIN, SIZE)
+  return {
+    width,
+    height: Math.ceil(captionTop + lines.length * LINE_HEIGHT + MARGIN),
+    title: `${caption.polymer}, mapping ${caption.mapping}`,
+    body: [
+      svgElement(
+        'g',
+        { transform: `translate(${left} ${MARGIN - box.y})` },
+        drawingLayers(unit, board, document),
+      ),
+      legend(unit, document, legendTop),
+      ...lines.map((line, index) => textLine(line, captionTop + SIZE + index * LINE_HEIGHT)),
+    ].join(''),
+  }
+}
+
+/** A row for each bead (letters, type, word, formula, mass), and what the cross means. */
+function legend(unit: RepeatUnit, { beads }: MappingDocument, top: number): Svg {
+  const words = (text: string, row: number): Svg =>
+    svgElement(
+      'text',
+      { x: MARGIN + 34, y: top + row * ROW + 4.5, 'font-size': SIZE, fill: lightTokens.ink },
+      svgEscape(text),
+    )
+  const middle = (row: number) => ({ x: MARGIN + 12, y: top + row * ROW })
+  return [
+    ...beads.map((bead, row) => {
+      const counts = beadComposition(unit, bead)
+      const named = [bead.type, bead.label].filter((word) => word !== '').join(', ')
+      const holds = bead.atoms.length === 0 ? 'no atoms' : formulaText(counts)
+      const mass = `${formatFixed(compositionMass(counts), 3)} g/mol`
+      return beadDisc(bead.name, bead.colour, middle(row)) + words(`${named}: ${holds}, ${mass}`, row)
+    }),
+    cross(middle(beads.length)),
+    words('site of the bead', beads.length),
+  ].join('')
+}
+
+function captionText(unit: RepeatUnit, { beads }: MappingDocument, caption: MappingCaption): string {
+  const unitWords = `repeat unit ${unit.formula}, ${formatFixed(unit.mass, 3)} g/mol, ${unit.smiles}`
+  const count = `${beads.length} bead${beads.length === 1 ? '' : 's'} for one ${unitWords}`
+  const invented = caption.invented ? ' Invented (demonstration).' : ''
+  return `${caption.polymer}, mapping ${caption.mapping}: ${count}.${invented}`
+}
+
+function textLine(line: string, y: number): Svg {
+  return svgElement(
+    'text',
+    { x: MARGIN, y, 'font-size': SIZE, fill: lightTokens.ink2 },
+    ...chemicalNameParts(line).map(({ text, italic: slanted }) => (slanted ? italic(text) : svgEscape(text))),
+  )
+}

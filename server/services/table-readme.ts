@@ -1,4 +1,4 @@
-import { termName } from '../../shared/mapping'
+import { type MappingDocument, termName } from '../../shared/mapping'
 import { formatNumber } from '../../shared/tables'
 import { unitWord } from '../../shared/units'
 import type { Term } from '../entities/term.entity'
@@ -17,6 +17,8 @@ export interface ReadmeInput {
   }[]
   /** Terms without a table, and why. */
   readonly missing: readonly { readonly term: Term; readonly reason: string }[]
+  /** Terms that the mapping leaves out of the set, and why. */
+  readonly leftOut: readonly { readonly term: Term; readonly reason: string }[]
   /** Pairs that a joint potential was decided for, but whose data give none, and why. */
   readonly jointMissing: readonly { readonly terms: readonly [Term, Term]; readonly reason: string }[]
 }
@@ -51,7 +53,14 @@ export function writeReadme(input: ReadmeInput): string {
           ...missing.map(({ term, reason }) => `  ${term.kind} ${termName(term.types)}: ${reason}`),
           '',
         ]
-      : ['Every term of the mapping has a table.', '']),
+      : [`Every term ${input.leftOut.length > 0 ? 'in use' : 'of the mapping'} has a table.`, '']),
+    ...(input.leftOut.length > 0
+      ? [
+          'Terms left out of the set, since others describe the same motion',
+          ...input.leftOut.map(({ term, reason }) => `  ${term.kind} ${termName(term.types)}: ${reason}`),
+          '',
+        ]
+      : []),
     ...input.jointMissing.flatMap(({ terms: [x, y], reason }) => [
       `A joint potential was decided for ${x.kind} ${termName(x.types)} with ${y.kind} ${termName(y.types)}, but there is no table:`,
       `  ${reason}`,
@@ -85,6 +94,14 @@ export function writeReadme(input: ReadmeInput): string {
     '  The checksum in each file is the SHA-256 of its rows, without the comment lines.',
     '',
   ].join('\n')
+}
+
+/** Why the mapping leaves a term out, in the words of who did. */
+export function leaveOutReason({ termChoices }: MappingDocument, { types, placeKey }: Term): string {
+  const choice = termChoices?.find(
+    (each) => each.placeKey === placeKey && each.types.join('\n') === types.join('\n'),
+  )
+  return choice?.reason || 'no reason given'
 }
 
 function warningCount(warnings: number): string {

@@ -2,6 +2,7 @@ import { type Zippable, zipSync } from 'fflate'
 import type { DataSource } from 'typeorm'
 import { inversionSettingsSchema } from '../../shared/contracts/potential'
 import type { InversionSettings } from '../../shared/inversion'
+import { usedTerms } from '../../shared/mapping'
 import { formatNumber } from '../../shared/tables'
 import { Group } from '../entities/group.entity'
 import { Mapping } from '../entities/mapping.entity'
@@ -15,7 +16,7 @@ import { type JointOutcome, jointOutcomes, jointTableName } from './joint-table.
 import type { Download, Member } from './member'
 import { type TableFileUnits, type TableSource, writeTableFile } from './table-file'
 import { fileNamePart, namesInOneFolder, tableFileName } from './table-names'
-import { writeReadme } from './table-readme'
+import { leaveOutReason, writeReadme } from './table-readme'
 import { findStatePoint, findTerm } from './term-context'
 
 const NO_DATA = 'no data at this state point'
@@ -64,7 +65,7 @@ export class TableService {
   }
 
   /**
-   * All tables of a mapping at a state point as a zip archive, joint ones where that was decided, with a README.
+   * All tables of the terms in use of a mapping at a state point as a zip archive, joint ones where that was decided, with a README.
    *
    * @throws {HttpError} NOT_FOUND when no term has a table
    */
@@ -81,7 +82,8 @@ export class TableService {
     })
     const sources: TableSource[] = []
     const missing: { term: Term; reason: string }[] = []
-    for (const term of terms) {
+    const used = usedTerms(background.mapping.document, terms)
+    for (const term of used) {
       const outcome = await this.outcome(term, background.statePoint)
       if (outcome.reason === null) sources.push({ ...background, ...outcome, term })
       else missing.push({ term, reason: outcome.reason })
@@ -90,7 +92,8 @@ export class TableService {
     if (sources.length === 0 && joint.every(({ file }) => file === null)) {
       throw new HttpError('NOT_FOUND', 'No term has a table yet: save a potential on the bench first.')
     }
-    return pack({ background, sources, joint, missing }, units)
+    const leftOut = terms.filter((term) => !used.includes(term))
+    return pack({ background, sources, joint, missing, leftOut }, units)
   }
 
   private async background(groupId: string, mappingId: string, statePointId: string): Promise<Background> {
@@ -124,9 +127,11 @@ interface Contents {
   /** Pairs that a joint potential was decided for. */
   readonly joint: readonly JointOutcome[]
   readonly missing: readonly { readonly term: Term; readonly reason: string }[]
+  /** Terms that the mapping leaves out, whether they have data or not. */
+  readonly leftOut: readonly Term[]
 }
 
-function pack({ background, sources, joint, missing }: Contents, units: TableFileUnits): Download {
+function pack({ background, sources, joint, missing, leftOut }: Contents, units: TableFileUnits): Download {
   const { polymer, mapping, statePoint } = background
   const { temperature } = statePoint
   const tables = sources.map((source) => {
@@ -147,6 +152,7 @@ function pack({ background, sources, joint, missing }: Contents, units: TableFil
     files: tables.map((table, index) => ({ ...table, name: names[index] })),
     joint: jointTables.map((table, index) => ({ ...table, name: names[tables.length + index] })),
     missing,
+    leftOut: leftOut.map((term) => ({ term, reason: leaveOutReason(background.mapping.document, term) })),
     jointMissing: joint.flatMap(({ source: { terms }, reason }) =>
       reason === null ? [] : [{ terms, reason }],
     ),

@@ -232,6 +232,19 @@ describe('the archive of all tables', () => {
     expect(response.status).toBe(404)
   })
 
+  it('holds no table of a term that the mapping leaves out, and says why', async () => {
+    const mapping = `/api/mappings/${job.mappingId}`
+    const { revision, document } = (await client.get(mapping)).body as { revision: number; document: object }
+    const choice = { types: ['A', 'A', 'A'], placeKey: '', use: 'left out', reason: 'stiff enough' }
+    const fewer = { revision, name: 'Two beads', document: { ...document, termChoices: [choice] } }
+    expect((await group.modeller.client.put(mapping, fewer)).status).toBe(200)
+    const { files } = await archive()
+    expect(Object.keys(files)).toEqual(['README.txt', 'bond_A-A_400K.txt'])
+    expect(files['README.txt']).toContain('Terms left out of the set')
+    expect(files['README.txt']).toContain('angle A–A–A: stiff enough')
+    await group.modeller.client.put(mapping, { revision: revision + 1, name: 'Two beads', document })
+  })
+
   it('keeps files apart whose types differ by capitals only', async () => {
     const mapping = `/api/mappings/${job.mappingId}`
     const { revision, document } = (await client.get(mapping)).body as { revision: number; document: object }

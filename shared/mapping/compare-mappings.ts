@@ -3,7 +3,7 @@ import { comparisonSentence } from './comparison-sentence'
 import type { ComparedMapping, ComparedTerm, MappingComparison, MappingEvidence } from './comparison'
 import { mappingNumbers, type MappingNumbers } from './mapping-numbers'
 import { multiplicity } from './term'
-import { usedTerms } from './term-use'
+import { usedTerms } from './used-terms'
 
 /**
  * Compares mappings of one repeat unit by their own terms in use and by what their data say. The cost is that of pairs that are

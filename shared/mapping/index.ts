@@ -48,4 +48,5 @@ export {
 export { multiplicity, placeKey, termName, type BeadPlace, type DerivedTerm, type Place } from './term'
 export { hasTooManyPlaces, MAX_TERM_PLACES } from './term-limit'
 export { rankTerms, type RankedTerm, type TermEvidence, WELL_SAMPLED_SHARE } from './term-preference'
-export { termUse, usedTerms, type TermUse } from './term-use'
+export { termUse, type TermUse } from './term-use'
+export { usedTerms } from './used-terms'

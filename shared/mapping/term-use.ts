@@ -1,9 +1,9 @@
 import type { RepeatUnit } from '../chemistry'
-import { isChoiceOf } from './edit-decisions'
 import { listWords } from './list-words'
 import type { MappingDocument } from './mapping-document'
 import { multiplicity, type DerivedTerm } from './term'
 import { termGroups, type TermGroup } from './term-groups'
+import { choiceOf, usedTerms } from './used-terms'
 
 /** What the user's choice of terms comes to. Degrees of freedom are per repeat unit. */
 export interface TermUse {
@@ -18,18 +18,6 @@ export interface TermUse {
   /** Groups none of whose terms is used: what they describe is left free. */
   readonly unheld: readonly TermGroup[]
   readonly sentence: string
-}
-
-/**
- * The terms that the document does not leave out. Terms nobody chose about are used.
- *
- * @param terms derived ones, or stored ones with their `placeKey`
- */
-export function usedTerms<Term extends { readonly types: readonly string[]; readonly placeKey?: string }>(
-  document: MappingDocument,
-  terms: readonly Term[],
-): Term[] {
-  return terms.filter((term) => choiceOf(document, term)?.use !== 'left out')
 }
 
 /**
@@ -55,13 +43,6 @@ export function termUse(unit: RepeatUnit, document: MappingDocument, terms: read
   )
   const use = { used, leftOut, degrees, counted, surplus, unheld }
   return { ...use, sentence: sentence(use) }
-}
-
-function choiceOf(
-  document: MappingDocument,
-  term: { readonly types: readonly string[]; readonly placeKey?: string },
-) {
-  return document.termChoices?.find((choice) => isChoiceOf(choice, term))
 }
 
 function sentence({ leftOut, degrees, counted, surplus, unheld }: Omit<TermUse, 'sentence'>): string {

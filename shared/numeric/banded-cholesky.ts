@@ -125,7 +125,8 @@ export function selectedInverse({ size, halfBandwidth, values }: BandedFactor): 
   }
   const lower = new Float64Array(size * stride)
   for (let row = 0; row < size; row++) {
-    for (let k = 0; k <= halfBandwidth; k++) lower[row * stride + k] = inverse[row * width + halfBandwidth - k]
+    for (let k = 0; k <= halfBandwidth; k++)
+      lower[row * stride + k] = inverse[row * width + halfBandwidth - k]
   }
   return lower
 }

@@ -1,10 +1,19 @@
-import { computed, onScopeDispose, ref, shallowReactive, shallowRef, type ComputedRef, type Ref } from 'vue'
+import {
+  computed,
+  onScopeDispose,
+  ref,
+  shallowReactive,
+  shallowRef,
+  watch,
+  type ComputedRef,
+  type Ref,
+} from 'vue'
 import type { Pair } from '@shared/contracts/distribution'
 import type { IntakeSettings, JointIntakeSettings } from '@shared/intake'
 import { ApiError } from '@/api/http'
 import { storeDistribution } from '@/api/distributions'
 import { storeJointDistribution } from '@/api/joint-distributions'
-import { guessStatePoint, guessTarget, type IntakeTarget } from '@/components/intake/guess-target'
+import { guessStatePoint, guessTarget, targetKey, type IntakeTarget } from '@/components/intake/guess-target'
 import { useWorkbenchStore } from '@/stores/workbench'
 import {
   startIntakeWorker,
@@ -23,7 +32,9 @@ export interface IntakeItem {
   readonly file: File
   target: IntakeTarget | null
   /** The name of the file said what it is. */
-  readonly guessed: boolean
+  guessed: boolean
+  /** A person said what it is. */
+  aimed: boolean
   statePointId: string
   blocks: IntakeBlockFiles | null
   answer: IntakeAnswer | null
@@ -121,6 +132,7 @@ export function useIntake(
         file,
         target: named ?? asked,
         guessed: named !== null,
+        aimed: false,
         statePointId: guessStatePoint(file.name, workbench.statePoints)?.id ?? workbench.statePoint?.id ?? '',
         blocks: null,
         answer: null,
@@ -148,12 +160,27 @@ export function useIntake(
     return read(item, settingsOf(item))
   }
 
-  const aim = (item: IntakeItem, target: IntakeTarget): void => {
+  const turn = (item: IntakeItem, target: IntakeTarget): void => {
     const before = taskFor(item, null)?.kinds.join()
     item.target = target
     const sameKinds = before === taskFor(item, null)?.kinds.join()
     void read(item, sameKinds ? settingsOf(item) : null)
   }
+
+  const aim = (item: IntakeItem, target: IntakeTarget): void => {
+    item.aimed = true
+    turn(item, target)
+  }
+
+  // Files may be brought before the pairs are known; a pair in the name was then taken for one of its terms.
+  watch(pairs, () => {
+    for (const item of items.filter(({ aimed }) => !aimed)) {
+      const named = guessTarget(item.file.name, workbench.terms, pairs.value)
+      if (named === null || (item.target !== null && targetKey(item.target) === targetKey(named))) continue
+      item.guessed = true
+      turn(item, named)
+    }
+  })
 
   const send = async (item: IntakeItem, target: IntakeTarget): Promise<void> => {
     const statePointId = item.statePointId

@@ -126,6 +126,21 @@ describe('useIntake', () => {
     })
   })
 
+  it('takes a file for a pair as soon as the pairs are known, unless somebody said what it is', async () => {
+    const known = pairs.value
+    pairs.value = []
+    const desk = open()
+    desk.bring([file('B-E_B-E-H.txt', grid), file('B-E_B-E-H_again.txt', grid)], null)
+    desk.aim(desk.items[1], { type: 'term', termId: 'EH' })
+    pairs.value = known
+    await flushPromises()
+    expect(desk.items.map(({ target }) => target)).toEqual([
+      { type: 'pair', firstTermId: 'BE', secondTermId: 'BEH' },
+      { type: 'term', termId: 'EH' },
+    ])
+    expect(isReady(desk.items[0])).toBe(true)
+  })
+
   it('never stores a file that cannot be read', async () => {
     const desk = open()
     desk.bring([file('B-E.txt', '0.3 twelve\n')], null)

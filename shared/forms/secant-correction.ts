@@ -1,3 +1,4 @@
+import { dot } from '../numeric'
 import type { LikelihoodPoint } from './likelihood'
 
 /**
@@ -35,10 +36,4 @@ export function correctBySecant(
 function times(matrix: Float64Array, vector: Float64Array): Float64Array {
   const size = vector.length
   return vector.map((_, row) => dot(matrix.subarray(row * size, (row + 1) * size), vector))
-}
-
-function dot(one: Float64Array, other: Float64Array): number {
-  let sum = 0
-  for (let j = 0; j < one.length; j++) sum += one[j] * other[j]
-  return sum
 }

@@ -13,3 +13,4 @@ export {
   type SeriesInefficiency,
   seriesInefficiency,
 } from './series-inefficiency'
+export { dot, largestMagnitude } from './vectors'

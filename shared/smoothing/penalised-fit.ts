@@ -1,5 +1,6 @@
 import { InvalidInputError } from '../errors'
-import { type BandedFactor, bandedSolve, selectedInverse } from '../numeric'
+import { type BandedFactor, bandedSolve, dot, largestMagnitude, selectedInverse } from '../numeric'
+import { newtonStep } from './newton-step'
 import {
   binValues,
   binVariances,
@@ -79,10 +80,10 @@ export function penalisedFit(
   for (let step = 0; ; step++) {
     const direction = bandedSolve(factor, Float64Array.from(state.gradient))
     const next = descend(system, counts, offsets, weight, state, direction)
-    const { moved, felt } = stepLength(state, next)
+    const { moved, felt } = newtonStep(state, next)
     state = next
     factor = factorSystem(system, state.means, weight)
-    const scale = 1 + largest(state.eta)
+    const scale = 1 + largestMagnitude(state.eta)
     if (moved <= converged * scale || (moved < ROUNDING * scale && moved >= previous)) break
     if (step >= PATIENCE && felt < IMPATIENT_STEP) break
     if (step === MOST_LOOSE_STEPS && converged > NEWTON_STEP.final) break
@@ -161,7 +162,7 @@ function descend(
   direction: Float64Array,
 ): State {
   const { places } = system
-  const longest = largest(direction)
+  const longest = largestMagnitude(direction)
   let share = 1
   for (let halving = 0; halving < MOST_HALVINGS; halving++) {
     const moved = new Float64Array(direction.length)
@@ -200,27 +201,4 @@ function deviance(counts: Float64Array, means: Float64Array): number {
     sum += mean - count + (count > 0 ? count * Math.log(count / mean) : 0)
   }
   return 2 * sum
-}
-
-function dot(one: Float64Array, other: Float64Array): number {
-  let sum = 0
-  for (let index = 0; index < one.length; index++) sum += one[index] * other[index]
-  return sum
-}
-
-function largest(values: Float64Array): number {
-  let most = 0
-  for (let index = 0; index < values.length; index++) most = Math.max(most, Math.abs(values[index]))
-  return most
-}
-
-/** Largest change of η, and the largest that matters: weighted by √μ where less than one count is expected. */
-function stepLength(before: State, after: State): { moved: number; felt: number } {
-  let [moved, felt] = [0, 0]
-  for (let bin = 0; bin < after.eta.length; bin++) {
-    const change = Math.abs(after.eta[bin] - before.eta[bin])
-    moved = Math.max(moved, change)
-    felt = Math.max(felt, change * Math.sqrt(Math.min(1, after.means[bin])))
-  }
-  return { moved, felt }
 }

@@ -1,5 +1,6 @@
 import { InvalidInputError } from '../errors'
-import { type BandedFactor, bandedSolve } from '../numeric'
+import { type BandedFactor, bandedSolve, largestMagnitude } from '../numeric'
+import { newtonStep } from './newton-step'
 import { NEWTON_STEP } from './penalised-fit'
 import { type TensorEvidence, tensorEvidence } from './tensor-evidence'
 import { axisRoughness, type PerAxis } from './tensor-penalty'
@@ -54,10 +55,10 @@ export function tensorFit(
   let previous = Infinity
   for (let step = 0; ; step++) {
     const next = descend(problem, state, bandedSolve(factor, Float64Array.from(state.gradient)))
-    const { moved, felt } = stepLength(state, next)
+    const { moved, felt } = newtonStep(state, next)
     state = next
     factor = factorTensor(system, state.means, lambdas)
-    const scale = 1 + largest(state.eta)
+    const scale = 1 + largestMagnitude(state.eta)
     if (moved <= converged * scale || (moved < ROUNDING * scale && moved >= previous)) break
     if (step >= PATIENCE && felt < IMPATIENT_STEP) break
     if (step === MOST_STEPS) throw undetermined()
@@ -114,7 +115,7 @@ function evaluate({ system, counts, offsets, lambdas }: Problem, coefficients: F
 
 function descend(problem: Problem, state: State, direction: Float64Array): State {
   const { places } = problem.system
-  const longest = largest(direction)
+  const longest = largestMagnitude(direction)
   let share = 1
   for (let halving = 0; halving < MOST_HALVINGS; halving++) {
     const moved = state.coefficients.map((value, index) => value + share * direction[places[index]])
@@ -135,23 +136,6 @@ function firstGuess({ system, counts, offsets, lambdas }: Problem): Float64Array
   pull.forEach((value, index) => (right[places[index]] = value + hold.strength * hold.level))
   const solved = bandedSolve(factorTensor(system, weights, lambdas), right)
   return pull.map((_, index) => solved[places[index]])
-}
-
-function largest(values: Float64Array): number {
-  let most = 0
-  for (let index = 0; index < values.length; index++) most = Math.max(most, Math.abs(values[index]))
-  return most
-}
-
-/** Largest change of η, and the largest that matters: weighted by √μ where less than one count is expected. */
-function stepLength(before: State, after: State): { moved: number; felt: number } {
-  let [moved, felt] = [0, 0]
-  for (let cell = 0; cell < after.eta.length; cell++) {
-    const change = Math.abs(after.eta[cell] - before.eta[cell])
-    moved = Math.max(moved, change)
-    felt = Math.max(felt, change * Math.sqrt(Math.min(1, after.means[cell])))
-  }
-  return { moved, felt }
 }
 
 function undetermined(): InvalidInputError {

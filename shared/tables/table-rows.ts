@@ -1,3 +1,4 @@
+import { largestMagnitude } from '../numeric'
 import { coordinateFromInternal, coordinateScale, energyScale } from '../units'
 import { roundSignificant } from './format-number'
 import type { Table, TableRow, TableUnits } from './table'
@@ -14,17 +15,13 @@ const ROUNDING = 1e-13
 export function tableRows(table: Table, units: TableUnits): TableRow[] {
   const energyFactor = energyScale(units.energyUnit, table.temperature)
   const forceFactor = energyFactor * coordinateScale(units.coordinateUnit)
-  const leastEnergy = ROUNDING * largest(table.energies)
-  const leastForce = ROUNDING * largest(table.forces)
+  const leastEnergy = ROUNDING * largestMagnitude(table.energies)
+  const leastForce = ROUNDING * largestMagnitude(table.forces)
   return Array.from(table.coordinates, (coordinate, row) => ({
     coordinate: roundSignificant(coordinateFromInternal(coordinate, units.coordinateUnit)),
     energy: roundSignificant(dropBelow(table.energies[row], leastEnergy) * energyFactor),
     force: roundSignificant(dropBelow(table.forces[row], leastForce) * forceFactor),
   }))
-}
-
-function largest(values: Float64Array): number {
-  return values.reduce((most, value) => Math.max(most, Math.abs(value)), 0)
 }
 
 function dropBelow(value: number, least: number): number {

@@ -46,8 +46,8 @@ export function termUse(unit: RepeatUnit, document: MappingDocument, terms: read
 }
 
 function sentence({ leftOut, degrees, counted, surplus, unheld }: Omit<TermUse, 'sentence'>): string {
-  const { bond, angle, dihedral } = counted
-  const count = `Each unit has ${degrees} degrees of freedom; the terms in use count ${bond} bonds, ${angle} angles and ${dihedral} dihedrals`
+  const kinds = Object.entries(counted).map(([kind, count]) => `${count} ${kind}${count === 1 ? '' : 's'}`)
+  const count = `Each unit has ${degrees} degrees of freedom; the terms in use count ${listWords(kinds)}`
   const balance =
     surplus > 0
       ? `, ${surplus} more: some preferences are counted more than once.`

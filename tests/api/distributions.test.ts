@@ -1,6 +1,7 @@
 import { createHash } from 'node:crypto'
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest'
 import { type Distribution, MAX_FILE_BYTES } from '@shared/contracts/distribution'
+import type { Term } from '@shared/contracts/mapping'
 import type { StoredPotential } from '@shared/contracts/potential'
 import type { ApiClient, TextFile } from '../support/api-client'
 import { type ApiServer, openApiServer } from '../support/api-server'
@@ -210,9 +211,15 @@ describe('a potential', () => {
     const path = `/api/terms/${job.bondId}/potential`
     const read = async () =>
       (await client.get(`${path}?statePoint=${job.statePointId}`)).body as StoredPotential
+    const listed = async () => {
+      const response = await client.get(`/api/mappings/${job.mappingId}/terms?statePoint=${job.statePointId}`)
+      return (response.body as { terms: Term[] }).terms.find(({ id }) => id === job.bondId)?.stale
+    }
     expect(await read()).toMatchObject({ id: job.potentialId, stale: false, revision: 1 })
+    expect(await listed()).toBe(false)
     await client.patch(`/api/distributions/${job.distributionId}`, { independentSamples: 1000 })
     expect(await read()).toMatchObject({ stale: true })
+    expect(await listed()).toBe(true)
     await client.patch(`/api/distributions/${job.distributionId}`, { independentSamples: null })
     expect(await read()).toMatchObject({ stale: false })
     await bring(bondFile('newer.txt', 4e5))

@@ -172,6 +172,22 @@ describe('the table of a term', () => {
     expect((await table()).status).toBe(200)
   })
 
+  it('holds the numbers of the form the settings name, and says which with its parameters', async () => {
+    await savePotential(job.bondId, { ...DEFAULT_INVERSION_SETTINGS, form: 'harmonic' })
+    const { text } = await table()
+    await savePotential(job.bondId)
+    // The file counts centres of 2 pm bins where the fit integrates over them: k comes out softer by about w²k/12kT, 0.04 %.
+    const k = Number(/k = ([\d.]+)/.exec(text)?.[1])
+    const r0 = Number(/r0 = ([\d.]+)/.exec(text)?.[1])
+    expect(Math.abs(k / BOND.stiffness - 1)).toBeLessThan(0.001)
+    expect(Math.abs(r0 - BOND.length)).toBeLessThan(1e-4)
+    for (const [r, energy, force] of numbersOf(text)) {
+      expect(Math.abs(energy - 0.5 * k * (r - r0) ** 2)).toBeLessThan(1e-3 * (1 + energy))
+      expect(Math.abs(force + k * (r - r0))).toBeLessThan(1e-3 * (1 + Math.abs(force)))
+    }
+    expect(rowsOf((await table()).text)).not.toBe(rowsOf(text))
+  })
+
   it('is refused in units that are none', async () => {
     for (const units of ['&length=inch', '&angle=gon', '&energy=eV']) {
       expect((await table(job.bondId, units)).status).toBe(400)

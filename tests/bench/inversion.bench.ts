@@ -1,4 +1,5 @@
 import { expect, test } from 'vitest'
+import { curveBasins } from '@shared/basins'
 import type { Histogram } from '@shared/histogram'
 import { DEFAULT_INVERSION_SETTINGS, invert } from '@shared/inversion'
 import { makeTable } from '@shared/tables'
@@ -13,13 +14,14 @@ function measure(histogram: Histogram): number {
   return medianTime(
     () => {
       const { potential } = invert(histogram, 400, DEFAULT_INVERSION_SETTINGS)
+      curveBasins(potential)
       return makeTable(potential, DEFAULT_INVERSION_SETTINGS.table)
     },
     { warmUps: WARM_UPS, runs: RUNS },
   )
 }
 
-test('automatic inversion with band and a table of 1,000 rows', () => {
+test('automatic inversion with band, basins and a table of 1,000 rows', () => {
   const rows = BENCH_CASES.map((benchCase) => {
     const medians = BINS.map((bins) => measure(noisyHistogram(benchCase, bins, SAMPLES)))
     expect(medians.every((time) => Number.isFinite(time))).toBe(true)

@@ -53,7 +53,7 @@ export const DEFAULT_INVERSION_SETTINGS: InversionSettings = {
 }
 
 /**
- * Limits that forms, contracts and the core all read. λ reaches as far as any automatic choice on 5,000 bins and a billion
+ * Limits that forms, contracts and the core all read. λ reaches as far as an automatic choice does on 5,000 bins and a billion
  * counts, so that every choice can be repeated by hand.
  */
 export const SETTING_LIMITS = {

@@ -1,32 +1,19 @@
 import { performance } from 'node:perf_hooks'
 import { expect, test } from 'vitest'
-import { createJointHistogram } from '@shared/histogram'
 import {
   DEFAULT_JOINT_SETTINGS,
   DEFAULT_JOINT_TABLE,
   jointPotential,
   jointTable,
 } from '@shared/joint-potential'
-import { createRandom } from '@shared/numeric'
+import { noisyJointHistogram } from '../support/bench-cases'
 
 const WARM_UPS = 2
 const RUNS = 9
-const [NX, NY] = [90, 120]
 
 test('joint potential of 90 × 120 bins', { timeout: 300_000 }, () => {
   for (const samples of [2000, 20_000, 200_000]) {
-    const random = createRandom(3)
-    const weights = Array.from({ length: NX * NY }, (_, cell) => {
-      const [x, y] = [(Math.floor(cell / NY) - 45) / 15, ((cell % NY) - 60) / 20]
-      return random.poisson((samples / 1885) * Math.exp(-0.5 * (x * x - x * y + y * y)))
-    })
-    const joint = createJointHistogram({
-      kinds: ['bond', 'angle'],
-      xEdges: Array.from({ length: NX + 1 }, (_, edge) => 0.3 + 0.002 * edge),
-      yEdges: Array.from({ length: NY + 1 }, (_, edge) => 0.5 + 0.02 * edge),
-      weights,
-      content: 'count',
-    })
+    const joint = noisyJointHistogram(samples)
     const [fits, tables, processor]: number[][] = [[], [], []]
     for (let run = 0; run < WARM_UPS + RUNS; run++) {
       const before = process.cpuUsage()

@@ -1,5 +1,11 @@
 import { performance } from 'node:perf_hooks'
-import { createHistogram, type CoordinateKind, type Histogram } from '@shared/histogram'
+import {
+  createHistogram,
+  createJointHistogram,
+  type CoordinateKind,
+  type Histogram,
+  type JointHistogram,
+} from '@shared/histogram'
 import { createRandom } from '@shared/numeric'
 
 /** A distribution that milliseconds are measured on. */
@@ -63,4 +69,21 @@ export function medianTime(run: () => unknown, { warmUps, runs }: { warmUps: num
     return performance.now() - start
   })
   return times.sort((one, other) => one - other)[runs >> 1]
+}
+
+/** Poisson counts of a coupled bond and angle on 90 × 120 bins, about as many as asked. */
+export function noisyJointHistogram(samples: number): JointHistogram {
+  const [nx, ny] = [90, 120]
+  const random = createRandom(3)
+  const weights = Array.from({ length: nx * ny }, (_, cell) => {
+    const [x, y] = [(Math.floor(cell / ny) - 45) / 15, ((cell % ny) - 60) / 20]
+    return random.poisson((samples / 1885) * Math.exp(-0.5 * (x * x - x * y + y * y)))
+  })
+  return createJointHistogram({
+    kinds: ['bond', 'angle'],
+    xEdges: Array.from({ length: nx + 1 }, (_, edge) => 0.3 + 0.002 * edge),
+    yEdges: Array.from({ length: ny + 1 }, (_, edge) => 0.5 + 0.02 * edge),
+    weights,
+    content: 'count',
+  })
 }

@@ -1,5 +1,5 @@
 import type { RequestHandler, Response, Router } from 'express'
-import { idSchema } from '../../shared/contracts/common'
+import { idSchema, type Role } from '../../shared/contracts/common'
 import { HttpError, notFound } from '../errors/http-error'
 import { requireCsrfToken } from '../middleware/csrf'
 import { readJson } from '../middleware/json-body'
@@ -7,7 +7,15 @@ import { readUpload, uploadedFiles } from '../middleware/upload'
 import { visitorOf } from '../middleware/visitor'
 import type { Download, Member, Services } from '../services'
 import { RESOURCES } from '../services/access.service'
-import type { AnyRoute, MemberAccess } from './route'
+import { type AnyRoute, type MemberAccess, ROLES_FOR } from './route'
+
+const REFUSED = {
+  read: 'see',
+  write: 'change',
+  review: 'decide on',
+  manage: 'manage',
+  belong: 'see',
+} as const
 
 /** What routes are mounted with. */
 export interface MountOptions {
@@ -40,9 +48,9 @@ function requireMember({ may, at }: MemberAccess, { access }: Services): Request
     const id = idSchema.safeParse(request.params[`${at}Id`])
     const member = id.success ? await access.memberFor(at, id.data, userId) : null
     if (!member) throw notFound(RESOURCES[at].replace('_', ' '))
-    const roles = may === 'read' ? ['owner', 'modeller', 'reviewer'] : ['owner', 'modeller']
+    const roles: readonly Role[] = ROLES_FOR[may]
     if (!roles.includes(member.role)) {
-      throw new HttpError('FORBIDDEN', `A ${member.role} may not ${may === 'read' ? 'see' : 'change'} this.`)
+      throw new HttpError('FORBIDDEN', `A ${member.role} may not ${REFUSED[may]} this.`)
     }
     response.locals.member = member
     next()

@@ -1,12 +1,27 @@
 import type { z } from 'zod'
+import type { Role } from '../../shared/contracts/common'
 import type { ApiCode } from '../../shared/contracts/error'
 import type { Visitor } from '../middleware/visitor'
 import type { Download, Member, Services, UploadedBlocks, UploadedFile } from '../services'
 import type { Resource } from '../services/access.service'
 
-/** Someone in the group of the record that the path names: everyone but collaborators reads, owner and modeller write. */
+/** What a route asks of a member, and the roles that may do it. Nobody reviews what is their own: services see to that. */
+export const ROLES_FOR = {
+  /** See the work of the group. */
+  read: ['owner', 'modeller', 'reviewer'],
+  /** Change the work of the group. */
+  write: ['owner', 'modeller'],
+  /** Sign off or send back. */
+  review: ['owner', 'reviewer'],
+  /** Run the group itself: people, defaults, history. */
+  manage: ['owner'],
+  /** Be in the group, in whatever role. */
+  belong: ['owner', 'modeller', 'reviewer', 'collaborator'],
+} as const satisfies Record<string, readonly Role[]>
+
+/** Someone in the group of the record that the path names, in one of the roles that may. */
 export interface MemberAccess {
-  readonly may: 'read' | 'write'
+  readonly may: keyof typeof ROLES_FOR
   /** Its id is the path's parameter of that name with Id behind it, as in :polymerId. */
   readonly at: Resource
 }

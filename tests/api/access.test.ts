@@ -3,8 +3,8 @@ import type { Response } from 'supertest'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { DEFAULT_INVERSION_SETTINGS } from '@shared/inversion'
 import { routes } from '../../server/routes'
-import type { AnyRoute } from '../../server/routes/route'
-import { ApiClient, type TextFile } from '../support/api-client'
+import { type AnyRoute, type MemberAccess, ROLES_FOR } from '../../server/routes/route'
+import { ApiClient } from '../support/api-client'
 import { type ApiServer, openApiServer } from '../support/api-server'
 import { buildGroup, type TestGroup } from '../support/group-builder'
 import {
@@ -16,67 +16,17 @@ import {
   type Job,
   jointFile,
 } from '../support/job-builder'
+import { ROUTE_SAMPLES, type Sample } from '../support/route-samples'
 
-/** What a valid request to a route holds beside its path. */
-interface Sample {
-  readonly query?: string
-  readonly body?: object
-  readonly file?: TextFile
-}
+type MemberRoute = AnyRoute & { readonly access: MemberAccess }
 
-/** One valid request for every route that asks for membership. A route without one fails the first test below. */
-const SAMPLES: Readonly<Record<string, (job: Job) => Sample>> = {
-  'get /api/groups/:groupId/polymers': () => ({}),
-  'post /api/groups/:groupId/polymers': () => ({ body: { name: randomUUID(), smiles: '*CC*' } }),
-  'get /api/polymers/:polymerId': () => ({}),
-  'patch /api/polymers/:polymerId': () => ({ body: { revision: 1, notes: 'changed' } }),
-  'delete /api/polymers/:polymerId': () => ({}),
-  'get /api/polymers/:polymerId/state-points': () => ({}),
-  'post /api/polymers/:polymerId/state-points': () => ({ body: { temperature: 300 } }),
-  'patch /api/state-points/:statePointId': () => ({ body: { revision: 1, notes: 'changed' } }),
-  'delete /api/state-points/:statePointId': () => ({}),
-  'get /api/polymers/:polymerId/mappings': () => ({}),
-  'post /api/polymers/:polymerId/mappings': () => ({ body: { name: 'Another' } }),
-  'get /api/polymers/:polymerId/comparison': ({ mappingId, statePointId }) => ({
-    query: `mappings=${mappingId},${otherMappingId}&statePoint=${statePointId}`,
-  }),
-  'get /api/mappings/:mappingId': () => ({}),
-  'put /api/mappings/:mappingId': () => ({ body: { revision: 1, name: 'Saved', document: DOCUMENT } }),
-  'delete /api/mappings/:mappingId': () => ({}),
-  'get /api/mappings/:mappingId/terms': ({ statePointId }) => ({ query: `statePoint=${statePointId}` }),
-  'get /api/mappings/:mappingId/pairs': ({ statePointId }) => ({ query: `statePoint=${statePointId}` }),
-  'get /api/mappings/:mappingId/tables.zip': ({ statePointId }) => ({ query: `statePoint=${statePointId}` }),
-  'post /api/mappings/:mappingId/joint-distributions': ({ bondId, angleId, statePointId }) => ({
-    body: { firstTermId: bondId, secondTermId: angleId, statePointId, settings: JOINT_SETTINGS },
-    file: jointFile(),
-  }),
-  'post /api/terms/:termId/distributions': ({ statePointId }) => ({
-    body: { statePointId, settings: { ...ANGLE_SETTINGS, kind: 'angle' } },
-    file: angleFile(),
-  }),
-  'get /api/terms/:termId/distribution': ({ statePointId }) => ({ query: `statePoint=${statePointId}` }),
-  'get /api/terms/:termId/potential': ({ statePointId }) => ({ query: `statePoint=${statePointId}` }),
-  'put /api/terms/:termId/potential': ({ statePointId }) => ({
-    body: { statePointId, revision: 1, settings: DEFAULT_INVERSION_SETTINGS },
-  }),
-  'get /api/terms/:termId/table': ({ statePointId }) => ({ query: `statePoint=${statePointId}` }),
-  'patch /api/distributions/:distributionId': () => ({ body: { independentSamples: 1000 } }),
-  'delete /api/distributions/:distributionId': () => ({}),
-  'get /api/distributions/:distributionId/file': () => ({}),
-  'delete /api/potentials/:potentialId': () => ({}),
-  'get /api/joint-distributions/:jointDistributionId': () => ({}),
-  'delete /api/joint-distributions/:jointDistributionId': () => ({}),
-  'get /api/joint-distributions/:jointDistributionId/file': () => ({}),
-  'get /api/joint-distributions/:jointDistributionId/table': () => ({}),
-  'put /api/joint-distributions/:jointDistributionId/decision': () => ({
-    body: { choice: 'separate', reason: 'They move on their own.' },
-  }),
-}
-
-const memberRoutes = routes.filter(({ access }) => typeof access === 'object')
+const memberRoutes = routes.filter((route): route is MemberRoute => typeof route.access === 'object')
 const keyOf = ({ method, path }: AnyRoute): string => `${method} ${path}`
 const named = memberRoutes.map((route) => ({ name: keyOf(route), route }))
-const mayWrite = ({ access }: AnyRoute): boolean => typeof access === 'object' && access.may === 'write'
+const ROLES = ROLES_FOR.belong
+const everyRole = named.flatMap(({ name, route }) => ROLES.map((role) => ({ name, route, role })))
+const isAllowed = (route: MemberRoute, role: (typeof ROLES)[number]): boolean =>
+  (ROLES_FOR[route.access.may] as readonly string[]).includes(role)
 
 let server: ApiServer
 let group: TestGroup
@@ -108,20 +58,20 @@ function idsOf(job: Job): Record<string, string> {
   return { polymerId, statePointId, mappingId, distributionId, potentialId, jointDistributionId }
 }
 
-async function call(
-  client: ApiClient,
-  route: AnyRoute,
-  job: Job,
-  path = pathFor(route, job),
-): Promise<Response> {
-  const { query, body, file } = SAMPLES[keyOf(route)](job)
-  const url = query === undefined ? path : `${path}?${query}`
+async function sampleOf(route: AnyRoute, job: Job): Promise<Sample> {
+  return ROUTE_SAMPLES[keyOf(route)]({ server, group, job, otherMappingId })
+}
+
+async function call(client: ApiClient, route: AnyRoute, job: Job, path?: string): Promise<Response> {
+  const { ids, query, body, file } = await sampleOf(route, job)
+  const address = path ?? pathFor(route, job, ids)
+  const url = query === undefined ? address : `${address}?${query}`
   return file ? client.upload(url, body, file) : client.send(route.method, url, body)
 }
 
 describe('who may do what', () => {
   it('is tried out for every route of the API', () => {
-    expect(Object.keys(SAMPLES).sort()).toEqual(memberRoutes.map(keyOf).sort())
+    expect(Object.keys(ROUTE_SAMPLES).sort()).toEqual(memberRoutes.map(keyOf).sort())
     expect(
       routes
         .filter(({ access }) => typeof access !== 'object')
@@ -139,8 +89,9 @@ describe('who may do what', () => {
     ])
   })
 
-  it.each(named)('$name works for an owner and a modeller', async ({ route }) => {
-    for (const role of ['owner', 'modeller'] as const) {
+  it.each(everyRole.filter(({ route, role }) => isAllowed(route, role)))(
+    '$name works for the $role',
+    async ({ route, role }) => {
       const joint = route.path.includes(':jointDistributionId')
       const job =
         route.method === 'get' ? shared : await buildJob(server.services, group.modeller.member, { joint })
@@ -148,20 +99,18 @@ describe('who may do what', () => {
         await server.services.distributions.remove(group.owner.member, job.distributionId)
       }
       const response = await call(group[role].client, route, job)
-      expect(response.status, `${role}: ${response.text}`).toBe(route.answer.status)
-    }
-  })
+      expect(response.status, response.text).toBe(route.answer.status)
+    },
+  )
 
-  it.each(named)('$name: a reviewer reads and does not write', async ({ route }) => {
-    const response = await call(group.reviewer.client, route, shared)
-    expect(response.status).toBe(mayWrite(route) ? 403 : 200)
-  })
-
-  it.each(named)('$name: a collaborator sees nothing yet', async ({ route }) => {
-    const response = await call(group.collaborator.client, route, shared)
-    expect(response.status).toBe(403)
-    expect(response.body).toMatchObject({ code: 'FORBIDDEN' })
-  })
+  it.each(everyRole.filter(({ route, role }) => !isAllowed(route, role)))(
+    '$name is refused to the $role',
+    async ({ route, role }) => {
+      const response = await call(group[role].client, route, shared)
+      expect(response.status).toBe(403)
+      expect(response.body).toMatchObject({ code: 'FORBIDDEN' })
+    },
+  )
 
   it.each(named)('$name: for the owner of another group there is nothing there', async ({ route }) => {
     const response = await call(strangers.owner.client, route, shared)
@@ -188,9 +137,9 @@ describe('who may do what', () => {
   it.each(named.filter(({ route }) => route.method !== 'get'))(
     '$name is refused without the token of the session, and with another one',
     async ({ route }) => {
-      const path = pathFor(route, shared)
+      const { ids, body } = await sampleOf(route, shared)
+      const path = pathFor(route, shared, ids)
       const { client } = group.owner
-      const { body } = SAMPLES[keyOf(route)](shared)
       const without = await client.raw(route.method, path).send(body)
       const wrong = await client
         .raw(route.method, path)

@@ -1,11 +1,14 @@
 import 'reflect-metadata'
+import { Logger, runMigrations } from 'graphile-worker'
 import { DataSource } from 'typeorm'
+import type { PostgresConnectionOptions } from 'typeorm/driver/postgres/PostgresConnectionOptions.js'
 import { entities } from './entities'
 import { Foundation1764547200000 } from './migrations/1764547200000-foundation'
 import { Blocks1764633600000 } from './migrations/1764633600000-blocks'
+import { People1764720000000 } from './migrations/1764720000000-people'
 
 /** In the order of their time stamps. */
-const migrations = [Foundation1764547200000, Blocks1764633600000]
+const migrations = [Foundation1764547200000, Blocks1764633600000, People1764720000000]
 
 /** Any number, the same for every server on one database: whoever holds this lock migrates. */
 const MIGRATION_LOCK = 4_300_100
@@ -38,8 +41,15 @@ export async function migrate(dataSource: DataSource): Promise<void> {
   try {
     await holder.query('select pg_advisory_lock($1)', [MIGRATION_LOCK])
     await dataSource.runMigrations()
+    await migrateQueue(dataSource)
     await holder.query('select pg_advisory_unlock($1)', [MIGRATION_LOCK])
   } finally {
     await holder.release()
   }
+}
+
+/** The queue keeps its own schema beside ours, with its own migrations. */
+function migrateQueue({ options }: DataSource): Promise<void> {
+  const { url } = options as PostgresConnectionOptions
+  return runMigrations({ connectionString: url, logger: new Logger(() => () => undefined) })
 }

@@ -8,6 +8,7 @@ import { createApp } from './app'
 import type { Config } from './config'
 import { createDataSource, migrate } from './data-source'
 import { seedDemo } from './demo/seed-demo'
+import { linksFrom } from './mail/links'
 import { packageRoot, packageVersion } from './package-root'
 import { createServices } from './services'
 
@@ -46,7 +47,12 @@ export async function serve(config: Config, logger: Logger): Promise<RunningServ
     await dataSource.initialize()
     closing.push(() => dataSource.destroy())
     await migrate(dataSource)
-    const services = createServices(dataSource, { demo: config.demo, version: packageVersion(root) })
+    let publicUrl = config.publicUrl ?? `http://127.0.0.1:${config.port}`
+    const services = createServices(dataSource, {
+      demo: config.demo,
+      version: packageVersion(root),
+      linkTo: linksFrom(() => publicUrl),
+    })
     if (config.demo) logger.info({ demo: await seedDemo(dataSource, services) }, 'demo')
     else await services.sessions.endDemoSessions()
     const token = await services.setUp.offer()
@@ -64,6 +70,7 @@ export async function serve(config: Config, logger: Logger): Promise<RunningServ
     await listen(server, config)
     closing.push(() => stopListening(server))
     const { port } = server.address() as AddressInfo
+    publicUrl = config.publicUrl ?? `http://127.0.0.1:${port}`
     return { port, setUpPath: token === null ? null : `/set-up/${token}`, stop: close }
   } catch (error) {
     await close()

@@ -1,4 +1,5 @@
 import { Column, CreateDateColumn, Entity, PrimaryGeneratedColumn } from 'typeorm'
+import type { GroupDefaults } from '../../shared/contracts/group'
 
 /** A research group. Every record of the science belongs to exactly one. */
 @Entity('group')
@@ -12,6 +13,14 @@ export class Group {
   /** Invented data: marked wherever it shows. */
   @Column('boolean', { default: false })
   demo!: boolean
+
+  /** What differs from the house's own defaults; see shared/contracts/group. */
+  @Column('jsonb', { default: {} })
+  defaults!: Partial<GroupDefaults>
+
+  /** Of the defaults. */
+  @Column('integer', { default: 1 })
+  revision!: number
 
   @CreateDateColumn({ name: 'created_at', type: 'timestamptz' })
   createdAt!: Date

@@ -1,10 +1,15 @@
+import { CaughtMail } from './caught-mail.entity'
 import { Decision } from './decision.entity'
 import { DistributionBlock } from './distribution-block.entity'
 import { Distribution } from './distribution.entity'
+import { Event } from './event.entity'
 import { Group } from './group.entity'
+import { Invitation } from './invitation.entity'
 import { JointDistribution } from './joint-distribution.entity'
+import { Mail } from './mail.entity'
 import { Mapping } from './mapping.entity'
 import { Membership } from './membership.entity'
+import { PasswordReset } from './password-reset.entity'
 import { Polymer } from './polymer.entity'
 import { Potential } from './potential.entity'
 import { SessionRecord } from './session-record.entity'
@@ -17,13 +22,18 @@ import { User } from './user.entity'
 
 /** Every table of the database. */
 export const entities = [
+  CaughtMail,
   Decision,
   Distribution,
   DistributionBlock,
+  Event,
   Group,
+  Invitation,
   JointDistribution,
+  Mail,
   Mapping,
   Membership,
+  PasswordReset,
   Polymer,
   Potential,
   SessionRecord,

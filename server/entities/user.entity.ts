@@ -1,4 +1,13 @@
-import { Column, CreateDateColumn, Entity, PrimaryGeneratedColumn, Unique } from 'typeorm'
+import {
+  Column,
+  CreateDateColumn,
+  Entity,
+  JoinColumn,
+  ManyToOne,
+  PrimaryGeneratedColumn,
+  Unique,
+} from 'typeorm'
+import { Group } from './group.entity'
 
 /** A person. Belongs to groups by memberships. */
 @Entity('user')
@@ -21,6 +30,14 @@ export class User {
   /** Invented: one of the demo's people. */
   @Column('boolean', { default: false })
   demo!: boolean
+
+  /** The group whose work the person looked at last. */
+  @Column('uuid', { name: 'current_group_id', nullable: true })
+  currentGroupId!: string | null
+
+  @ManyToOne(() => Group, { onDelete: 'SET NULL', nullable: true })
+  @JoinColumn({ name: 'current_group_id', foreignKeyConstraintName: 'FK_user_current_group' })
+  currentGroup?: Group | null
 
   @CreateDateColumn({ name: 'created_at', type: 'timestamptz' })
   createdAt!: Date

@@ -1,4 +1,5 @@
 import type { DataSource } from 'typeorm'
+import type { LinkTo } from '../mail/links'
 import { AccessService } from './access.service'
 import { ComparisonService } from './comparison.service'
 import { DistributionService } from './distribution.service'
@@ -26,6 +27,8 @@ export interface ServiceOptions {
   readonly demo: boolean
   /** Of the server, as /api/health tells it. */
   readonly version: string
+  /** Makes the addresses in e-mails. */
+  readonly linkTo: LinkTo
 }
 
 /** The rules of the house: everything routes, the start and the demo may ask for. */

@@ -47,7 +47,17 @@ describe('the database itself', () => {
              and c.table_schema = 'public' and c.column_name = 'group_id' and c.is_nullable = 'NO')`,
     )
     const names = without.map(({ name }) => name).sort()
-    expect(names).toEqual(['group', 'migration', 'session', 'set_up_link', 'setting', 'user'])
+    expect(names).toEqual([
+      'caught_mail',
+      'group',
+      'mail',
+      'migration',
+      'password_reset',
+      'session',
+      'set_up_link',
+      'setting',
+      'user',
+    ])
   })
 
   it('keeps a file with exactly one distribution', async () => {

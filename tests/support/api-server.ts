@@ -5,6 +5,7 @@ import { pino } from 'pino'
 import type { DataSource } from 'typeorm'
 import { createApp } from '../../server/app'
 import { createDataSource } from '../../server/data-source'
+import { linksFrom } from '../../server/mail/links'
 import { LOG_OPTIONS } from '../../server/logger'
 import { createServices, type Services } from '../../server/services'
 import { createTestDatabase } from './test-database'
@@ -41,7 +42,11 @@ export async function openApiServer(options: ApiServerOptions = {}): Promise<Api
     },
   })
   sessionPool.on('error', (error) => lines.push(error.message))
-  const services = createServices(dataSource, { demo: options.demo ?? false, version: '0.0.0' })
+  const services = createServices(dataSource, {
+    demo: options.demo ?? false,
+    version: '0.0.0',
+    linkTo: linksFrom(() => 'https://beads.example'),
+  })
   const app = createApp({
     services,
     sessionPool,

@@ -13,7 +13,7 @@ let services: Services
 beforeAll(async () => {
   database = await createTestDatabase()
   dataSource = await createDataSource(database.url).initialize()
-  services = createServices(dataSource, { demo: true, version: 'test' })
+  services = createServices(dataSource, { demo: true, version: 'test', linkTo: (path) => path })
 })
 
 afterAll(async () => {

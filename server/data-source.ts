@@ -1,7 +1,6 @@
 import 'reflect-metadata'
 import { Logger, runMigrations } from 'graphile-worker'
 import { DataSource } from 'typeorm'
-import type { PostgresConnectionOptions } from 'typeorm/driver/postgres/PostgresConnectionOptions.js'
 import { entities } from './entities'
 import { Foundation1764547200000 } from './migrations/1764547200000-foundation'
 import { Blocks1764633600000 } from './migrations/1764633600000-blocks'
@@ -50,6 +49,6 @@ export async function migrate(dataSource: DataSource): Promise<void> {
 
 /** The queue keeps its own schema beside ours, with its own migrations. */
 function migrateQueue({ options }: DataSource): Promise<void> {
-  const { url } = options as PostgresConnectionOptions
+  const { url } = options as { readonly url: string }
   return runMigrations({ connectionString: url, logger: new Logger(() => () => undefined) })
 }

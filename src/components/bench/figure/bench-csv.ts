@@ -1,6 +1,6 @@
 import type { BinContent } from '@shared/histogram'
 import type { CoordinateKind } from '@shared/units'
-import { csvText, type CsvColumn } from '@/components/figure/csv-text'
+import { csvText, type CsvColumn } from '@shared/csv'
 import { captionSentences, type FigureCaption } from '@/components/figure/figure-caption'
 import { PLAIN_SYMBOLS } from '@/components/figure/plain-symbols'
 import type { Point } from '@/components/figure/stepped-outline'

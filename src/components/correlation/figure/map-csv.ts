@@ -1,5 +1,5 @@
 import type { Correlation } from '@shared/correlation'
-import { csvText, type CsvColumn } from '@/components/figure/csv-text'
+import { csvText, type CsvColumn } from '@shared/csv'
 import { captionSentences, type FigureCaption } from '@/components/figure/figure-caption'
 import { PLAIN_SYMBOLS } from '@/components/figure/plain-symbols'
 import type { PairNames } from '../verdict-words'

@@ -1,6 +1,6 @@
 import { compositionMass, formulaText, type RepeatUnit } from '@shared/chemistry'
 import { beadComposition, type MappingDocument } from '@shared/mapping'
-import { csvText } from '@/components/figure/csv-text'
+import { csvText } from '@shared/csv'
 import { atomWords } from '../atom-words'
 import type { MappingCaption } from './mapping-picture'
 

@@ -1,25 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { csvCell, csvText } from '@/components/figure/csv-text'
-
-describe('csvText', () => {
-  it('writes notes, one row of headers, then rows; shorter columns end in empty cells', () => {
-    const text = csvText(
-      ['poly(ethylene)', 'a, b'],
-      [
-        { header: 'r (nm)', values: Float64Array.of(0.1, 0.2) },
-        { header: 'range', values: ['data'] },
-      ],
-    )
-    expect(text.split('\r\n')).toEqual([
-      '# poly(ethylene)',
-      '"# a, b"',
-      'r (nm),range',
-      '0.1,data',
-      '0.2,',
-      '',
-    ])
-  })
-})
+import { csvCell } from '@shared/csv'
 
 describe('csvCell', () => {
   it('gives numbers seven significant digits at most, with a point and a plain minus', () => {
@@ -32,17 +12,37 @@ describe('csvCell', () => {
     expect([csvCell(NaN), csvCell(Infinity), csvCell(null)]).toEqual(['', '', ''])
   })
 
-  it.each(['=1+1', '+1', '-1', '@sum(A1)', '\tx'])(
+  it.each(['=1+1', '+1', '-1', '@sum(A1)', ' =1+1', '\u00a0=1', '＝1+1', '＠x', '\u0000=1', '\u007fx'])(
     'makes plain words of %j, which a spreadsheet would run',
     (words) => {
       expect(csvCell(words)).toBe(`'${words}`)
     },
   )
 
+  it.each(['\tx', '\r=1', '\n=1'])('makes plain words of %j, and quotes them', (words) => {
+    expect(csvCell(words)).toBe(`"'${words}"`)
+  })
+
+  it('leaves words alone that only hold such signs further on', () => {
+    expect(['A–B', 'a-b', 'x = 1', 'r@x', '5-to-1'].map(csvCell)).toEqual([
+      'A–B',
+      'a-b',
+      'x = 1',
+      'r@x',
+      '5-to-1',
+    ])
+  })
+
+  it('runs nothing either where semicolons or tabs part the cells', () => {
+    expect(csvCell('Foo;=1+1')).toBe('"Foo;\'=1+1"')
+    expect(csvCell('Foo; \t-1')).toBe('"Foo; \t\'-1"')
+    expect(csvCell('Foo;"=1+1"')).toBe('"Foo;""\'=1+1"""')
+    expect(csvCell('a; b')).toBe('"a; b"')
+  })
+
   it('quotes words with commas, quotes or line ends, also neutralised ones', () => {
     expect(csvCell('a,b')).toBe('"a,b"')
     expect(csvCell('he said "r"')).toBe('"he said ""r"""')
     expect(csvCell('=HYPERLINK("x","y")')).toBe('"\'=HYPERLINK(""x"",""y"")"')
-    expect(csvCell('\r=1')).toBe('"\'\r=1"')
   })
 })

@@ -1,0 +1,2 @@
+export { csvCell } from './csv-cell'
+export { csvText, type CsvColumn } from './csv-text'

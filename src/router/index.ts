@@ -5,6 +5,7 @@ import {
   type RouteLocation,
   type RouteRecordRaw,
 } from 'vue-router'
+import { groupRoutes } from './group-sections'
 import { installGuards } from './guards'
 
 declare module 'vue-router' {
@@ -96,6 +97,12 @@ const routes: RouteRecordRaw[] = [
     component: () => import('@/views/WorkbenchView.vue'),
     meta: { title: 'Mapping' },
     children: workbenchRooms,
+  },
+  {
+    path: '/groups/:groupId',
+    component: () => import('@/views/GroupView.vue'),
+    meta: { title: 'Group' },
+    children: groupRoutes,
   },
   {
     path: '/:path(.*)*',

@@ -19,8 +19,10 @@ describe('csvCell', () => {
     },
   )
 
-  it.each(['\tx', '\r=1', '\n=1'])('makes plain words of %j, and quotes them', (words) => {
-    expect(csvCell(words)).toBe(`"'${words}"`)
+  it('makes plain words of what begins with a tab or a line end, and of each line on its own', () => {
+    expect(csvCell('\tx')).toBe('"\'\tx"')
+    expect(csvCell('\r=1')).toBe('"\'\r\'=1"')
+    expect(csvCell('x\n=1')).toBe('"x\n\'=1"')
   })
 
   it('leaves words alone that only hold such signs further on', () => {

@@ -22,6 +22,6 @@ describe('csvText', () => {
 
   it('runs nothing that stands in a note, a header or a row', () => {
     const text = csvText(['x\n=1+1'], [{ header: '=A', values: ['@sum(A1)', -1] }])
-    expect(text).toBe('"# x\n\'=1+1"\r\n\'=A\r\n\'@sum(A1)\r\n-1\r\n')
+    expect(text).toBe("\"# x\n'=1+1\"\r\n'=A\r\n'@sum(A1)\r\n-1\r\n")
   })
 })

@@ -4,6 +4,12 @@ import { DistributionBlock } from './distribution-block.entity'
 import { Distribution } from './distribution.entity'
 import { Event } from './event.entity'
 import { Group } from './group.entity'
+import { HandOverComment } from './hand-over-comment.entity'
+import { HandOverFile } from './hand-over-file.entity'
+import { HandOverMark } from './hand-over-mark.entity'
+import { HandOverReview } from './hand-over-review.entity'
+import { HandOverTable } from './hand-over-table.entity'
+import { HandOver } from './hand-over.entity'
 import { Invitation } from './invitation.entity'
 import { JointDistribution } from './joint-distribution.entity'
 import { Mail } from './mail.entity'
@@ -19,6 +25,7 @@ import { SourceFile } from './source-file.entity'
 import { StatePoint } from './state-point.entity'
 import { Term } from './term.entity'
 import { User } from './user.entity'
+import { WarningAnswer } from './warning-answer.entity'
 
 /** Every table of the database. */
 export const entities = [
@@ -28,6 +35,12 @@ export const entities = [
   DistributionBlock,
   Event,
   Group,
+  HandOver,
+  HandOverComment,
+  HandOverFile,
+  HandOverMark,
+  HandOverReview,
+  HandOverTable,
   Invitation,
   JointDistribution,
   Mail,
@@ -43,4 +56,5 @@ export const entities = [
   StatePoint,
   Term,
   User,
+  WarningAnswer,
 ]

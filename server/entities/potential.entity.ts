@@ -8,6 +8,7 @@ import { User } from './user.entity'
 /** A saved inversion: its settings and the hash of what it rests on. The numbers follow from them. */
 @Entity('potential')
 @Unique('UQ_potential_place', ['termId', 'statePointId'])
+@Unique('UQ_potential_group', ['groupId', 'id'])
 @Index('IX_potential_distribution', ['distributionId'])
 @Index('IX_potential_state_point', ['statePointId'])
 export class Potential {

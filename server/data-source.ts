@@ -6,9 +6,16 @@ import { Foundation1764547200000 } from './migrations/1764547200000-foundation'
 import { Blocks1764633600000 } from './migrations/1764633600000-blocks'
 import { People1764720000000 } from './migrations/1764720000000-people'
 import { HandOvers1764979200000 } from './migrations/1764979200000-hand-overs'
+import { MappingVersions1765152000000 } from './migrations/1765152000000-mapping-versions'
 
 /** In the order of their time stamps. */
-const migrations = [Foundation1764547200000, Blocks1764633600000, People1764720000000, HandOvers1764979200000]
+const migrations = [
+  Foundation1764547200000,
+  Blocks1764633600000,
+  People1764720000000,
+  HandOvers1764979200000,
+  MappingVersions1765152000000,
+]
 
 /** Any number, the same for every server on one database: whoever holds this lock migrates. */
 const MIGRATION_LOCK = 4_300_100

@@ -69,6 +69,10 @@ export class Distribution {
   @Column('integer', { name: 'mapping_revision' })
   mappingRevision!: number
 
+  /** Version of the mapping that it was measured under. */
+  @Column('integer', { name: 'mapping_version' })
+  mappingVersion!: number
+
   @Column('timestamptz', { name: 'uploaded_at' })
   uploadedAt!: Date
 

@@ -13,6 +13,7 @@ import { HandOver } from './hand-over.entity'
 import { Invitation } from './invitation.entity'
 import { JointDistribution } from './joint-distribution.entity'
 import { Mail } from './mail.entity'
+import { MappingVersion } from './mapping-version.entity'
 import { Mapping } from './mapping.entity'
 import { Membership } from './membership.entity'
 import { PasswordReset } from './password-reset.entity'
@@ -45,6 +46,7 @@ export const entities = [
   JointDistribution,
   Mail,
   Mapping,
+  MappingVersion,
   Membership,
   PasswordReset,
   Polymer,

@@ -27,6 +27,10 @@ export class Mapping {
   @Column('integer')
   revision!: number
 
+  /** From 1; one more each time its beads change while data stand on it. Earlier ones are kept as `MappingVersion`. */
+  @Column('integer')
+  version!: number
+
   @Column('timestamptz', { name: 'saved_at' })
   savedAt!: Date
 

@@ -80,7 +80,13 @@ export class DistributionService {
         { termId, statePointId, supersededAt: IsNull() },
         { supersededAt: now },
       )
-      const place = { groupId, termId, statePointId, mappingRevision: mapping.revision }
+      const place = {
+        groupId,
+        termId,
+        statePointId,
+        mappingRevision: mapping.revision,
+        mappingVersion: mapping.version,
+      }
       const upload = { uploadedAt: now, uploadedById: userId, supersededAt: null }
       const { id } = await manager.save(Distribution, { ...place, ...reading, ...upload })
       await manager.insert(SourceFile, { groupId, distributionId: id, jointDistributionId: null, ...packed })

@@ -68,6 +68,7 @@ export class JointDistributionService {
         notes: [...notes],
         numbers,
         mappingRevision: mapping.revision,
+        mappingVersion: mapping.version,
         uploadedAt: now,
         uploadedById: userId,
         supersededAt: null,

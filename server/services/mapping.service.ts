@@ -50,7 +50,7 @@ export class MappingService {
         lock: { mode: 'pessimistic_read' },
       })
       if (!polymer) throw notFound('polymer')
-      const record = { groupId, polymerId, name, document, revision: 1, savedAt: new Date() }
+      const record = { groupId, polymerId, name, document, revision: 1, version: 1, savedAt: new Date() }
       const mapping = await manager.save(Mapping, { ...record, savedById: userId })
       await syncTerms(manager, { mapping, smiles: polymer.smiles, before: NO_BEADS, after: document })
       return readMapping(manager, groupId, mapping.id)
@@ -103,7 +103,7 @@ async function readMapping(manager: EntityManager, groupId: string, id: string):
 }
 
 async function mappingBody(manager: EntityManager, mapping: Mapping): Promise<MappingBody> {
-  const { id, polymerId, name, document, revision } = mapping
+  const { id, polymerId, name, document, revision, version } = mapping
   const [counts]: { terms: number; termsWithData: number }[] = await manager.query(
     `select count(*)::int as "terms",
             (count(*) filter (where exists (select 1 from "distribution" d
@@ -117,6 +117,7 @@ async function mappingBody(manager: EntityManager, mapping: Mapping): Promise<Ma
     name,
     document,
     revision,
+    version,
     savedAt: mapping.savedAt.toISOString(),
     savedBy: personOf(mapping.savedBy),
     counts: { beads: document.beads.length, ...counts },

@@ -98,6 +98,9 @@ export const placeSchema = z
   .meta({ id: 'Place' })
 export type Place = z.infer<typeof placeSchema>
 
+/** Number of a version of a mapping. */
+export const versionSchema = z.number().int().positive()
+
 /** POST /api/polymers/:polymerId/mappings. Without a document the mapping starts without beads. */
 export const mappingCreateSchema = z
   .object({ name: nameSchema, document: mappingDocumentSchema.default({ version: 1, beads: [] }) })
@@ -117,6 +120,8 @@ export const mappingSchema = z
     name: z.string(),
     document: mappingDocumentSchema,
     revision: revisionSchema,
+    /** A frozen state of the beads, from 1: the next one is made when they change while data stand on the mapping. */
+    version: versionSchema,
     savedAt: timestampSchema,
     savedBy: personSchema.nullable(),
     /** Terms of this mapping, and how many of them have data at any state point. */

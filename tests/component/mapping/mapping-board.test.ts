@@ -20,6 +20,7 @@ const mappingOf = (document: MappingDocument): Mapping => ({
   name: '3-to-1',
   document,
   revision: 1,
+  version: 1,
   savedAt: '2026-01-05T10:00:00.000Z',
   savedBy: null,
   counts: { beads: 3, terms: 10, termsWithData: 0 },

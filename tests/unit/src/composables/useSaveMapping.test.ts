@@ -17,6 +17,7 @@ const stored = (document: MappingDocument, revision: number): Mapping => ({
   name: '3-to-1',
   document,
   revision,
+  version: 1,
   savedAt: '2026-01-02T03:04:05.000Z',
   savedBy: { id, name: 'Bo' },
   counts: { beads: document.beads.length, terms: 0, termsWithData: 0 },

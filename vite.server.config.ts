@@ -10,6 +10,6 @@ export default defineConfig({
     sourcemap: true,
     minify: false,
     copyPublicDir: false,
-    rolldownOptions: { input: { index: 'server/index.ts' } },
+    rolldownOptions: { input: { index: 'server/index.ts', worker: 'server/worker.ts' } },
   },
 })

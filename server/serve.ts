@@ -8,7 +8,9 @@ import { createApp } from './app'
 import type { Config } from './config'
 import { createDataSource, migrate } from './data-source'
 import { seedDemo } from './demo/seed-demo'
+import { startCatcher } from './mail/catcher'
 import { linksFrom } from './mail/links'
+import { startMailWorker } from './mail/mail-worker'
 import { packageRoot, packageVersion } from './package-root'
 import { createServices } from './services'
 
@@ -51,10 +53,13 @@ export async function serve(config: Config, logger: Logger): Promise<RunningServ
     const services = createServices(dataSource, {
       demo: config.demo,
       version: packageVersion(root),
+      tray: config.mailCatcher,
       linkTo: linksFrom(() => publicUrl),
     })
     if (config.demo) logger.info({ demo: await seedDemo(dataSource, services) }, 'demo')
     else await services.sessions.endDemoSessions()
+    const catcher = config.mailCatcher ? await startCatcher((mail) => services.tray.keep(mail)) : null
+    if (catcher) closing.push(() => catcher.close())
     const token = await services.setUp.offer()
     const clientFolder = join(root, 'dist', 'client')
     const app = createApp({
@@ -66,6 +71,12 @@ export async function serve(config: Config, logger: Logger): Promise<RunningServ
       clientFolder: existsSync(clientFolder) ? clientFolder : null,
     })
     closing.push(() => app.close())
+    const smtpUrl = config.smtpUrl ?? catcher?.smtpUrl ?? null
+    if (config.worker && smtpUrl !== null) {
+      const { databaseUrl, mailFrom } = config
+      const worker = startMailWorker({ databaseUrl, smtpUrl, mailFrom, logger })
+      closing.push(() => worker.stop())
+    }
     const server = createServer(app.express)
     await listen(server, config)
     closing.push(() => stopListening(server))

@@ -1,7 +1,8 @@
-import { Column, CreateDateColumn, Entity, PrimaryGeneratedColumn } from 'typeorm'
+import { Column, CreateDateColumn, Entity, PrimaryGeneratedColumn, Unique } from 'typeorm'
 
 /** A mail that the local catcher took instead of a mail server: it stays on this machine. */
 @Entity('caught_mail')
+@Unique('UQ_caught_mail_message_id', ['messageId'])
 export class CaughtMail {
   @PrimaryGeneratedColumn('uuid', { primaryKeyConstraintName: 'PK_caught_mail' })
   id!: string

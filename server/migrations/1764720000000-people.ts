@@ -45,6 +45,7 @@ export class People1764720000000 implements MigrationInterface {
       "to" text NOT NULL,
       "subject" text NOT NULL,
       "text" text NOT NULL,
+      CONSTRAINT "UQ_caught_mail_message_id" UNIQUE ("message_id"),
       CONSTRAINT "PK_caught_mail" PRIMARY KEY ("id")
     )`)
     await runner.query(`CREATE TABLE "invitation" (

@@ -4,11 +4,13 @@ import { comparisonRoutes } from './comparison.routes'
 import { distributionRoutes } from './distribution.routes'
 import { healthRoutes } from './health.routes'
 import { jointDistributionRoutes } from './joint-distribution.routes'
+import { keyRoutes } from './key.routes'
 import { mappingRoutes } from './mapping.routes'
 import { polymerRoutes } from './polymer.routes'
 import { potentialRoutes } from './potential.routes'
 import { type AnyRoute, route } from './route'
 import { sessionRoutes } from './session.routes'
+import { trayRoutes } from './tray.routes'
 
 let document: ReturnType<typeof openApiDocument> | null = null
 
@@ -26,10 +28,12 @@ export const routes: readonly AnyRoute[] = [
   ...healthRoutes,
   documentRoute,
   ...sessionRoutes,
+  ...keyRoutes,
   ...polymerRoutes,
   ...mappingRoutes,
   ...comparisonRoutes,
   ...distributionRoutes,
   ...jointDistributionRoutes,
   ...potentialRoutes,
+  ...trayRoutes,
 ]

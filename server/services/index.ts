@@ -1,12 +1,14 @@
 import type { DataSource } from 'typeorm'
 import type { LinkTo } from '../mail/links'
 import { AccessService } from './access.service'
+import { AttemptService } from './attempt.service'
 import { ComparisonService } from './comparison.service'
 import { DistributionService } from './distribution.service'
 import { GroupService } from './group.service'
 import { HealthService } from './health.service'
 import { JointDistributionService } from './joint-distribution.service'
 import { JointTableService } from './joint-table.service'
+import { KeyService } from './key.service'
 import { MappingService } from './mapping.service'
 import { PairService } from './pair.service'
 import { PolymerService } from './polymer.service'
@@ -17,6 +19,7 @@ import { SettingService } from './setting.service'
 import { StatePointService } from './state-point.service'
 import { TableService } from './table.service'
 import { TermService } from './term.service'
+import { TrayService } from './tray.service'
 
 export type { UploadedBlocks } from './distribution-blocks'
 export type { Download, Member, UploadedFile } from './member'
@@ -27,31 +30,37 @@ export interface ServiceOptions {
   readonly demo: boolean
   /** Of the server, as /api/health tells it. */
   readonly version: string
+  /** The tray of caught mails may be looked into. */
+  readonly tray: boolean
   /** Makes the addresses in e-mails. */
   readonly linkTo: LinkTo
 }
 
 /** The rules of the house: everything routes, the start and the demo may ask for. */
-export function createServices(dataSource: DataSource, { demo, version }: ServiceOptions) {
+export function createServices(dataSource: DataSource, { demo, version, tray }: ServiceOptions) {
   const groups = new GroupService(dataSource)
+  const sessions = new SessionService(dataSource, demo)
   return {
     access: new AccessService(dataSource),
+    attempts: new AttemptService(dataSource),
     comparisons: new ComparisonService(dataSource),
     distributions: new DistributionService(dataSource),
     groups,
     health: new HealthService(dataSource, version),
     jointDistributions: new JointDistributionService(dataSource),
     jointTables: new JointTableService(dataSource),
+    keys: new KeyService(dataSource, sessions, demo),
     mappings: new MappingService(dataSource),
     pairs: new PairService(dataSource),
     polymers: new PolymerService(dataSource),
     potentials: new PotentialService(dataSource),
-    sessions: new SessionService(dataSource, demo),
+    sessions,
     settings: new SettingService(dataSource),
     setUp: new SetUpService(dataSource, groups),
     statePoints: new StatePointService(dataSource),
     tables: new TableService(dataSource),
     terms: new TermService(dataSource),
+    tray: new TrayService(dataSource, tray),
   }
 }
 export type Services = ReturnType<typeof createServices>

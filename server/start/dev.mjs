@@ -38,6 +38,7 @@ await runInForeground(async (onStop) => {
     DATABASE_URL: settings.databaseUrl ?? cluster.url,
     DATA_DIR: dataFolder,
     DEMO: settings.demo,
+    MAIL_CATCHER: settings.mailCatcher,
   }
   const vite = join(repository, 'node_modules', 'vite', 'bin', 'vite.js')
   const ends = [

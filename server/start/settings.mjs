@@ -7,7 +7,7 @@ const DEFAULT_PORT = 4300
  * The environment, checked.
  *
  * @returns {{ port: { number: number, given: boolean }, host: string, databaseUrl: string | null,
- *   dataFolder: string | null, demo: 'on' | 'off' }}
+ *   dataFolder: string | null, demo: 'on' | 'off', mailCatcher: 'on' | 'off' }}
  */
 export function readSettings(environment) {
   const databaseUrl = environment.DATABASE_URL || null
@@ -17,6 +17,7 @@ export function readSettings(environment) {
     databaseUrl,
     dataFolder: environment.DATA_DIR ? resolve(environment.DATA_DIR) : null,
     demo: readDemo(environment.DEMO, databaseUrl),
+    mailCatcher: chooseCatcher(environment, databaseUrl),
   }
 }
 
@@ -33,6 +34,16 @@ function readPort(text) {
     throw new StartError(`PORT must be a whole number from 0 to 65535, not "${text}".`)
   }
   return { number, given: true }
+}
+
+/**
+ * Mails go into a tray on this machine only beside our own database, without a mail server, and where nobody comes in from
+ * elsewhere: the tray shows links that let people in.
+ */
+function chooseCatcher({ HOST, SMTP_URL, PUBLIC_URL, TRUST_PROXY }, databaseUrl) {
+  const alone = !HOST || HOST === 'localhost' || HOST === '::1' || HOST.startsWith('127.')
+  const proxied = TRUST_PROXY && TRUST_PROXY !== 'off' && TRUST_PROXY !== '0'
+  return databaseUrl || SMTP_URL || PUBLIC_URL || proxied || !alone ? 'off' : 'on'
 }
 
 /** The invented group goes into our own new database unless told otherwise, and never unasked into a given one. */

@@ -55,6 +55,7 @@ await runInForeground(async (onStop) => {
   instance.announce({ server: server.owner, url })
   console.log(`Data: ${dataFolder}`)
   if (server.setUpPath) console.log(`First owner: open ${url}${server.setUpPath}`)
+  if (settings.mailCatcher === 'on') console.log(`E-mail stays on this machine: ${url}/tray`)
   console.log(`Beadwright is ready: ${url}`)
   await firstToEnd(server, cluster)
 
@@ -85,6 +86,7 @@ await runInForeground(async (onStop) => {
         DATABASE_URL: settings.databaseUrl ?? cluster.url,
         DATA_DIR: dataFolder,
         DEMO: settings.demo,
+        MAIL_CATCHER: settings.mailCatcher,
       },
       onSpawn: (owner) => {
         instance.announce({ server: owner })

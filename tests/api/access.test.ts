@@ -83,6 +83,7 @@ describe('who may do what', () => {
       'get /api/openapi.json',
       'get /api/session',
       'get /api/set-up/:token',
+      'get /api/tray',
       'post /api/session',
       'post /api/session/demo',
       'post /api/set-up',

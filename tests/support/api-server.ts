@@ -26,6 +26,8 @@ export interface ApiServer {
 export interface ApiServerOptions {
   readonly demo?: boolean
   readonly trustedProxies?: number
+  /** The tray of caught mails may be looked into. */
+  readonly tray?: boolean
   readonly clientFolder?: string
 }
 
@@ -45,6 +47,7 @@ export async function openApiServer(options: ApiServerOptions = {}): Promise<Api
   const services = createServices(dataSource, {
     demo: options.demo ?? false,
     version: '0.0.0',
+    tray: options.tray ?? false,
     linkTo: linksFrom(() => 'https://beads.example'),
   })
   const app = createApp({

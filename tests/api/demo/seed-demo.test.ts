@@ -13,7 +13,7 @@ let services: Services
 beforeAll(async () => {
   database = await createTestDatabase()
   dataSource = await createDataSource(database.url).initialize()
-  services = createServices(dataSource, { demo: true, version: 'test', linkTo: (path) => path })
+  services = createServices(dataSource, { demo: true, version: 'test', tray: false, linkTo: (path) => path })
 })
 
 afterAll(async () => {

@@ -19,7 +19,11 @@ describe('readConfig', () => {
       host: '127.0.0.1',
       databaseUrl: DATABASE_URL,
       dataFolder: null,
+      publicUrl: null,
       smtpUrl: null,
+      mailFrom: 'Beadwright <beadwright@localhost>',
+      mailCatcher: false,
+      worker: true,
       sessionSecret: null,
       demo: false,
       trustedProxies: 0,
@@ -36,6 +40,10 @@ describe('readConfig', () => {
     ['PORT', ['-1', '65536', '80.5', 'http', ' 80']],
     ['DATABASE_URL', ['mysql://x/y', 'beads', 'http://localhost']],
     ['SMTP_URL', ['http://mail', 'mail.example.org']],
+    ['PUBLIC_URL', ['beads.example.org', 'ftp://beads.example.org']],
+    ['MAIL_FROM', ['nobody', 'a@example.org, b@example.org', 'A\r\nBcc: x@example.org <a@example.org>']],
+    ['WORKER', ['yes']],
+    ['MAIL_CATCHER', ['yes']],
     ['SESSION_SECRET', ['short']],
     ['DEMO', ['yes', 'ON', '1']],
     ['TRUST_PROXY', ['yes', '-1', 'true']],
@@ -46,6 +54,18 @@ describe('readConfig', () => {
       expect([value, sentences.length]).toEqual([value, 1])
       expect(sentences[0]).toContain(name)
     }
+  })
+
+  it.each([
+    ['HOST', '0.0.0.0'],
+    ['SMTP_URL', 'smtp://mail.example.org'],
+    ['PUBLIC_URL', 'https://beads.example.org'],
+    ['TRUST_PROXY', '1'],
+  ])('catches no mail where others than this machine come in or mail goes out: %s', (name, value) => {
+    expect(readConfig({ DATABASE_URL, MAIL_CATCHER: 'on' }).mailCatcher).toBe(true)
+    const sentences = mistakes({ MAIL_CATCHER: 'on', [name]: value })
+    expect(sentences).toHaveLength(1)
+    expect(sentences[0]).toContain('MAIL_CATCHER')
   })
 
   it('reads what is given', () => {

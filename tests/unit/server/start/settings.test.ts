@@ -9,7 +9,24 @@ describe('readSettings', () => {
       databaseUrl: null,
       dataFolder: null,
       demo: 'on',
+      mailCatcher: 'on',
     })
+  })
+
+  it.each([
+    { DATABASE_URL: 'postgres://user@host/name' },
+    { SMTP_URL: 'smtp://mail.example.org' },
+    { PUBLIC_URL: 'https://beads.example.org' },
+    { TRUST_PROXY: '1' },
+    { HOST: '0.0.0.0' },
+  ])('keeps e-mail on this machine only where it runs alone: not with %o', (environment) => {
+    expect(readSettings(environment).mailCatcher).toBe('off')
+  })
+
+  it('keeps e-mail on this machine wherever only this machine comes in', () => {
+    for (const HOST of ['', 'localhost', '127.0.0.1', '127.1.2.3', '::1']) {
+      expect([HOST, readSettings({ HOST, TRUST_PROXY: 'off' }).mailCatcher]).toEqual([HOST, 'on'])
+    }
   })
 
   it('keeps the demo out of a database that was given, unless asked', () => {

@@ -5,9 +5,9 @@ import type { Logger } from 'pino'
 import { serveClient } from './middleware/client'
 import { createErrorAnswer, nothingHere } from './middleware/error-answer'
 import { createRequestLog } from './middleware/request-log'
+import { createLimits } from './middleware/limits'
 import { securityHeaders } from './middleware/security-headers'
 import { createSessions } from './middleware/session'
-import { createSignInLimits } from './middleware/sign-in-limits'
 import { routes } from './routes'
 import { mountRoutes } from './routes/mount-routes'
 import type { Services } from './services'
@@ -42,7 +42,8 @@ export function createApp(dependencies: AppDependencies): App {
   app.use(createRequestLog(logger))
   app.use(securityHeaders)
   app.use(compression())
-  mountRoutes(app, routes, { services, sessions: sessions.handler, signInLimits: createSignInLimits() })
+  const limits = createLimits(services.attempts, logger)
+  mountRoutes(app, routes, { services, sessions: sessions.handler, limits })
   app.use('/api', nothingHere)
   if (clientFolder !== null) app.use(serveClient(clientFolder))
   app.use(nothingHere)

@@ -5,6 +5,7 @@ import { entities } from './entities'
 import { Foundation1764547200000 } from './migrations/1764547200000-foundation'
 import { Blocks1764633600000 } from './migrations/1764633600000-blocks'
 import { People1764720000000 } from './migrations/1764720000000-people'
+import { ApiKeys1764806400000 } from './migrations/1764806400000-api-keys'
 import { HandOvers1764979200000 } from './migrations/1764979200000-hand-overs'
 import { MappingVersions1765152000000 } from './migrations/1765152000000-mapping-versions'
 
@@ -13,6 +14,7 @@ const migrations = [
   Foundation1764547200000,
   Blocks1764633600000,
   People1764720000000,
+  ApiKeys1764806400000,
   HandOvers1764979200000,
   MappingVersions1765152000000,
 ]

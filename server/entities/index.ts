@@ -1,3 +1,5 @@
+import { ApiKey } from './api-key.entity'
+import { Attempt } from './attempt.entity'
 import { CaughtMail } from './caught-mail.entity'
 import { Decision } from './decision.entity'
 import { DistributionBlock } from './distribution-block.entity'
@@ -30,6 +32,8 @@ import { WarningAnswer } from './warning-answer.entity'
 
 /** Every table of the database. */
 export const entities = [
+  ApiKey,
+  Attempt,
   CaughtMail,
   Decision,
   Distribution,

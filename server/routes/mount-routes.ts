@@ -1,12 +1,15 @@
-import type { RequestHandler, Response, Router } from 'express'
+import type { Request, RequestHandler, Response, Router } from 'express'
 import { idSchema, type Role } from '../../shared/contracts/common'
 import { HttpError, notFound } from '../errors/http-error'
 import { requireCsrfToken } from '../middleware/csrf'
 import { readJson } from '../middleware/json-body'
+import { keyOf, readKey, requireScope, unlessKey } from '../middleware/key'
+import type { Limits } from '../middleware/limits'
 import { readUpload, uploadedFiles } from '../middleware/upload'
 import { visitorOf } from '../middleware/visitor'
 import type { Download, Member, Services } from '../services'
 import { RESOURCES } from '../services/access.service'
+import { keyScopeOf } from './key-scope'
 import { type AnyRoute, type MemberAccess, ROLES_FOR } from './route'
 
 const REFUSED = {
@@ -21,30 +24,36 @@ const REFUSED = {
 export interface MountOptions {
   readonly services: Services
   readonly sessions: RequestHandler
-  readonly signInLimits: readonly RequestHandler[]
+  readonly limits: Limits
 }
 
 /**
- * Mounts routes. Each request passes, in this order: session, token of a write, membership and role, body, limits; only then
- * is its content parsed and its handler called. So nobody who may not write can make the server read an upload.
+ * Mounts routes. Each request passes, in this order: key or else session and token of a write, scope of the key, membership and
+ * role, body, limits; only then is its content parsed and its handler called. So nobody who may not write can make the server
+ * read an upload.
  */
 export function mountRoutes(router: Router, routes: readonly AnyRoute[], options: MountOptions): void {
   for (const route of routes) {
     const steps: RequestHandler[] = []
-    if (route.access !== 'anyone') steps.push(options.sessions)
-    if (route.method !== 'get') steps.push(requireCsrfToken)
+    if (route.access === 'key') steps.push(readKey(options.services), requireKey)
+    else if (route.access !== 'anyone') {
+      steps.push(readKey(options.services), unlessKey(options.sessions))
+      if (route.method !== 'get') steps.push(unlessKey(requireCsrfToken))
+      steps.push(requireScope(keyScopeOf(route)))
+    }
+    if (route.access === 'person') steps.push(requirePerson)
     if (typeof route.access === 'object') steps.push(requireMember(route.access, options.services))
     if (route.upload) steps.push(readUpload(route.upload))
     else if (route.body) steps.push(readJson)
-    if (route.limited) steps.push(...options.signInLimits)
+    if (route.limited) steps.push(...options.limits[route.limited])
     router[route.method](route.path, ...steps, answerWith(route, options.services))
   }
 }
 
 function requireMember({ may, at }: MemberAccess, { access }: Services): RequestHandler {
   return async (request, response, next) => {
-    const { userId } = request.session
-    if (userId === undefined) throw new HttpError('NOT_SIGNED_IN', 'Sign in first.')
+    const key = keyOf(response)
+    const userId = key?.userId ?? signedIn(request)
     const id = idSchema.safeParse(request.params[`${at}Id`])
     const member = id.success ? await access.memberFor(at, id.data, userId) : null
     if (!member) throw notFound(RESOURCES[at].replace('_', ' '))
@@ -52,9 +61,25 @@ function requireMember({ may, at }: MemberAccess, { access }: Services): Request
     if (!roles.includes(member.role)) {
       throw new HttpError('FORBIDDEN', `A ${member.role} may not ${REFUSED[may]} this.`)
     }
-    response.locals.member = member
+    response.locals.member = key ? { ...member, by: key.name } : member
     next()
   }
+}
+
+/** Someone signed in, and no script: what is a person's own, no key opens. */
+const requirePerson: RequestHandler = (request, response, next) => {
+  response.locals.userId = signedIn(request)
+  next()
+}
+
+const requireKey: RequestHandler = (_request, response, next) => {
+  if (!keyOf(response)) throw new HttpError('NOT_SIGNED_IN', 'Send a key, as in Authorization: Bearer bw_….')
+  next()
+}
+
+function signedIn({ session }: Request): string {
+  if (session.userId === undefined) throw new HttpError('NOT_SIGNED_IN', 'Sign in first.')
+  return session.userId
 }
 
 function answerWith(route: AnyRoute, services: Services): RequestHandler {
@@ -65,7 +90,9 @@ function answerWith(route: AnyRoute, services: Services): RequestHandler {
       query: route.query?.parse(request.query),
       body: route.body?.parse(request.body),
       ...uploadedFiles(request),
-      visitor: route.access === 'visitor' ? visitorOf(request) : undefined,
+      visitor: route.access === 'visitor' || route.access === 'person' ? visitorOf(request) : undefined,
+      userId: response.locals.userId as string | undefined,
+      key: keyOf(response),
       member: response.locals.member as Member | undefined,
     }
     // The declaration has fitted the handler to its own schemas; here all routes look alike.

@@ -1,9 +1,12 @@
 import type { z } from 'zod'
 import type { Role } from '../../shared/contracts/common'
 import type { ApiCode } from '../../shared/contracts/error'
+import type { KeyScope } from '../../shared/contracts/key'
+import type { LimitKind } from '../middleware/limits'
 import type { Visitor } from '../middleware/visitor'
 import type { Download, Member, Services, UploadedBlocks, UploadedFile } from '../services'
 import type { Resource } from '../services/access.service'
+import type { ActingKey } from '../services/key.service'
 
 /** What a route asks of a member, and the roles that may do it. Nobody reviews what is their own: services see to that. */
 export const ROLES_FOR = {
@@ -26,8 +29,11 @@ export interface MemberAccess {
   readonly at: Resource
 }
 
-/** Who may ask: anyone without a session, anyone with one, or members of a group. */
-export type Access = 'anyone' | 'visitor' | MemberAccess
+/**
+ * Who may ask: anyone without a session, anyone with one, someone signed in about what is their own, a script about its key,
+ * or members of a group.
+ */
+export type Access = 'anyone' | 'visitor' | 'person' | 'key' | MemberAccess
 
 type ParameterNames<Path extends string> = Path extends `${string}:${infer Name}/${infer Rest}`
   ? Name | ParameterNames<Rest>
@@ -46,7 +52,9 @@ export type Context<Path extends string, Query, Body, Who extends Access> = {
   /** Files of blocks and chains, of a route that takes them. */
   readonly blockFiles: UploadedBlocks
 } & (Who extends MemberAccess ? { readonly member: Member } : object) &
-  (Who extends 'visitor' ? { readonly visitor: Visitor } : object)
+  (Who extends 'visitor' ? { readonly visitor: Visitor } : object) &
+  (Who extends 'person' ? { readonly visitor: Visitor; readonly userId: string } : object) &
+  (Who extends 'key' ? { readonly key: ActingKey } : object)
 
 /** What a route answers when all goes well. */
 export type Answer<Result> =
@@ -71,12 +79,16 @@ export interface Route<
   readonly path: Path
   /** One line for the API document. */
   readonly summary: string
+  /** What else the API document says. */
+  readonly description?: string
   readonly access: Who
+  /** What a script's key needs; left out, it follows from method and resource, see `keyScopeOf`. null: no key opens it. */
+  readonly scope?: KeyScope | null
   readonly query?: z.ZodType<Query>
   readonly body?: z.ZodType<Body>
   /** The body comes as multipart: one file, or one with files of its parts, and the rest as JSON in the field `settings`. */
   readonly upload?: 'single' | 'parted'
-  readonly limited?: 'sign-in'
+  readonly limited?: LimitKind
   readonly answer: Answer<Result>
   /** Codes beyond those that follow from access and form. */
   readonly errors?: readonly ApiCode[]

@@ -28,7 +28,7 @@ export const sessionRoutes = [
     body: signInSchema,
     limited: 'sign-in',
     answer: { status: 200, body: sessionSchema },
-    errors: ['SIGN_IN_FAILED', 'TOO_MANY_ATTEMPTS'],
+    errors: ['SIGN_IN_FAILED'],
     handle: async ({ services, visitor, body }) => {
       await visitor.signIn(await services.sessions.signIn(body.email, body.password))
       return sessionBody(services, visitor)
@@ -60,6 +60,7 @@ export const sessionRoutes = [
     path: '/api/set-up/:token',
     summary: 'Whether a set-up link still works',
     access: 'anyone',
+    limited: 'link',
     answer: { status: 204 },
     errors: ['SET_UP_LINK_INVALID'],
     handle: ({ services, params }) => services.setUp.check(params.token),
@@ -70,6 +71,7 @@ export const sessionRoutes = [
     summary: 'Found the first group by a set-up link and sign in as its owner',
     access: 'visitor',
     body: setUpSchema,
+    limited: 'link',
     answer: { status: 201, body: sessionSchema },
     errors: ['SET_UP_LINK_INVALID', 'NAME_TAKEN'],
     handle: async ({ services, visitor, body }) => {

@@ -5,6 +5,8 @@ export interface Member {
   readonly groupId: string
   readonly userId: string
   readonly role: Role
+  /** The name of the key by which a script acts for the person; not there when they act themselves. */
+  readonly by?: string
 }
 
 /** A file as it came in. */

@@ -78,12 +78,16 @@ describe('who may do what', () => {
         .map(keyOf)
         .sort(),
     ).toEqual([
+      'delete /api/keys/:keyId',
       'delete /api/session',
       'get /api/health',
+      'get /api/key',
+      'get /api/keys',
       'get /api/openapi.json',
       'get /api/session',
       'get /api/set-up/:token',
       'get /api/tray',
+      'post /api/keys',
       'post /api/session',
       'post /api/session/demo',
       'post /api/set-up',

@@ -48,6 +48,8 @@ describe('the database itself', () => {
     )
     const names = without.map(({ name }) => name).sort()
     expect(names).toEqual([
+      'api_key',
+      'attempt',
       'caught_mail',
       'group',
       'mail',

@@ -1,6 +1,6 @@
 import request from 'supertest'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
-import { SIGN_IN_LIMITS } from '../../server/middleware/sign-in-limits'
+import { SIGN_IN_LIMITS } from '../../server/middleware/limits'
 import { ApiClient } from '../support/api-client'
 import { type ApiServer, openApiServer } from '../support/api-server'
 import { buildGroup, PASSWORD, type TestGroup } from '../support/group-builder'

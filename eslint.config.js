@@ -29,6 +29,7 @@ const sharedLayerRules = sharedLayers.flatMap((folders, level) => {
     'correlation',
     'joint-potential',
     'tables',
+    'layouts',
     'mapping',
     'contracts',
   ]

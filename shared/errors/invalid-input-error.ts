@@ -41,6 +41,11 @@ export type InvalidInputCode =
   | 'ELEMENT_UNKNOWN'
   | 'VALENCE_EXCEEDED'
   | 'MAPPING_INVALID'
+  // layouts
+  | 'LAYOUT_INVALID'
+  | 'LAYOUT_BEYOND_TABLE'
+  | 'TEMPLATE_INVALID'
+  | 'TEMPLATE_FIELD_UNKNOWN'
 
 /** Where in the input something is wrong; each part only where it is known. Line and column count from 1. */
 export interface InputPlace {

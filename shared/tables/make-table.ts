@@ -22,25 +22,55 @@ export function makeTable(potential: Potential, settings: TableSettings): Table 
   const { kind, temperature } = potential
   const [low, high] = tableDomain(kind, potential, settings)
   const { rows, cap } = settings
-  if (cap !== null && !(cap > 0 && Number.isFinite(cap))) {
-    throw new InvalidInputError('SETTING_INVALID', 'The cap must be an energy above 0.', { field: 'cap' })
-  }
+  checkCap(cap)
   const step = (high - low) / (rows - 1)
   const coordinates = Float64Array.from({ length: rows }, (_, row) =>
     row === rows - 1 ? high : low + row * step,
   )
-  const energies = coordinates.map((coordinate) => potentialEnergy(potential, coordinate))
-  const forces = coordinates.map((coordinate) => -potentialSlope(potential, coordinate))
-  if (cap !== null) levelOff(energies, forces, cap, Math.min(thermalEnergy(temperature), cap) / 2)
+  const energies = new Float64Array(rows)
+  const forces = new Float64Array(rows)
+  coordinates.forEach((coordinate, row) => {
+    const point = pointAt(potential, cap, coordinate)
+    energies[row] = point.energy
+    forces[row] = point.force
+  })
   return { kind, temperature, coordinates, energies, forces }
 }
 
-function levelOff(energies: Float64Array, forces: Float64Array, cap: number, width: number): void {
-  energies.forEach((energy, row) => {
-    const above = energy - cap + width
-    if (above <= 0) return
-    const share = Math.min(above / (2 * width), 1)
-    energies[row] = above >= 2 * width ? cap : energy - (above * above) / (4 * width)
-    forces[row] *= 1 - share
-  })
+/**
+ * What a table of a potential has at any coordinate, also beyond its first and last row.
+ *
+ * @param cap kJ/mol or null, as in `makeTable`
+ * @param coordinate nm or rad, within the domain of the kind
+ * @returns energy in kJ/mol, force −dU/dq of that energy
+ * @throws {InvalidInputError} SETTING_INVALID when the cap is not above 0
+ */
+export function tablePoint(potential: Potential, cap: number | null, coordinate: number): TablePoint {
+  checkCap(cap)
+  return pointAt(potential, cap, coordinate)
+}
+
+interface TablePoint {
+  readonly energy: number
+  readonly force: number
+}
+
+function checkCap(cap: number | null): void {
+  if (cap !== null && !(cap > 0 && Number.isFinite(cap))) {
+    throw new InvalidInputError('SETTING_INVALID', 'The cap must be an energy above 0.', { field: 'cap' })
+  }
+}
+
+function pointAt(potential: Potential, cap: number | null, coordinate: number): TablePoint {
+  const energy = potentialEnergy(potential, coordinate)
+  const force = -potentialSlope(potential, coordinate)
+  if (cap === null) return { energy, force }
+  const width = Math.min(thermalEnergy(potential.temperature), cap) / 2
+  const above = energy - cap + width
+  if (above <= 0) return { energy, force }
+  const share = Math.min(above / (2 * width), 1)
+  return {
+    energy: above >= 2 * width ? cap : energy - (above * above) / (4 * width),
+    force: force * (1 - share),
+  }
 }

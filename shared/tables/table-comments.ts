@@ -23,6 +23,8 @@ export interface TableCommentInput {
   /** Anything else that names the state point, e.g. '1 bar, pure melt'. */
   readonly statePoint: string | null
   readonly units: TableUnits
+  /** Sentences on coordinate and units for a layout that counts or scales in its own way; left out for those of `units`. */
+  readonly wording?: { readonly coordinate: string; readonly units: string }
   readonly settings: InversionSettings
   readonly smoothing: SmoothingResult
   /** The analytic form the rows are written from; null or left out for the smoothed curve. */
@@ -51,10 +53,10 @@ export function tableComments(input: TableCommentInput): string[] {
     line('polymer', input.polymer),
     line('mapping', input.mapping),
     line('term', input.term),
-    line('coordinate', coordinateSentence(input.kind)),
+    line('coordinate', input.wording?.coordinate ?? coordinateSentence(input.kind)),
     line('bead order', input.beadOrder),
     line('state point', statePoint(input)),
-    line('units', unitSentence(input)),
+    line('units', input.wording?.units ?? unitSentence(input)),
     line(
       'Jacobian',
       input.settings.jacobian ? jacobianSentence(input.kind) : 'off: bins divided by their width only',

@@ -105,6 +105,12 @@ const routes: RouteRecordRaw[] = [
     children: groupRoutes,
   },
   {
+    path: '/account',
+    name: 'account',
+    component: () => import('@/views/AccountView.vue'),
+    meta: { title: 'Your account' },
+  },
+  {
     path: '/:path(.*)*',
     name: 'not-found',
     component: () => import('@/views/NotFoundView.vue'),

@@ -14,6 +14,7 @@ const nothing = { template: '<p />' }
 const ADDRESSES: Readonly<Record<string, string>> = {
   'front-desk': '/',
   'sign-in': '/sign-in',
+  account: '/account',
   'set-up': '/set-up/:token',
   'polymer-new': '/polymers/new',
   polymer: '/polymers/:polymerId',

@@ -6,7 +6,7 @@ import { benchCsv } from '@/components/bench/figure/bench-csv'
 import type { BasinSign } from '@/components/bench/figure/basin-signs'
 import { benchPicture } from '@/components/bench/figure/bench-picture'
 import type { FigureModel } from '@/components/bench/figure/figure-model'
-import type { VisibleCurves } from '@/components/bench/figure/panel-option'
+import type { VisibleCurves } from '@/components/bench/figure/visible-curves'
 import type { FigureCaption } from '@/components/figure/figure-caption'
 import { fileNameOf } from '@/components/figure/file-name'
 import { fixedText } from '@/components/figure/number-text'
@@ -27,9 +27,9 @@ export interface BenchExportSource {
   readonly visible: VisibleCurves
 }
 
-/** The bench figure as files; null while there is nothing to draw. */
+/** The bench figure as files, made from what it shows when they are asked for; null while there is nothing to draw. */
 export function useBenchExport(source: BenchExportSource): ComputedRef<FigureFiles | null> {
-  return computed(() => {
+  const drawn = (): Drawn | null => {
     const [polymer, distribution, model, answer] = [
       source.polymer(),
       source.distribution(),
@@ -37,22 +37,51 @@ export function useBenchExport(source: BenchExportSource): ComputedRef<FigureFil
       source.answer(),
     ]
     if (polymer === null || distribution === null || model === null || answer === null) return null
-    const [mapping, term, statePoint] = [source.mapping(), source.term(), source.statePoint()]
     const { jacobian, independentSamples } = answer.inversion
     const caption: FigureCaption = {
       polymer: polymer.name,
-      mapping: mapping.name,
-      terms: `${term.kind} ${term.name}`,
-      statePoint: statePointDescription(statePoint),
+      mapping: source.mapping().name,
+      terms: `${source.term().kind} ${source.term().name}`,
+      statePoint: statePointDescription(source.statePoint()),
       remarks: [sampleRemark(distribution, independentSamples)],
       invented: polymer.demo,
     }
-    return {
-      name: () => fileNameOf(polymer.name, mapping.name, term.kind, term.name, `${statePoint.temperature}K`),
-      picture: () => benchPicture(model, source.basins(), source.visible, jacobian, caption),
-      csv: () => benchCsv(model, distribution.content, jacobian, caption),
-    }
-  })
+    return { polymer, distribution, model, jacobian, caption }
+  }
+  const there = (): Drawn => {
+    const found = drawn()
+    if (found === null) throw new Error('There is no figure to export.')
+    return found
+  }
+  const files: FigureFiles = {
+    name: () => {
+      const [mapping, term, statePoint] = [source.mapping(), source.term(), source.statePoint()]
+      return fileNameOf(
+        there().polymer.name,
+        mapping.name,
+        term.kind,
+        term.name,
+        `${statePoint.temperature}K`,
+      )
+    },
+    picture: () => {
+      const { model, jacobian, caption } = there()
+      return benchPicture(model, source.basins(), source.visible, jacobian, caption)
+    },
+    csv: () => {
+      const { model, distribution, jacobian, caption } = there()
+      return benchCsv(model, distribution.content, jacobian, caption)
+    },
+  }
+  return computed(() => (drawn() === null ? null : files))
+}
+
+interface Drawn {
+  readonly polymer: Polymer
+  readonly distribution: Distribution
+  readonly model: FigureModel
+  readonly jacobian: boolean
+  readonly caption: FigureCaption
 }
 
 function sampleRemark({ content, weights }: Distribution, independentSamples: number | null): string {

@@ -5,11 +5,17 @@ import { coordinateFromInternal, type CoordinateKind } from '@shared/units'
 import { coordinateUnitOf, type DisplayUnits } from '@/components/figure/coordinate-names'
 import { basinSigns, type BasinSign } from '@/components/bench/figure/basin-signs'
 import { emptyAxes } from '@/components/bench/figure/empty-axes'
-import { figureModel, type FigureAxes, type FigureModel } from '@/components/bench/figure/figure-model'
-import type { CurveName, VisibleCurves } from '@/components/bench/figure/panel-option'
+import {
+  axesOf,
+  figureModel,
+  type FigureAxes,
+  type FigureModel,
+} from '@/components/bench/figure/figure-model'
+import type { CurveName, VisibleCurves } from '@/components/bench/figure/visible-curves'
 import { edgeDecimals, readingAt, type Reading } from '@/components/bench/figure/reading'
 import { warningPlaces } from '@/components/bench/warning-titles'
 import type { InversionAnswer } from '@/workers'
+import { useSteady } from './useSteady'
 
 /** What the figure and the row under it show. */
 export interface BenchFigureState {
@@ -66,7 +72,11 @@ export function useBenchFigure(source: FigureSource): BenchFigureState {
 
   return {
     model,
-    axes: computed(() => model.value ?? emptyAxes(source.kind(), chosenUnits.value, source.temperature())),
+    axes: useSteady(() =>
+      model.value === null
+        ? emptyAxes(source.kind(), chosenUnits.value, source.temperature())
+        : axesOf(model.value),
+    ),
     reading: computed(() => {
       const [histogram, bin] = [source.histogram(), source.bin()]
       if (histogram === null || bin === null || inversion.value === null || model.value === null) return null
@@ -74,11 +84,11 @@ export function useBenchFigure(source: FigureSource): BenchFigureState {
     }),
     decimals: computed(() => (edges.value === null ? 0 : edgeDecimals(edges.value))),
     binWidth: computed(() => edges.value && evenWidth(edges.value)),
-    basins: computed(() => {
+    basins: useSteady(() => {
       const answer = source.answer()
       return answer === null || model.value === null ? [] : basinSigns(answer.basins, unit.value, model.value)
     }),
-    wedges: computed(() => {
+    wedges: useSteady(() => {
       const histogram = source.histogram()
       if (histogram === null || inversion.value === null) return []
       return warningPlaces(inversion.value.warnings, histogram.edges, histogram.weights).map((place) =>

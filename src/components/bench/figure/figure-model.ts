@@ -35,6 +35,12 @@ export interface FigureAxes {
   readonly secondEnergy: { readonly unit: string; readonly perUnit: number }
 }
 
+/** The axes alone of a model. */
+export function axesOf(model: FigureAxes): FigureAxes {
+  const { kind, names, energyUnit, degrees, domain, densityTop, energyDomain, secondEnergy } = model
+  return { kind, names, energyUnit, degrees, domain, densityTop, energyDomain, secondEnergy }
+}
+
 /** Everything the figure draws, in the units shown. */
 export interface FigureModel extends FigureAxes {
   readonly bins: FigureBins

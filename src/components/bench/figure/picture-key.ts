@@ -1,8 +1,9 @@
 import { lightTokens as token } from '@/components/figure/light-tokens'
 import { italic, svgElement, svgEscape, svgPath, type Svg } from '@/components/figure/svg-writer'
 import { textWidth } from '@/components/figure/text-width'
+import { SMOOTH_OPACITY } from './curve-paths'
 import type { FigureModel } from './figure-model'
-import { CURVES, type CurveName, SMOOTH_OPACITY, type VisibleCurves } from './panel-option'
+import { CURVES, type CurveName, type VisibleCurves } from './visible-curves'
 import { ringPath } from './ring-path'
 
 /** An entry of the key: its swatch in a field of 22 × 12, and its words plain (for their width) and set. */

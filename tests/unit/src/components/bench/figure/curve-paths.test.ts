@@ -1,54 +1,59 @@
-import { init } from 'echarts/core'
 import { describe, expect, it } from 'vitest'
 import type { DisplayUnits } from '@/components/figure/coordinate-names'
+import { axisMarks } from '@/components/bench/figure/axis-marks'
+import { curvePaths } from '@/components/bench/figure/curve-paths'
 import { figureFrame } from '@/components/bench/figure/figure-frame'
 import { figureModel } from '@/components/bench/figure/figure-model'
-import { CURVES, panelOption, type VisibleCurves } from '@/components/bench/figure/panel-option'
 import { ringPath } from '@/components/bench/figure/ring-path'
 import { silhouetteArea, silhouetteLine } from '@/components/bench/figure/silhouette-path'
-import '@/plugins/echarts'
+import { CURVES, type VisibleCurves } from '@/components/bench/figure/visible-curves'
 import { angleCounts, inverted } from '../distributions'
 
 const units: DisplayUnits = { length: 'nm', angle: 'degree', energy: 'kJ/mol' }
-const frame = figureFrame(652, 526)
+const frame = figureFrame(652, 526, true)
 const model = figureModel(inverted(angleCounts()), units)
+const marks = axisMarks(frame, model)
 const all = Object.fromEntries(CURVES.map((curve) => [curve, true])) as Record<keyof VisibleCurves, boolean>
+const keys = (visible: VisibleCurves): string[] =>
+  Object.values(curvePaths(model, marks, visible)).flatMap((paths) => paths.map(({ key }) => key))
 
-const drawn = (visible: VisibleCurves): string => {
-  const chart = init(null, null, { renderer: 'svg', ssr: true, width: frame.width, height: frame.height })
-  chart.setOption(panelOption(frame, model, model, visible))
-  const svg = chart.renderToSVGString()
-  chart.dispose()
-  return svg
-}
-
-describe('panelOption', () => {
-  it('draws every curve in the tokens of the page, so that a change of theme needs no redraw', () => {
-    const svg = drawn(all)
-    for (const token of ['data', 'dataEdge', 'model', 'band', 'plain', 'raw'])
-      expect(svg).toContain(`var(--${token})`)
-    expect(svg).toContain('stroke-dasharray="5,3.5"')
+describe('curvePaths', () => {
+  it('draws measured below derived, the band below everything of the potential', () => {
+    const { distribution, residual, potential } = curvePaths(model, marks, all)
+    expect(distribution.map(({ key }) => key)).toEqual(['measured', 'outline', 'regenerated'])
+    expect(residual.map(({ key }) => key)).toEqual(['stems'])
+    expect(potential.map(({ key }) => key)).toEqual([
+      'band 0',
+      'comparison',
+      'rings',
+      'potential',
+      'tail 0',
+      'tail 1',
+    ])
+    expect(potential.find(({ key }) => key === 'comparison')).toMatchObject({
+      stroke: 'plain',
+      dash: '5 3.5',
+    })
   })
 
   it('puts the outline of the histogram on the pixels of the panel', () => {
-    const svg = drawn(all)
     const { left, top, width, height } = frame.distribution
     const [first] = model.measured
     const x = left + ((first[0] - model.domain[0]) / (model.domain[1] - model.domain[0])) * width
-    const outline = /<polygon points="([\d.]+) ([\d.]+) /.exec(svg)
-    expect(Number(outline?.[1])).toBeCloseTo(x, 1)
-    expect(Number(outline?.[2])).toBe(top + height)
+    const [outline] = curvePaths(model, marks, all).distribution
+    const [, across, up] = /^M([\d.]+) ([\d.]+)/.exec(outline.d) ?? []
+    expect(Number(across)).toBeCloseTo(x, 1)
+    expect(Number(up)).toBe(top + height)
   })
 
   it('leaves out what the key has switched off', () => {
-    const without = drawn({ ...all, comparison: false, potential: false })
-    expect(without).not.toContain('var(--plain)')
-    expect(without).not.toContain('var(--band)')
-    expect(without).toContain('var(--raw)')
-  })
-
-  it('keeps the panels without a model', () => {
-    expect(panelOption(frame, model, null, all).series).toEqual([])
+    expect(keys({ ...all, comparison: false, potential: false, residual: false })).toEqual([
+      'measured',
+      'outline',
+      'regenerated',
+      'rings',
+    ])
+    expect(keys({ ...all, measured: false, regenerated: false, rings: false })).not.toContain('rings')
   })
 })
 

@@ -14,8 +14,10 @@ const frame = figureFrame(652, 526, true)
 const model = figureModel(inverted(angleCounts()), units)
 const marks = axisMarks(frame, model)
 const all = Object.fromEntries(CURVES.map((curve) => [curve, true])) as Record<keyof VisibleCurves, boolean>
-const keys = (visible: VisibleCurves): string[] =>
-  Object.values(curvePaths(model, marks, visible)).flatMap((paths) => paths.map(({ key }) => key))
+const keys = (visible: VisibleCurves): string[] => {
+  const { distribution, residual, potential } = curvePaths(model, marks, visible)
+  return [...distribution, ...residual, ...potential].map(({ key }) => key)
+}
 
 describe('curvePaths', () => {
   it('draws measured below derived, the band below everything of the potential', () => {

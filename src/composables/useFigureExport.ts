@@ -1,5 +1,5 @@
 import { ref, type Ref } from 'vue'
-import { svgDocument, type Picture } from '@/components/figure/picture'
+import { svgDocument, type Picture } from '@shared/picture'
 import { pngOf } from '@/components/figure/picture-png'
 import { saveFile } from '@/components/figure/save-file'
 

@@ -11,9 +11,8 @@ import {
 import type { MappingDocument } from '@shared/mapping'
 import { fileNameOf } from '@/components/figure/file-name'
 import { saveFile } from '@/components/figure/save-file'
-import type { BoardLayout } from '@/components/mapping/drawing/board-layout'
+import { type BoardLayout, mappingPicture } from '@shared/mapping-drawing'
 import { mappingCsv } from '@/components/mapping/picture/mapping-csv'
-import { mappingPicture } from '@/components/mapping/picture/mapping-picture'
 import type { FigureFiles } from './useFigureExport'
 
 /** What the files of a mapping are made from. */

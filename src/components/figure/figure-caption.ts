@@ -1,7 +1,5 @@
-import { chemicalNameParts } from '@/format/chemical-name'
-import { lightTokens } from './light-tokens'
-import { italic, svgElement, svgEscape, type Svg } from './svg-writer'
-import { brokenLines } from './text-width'
+import { chemicalNameParts } from '@shared/chemistry/chemical-name'
+import { brokenLines, italic, lightTokens, type Svg, svgElement, svgEscape } from '@shared/picture'
 
 /** What a picture or a file of numbers must say so that a year later it is still known what it shows. */
 export interface FigureCaption {

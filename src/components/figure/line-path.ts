@@ -1,6 +1,6 @@
 import type { LinearScale } from './linear-scale'
 import type { Point } from './stepped-outline'
-import { svgNumber } from './svg-writer'
+import { svgNumber } from '@shared/picture'
 
 /** Points in data coordinates as the data of an open path in pixels. */
 export function linePath(points: readonly Point[], x: LinearScale, y: LinearScale): string {

@@ -1,4 +1,4 @@
-import { svgDocument, type Picture } from './picture'
+import { svgDocument, type Picture } from '@shared/picture'
 import { pictureFontRules } from './picture-fonts'
 
 /** Dots per CSS pixel: fine enough for a slide and for two columns of a page. */

@@ -1,6 +1,5 @@
 import { captionSentences, captionText, type FigureCaption } from '@/components/figure/figure-caption'
-import type { Picture } from '@/components/figure/picture'
-import { svgElement } from '@/components/figure/svg-writer'
+import { type Picture, svgElement } from '@shared/picture'
 import { axisMarks } from './axis-marks'
 import type { BasinSign } from './basin-signs'
 import { emptyBrackets } from './empty-brackets'

@@ -1,4 +1,4 @@
-import type { lightTokens } from '@/components/figure/light-tokens'
+import type { lightTokens } from '@shared/picture'
 import { linePath } from '@/components/figure/line-path'
 import type { LinearScale } from '@/components/figure/linear-scale'
 import type { Point } from '@/components/figure/stepped-outline'

@@ -1,12 +1,12 @@
-import { lightTokens as token } from '@/components/figure/light-tokens'
 import {
   italic,
+  lightTokens as token,
+  type Svg,
+  type SvgAttributes,
   svgElement,
   svgEscape,
   svgPath,
-  type Svg,
-  type SvgAttributes,
-} from '@/components/figure/svg-writer'
+} from '@shared/picture'
 import type { AxisMarks, Mark } from './axis-marks'
 import type { EmptyBrackets } from './empty-brackets'
 import type { FigureFrame, Panel } from './figure-frame'

@@ -1,5 +1,4 @@
-import { lightTokens as token } from '@/components/figure/light-tokens'
-import { svgElement, svgEscape, svgPath, type Svg } from '@/components/figure/svg-writer'
+import { lightTokens as token, type Svg, svgElement, svgEscape, svgPath } from '@shared/picture'
 import type { AxisMarks } from './axis-marks'
 import { BASIN_RING, placedBasins, type BasinSign } from './basin-signs'
 import type { FigureFrame } from './figure-frame'

@@ -1,5 +1,4 @@
-import { lightTokens } from '@/components/figure/light-tokens'
-import { svgElement, svgPath, type Svg } from '@/components/figure/svg-writer'
+import { lightTokens, type Svg, svgElement, svgPath } from '@shared/picture'
 import type { AxisMarks } from './axis-marks'
 import { type CurvePath, curvePaths } from './curve-paths'
 import type { FigureFrame, Panel } from './figure-frame'

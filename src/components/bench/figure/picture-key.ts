@@ -1,6 +1,12 @@
-import { lightTokens as token } from '@/components/figure/light-tokens'
-import { italic, svgElement, svgEscape, svgPath, type Svg } from '@/components/figure/svg-writer'
-import { textWidth } from '@/components/figure/text-width'
+import {
+  italic,
+  lightTokens as token,
+  type Svg,
+  svgElement,
+  svgEscape,
+  svgPath,
+  textWidth,
+} from '@shared/picture'
 import { SMOOTH_OPACITY } from './curve-paths'
 import type { FigureModel } from './figure-model'
 import { CURVES, type CurveName, type VisibleCurves } from './visible-curves'

@@ -1,5 +1,4 @@
-import { lightTokens as token } from '@/components/figure/light-tokens'
-import { italic, svgElement, svgEscape, svgPath, type Svg } from '@/components/figure/svg-writer'
+import { italic, lightTokens as token, type Svg, svgElement, svgEscape, svgPath } from '@shared/picture'
 import type { PairNames } from '../verdict-words'
 import type { MapFrame } from './map-frame'
 import type { MapMarks } from './map-marks'

@@ -1,6 +1,6 @@
 import type { Point } from '@shared/chemistry'
 import type { AtomPlace, MappingDocument } from '@shared/mapping'
-import { atomPoint, type BoardLayout } from './board-layout'
+import { atomPoint, type BoardLayout } from '@shared/mapping-drawing'
 
 /** An atom on the drawing that can be painted: of the unit, or of a neighbour as far as it is drawn. */
 export interface AtomTarget extends AtomPlace {

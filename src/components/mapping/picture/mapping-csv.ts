@@ -2,7 +2,7 @@ import { compositionMass, formulaText, type RepeatUnit } from '@shared/chemistry
 import { beadComposition, type MappingDocument } from '@shared/mapping'
 import { csvText } from '@shared/csv'
 import { atomWords } from '../atom-words'
-import type { MappingCaption } from './mapping-picture'
+import type { MappingCaption } from '@shared/mapping-drawing'
 
 /** The beads of a mapping as comma-separated values, a row for each. */
 export function mappingCsv(unit: RepeatUnit, { beads }: MappingDocument, caption: MappingCaption): string {

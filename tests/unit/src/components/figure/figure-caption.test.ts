@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { captionSentences, captionText, type FigureCaption } from '@/components/figure/figure-caption'
 import { fileNameOf } from '@/components/figure/file-name'
-import { brokenLines, textWidth } from '@/components/figure/text-width'
+import { brokenLines, textWidth } from '@shared/picture'
 
 const caption: FigureCaption = {
   polymer: 'poly(n-hexyl acrylate)',

@@ -3,11 +3,19 @@ import { layoutRepeatUnit, parseRepeatUnit } from '@shared/chemistry'
 import { addBead, giveAtoms } from '@shared/mapping'
 import { atomName, atomWords } from '@/components/mapping/atom-words'
 import { atomTowards } from '@/components/mapping/drawing/atom-towards'
-import { atomPoint, backboneAtoms, boardLayout, HALO_RADIUS } from '@/components/mapping/drawing/board-layout'
-import { bondLines } from '@/components/mapping/drawing/bond-lines'
-import { letterPlace, notePlace } from '@/components/mapping/drawing/free-places'
-import { beadShapes } from '@/components/mapping/drawing/bead-shapes'
-import { beadPath, haloPath, sitePoint } from '@/components/mapping/drawing/halo-path'
+import {
+  atomPoint,
+  backboneAtoms,
+  beadPath,
+  beadShapes,
+  boardLayout,
+  bondLines,
+  HALO_RADIUS,
+  haloPath,
+  letterPlace,
+  notePlace,
+  sitePoint,
+} from '@shared/mapping-drawing'
 
 const ACRYLATE = '*CC(*)C(=O)OCCCCCC'
 const unit = await parseRepeatUnit(ACRYLATE)

@@ -4,8 +4,7 @@ import { benchPicture } from '@/components/bench/figure/bench-picture'
 import { figureModel } from '@/components/bench/figure/figure-model'
 import { CURVES, type VisibleCurves } from '@/components/bench/figure/visible-curves'
 import type { DisplayUnits } from '@/components/figure/coordinate-names'
-import { lightTokens } from '@/components/figure/light-tokens'
-import { svgDocument } from '@/components/figure/picture'
+import { lightTokens, svgDocument } from '@shared/picture'
 import { angleCounts, bondCounts, dihedralCounts, inverted, withoutSampleSize } from '../distributions'
 
 const units: DisplayUnits = { length: 'nm', angle: 'degree', energy: 'kJ/mol' }

@@ -3,8 +3,7 @@ import { MAP_RAMPS } from '@/assets/map-ramps'
 import { mapModel } from '@/components/correlation/figure/map-model'
 import { mapPicture } from '@/components/correlation/figure/map-picture'
 import type { MapView } from '@/components/correlation/figure/map-view'
-import { lightTokens } from '@/components/figure/light-tokens'
-import { svgDocument } from '@/components/figure/picture'
+import { lightTokens, svgDocument } from '@shared/picture'
 import { correlationOf, correlationWithoutSampleSize, twoBasins } from '../correlations'
 
 const units = { length: 'nm', angle: 'degree', energy: 'kJ/mol' } as const

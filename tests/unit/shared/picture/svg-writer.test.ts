@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { italic, svgElement, svgEscape, svgNumber, svgPath } from '@/components/figure/svg-writer'
+import { italic, svgElement, svgEscape, svgNumber, svgPath } from '@shared/picture'
 
 describe('svgElement', () => {
   it('writes attributes and content, and closes an empty element at once', () => {

@@ -1,4 +1,4 @@
-import type { Point } from '@shared/chemistry'
+import type { Point } from '../chemistry'
 import { type Box, HALO_RADIUS } from './board-layout'
 
 const DIRECTIONS = 24

@@ -1,5 +1,5 @@
-import type { Point, RepeatUnit } from '@shared/chemistry'
-import type { Bead, BeadAtom } from '@shared/mapping'
+import type { Point, RepeatUnit } from '../chemistry'
+import type { Bead, BeadAtom } from '../mapping'
 import { atomPoint, type BoardLayout, positionsIn } from './board-layout'
 
 /**

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { svgDocument } from '@/components/figure/picture'
+import { svgDocument } from '@shared/picture'
 
 const picture = { width: 20, height: 10, title: 'A & B', body: '<g/>' }
 

@@ -1,5 +1,5 @@
-import type { Point } from '@shared/chemistry'
-import type { MappingDocument } from '@shared/mapping'
+import type { Point } from '../chemistry'
+import type { MappingDocument } from '../mapping'
 import { type BoardLayout, HALO_RADIUS } from './board-layout'
 
 /** The part of a shared atom that one bead holds. */

@@ -5,7 +5,7 @@ import {
   type Point,
   type RepeatUnit,
   type RepeatUnitLayout,
-} from '@shared/chemistry'
+} from '../chemistry'
 
 /** Length of a bond on the board. */
 export const BOND_LENGTH = 50

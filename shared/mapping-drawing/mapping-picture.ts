@@ -1,12 +1,8 @@
-import { compositionMass, formulaText, type RepeatUnit } from '@shared/chemistry'
-import { beadComposition, type MappingDocument } from '@shared/mapping'
-import { lightTokens } from '@/components/figure/light-tokens'
-import type { Picture } from '@/components/figure/picture'
-import { italic, svgElement, svgEscape, type Svg } from '@/components/figure/svg-writer'
-import { brokenLines } from '@/components/figure/text-width'
-import { chemicalNameParts } from '@/format/chemical-name'
-import { formatFixed } from '@/format/numbers'
-import type { BoardLayout } from '../drawing/board-layout'
+import { compositionMass, formulaText, type RepeatUnit } from '../chemistry'
+import { beadComposition, type MappingDocument } from '../mapping'
+import { brokenLines, italic, lightTokens, type Picture, type Svg, svgElement, svgEscape } from '../picture'
+import { chemicalNameParts } from '../chemistry/chemical-name'
+import type { BoardLayout } from './board-layout'
 import { beadDisc, cross, drawingLayers } from './drawing-layers'
 
 /** What the picture of a mapping says besides what it shows. */
@@ -66,7 +62,7 @@ function legend(unit: RepeatUnit, { beads }: MappingDocument, top: number): Svg 
       const counts = beadComposition(unit, bead)
       const named = [bead.type, bead.label].filter((word) => word !== '').join(', ')
       const holds = bead.atoms.length === 0 ? 'no atoms' : formulaText(counts)
-      const mass = `${formatFixed(compositionMass(counts), 3)} g/mol`
+      const mass = `${compositionMass(counts).toFixed(3)} g/mol`
       return beadDisc(bead.name, bead.colour, middle(row)) + words(`${named}: ${holds}, ${mass}`, row)
     }),
     cross(middle(beads.length)),
@@ -75,7 +71,7 @@ function legend(unit: RepeatUnit, { beads }: MappingDocument, top: number): Svg 
 }
 
 function captionText(unit: RepeatUnit, { beads }: MappingDocument, caption: MappingCaption): string {
-  const unitWords = `repeat unit ${unit.formula}, ${formatFixed(unit.mass, 3)} g/mol, ${unit.smiles}`
+  const unitWords = `repeat unit ${unit.formula}, ${unit.mass.toFixed(3)} g/mol, ${unit.smiles}`
   const count = `${beads.length} bead${beads.length === 1 ? '' : 's'} for one ${unitWords}`
   const invented = caption.invented ? ' Invented (demonstration).' : ''
   return `${caption.polymer}, mapping ${caption.mapping}: ${count}.${invented}`

@@ -1,4 +1,4 @@
-import type { Point, RepeatUnit } from '@shared/chemistry'
+import type { Point, RepeatUnit } from '../chemistry'
 
 /** A letter of the drawing with its charge; its place is that of the atom. */
 export interface AtomLetter extends Point {

@@ -1,5 +1,5 @@
-import { moved, type Point, type RepeatUnit } from '@shared/chemistry'
-import type { MappingDocument } from '@shared/mapping'
+import { moved, type Point, type RepeatUnit } from '../chemistry'
+import type { MappingDocument } from '../mapping'
 import { type BoardLayout, positionsIn } from './board-layout'
 import { beadPath } from './halo-path'
 

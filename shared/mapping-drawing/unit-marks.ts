@@ -1,4 +1,4 @@
-import { inverse, moved, type Point, type RepeatUnit } from '@shared/chemistry'
+import { inverse, moved, type Point, type RepeatUnit } from '../chemistry'
 import type { BoardLayout } from './board-layout'
 
 const HALF_HEIGHT = 40

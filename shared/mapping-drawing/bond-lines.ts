@@ -1,4 +1,4 @@
-import type { Point, RepeatUnitBond } from '@shared/chemistry'
+import type { Point, RepeatUnitBond } from '../chemistry'
 
 /** Distance between the lines of a double bond, and between the outer ones of a triple bond and the middle. */
 const SPREAD = 2.6

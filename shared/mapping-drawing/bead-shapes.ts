@@ -1,5 +1,5 @@
-import type { Point, RepeatUnit } from '@shared/chemistry'
-import type { Bead, MappingDocument } from '@shared/mapping'
+import type { Point, RepeatUnit } from '../chemistry'
+import type { Bead, MappingDocument } from '../mapping'
 import { atomPoint, type BoardLayout } from './board-layout'
 import { letterPlace } from './free-places'
 import { beadPath, sitePoint } from './halo-path'

@@ -1,4 +1,4 @@
-import type { BeadColour } from '@shared/mapping'
+import type { BeadColour } from '../mapping'
 
 /** The colours that a bead is drawn in. */
 interface BeadInk {

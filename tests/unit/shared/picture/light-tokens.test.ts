@@ -1,6 +1,6 @@
 import { readFileSync } from 'node:fs'
 import { describe, expect, it } from 'vitest'
-import { lightTokens } from '@/components/figure/light-tokens'
+import { lightTokens } from '@shared/picture'
 
 describe('lightTokens', () => {
   it('are the light tokens of the page', () => {

@@ -6,6 +6,8 @@ const LETTER_DISTANCE = HALO_RADIUS + 2
 
 /** A bond is stood for by points this share of its length apart. */
 const BOND_SHARES = [0.25, 0.5, 0.75]
+/** Places for a note that are tried along each side of the window. */
+const NOTE_STEPS = 36
 
 /**
  * Where the letter of a bead goes: on the outer rim of its halo, as far as possible from everything else that is drawn.
@@ -54,14 +56,18 @@ export function notePlace(
   frame: Box,
   positions: readonly Point[],
 ): Point {
-  const step = 16
+  // As many places on a large drawing as on a small one.
+  const [right, down] = [frame.width / NOTE_STEPS, frame.height / NOTE_STEPS]
   const candidates: Point[] = []
-  for (let x = frame.x; x <= frame.x + frame.width - size.width; x += step) {
-    for (let y = frame.y; y <= frame.y + frame.height - size.height; y += step) candidates.push({ x, y })
+  for (let x = frame.x; x <= frame.x + frame.width - size.width; x += right) {
+    for (let y = frame.y; y <= frame.y + frame.height - size.height; y += down) candidates.push({ x, y })
   }
-  const covered = (place: Point) =>
-    positions.filter((atom) => distanceTo({ ...place, ...size }, atom) < HALO_RADIUS + 12).length
-  const merit = (place: Point) => -1000 * covered(place) - distanceTo({ ...place, ...size }, about)
+  const covered = (place: Point) => {
+    let count = 0
+    for (const atom of positions) if (distanceTo(place, size, atom) < HALO_RADIUS + 12) count++
+    return count
+  }
+  const merit = (place: Point) => -1000 * covered(place) - distanceTo(place, size, about)
   return candidates.length === 0 ? { x: frame.x, y: frame.y } : best(candidates, merit)
 }
 
@@ -69,20 +75,27 @@ function between(from: Point, to: Point, share: number): Point {
   return { x: from.x + share * (to.x - from.x), y: from.y + share * (to.y - from.y) }
 }
 
-function distanceTo({ x, y, width, height }: Box, point: Point): number {
-  const dx = Math.max(x - point.x, 0, point.x - x - width)
-  const dy = Math.max(y - point.y, 0, point.y - y - height)
-  return Math.hypot(dx, dy)
+/** From a rectangle with its upper left corner at `corner` to a point; 0 inside. */
+function distanceTo(corner: Point, size: Pick<Box, 'width' | 'height'>, point: Point): number {
+  const dx = Math.max(corner.x - point.x, 0, point.x - corner.x - size.width)
+  const dy = Math.max(corner.y - point.y, 0, point.y - corner.y - size.height)
+  return Math.sqrt(dx * dx + dy * dy)
 }
 
 function nearest(place: Point, points: readonly Point[]): number {
-  return points.reduce(
-    (least, point) => Math.min(least, Math.hypot(point.x - place.x, point.y - place.y)),
-    Infinity,
-  )
+  let least = Infinity
+  for (const { x, y } of points) {
+    const square = (x - place.x) ** 2 + (y - place.y) ** 2
+    if (square < least) least = square
+  }
+  return Math.sqrt(least)
 }
 
 function best(candidates: readonly Point[], merit: (place: Point) => number): Point {
-  const merits = candidates.map(merit)
-  return candidates[merits.indexOf(Math.max(...merits))]
+  let [chosen, most] = [candidates[0], -Infinity]
+  for (const candidate of candidates) {
+    const worth = merit(candidate)
+    if (worth > most) [chosen, most] = [candidate, worth]
+  }
+  return chosen
 }

@@ -1,7 +1,5 @@
 import { computed, shallowRef, type ComputedRef } from 'vue'
 
-const MOST_STEPS = 200
-
 /** A value that can be taken back and done again. */
 export interface History<Value> {
   readonly value: ComputedRef<Value>
@@ -13,24 +11,38 @@ export interface History<Value> {
   readonly redo: () => void
 }
 
-/** Keeps the last 200 steps of an immutable value. */
-export function useHistory<Value>(first: Value): History<Value> {
-  const steps = shallowRef<readonly Value[]>([first])
-  const place = shallowRef(0)
-  const value = computed(() => steps.value[place.value])
-  const canUndo = computed(() => place.value > 0)
-  const canRedo = computed(() => place.value < steps.value.length - 1)
+/** A step with the ones before and after it. */
+interface Step<Value> {
+  readonly value: Value
+  readonly before: Step<Value> | null
+  after: Step<Value> | null
+}
 
-  const push = (next: Value): void => {
-    if (next === value.value) return
-    steps.value = [...steps.value.slice(0, place.value + 1), next].slice(-MOST_STEPS)
-    place.value = steps.value.length - 1
+/**
+ * Keeps every step of an immutable value, from the first on. A step takes the room of what changed with it, as far as values
+ * share what stayed, and no longer to make than the first.
+ */
+export function useHistory<Value>(first: Value): History<Value> {
+  const step = shallowRef<Step<Value>>({ value: first, before: null, after: null })
+
+  const push = (value: Value): void => {
+    if (value === step.value.value) return
+    const next: Step<Value> = { value, before: step.value, after: null }
+    step.value.after = next
+    step.value = next
   }
   const undo = (): void => {
-    if (canUndo.value) place.value -= 1
+    step.value = step.value.before ?? step.value
   }
   const redo = (): void => {
-    if (canRedo.value) place.value += 1
+    step.value = step.value.after ?? step.value
   }
-  return { value, canUndo, canRedo, push, undo, redo }
+  return {
+    value: computed(() => step.value.value),
+    canUndo: computed(() => step.value.before !== null),
+    canRedo: computed(() => step.value.after !== null),
+    push,
+    undo,
+    redo,
+  }
 }

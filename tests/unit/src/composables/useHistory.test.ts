@@ -30,4 +30,17 @@ describe('useHistory', () => {
     history.push('a')
     expect(history.canUndo.value).toBe(false)
   })
+
+  it('has no limit: ten thousand steps go back to the first and on to the last', () => {
+    const history = useHistory(0)
+    for (let step = 1; step <= 10_000; step++) history.push(step)
+    const seen: number[] = []
+    while (history.canUndo.value) {
+      history.undo()
+      seen.push(history.value.value)
+    }
+    expect(seen).toEqual(Array.from({ length: 10_000 }, (_, step) => 9999 - step))
+    while (history.canRedo.value) history.redo()
+    expect(history.value.value).toBe(10_000)
+  })
 })

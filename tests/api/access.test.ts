@@ -16,13 +16,13 @@ import {
   type Job,
   jointFile,
 } from '../support/job-builder'
-import { ROUTE_SAMPLES, type Sample } from '../support/route-samples'
+import { callRoute, nameOf, pathOf, worldFor } from '../support/route-calls'
+import { ROUTE_SAMPLES, type SampleWorld } from '../support/route-samples'
 
 type MemberRoute = AnyRoute & { readonly access: MemberAccess }
 
 const memberRoutes = routes.filter((route): route is MemberRoute => typeof route.access === 'object')
-const keyOf = ({ method, path }: AnyRoute): string => `${method} ${path}`
-const named = memberRoutes.map((route) => ({ name: keyOf(route), route }))
+const named = memberRoutes.map((route) => ({ name: nameOf(route), route }))
 const ROLES = ROLES_FOR.belong
 const everyRole = named.flatMap(({ name, route }) => ROLES.map((role) => ({ name, route, role })))
 const isAllowed = (route: MemberRoute, role: (typeof ROLES)[number]): boolean =>
@@ -46,63 +46,48 @@ beforeAll(async () => {
 
 afterAll(() => server.close())
 
-function pathFor({ path }: AnyRoute, job: Job, ids: Readonly<Record<string, string>> = {}): string {
-  // The route that takes a new distribution is asked for the angle, all others for the bond that has data.
-  const termId = path.endsWith('/distributions') ? job.angleId : job.bondId
-  const all: Record<string, string> = { groupId: group.groupId, termId, ...idsOf(job), ...ids }
-  return path.replace(/:(\w+)/g, (_, name: string) => all[name])
-}
-
-function idsOf(job: Job): Record<string, string> {
-  const { polymerId, statePointId, mappingId, distributionId, potentialId, jointDistributionId } = job
-  return { polymerId, statePointId, mappingId, distributionId, potentialId, jointDistributionId }
-}
-
-async function sampleOf(route: AnyRoute, job: Job): Promise<Sample> {
-  return ROUTE_SAMPLES[keyOf(route)]({ server, group, job, otherMappingId })
-}
-
-async function call(client: ApiClient, route: AnyRoute, job: Job, path?: string): Promise<Response> {
-  const { ids, query, body, file } = await sampleOf(route, job)
-  const address = path ?? pathFor(route, job, ids)
-  const url = query === undefined ? address : `${address}?${query}`
-  return file ? client.upload(url, body, file) : client.send(route.method, url, body)
-}
+const worldOf = (job: Job): SampleWorld => ({ server, group, job, otherMappingId })
+const call = (client: ApiClient, route: AnyRoute, job: Job, path?: string): Promise<Response> =>
+  callRoute(client, route, worldOf(job), path)
 
 describe('who may do what', () => {
   it('is tried out for every route of the API', () => {
-    expect(Object.keys(ROUTE_SAMPLES).sort()).toEqual(memberRoutes.map(keyOf).sort())
+    expect(Object.keys(ROUTE_SAMPLES).sort()).toEqual(memberRoutes.map(nameOf).sort())
     expect(
       routes
         .filter(({ access }) => typeof access !== 'object')
-        .map(keyOf)
+        .map(nameOf)
         .sort(),
     ).toEqual([
       'delete /api/keys/:keyId',
       'delete /api/session',
       'get /api/health',
+      'get /api/join/:token',
       'get /api/key',
       'get /api/keys',
       'get /api/openapi.json',
+      'get /api/password-resets/:token',
       'get /api/session',
       'get /api/set-up/:token',
       'get /api/tray',
+      'patch /api/account',
+      'post /api/account/password',
+      'post /api/join/:token',
+      'post /api/join/:token/account',
       'post /api/keys',
+      'post /api/password-resets',
+      'post /api/password-resets/:token',
       'post /api/session',
       'post /api/session/demo',
       'post /api/set-up',
+      'put /api/account/current-group',
     ])
   })
 
   it.each(everyRole.filter(({ route, role }) => isAllowed(route, role)))(
     '$name works for the $role',
     async ({ route, role }) => {
-      const joint = route.path.includes(':jointDistributionId')
-      const job =
-        route.method === 'get' ? shared : await buildJob(server.services, group.modeller.member, { joint })
-      if (route.path === '/api/state-points/:statePointId' && route.method === 'delete') {
-        await server.services.distributions.remove(group.owner.member, job.distributionId)
-      }
+      const { job } = await worldFor(route, worldOf(shared))
       const response = await call(group[role].client, route, job)
       expect(response.status, response.text).toBe(route.answer.status)
     },
@@ -142,8 +127,9 @@ describe('who may do what', () => {
   it.each(named.filter(({ route }) => route.method !== 'get'))(
     '$name is refused without the token of the session, and with another one',
     async ({ route }) => {
-      const { ids, body } = await sampleOf(route, shared)
-      const path = pathFor(route, shared, ids)
+      const world = worldOf(shared)
+      const { ids, body } = await ROUTE_SAMPLES[nameOf(route)](world)
+      const path = pathOf(route, world, ids)
       const { client } = group.owner
       const without = await client.raw(route.method, path).send(body)
       const wrong = await client

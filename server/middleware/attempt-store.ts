@@ -1,5 +1,6 @@
 import type { ClientRateLimitInfo, Options, Store } from 'express-rate-limit'
 import type { Logger } from 'pino'
+import { HttpError } from '../errors/http-error'
 import type { AttemptService } from '../services/attempt.service'
 
 /** Where the limits keep their counts: in the database, one for all server processes, under a name of their own. */
@@ -18,10 +19,15 @@ export class AttemptStore implements Store {
     this.windowMs = windowMs
   }
 
-  /** Fails when the database does: the limit then lets nobody pass. */
+  /** @throws {HttpError} UNAVAILABLE whenever it cannot be counted, for whatever reason: then nobody passes */
   async increment(key: string): Promise<ClientRateLimitInfo> {
-    const { count, endsAt } = await this.attempts.count(this.keyOf(key), this.windowMs)
-    return { totalHits: count, resetTime: endsAt }
+    try {
+      const { count, endsAt } = await this.attempts.count(this.keyOf(key), this.windowMs)
+      return { totalHits: count, resetTime: endsAt }
+    } catch (error) {
+      this.logger.error({ err: error }, 'attempt not counted')
+      throw new HttpError('UNAVAILABLE', 'This cannot be done at the moment. Try again in a minute.')
+    }
   }
 
   /** Comes after the answer has gone out, where nobody could catch an error: a count too high is the safe side. */

@@ -29,11 +29,15 @@ export interface ApiServerOptions {
   /** The tray of caught mails may be looked into. */
   readonly tray?: boolean
   readonly clientFolder?: string
+  /** Of a server that is open already: this one is a second process beside it. */
+  readonly databaseUrl?: string
 }
 
 /** Opens a server for one test file; close it when the file is done. */
 export async function openApiServer(options: ApiServerOptions = {}): Promise<ApiServer> {
-  const database = await createTestDatabase()
+  const database = options.databaseUrl
+    ? { url: options.databaseUrl, drop: () => Promise.resolve() }
+    : await createTestDatabase()
   const dataSource = await createDataSource(database.url).initialize()
   const sessionPool = new Pool({ connectionString: database.url, max: 5 })
   const lines: string[] = []

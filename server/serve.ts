@@ -74,7 +74,13 @@ export async function serve(config: Config, logger: Logger): Promise<RunningServ
     const smtpUrl = config.smtpUrl ?? catcher?.smtpUrl ?? null
     if (config.worker && smtpUrl !== null) {
       const { databaseUrl, mailFrom } = config
-      const worker = startMailWorker({ databaseUrl, smtpUrl, mailFrom, logger })
+      const worker = startMailWorker({
+        databaseUrl,
+        smtpUrl,
+        mailFrom,
+        staysHere: config.mailCatcher,
+        logger,
+      })
       closing.push(() => worker.stop())
     }
     const server = createServer(app.express)

@@ -9,7 +9,7 @@ function main(): void {
     throw new ConfigError(['SMTP_URL must name the mail server that takes the mails.'])
   const logger = createLogger(config.logLevel)
   const { databaseUrl, smtpUrl, mailFrom } = config
-  const worker = startMailWorker({ databaseUrl, smtpUrl, mailFrom, logger })
+  const worker = startMailWorker({ databaseUrl, smtpUrl, mailFrom, staysHere: false, logger })
   logger.info('mail worker: running')
   for (const signal of ['SIGINT', 'SIGTERM'] as const) {
     process.once(signal, () => void worker.stop().then(() => logger.info('mail worker: stopped')))

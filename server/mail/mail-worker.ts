@@ -27,6 +27,8 @@ export interface MailWorkerOptions {
   readonly smtpUrl: string
   /** Sender, as in "Beadwright <beads@example.org>". */
   readonly mailFrom: string
+  /** The mails reach a tray on this machine only: those of an invented group go there too. */
+  readonly staysHere: boolean
   readonly logger: Logger
 }
 
@@ -39,7 +41,13 @@ export interface MailWorker {
  * Starts to send. Any number of workers may run on one database, in the server's process or in others. When the database goes
  * away the worker waits for it.
  */
-export function startMailWorker({ databaseUrl, smtpUrl, mailFrom, logger }: MailWorkerOptions): MailWorker {
+export function startMailWorker({
+  databaseUrl,
+  smtpUrl,
+  mailFrom,
+  staysHere,
+  logger,
+}: MailWorkerOptions): MailWorker {
   const pool = new Pool({
     connectionString: databaseUrl,
     // Each mail holds one connection while it goes out; the queue itself listens on one and asks on others.
@@ -55,7 +63,7 @@ export function startMailWorker({ databaseUrl, smtpUrl, mailFrom, logger }: Mail
   const taskList: TaskList = {
     [SEND_MAIL]: async (payload, { job }) => {
       const { mailId } = payloadSchema.parse(payload)
-      await sendQueued(pool, mailer, mailId, job.attempts >= job.max_attempts)
+      await sendQueued(pool, mailer, mailId, { staysHere, lastTry: job.attempts >= job.max_attempts })
     },
   }
 

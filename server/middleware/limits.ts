@@ -85,7 +85,9 @@ function networkAddress({ ip = '' }: Request): string {
   return ipKeyGenerator(ip)
 }
 
+/** The address that is tried; where none is named it is someone signed in who tries their own password. */
 function emailOf(request: Request): string {
   const { email } = (request.body ?? {}) as { email?: unknown }
-  return typeof email === 'string' ? email.trim().toLowerCase().slice(0, 254) : ''
+  if (typeof email !== 'string') return request.session.userId ?? ''
+  return email.trim().toLowerCase().slice(0, 254)
 }

@@ -2,9 +2,16 @@ import { z } from 'zod'
 import { openApiDocument } from '../openapi'
 import { comparisonRoutes } from './comparison.routes'
 import { distributionRoutes } from './distribution.routes'
+import { accountRoutes } from './account.routes'
+import { groupRoutes } from './group.routes'
+import { handOverReleaseRoutes } from './hand-over-release.routes'
+import { handOverReviewRoutes } from './hand-over-review.routes'
+import { handOverRoutes } from './hand-over.routes'
 import { healthRoutes } from './health.routes'
 import { jointDistributionRoutes } from './joint-distribution.routes'
 import { keyRoutes } from './key.routes'
+import { historyRoutes } from './history.routes'
+import { joinRoutes } from './join.routes'
 import { mappingRoutes } from './mapping.routes'
 import { polymerRoutes } from './polymer.routes'
 import { potentialRoutes } from './potential.routes'
@@ -29,11 +36,18 @@ export const routes: readonly AnyRoute[] = [
   documentRoute,
   ...sessionRoutes,
   ...keyRoutes,
+  ...accountRoutes,
+  ...joinRoutes,
+  ...groupRoutes,
+  ...historyRoutes,
   ...polymerRoutes,
   ...mappingRoutes,
   ...comparisonRoutes,
   ...distributionRoutes,
   ...jointDistributionRoutes,
   ...potentialRoutes,
+  ...handOverRoutes,
+  ...handOverReviewRoutes,
+  ...handOverReleaseRoutes,
   ...trayRoutes,
 ]

@@ -1,15 +1,6 @@
 import { demoSignInSchema, sessionSchema, setUpSchema, signInSchema } from '../../shared/contracts/session'
-import type { Visitor } from '../middleware/visitor'
-import type { Services } from '../services'
 import { route } from './route'
-
-async function sessionBody(services: Services, visitor: Visitor) {
-  return {
-    user: visitor.userId === null ? null : await services.sessions.describe(visitor.userId),
-    csrfToken: visitor.csrfToken(),
-    demoUsers: await services.sessions.demoUsers(),
-  }
-}
+import { sessionBody } from './session-body'
 
 export const sessionRoutes = [
   route({

@@ -12,6 +12,7 @@ export const RESOURCES = {
   distribution: 'distribution',
   jointDistribution: 'joint_distribution',
   potential: 'potential',
+  invitation: 'invitation',
   handOver: 'hand_over',
 } as const
 export type Resource = keyof typeof RESOURCES

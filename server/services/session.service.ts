@@ -46,8 +46,15 @@ export class SessionService {
       relations: { group: true },
       order: { createdAt: 'ASC' },
     })
-    const { id, name, email } = user
-    return { id, name, email, memberships: memberships.map(membershipBody) }
+    const { id, name, email, currentGroupId } = user
+    const current = memberships.find(({ groupId }) => groupId === currentGroupId) ?? memberships.at(0)
+    return {
+      id,
+      name,
+      email,
+      memberships: memberships.map(membershipBody),
+      currentGroupId: current?.groupId ?? null,
+    }
   }
 
   /** The people the sign-in page offers: the demo's, and only while the demo is on. */

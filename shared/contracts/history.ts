@@ -83,3 +83,35 @@ export const historyEventSchema = z
   })
   .meta({ id: 'HistoryEvent' })
 export type HistoryEvent = z.infer<typeof historyEventSchema>
+
+/** Events on one page. */
+export const HISTORY_PAGE = 50
+
+/** Events in one exported file at most: the newest of those that fit the filter. */
+export const HISTORY_EXPORT = 50_000
+
+/** Which events of a group: all of what is given must fit. Times are the first and the first no more asked for. */
+export const historyFilterSchema = z.object({
+  person: idSchema.optional(),
+  action: historyActionSchema.optional(),
+  /** Part of the subject's name, in any capitals. */
+  subject: z.string().trim().max(120).optional(),
+  from: z.iso.datetime({ offset: true }).optional(),
+  to: z.iso.datetime({ offset: true }).optional(),
+})
+export type HistoryFilter = z.infer<typeof historyFilterSchema>
+
+/** GET /api/groups/:groupId/history. `before` is the id of the last event of the page before. */
+export const historyQuerySchema = historyFilterSchema.extend({
+  before: z
+    .string()
+    .regex(/^\d{1,18}$/, 'This is no event.')
+    .optional(),
+})
+export type HistoryQuery = z.infer<typeof historyQuerySchema>
+
+/** The newest events first; `more` says that older ones fit as well. */
+export const historyPageSchema = z
+  .object({ events: z.array(historyEventSchema), more: z.boolean() })
+  .meta({ id: 'HistoryPage' })
+export type HistoryPage = z.infer<typeof historyPageSchema>

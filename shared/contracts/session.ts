@@ -20,7 +20,14 @@ export const membershipSchema = z
 export type Membership = z.infer<typeof membershipSchema>
 
 export const signedInUserSchema = z
-  .object({ id: idSchema, name: z.string(), email: z.string(), memberships: z.array(membershipSchema) })
+  .object({
+    id: idSchema,
+    name: z.string(),
+    email: z.string(),
+    memberships: z.array(membershipSchema),
+    /** The group whose work the person looked at last, or the first they are in; null without any. */
+    currentGroupId: idSchema.nullable(),
+  })
   .meta({ id: 'SignedInUser' })
 export type SignedInUser = z.infer<typeof signedInUserSchema>
 

@@ -2,6 +2,7 @@ import { pino } from 'pino'
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest'
 import { type MailWorker, startMailWorker } from '../../../server/mail/mail-worker'
 import { type ApiServer, openApiServer } from '../../support/api-server'
+import { buildGroup } from '../../support/group-builder'
 import { mailRows, mailsOnce, queueMails } from '../../support/mail-queue'
 import { openMailServer, type TestMailServer } from '../../support/smtp-server'
 
@@ -32,7 +33,9 @@ async function mailServer(options: Parameters<typeof openMailServer>[0] = {}): P
 function work(smtpUrl: string): void {
   const logger = pino({ level: 'silent' })
   const mailFrom = 'Beadwright <beads@beads.example>'
-  workers.push(startMailWorker({ databaseUrl: server.databaseUrl, smtpUrl, mailFrom, logger }))
+  workers.push(
+    startMailWorker({ databaseUrl: server.databaseUrl, smtpUrl, mailFrom, staysHere: false, logger }),
+  )
 }
 
 const jobs = (): Promise<{ attempts: number; seconds: number }[]> =>
@@ -100,6 +103,17 @@ describe('the mail worker', () => {
     expect(mails[1].lastError).toContain('No such person here')
     expect(taken.map(({ to }) => to)).toEqual(['ada@example.org'])
     await expect.poll(jobs).toEqual([])
+  })
+
+  it('sends no mail of an invented group out of this machine', async () => {
+    const { url, taken } = await mailServer()
+    const { groupId } = await buildGroup(server, { demo: true })
+    await queueMails(server.dataSource, ['ada@example.org'])
+    await server.dataSource.query('update "mail" set "group_id" = $1', [groupId])
+    work(url)
+    const [mail] = await mailsOnce(server.dataSource, ({ failedAt }) => failedAt !== null)
+    expect(mail).toMatchObject({ sentAt: null, text: '' })
+    expect(taken).toEqual([])
   })
 
   it('gives a mail up after the last try, and says so', async () => {

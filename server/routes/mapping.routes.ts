@@ -7,6 +7,12 @@ import {
   mappingUpdateSchema,
   termSchema,
 } from '../../shared/contracts/mapping'
+import { mappingCoverageSchema } from '../../shared/contracts/mapping-coverage'
+import {
+  mappingFitRequestSchema,
+  mappingFitSchema,
+  mappingVersionListSchema,
+} from '../../shared/contracts/mapping-version'
 import { atStatePoint } from './queries'
 import { route } from './route'
 
@@ -79,5 +85,35 @@ export const mappingRoutes = [
     answer: { status: 200, body: pairListSchema },
     handle: ({ services, member, params, query }) =>
       services.pairs.list(member, params.mappingId, query.statePoint),
+  }),
+  route({
+    method: 'get',
+    path: '/api/mappings/:mappingId/coverage',
+    summary: 'Which terms of a mapping have data at which state points, and which data no longer fit',
+    access: { may: 'read', at: 'mapping' },
+    answer: { status: 200, body: mappingCoverageSchema },
+    handle: ({ services, member, params }) => services.coverages.of(member, params.mappingId),
+  }),
+  route({
+    method: 'get',
+    path: '/api/mappings/:mappingId/versions',
+    summary: 'The earlier versions of a mapping, the newest first',
+    access: { may: 'read', at: 'mapping' },
+    answer: { status: 200, body: mappingVersionListSchema },
+    handle: async ({ services, member, params }) => ({
+      versions: await services.mappingVersions.list(member, params.mappingId),
+    }),
+  }),
+  route({
+    method: 'post',
+    path: '/api/mappings/:mappingId/fit',
+    summary:
+      'What saving a document would do: whether it makes a new version, and which data would no longer fit',
+    access: { may: 'write', at: 'mapping' },
+    body: mappingFitRequestSchema,
+    answer: { status: 200, body: mappingFitSchema },
+    readsContent: true,
+    handle: ({ services, member, params, body }) =>
+      services.mappingVersions.preview(member, params.mappingId, body.document),
   }),
 ]

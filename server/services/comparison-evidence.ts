@@ -9,6 +9,7 @@ import { Potential } from '../entities/potential.entity'
 import type { StatePoint } from '../entities/state-point.entity'
 import { Term } from '../entities/term.entity'
 import { inputSha256 } from './histograms'
+import { type Fit, pairReason, readFit } from './mapping-fit'
 import { storedTermName } from './stored-term-name'
 import { termPairs } from './term-pairs'
 
@@ -17,9 +18,11 @@ export interface CoveredTerm {
   readonly term: Term
   readonly name: string
   readonly used: boolean
-  /** Its current data at the state point. */
+  /** Its current data at the state point, where they fit the mapping. */
   readonly distribution: Distribution | null
-  /** Other state points with data, in the order of their ids. */
+  /** Why the data that are there do not fit; null where they do. */
+  readonly unfit: string | null
+  /** Other state points with data that fit, in the order of their ids. */
   readonly elsewhere: readonly string[]
   /** What its counts are divided by, as somebody saved it for these very data. */
   readonly inefficiency: number | null
@@ -45,9 +48,10 @@ export async function readEvidence(
     where: { mappingId: mapping.id, current: true },
     order: { position: 'ASC' },
   })
-  const terms = await coveredTerms(manager, mapping, stored, point)
+  const fit = await readFit(manager, mapping)
+  const terms = await coveredTerms(manager, mapping, stored, point, fit)
   const used = terms.filter((each) => each.used)
-  const pairs = await measuredPairs(manager, used, point)
+  const pairs = await measuredPairs(manager, used, point, fit)
   const pairsWithoutData = termPairs(used.map(({ term }) => term)).length - pairs.length
   return { mapping, terms, pairs, pairsWithoutData: Math.max(0, pairsWithoutData) }
 }
@@ -57,6 +61,7 @@ async function coveredTerms(
   mapping: Mapping,
   terms: readonly Term[],
   point: StatePoint,
+  fit: Fit,
 ): Promise<CoveredTerm[]> {
   const termId = In(terms.map(({ id }) => id))
   const here = await manager.findBy(Distribution, {
@@ -66,13 +71,15 @@ async function coveredTerms(
   })
   const everywhere = await manager.find(Distribution, {
     where: { termId, supersededAt: IsNull() },
-    select: { id: true, termId: true, statePointId: true },
+    select: { id: true, termId: true, statePointId: true, mappingVersion: true },
     order: { statePointId: 'ASC' },
   })
   const potentials = await manager.findBy(Potential, { termId, statePointId: point.id })
   const used = new Set(usedTerms(mapping.document, terms))
   return terms.map((term): CoveredTerm => {
-    const distribution = here.find((each) => each.termId === term.id) ?? null
+    const measured = here.find((each) => each.termId === term.id) ?? null
+    const unfit = measured && fit.reason(term.id, measured.mappingVersion)
+    const distribution = unfit === null ? measured : null
     const input = distribution && inputSha256(distribution.contentSha256, point.temperature)
     const saved = potentials.find((each) => each.termId === term.id && each.inputSha256 === input)
     return {
@@ -80,8 +87,10 @@ async function coveredTerms(
       name: storedTermName(term, terms),
       used: used.has(term),
       distribution,
+      unfit,
       elsewhere: everywhere
         .filter((each) => each.termId === term.id && each.statePointId !== point.id)
+        .filter(({ mappingVersion }) => fit.reason(term.id, mappingVersion) === null)
         .map(({ statePointId }) => statePointId),
       inefficiency: saved?.settings.inefficiency ?? null,
     }
@@ -92,12 +101,17 @@ async function measuredPairs(
   manager: EntityManager,
   used: readonly CoveredTerm[],
   point: StatePoint,
+  fit: Fit,
 ): Promise<ComparedPair[]> {
   const ids = In(used.map(({ term }) => term.id))
-  const joints = await manager.find(JointDistribution, {
+  const measured = await manager.find(JointDistribution, {
     where: { firstTermId: ids, secondTermId: ids, statePointId: point.id, supersededAt: IsNull() },
-    select: { id: true, firstTermId: true, secondTermId: true, numbers: true },
+    select: { id: true, firstTermId: true, secondTermId: true, numbers: true, mappingVersion: true },
   })
+  const joints = measured.filter(
+    ({ firstTermId, secondTermId, mappingVersion }) =>
+      pairReason(fit, [firstTermId, secondTermId], mappingVersion) === null,
+  )
   const decisions = await manager.findBy(Decision, {
     jointDistributionId: In(joints.map(({ id }) => id)),
     supersededAt: IsNull(),

@@ -5,7 +5,6 @@ import type {
   ComparedMapping as ComparedMappingBody,
   ComparedTerm as ComparedTermBody,
   Comparison,
-  Coverage,
 } from '../../shared/contracts/comparison'
 import { type ComparedMapping, compareMappings, type MappingEvidence } from '../../shared/mapping'
 import { Mapping } from '../entities/mapping.entity'
@@ -13,6 +12,7 @@ import { Polymer } from '../entities/polymer.entity'
 import type { StatePoint } from '../entities/state-point.entity'
 import { notFound } from '../errors/http-error'
 import { type CoveredTerm, readEvidence, type StoredEvidence } from './comparison-evidence'
+import { coverageOf } from './coverage.service'
 import { histogramOf } from './histograms'
 import type { Member } from './member'
 import { findStatePoint } from './term-context'
@@ -140,15 +140,16 @@ function termBody(covered: CoveredTerm, multiplicity: number, findings: Findings
     problem = null,
   } = findings.get(covered.name) ?? {}
   const elsewhere = [...covered.elsewhere]
-  const coverage: Coverage =
-    covered.distribution !== null ? 'here' : elsewhere.length > 0 ? 'elsewhere' : 'missing'
+  const { unfit } = covered
+  const here = covered.distribution !== null || unfit !== null
   return {
     id,
     kind,
     name: covered.name,
     types,
     multiplicity,
-    coverage,
+    coverage: coverageOf(here, unfit, elsewhere.length > 0),
+    unfit,
     elsewhere,
     basins,
     deviation,

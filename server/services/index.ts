@@ -5,6 +5,7 @@ import { AccountService } from './account.service'
 import { AttemptService } from './attempt.service'
 import { ComparisonService } from './comparison.service'
 import { CoverageService } from './coverage.service'
+import { CoverageService } from './coverage.service'
 import { DistributionService } from './distribution.service'
 import { GroupService } from './group.service'
 import { HandOverReleaseService } from './hand-over-release.service'
@@ -19,6 +20,7 @@ import { JointTableService } from './joint-table.service'
 import { KeyService } from './key.service'
 import { MappingVersionService } from './mapping-version.service'
 import { MailService } from './mail.service'
+import { MappingVersionService } from './mapping-version.service'
 import { MappingService } from './mapping.service'
 import { MemberService } from './member.service'
 import { PairService } from './pair.service'
@@ -60,6 +62,7 @@ export function createServices(dataSource: DataSource, { demo, version, tray, li
     attempts: new AttemptService(dataSource),
     comparisons: new ComparisonService(dataSource),
     coverages: new CoverageService(dataSource),
+    coverages: new CoverageService(dataSource),
     distributions: new DistributionService(dataSource),
     groups,
     history: new HistoryService(dataSource),
@@ -74,6 +77,7 @@ export function createServices(dataSource: DataSource, { demo, version, tray, li
     mappingVersions: new MappingVersionService(dataSource),
     mails: new MailService(dataSource),
     members: new MemberService(dataSource),
+    mappingVersions: new MappingVersionService(dataSource),
     pairs: new PairService(dataSource),
     passwordResets: new PasswordResetService(dataSource, linkTo),
     polymers: new PolymerService(dataSource),

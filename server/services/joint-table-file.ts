@@ -16,6 +16,7 @@ import type { Term } from '../entities/term.entity'
 import { sha256 } from './hashes'
 import { jointHistogramOf } from './histograms'
 import { beadOrder, statePointText, type TableSource } from './table-file'
+import type { PlaceNumbers } from './table-names'
 
 /** The units a user asked for at download. */
 export type JointTableFileUnits = Required<JointTableQuery>
@@ -27,6 +28,7 @@ export interface JointTableSource extends Pick<
 > {
   /** In the order of the axes of the data. */
   readonly terms: readonly [Term, Term]
+  readonly placeNumbers?: PlaceNumbers
   readonly joint: JointDistribution
   readonly file: Pick<SourceFile, 'name' | 'sha256'>
 }
@@ -53,7 +55,7 @@ export function writeJointTableFile(source: JointTableSource, units: JointTableF
     invented: source.invented,
     polymer: `${polymer.name}, ${polymer.smiles}`,
     mapping: `${mapping.name}, revision ${mapping.revision}`,
-    terms: [termName(x.types), termName(y.types)],
+    terms: [termName(x.types, source.placeNumbers?.[0]), termName(y.types, source.placeNumbers?.[1])],
     beadOrders: [beadOrder(mapping, x), beadOrder(mapping, y)],
     statePoint: statePointText(statePoint),
     units: tableUnits,

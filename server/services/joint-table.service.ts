@@ -5,15 +5,17 @@ import { Group } from '../entities/group.entity'
 import { JointDistribution } from '../entities/joint-distribution.entity'
 import { Polymer } from '../entities/polymer.entity'
 import { SourceFile } from '../entities/source-file.entity'
-import type { Term } from '../entities/term.entity'
-import { notFound } from '../errors/http-error'
+import { Term } from '../entities/term.entity'
+import { HttpError, notFound } from '../errors/http-error'
 import {
   type JointTableFile,
   type JointTableFileUnits,
   type JointTableSource,
   writeJointTableFile,
 } from './joint-table-file'
+import { type Fit, pairReason, readFit, UNFIT_DATA } from './mapping-fit'
 import type { Download, Member } from './member'
+import { placeNumber } from './stored-term-name'
 import type { TableSource } from './table-file'
 import { jointTableFileName } from './table-names'
 import { findStatePoint, findTerm, mappingOf } from './term-context'
@@ -40,12 +42,17 @@ export class JointTableService {
     if (!joint) throw notFound('joint distribution')
     const terms = await termsOf(manager, joint)
     const mapping = await mappingOf(manager, terms[0])
+    const unfit = pairReason(await readFit(manager, mapping), idsOf(joint), joint.mappingVersion)
+    if (unfit !== null) {
+      throw new HttpError('CONFLICT', `There is no joint table for these terms: ${UNFIT_DATA} ${unfit}`)
+    }
     const { polymerId } = mapping
     const statePoint = await findStatePoint(manager, groupId, polymerId, joint.statePointId, 'statePoint')
     const polymer = await manager.findOneByOrFail(Polymer, { id: polymerId })
     const { demo } = await manager.findOneByOrFail(Group, { id: groupId })
     const file = await fileOf(manager, joint)
-    const source = { polymer, mapping, statePoint, invented: demo, terms, joint, file }
+    const placeNumbers = await placeNumbersOf(manager, terms)
+    const source = { polymer, mapping, statePoint, invented: demo, terms, placeNumbers, joint, file }
     return {
       fileName: jointTableName(source),
       bytes: Buffer.from(writeJointTableFile(source, units).text),
@@ -56,9 +63,10 @@ export class JointTableService {
 /** As in joint_B-E_B-E-H_400K.txt. */
 export function jointTableName({
   terms: [x, y],
+  placeNumbers,
   statePoint,
-}: Pick<JointTableSource, 'terms' | 'statePoint'>): string {
-  return jointTableFileName({ types: [x.types, y.types], temperature: statePoint.temperature })
+}: Pick<JointTableSource, 'terms' | 'placeNumbers' | 'statePoint'>): string {
+  return jointTableFileName({ types: [x.types, y.types], temperature: statePoint.temperature, placeNumbers })
 }
 
 /** The joint table of a pair that it was decided for, or the reason why its data give none. */
@@ -74,23 +82,25 @@ export async function jointOutcomes(
 ): Promise<JointOutcome[]> {
   const decided = await decidedPairs(manager, background)
   const sources = await Promise.all(
-    decided.map(async (joint) => ({
-      ...background,
-      joint,
-      terms: await termsOf(manager, joint),
-      file: await fileOf(manager, joint),
-    })),
+    decided.map(async (joint) => {
+      const terms = await termsOf(manager, joint)
+      const placeNumbers = await placeNumbersOf(manager, terms)
+      return { ...background, joint, terms, placeNumbers, file: await fileOf(manager, joint) }
+    }),
   )
+  const fit = await readFit(manager, background.mapping)
   return sources
     .filter(({ terms }) => terms.every(({ current }) => current))
     .sort((one, other) => placeOf(one, 0) - placeOf(other, 0) || placeOf(one, 1) - placeOf(other, 1))
-    .map((source) => outcomeOf(source, units))
+    .map((source) => outcomeOf(source, units, fit))
 }
 
 const placeOf = ({ terms }: JointTableSource, axis: 0 | 1): number => terms[axis].position
 
 /** One pair that the core refuses must not hold back the tables of all others. */
-function outcomeOf(source: JointTableSource, units: JointTableFileUnits): JointOutcome {
+function outcomeOf(source: JointTableSource, units: JointTableFileUnits, fit: Fit): JointOutcome {
+  const unfit = pairReason(fit, idsOf(source.joint), source.joint.mappingVersion)
+  if (unfit !== null) return { source, file: null, reason: `${UNFIT_DATA} ${unfit}` }
   try {
     return { source, file: writeJointTableFile(source, units), reason: null }
   } catch (error) {
@@ -124,4 +134,18 @@ async function termsOf(manager: EntityManager, joint: JointDistribution): Promis
 
 function fileOf(manager: EntityManager, { id }: JointDistribution): Promise<SourceFile> {
   return manager.findOneByOrFail(SourceFile, { jointDistributionId: id })
+}
+
+const idsOf = ({ firstTermId, secondTermId }: JointDistribution): string[] => [firstTermId, secondTermId]
+
+async function placeNumbersOf(
+  manager: EntityManager,
+  [x, y]: readonly [Term, Term],
+): Promise<NonNullable<JointTableSource['placeNumbers']>> {
+  const terms = await manager.find(Term, { where: { mappingId: x.mappingId }, order: { position: 'ASC' } })
+  const numberOf = ({ id }: Term): number | undefined => {
+    const own = terms.find((each) => each.id === id)
+    return own && placeNumber(own, terms)
+  }
+  return [numberOf(x), numberOf(y)]
 }

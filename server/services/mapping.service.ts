@@ -1,15 +1,18 @@
-import type { DataSource, EntityManager } from 'typeorm'
+import type { DataSource } from 'typeorm'
 import type { z } from 'zod'
 import type {
   Mapping as MappingBody,
   mappingCreateSchema,
   MappingUpdate,
 } from '../../shared/contracts/mapping'
+import { sameMakeUp } from '../../shared/mapping'
 import { Mapping } from '../entities/mapping.entity'
 import { Polymer } from '../entities/polymer.entity'
 import { HttpError, notFound } from '../errors/http-error'
+import { mappingBody, readMapping } from './mapping-body'
+import { hasData } from './mapping-data'
+import { freezeVersion } from './mapping-versions'
 import type { Member } from './member'
-import { personOf } from './people'
 import { syncTerms } from './sync-terms'
 
 const NO_BEADS = { version: 1, beads: [] } as const satisfies MappingBody['document']
@@ -58,7 +61,8 @@ export class MappingService {
   }
 
   /**
-   * Saves the mapping and its terms together.
+   * Saves the mapping and its terms together. When the make-up of its beads changes while data stand on it, what it was before is
+   * kept as a version and it becomes the next one.
    *
    * @throws {HttpError} CONFLICT with the current mapping when someone saved in between; NAME_TAKEN
    * @throws {InvalidInputError} when the document does not fit the repeat unit
@@ -82,9 +86,12 @@ export class MappingService {
         )
       }
       const { smiles } = await manager.findOneByOrFail(Polymer, { id: mapping.polymerId })
+      const makesVersion = !sameMakeUp(mapping.document, document) && (await hasData(manager, mappingId))
+      if (makesVersion) await freezeVersion(manager, mapping)
       await syncTerms(manager, { mapping, smiles, before: mapping.document, after: document })
-      const changes = { name, document, revision: revision + 1, savedAt: new Date(), savedById: userId }
-      await manager.update(Mapping, where, changes)
+      const version = mapping.version + (makesVersion ? 1 : 0)
+      const saved = { revision: revision + 1, version, savedAt: new Date(), savedById: userId }
+      await manager.update(Mapping, where, { name, document, ...saved })
       return readMapping(manager, groupId, mappingId)
     })
   }
@@ -93,33 +100,5 @@ export class MappingService {
   async remove({ groupId }: Member, mappingId: string): Promise<void> {
     const { affected } = await this.dataSource.manager.delete(Mapping, { id: mappingId, groupId })
     if (affected !== 1) throw notFound('mapping')
-  }
-}
-
-async function readMapping(manager: EntityManager, groupId: string, id: string): Promise<MappingBody> {
-  const mapping = await manager.findOne(Mapping, { where: { id, groupId }, relations: { savedBy: true } })
-  if (!mapping) throw notFound('mapping')
-  return mappingBody(manager, mapping)
-}
-
-async function mappingBody(manager: EntityManager, mapping: Mapping): Promise<MappingBody> {
-  const { id, polymerId, name, document, revision, version } = mapping
-  const [counts]: { terms: number; termsWithData: number }[] = await manager.query(
-    `select count(*)::int as "terms",
-            (count(*) filter (where exists (select 1 from "distribution" d
-               where d."term_id" = t."id" and d."superseded_at" is null)))::int as "termsWithData"
-       from "term" t where t."mapping_id" = $1 and t."current"`,
-    [id],
-  )
-  return {
-    id,
-    polymerId,
-    name,
-    document,
-    revision,
-    version,
-    savedAt: mapping.savedAt.toISOString(),
-    savedBy: personOf(mapping.savedBy),
-    counts: { beads: document.beads.length, ...counts },
   }
 }

@@ -1,12 +1,14 @@
 import { type DataSource, In, IsNull } from 'typeorm'
 import type { Pair as PairBody, PairList } from '../../shared/contracts/distribution'
-import { termName } from '../../shared/mapping'
+import { usedTerms } from '../../shared/mapping'
 import { Decision } from '../entities/decision.entity'
 import { JointDistribution } from '../entities/joint-distribution.entity'
 import { Mapping } from '../entities/mapping.entity'
 import { Term } from '../entities/term.entity'
 import { notFound } from '../errors/http-error'
+import { pairReason, readFit } from './mapping-fit'
 import type { Member } from './member'
+import { storedTermName } from './stored-term-name'
 import { findStatePoint } from './term-context'
 import { termPairs } from './term-pairs'
 
@@ -18,7 +20,7 @@ export class PairService {
   constructor(private readonly dataSource: DataSource) {}
 
   /**
-   * The pairs whose two terms share a bead, in the order of `termPairs`: those that have data, and of the others as many as
+   * The pairs of terms in use that share a bead, in the order of `termPairs`: those that have data, and of the others as many as
    * make up 500.
    */
   async list({ groupId }: Member, mappingId: string, statePointId: string): Promise<PairList> {
@@ -30,15 +32,16 @@ export class PairService {
       where: { mappingId, current: true },
       order: { position: 'ASC' },
     })
+    const fit = await readFit(manager, mapping)
     const joints = await manager.find(JointDistribution, {
       where: { mappingId, statePointId, supersededAt: IsNull() },
-      select: { id: true, firstTermId: true, secondTermId: true, numbers: true },
+      select: { id: true, firstTermId: true, secondTermId: true, numbers: true, mappingVersion: true },
     })
     const decisions = await manager.findBy(Decision, {
       jointDistributionId: In(joints.map(({ id }) => id)),
       supersededAt: IsNull(),
     })
-    const all = termPairs(terms).map(({ first, second }): PairBody => {
+    const all = termPairs(usedTerms(mapping.document, terms)).map(({ first, second }): PairBody => {
       const joint = joints.find(({ firstTermId, secondTermId }) =>
         [firstTermId, secondTermId].every((id) => id === first.id || id === second.id),
       )
@@ -46,10 +49,11 @@ export class PairService {
       return {
         firstTermId: joint?.firstTermId ?? first.id,
         secondTermId: joint?.secondTermId ?? second.id,
-        name: `${termName(first.types)} · ${termName(second.types)}`,
+        name: `${storedTermName(first, terms)} · ${storedTermName(second, terms)}`,
         jointDistributionId: joint?.id ?? null,
         numbers: joint?.numbers ?? null,
         decision: decision?.choice ?? null,
+        unfit: joint ? pairReason(fit, [first.id, second.id], joint.mappingVersion) : null,
       }
     })
     return listed(all)

@@ -1,17 +1,7 @@
 import { In, type EntityManager } from 'typeorm'
-import { parseRepeatUnit } from '../../shared/chemistry'
-import { type DerivedTerm, deriveTerms, type MappingDocument } from '../../shared/mapping'
-import type { Mapping } from '../entities/mapping.entity'
+import type { DerivedTerm } from '../../shared/mapping'
 import { Term } from '../entities/term.entity'
-import { matchTerms } from './match-terms'
-
-/** The mapping whose terms are brought up to date, and the two documents between which it changes. */
-export interface TermSync {
-  readonly mapping: Pick<Mapping, 'id' | 'groupId'>
-  readonly smiles: string
-  readonly before: MappingDocument
-  readonly after: MappingDocument
-}
+import { planTerms, type TermSync } from './plan-terms'
 
 /**
  * Derives the terms of a mapping anew and carries the stored ones over, so that data stay with the term they belong to.
@@ -21,10 +11,8 @@ export interface TermSync {
  * @throws {InvalidInputError} when the document does not fit the repeat unit
  */
 export async function syncTerms(manager: EntityManager, sync: TermSync): Promise<void> {
-  const { mapping, before, after } = sync
-  const derived = deriveTerms(await parseRepeatUnit(sync.smiles), after)
-  const stored = await manager.findBy(Term, { mappingId: mapping.id })
-  const { kept, added, vanished } = matchTerms(stored, derived, before, after)
+  const { mapping } = sync
+  const { kept, added, vanished, derived } = await planTerms(manager, sync)
   const position = new Map(derived.map((term, index) => [term, index]))
 
   if (vanished.length > 0) {

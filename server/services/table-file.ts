@@ -26,6 +26,8 @@ export interface TableSource {
   readonly mapping: Mapping
   readonly statePoint: StatePoint
   readonly term: Term
+  /** Which term of its sequence it is, where the sequence is split by its places. */
+  readonly placeNumber?: number
   readonly input: InversionInput
   readonly settings: InversionSettings
   readonly savedAt: Date
@@ -52,7 +54,7 @@ export function writeTableFile(source: TableSource, units: TableFileUnits): Tabl
     invented: source.invented,
     polymer: `${polymer.name}, ${polymer.smiles}`,
     mapping: `${mapping.name}, revision ${mapping.revision}`,
-    term: termName(term.types),
+    term: termName(term.types, source.placeNumber),
     kind: term.kind,
     beadOrder: beadOrder(mapping, term),
     temperature: statePoint.temperature,

@@ -7,23 +7,35 @@ export interface NamedTable {
   readonly types: readonly string[]
   /** K */
   readonly temperature: number
+  /** Which term of its sequence it is, where the sequence is split by its places. */
+  readonly placeNumber?: number
 }
 
-/** As in bond_B-E_400K.txt. Bead types are letters, digits, _ and + only, so every system can write the name. */
-export function tableFileName({ kind, types, temperature }: NamedTable): string {
-  return `${kind}_${types.join('-')}_${formatNumber(temperature)}K.txt`
+/** As in bond_B-E_400K.txt, or angle_B-B-E_place1_400K.txt where the sequence is split by its places. Bead types are letters, digits, _ and + only, so every system can write the name. */
+export function tableFileName({ kind, types, temperature, placeNumber }: NamedTable): string {
+  return `${kind}_${typesPart(types, placeNumber)}_${formatNumber(temperature)}K.txt`
 }
+
+function typesPart(types: readonly string[], placeNumber: number | undefined): string {
+  return types.join('-') + (placeNumber === undefined ? '' : `_place${placeNumber}`)
+}
+
+/** Which term of its sequence each of two is; undefined for one whose places are pooled. */
+export type PlaceNumbers = readonly [number | undefined, number | undefined]
 
 /** What the name of a joint table file says: the bead types of both terms. */
 export interface NamedJointTable {
   readonly types: readonly [readonly string[], readonly string[]]
   /** K */
   readonly temperature: number
+  /** As in `NamedTable`, of both terms. */
+  readonly placeNumbers?: PlaceNumbers
 }
 
 /** As in joint_B-E_B-E-H_400K.txt. */
-export function jointTableFileName({ types, temperature }: NamedJointTable): string {
-  return `joint_${types.map((each) => each.join('-')).join('_')}_${formatNumber(temperature)}K.txt`
+export function jointTableFileName({ types, temperature, placeNumbers }: NamedJointTable): string {
+  const parts = types.map((each, axis) => typesPart(each, placeNumbers?.[axis]))
+  return `joint_${parts.join('_')}_${formatNumber(temperature)}K.txt`
 }
 
 /**

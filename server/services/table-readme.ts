@@ -1,4 +1,4 @@
-import { type MappingDocument, termName } from '../../shared/mapping'
+import { choiceOf, type MappingDocument } from '../../shared/mapping'
 import { formatNumber } from '../../shared/tables'
 import { unitWord } from '../../shared/units'
 import type { Term } from '../entities/term.entity'
@@ -7,6 +7,8 @@ import { statePointText, type TableFileUnits, type TableSource } from './table-f
 /** What the README of an archive tells. */
 export interface ReadmeInput {
   readonly source: Pick<TableSource, 'polymer' | 'mapping' | 'statePoint' | 'invented'>
+  /** The name of a term among those of the mapping. */
+  readonly nameOf: (term: Term) => string
   readonly units: TableFileUnits
   readonly files: readonly { readonly name: string; readonly term: Term; readonly warnings: number }[]
   /** Tables of two terms together. */
@@ -25,7 +27,7 @@ export interface ReadmeInput {
 
 /** The text that lies beside the tables of an archive and explains them to whoever did not make them. */
 export function writeReadme(input: ReadmeInput): string {
-  const { source, units, files, joint, missing } = input
+  const { source, nameOf, units, files, joint, missing } = input
   const { polymer, mapping, statePoint } = source
   const rest = statePointText(statePoint)
   const [length, angle, energy] = [unitWord(units.length), unitWord(units.angle), unitWord(units.energy)]
@@ -39,33 +41,40 @@ export function writeReadme(input: ReadmeInput): string {
     '',
     'Files',
     ...files.map(
-      ({ name, term, warnings }) =>
-        `  ${name}\n    ${term.kind} ${termName(term.types)}${warningCount(warnings)}`,
+      ({ name, term, warnings }) => `  ${name}\n    ${term.kind} ${nameOf(term)}${warningCount(warnings)}`,
     ),
     ...joint.map(
       ({ name, terms: [x, y], warnings }) =>
-        `  ${name}\n    joint potential of ${x.kind} ${termName(x.types)} (x) with ${y.kind} ${termName(y.types)} (y); it takes the place of both${warningCount(warnings)}`,
+        `  ${name}\n    joint potential of ${x.kind} ${nameOf(x)} (x) with ${y.kind} ${nameOf(y)} (y); it takes the place of both${warningCount(warnings)}`,
     ),
     '',
     ...(missing.length > 0
       ? [
           'Terms of the mapping without a table',
-          ...missing.map(({ term, reason }) => `  ${term.kind} ${termName(term.types)}: ${reason}`),
+          ...missing.map(({ term, reason }) => `  ${term.kind} ${nameOf(term)}: ${reason}`),
           '',
         ]
       : [`Every term ${input.leftOut.length > 0 ? 'in use' : 'of the mapping'} has a table.`, '']),
     ...(input.leftOut.length > 0
       ? [
           'Terms left out of the set, since others describe the same motion',
-          ...input.leftOut.map(({ term, reason }) => `  ${term.kind} ${termName(term.types)}: ${reason}`),
+          ...input.leftOut.map(({ term, reason }) => `  ${term.kind} ${nameOf(term)}: ${reason}`),
           '',
         ]
       : []),
     ...input.jointMissing.flatMap(({ terms: [x, y], reason }) => [
-      `A joint potential was decided for ${x.kind} ${termName(x.types)} with ${y.kind} ${termName(y.types)}, but there is no table:`,
+      `A joint potential was decided for ${x.kind} ${nameOf(x)} with ${y.kind} ${nameOf(y)}, but there is no table:`,
       `  ${reason}`,
       '',
     ]),
+    ...(files.some(({ term }) => term.placeKey !== '')
+      ? [
+          'Terms with a number',
+          '  The beads of such a term follow one another at several places of the repeat unit whose surroundings differ: (1), (2) and so',
+          '  on are one place each, place1, place2 in the names of files. The bead order in each file says which place it is.',
+          '',
+        ]
+      : []),
     'Columns',
     '  The file of a term has three columns, separated by blanks: coordinate, energy, force. Lines that start with # are comments.',
     ...(joint.length > 0
@@ -97,11 +106,8 @@ export function writeReadme(input: ReadmeInput): string {
 }
 
 /** Why the mapping leaves a term out, in the words of who did. */
-export function leaveOutReason({ termChoices }: MappingDocument, { types, placeKey }: Term): string {
-  const choice = termChoices?.find(
-    (each) => each.placeKey === placeKey && each.types.join('\n') === types.join('\n'),
-  )
-  return choice?.reason || 'no reason given'
+export function leaveOutReason(document: MappingDocument, term: Pick<Term, 'types' | 'placeKey'>): string {
+  return choiceOf(document, term)?.reason || 'no reason given'
 }
 
 function warningCount(warnings: number): string {

@@ -1,5 +1,5 @@
 import { type Zippable, zipSync } from 'fflate'
-import type { DataSource } from 'typeorm'
+import type { DataSource, EntityManager } from 'typeorm'
 import { inversionSettingsSchema } from '../../shared/contracts/potential'
 import type { InversionSettings } from '../../shared/inversion'
 import { usedTerms } from '../../shared/mapping'
@@ -13,7 +13,9 @@ import { Term } from '../entities/term.entity'
 import { HttpError, notFound } from '../errors/http-error'
 import { findInversionInput, type InversionInput } from './inversion-input'
 import { type JointOutcome, jointOutcomes, jointTableName } from './joint-table.service'
+import { type Fit, readFit, UNFIT_DATA } from './mapping-fit'
 import type { Download, Member } from './member'
+import { placeNumber, storedTermName } from './stored-term-name'
 import { type TableFileUnits, type TableSource, writeTableFile } from './table-file'
 import { fileNamePart, namesInOneFolder, tableFileName } from './table-names'
 import { leaveOutReason, writeReadme } from './table-readme'
@@ -52,15 +54,24 @@ export class TableService {
   ): Promise<Download> {
     const term = await findTerm(this.dataSource.manager, groupId, termId)
     const background = await this.background(groupId, term.mappingId, statePointId)
-    const outcome = await this.outcome(term, background.statePoint)
+    const { manager } = this.dataSource
+    const outcome = await this.outcome(
+      term,
+      background.statePoint,
+      await readFit(manager, background.mapping),
+    )
     if (outcome.reason !== null) {
       throw new HttpError(
-        outcome.reason === STALE ? 'CONFLICT' : 'NOT_FOUND',
-        `There is no table for this term: ${outcome.reason}.`,
+        [NO_DATA, NOT_INVERTED].includes(outcome.reason) ? 'NOT_FOUND' : 'CONFLICT',
+        `There is no table for this term: ${outcome.reason.replace(/\.?$/, '.')}`,
       )
     }
-    const { text } = writeTableFile({ ...background, ...outcome, term }, units)
-    const fileName = tableFileName({ ...term, temperature: background.statePoint.temperature })
+    const siblings = await currentTerms(manager, term.mappingId)
+    const own = siblings.find(({ id }) => id === termId)
+    const number = own && placeNumber(own, siblings)
+    const { text } = writeTableFile({ ...background, ...outcome, term, placeNumber: number }, units)
+    const { temperature } = background.statePoint
+    const fileName = tableFileName({ ...term, temperature, placeNumber: number })
     return { fileName, bytes: Buffer.from(text) }
   }
 
@@ -76,24 +87,24 @@ export class TableService {
     units: TableFileUnits,
   ): Promise<Download> {
     const background = await this.background(groupId, mappingId, statePointId)
-    const terms = await this.dataSource.manager.find(Term, {
-      where: { mappingId, current: true },
-      order: { position: 'ASC' },
-    })
+    const { manager } = this.dataSource
+    const terms = await currentTerms(manager, mappingId)
+    const fit = await readFit(manager, background.mapping)
     const sources: TableSource[] = []
     const missing: { term: Term; reason: string }[] = []
     const used = usedTerms(background.mapping.document, terms)
     for (const term of used) {
-      const outcome = await this.outcome(term, background.statePoint)
-      if (outcome.reason === null) sources.push({ ...background, ...outcome, term })
-      else missing.push({ term, reason: outcome.reason })
+      const outcome = await this.outcome(term, background.statePoint, fit)
+      if (outcome.reason === null) {
+        sources.push({ ...background, ...outcome, term, placeNumber: placeNumber(term, terms) })
+      } else missing.push({ term, reason: outcome.reason })
     }
-    const joint = await jointOutcomes(this.dataSource.manager, background, units)
+    const joint = await jointOutcomes(manager, background, units)
     if (sources.length === 0 && joint.every(({ file }) => file === null)) {
       throw new HttpError('NOT_FOUND', 'No term has a table yet: save a potential on the bench first.')
     }
     const leftOut = terms.filter((term) => !used.includes(term))
-    return pack({ background, sources, joint, missing, leftOut }, units)
+    return pack({ background, terms, sources, joint, missing, leftOut }, units)
   }
 
   private async background(groupId: string, mappingId: string, statePointId: string): Promise<Background> {
@@ -107,10 +118,12 @@ export class TableService {
     return { polymer, mapping, statePoint, invented: demo }
   }
 
-  private async outcome(term: Term, statePoint: StatePoint): Promise<Outcome> {
+  private async outcome(term: Term, statePoint: StatePoint, fit: Fit): Promise<Outcome> {
     const { manager } = this.dataSource
     const input = await findInversionInput(manager, term, statePoint)
     if (!input) return { reason: NO_DATA }
+    const unfit = fit.reason(term.id, input.distribution.mappingVersion)
+    if (unfit !== null) return { reason: `${UNFIT_DATA} ${unfit}` }
     const potential = await manager.findOneBy(Potential, { termId: term.id, statePointId: statePoint.id })
     if (!potential) return { reason: NOT_INVERTED }
     if (potential.inputSha256 !== input.sha256) return { reason: STALE }
@@ -123,6 +136,8 @@ export class TableService {
 /** What goes into an archive. */
 interface Contents {
   readonly background: Background
+  /** All current terms of the mapping, in their order. */
+  readonly terms: readonly Term[]
   readonly sources: readonly TableSource[]
   /** Pairs that a joint potential was decided for. */
   readonly joint: readonly JointOutcome[]
@@ -131,23 +146,28 @@ interface Contents {
   readonly leftOut: readonly Term[]
 }
 
-function pack({ background, sources, joint, missing, leftOut }: Contents, units: TableFileUnits): Download {
+function pack(contents: Contents, units: TableFileUnits): Download {
+  const { background, terms, sources, joint, missing, leftOut } = contents
   const { polymer, mapping, statePoint } = background
   const { temperature } = statePoint
   const tables = sources.map((source) => {
     const { text, inversion } = writeTableFile(source, units)
-    return { text, time: source.savedAt, term: source.term, warnings: inversion.warnings.length }
+    const { term, placeNumber: number, savedAt } = source
+    return { text, time: savedAt, term, placeNumber: number, warnings: inversion.warnings.length }
   })
   const jointTables = joint.flatMap(({ source, file }) =>
-    file === null ? [] : [{ ...file, time: source.joint.uploadedAt, terms: source.terms }],
+    file === null ? [] : [{ ...file, time: source.joint.uploadedAt, source, terms: source.terms }],
   )
   const all = [...tables, ...jointTables]
   const names = namesInOneFolder([
-    ...tables.map(({ term }) => tableFileName({ ...term, temperature })),
-    ...jointTables.map(({ terms }) => jointTableName({ terms, statePoint })),
+    ...tables.map(({ term, placeNumber: number }) =>
+      tableFileName({ ...term, temperature, placeNumber: number }),
+    ),
+    ...jointTables.map(({ source }) => jointTableName(source)),
   ])
   const readme = writeReadme({
     source: background,
+    nameOf: (term) => nameAmong(term, terms),
     units,
     files: tables.map((table, index) => ({ ...table, name: names[index] })),
     joint: jointTables.map((table, index) => ({ ...table, name: names[tables.length + index] })),
@@ -167,6 +187,15 @@ function pack({ background, sources, joint, missing, leftOut }: Contents, units:
     fileName: `${parts.join('_')}_tables.zip`,
     bytes: zipSync(archive),
   }
+}
+
+/** Joint terms are read by themselves: among the others they are found by their ids. */
+function nameAmong(term: Term, terms: readonly Term[]): string {
+  return storedTermName(terms.find(({ id }) => id === term.id) ?? term, terms)
+}
+
+function currentTerms(manager: EntityManager, mappingId: string): Promise<Term[]> {
+  return manager.find(Term, { where: { mappingId, current: true }, order: { position: 'ASC' } })
 }
 
 /** Archives hold local time without a zone: this one reads as UTC wherever the server runs. */

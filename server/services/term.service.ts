@@ -6,6 +6,7 @@ import { Potential } from '../entities/potential.entity'
 import { Term } from '../entities/term.entity'
 import { notFound } from '../errors/http-error'
 import { inputSha256 } from './histograms'
+import { readFit } from './mapping-fit'
 import type { Member } from './member'
 import { storedTermName } from './stored-term-name'
 import { findStatePoint } from './term-context'
@@ -17,6 +18,8 @@ interface TermFacts {
   readonly potential: Potential | undefined
   /** One is saved whose input has changed since. */
   readonly stale: boolean
+  /** Why the data do not fit the mapping. */
+  readonly unfit: string | null
 }
 
 /** Terms of a mapping with how far each is. */
@@ -57,16 +60,18 @@ export class TermService {
     const where = { termId: In(terms.map(({ id }) => id)), statePointId }
     const distributions = await manager.find(Distribution, {
       where: { ...where, supersededAt: IsNull() },
-      select: { id: true, termId: true, silhouette: true, contentSha256: true },
+      select: { id: true, termId: true, silhouette: true, contentSha256: true, mappingVersion: true },
     })
     const potentials = await manager.findBy(Potential, where)
+    const fit = await readFit(manager, mapping)
     return new Map(
       distributions.map((distribution) => {
-        const { termId, contentSha256 } = distribution
+        const { termId, contentSha256, mappingVersion } = distribution
         const input = inputSha256(contentSha256, point.temperature)
         const saved = potentials.find((each) => each.termId === termId)
         const stale = saved !== undefined && saved.inputSha256 !== input
-        return [termId, { distribution, potential: stale ? undefined : saved, stale }]
+        const unfit = fit.reason(termId, mappingVersion)
+        return [termId, { distribution, potential: stale ? undefined : saved, stale, unfit }]
       }),
     )
   }
@@ -74,7 +79,8 @@ export class TermService {
 
 function termBody(term: Term, name: string, facts: TermFacts | undefined): TermBody {
   const { id, mappingId, kind, types, places, placeKey, current } = term
-  const { distribution, potential } = facts ?? {}
+  const { distribution, potential, unfit = null } = facts ?? {}
+  const standing = potential ? 'inverted' : distribution ? 'data' : 'no data'
   return {
     id,
     mappingId,
@@ -84,11 +90,13 @@ function termBody(term: Term, name: string, facts: TermFacts | undefined): TermB
     places,
     placeKey,
     current,
-    standing: potential ? 'inverted' : distribution ? 'data' : 'no data',
+    // A term that the mapping no longer has keeps its standing: nothing is asked of it.
+    standing: unfit !== null && current ? 'no data' : standing,
     silhouette: distribution
       ? { measured: distribution.silhouette, derived: potential?.silhouette ?? null }
       : null,
     distributionId: distribution?.id ?? null,
+    unfit: current ? unfit : null,
     stale: facts?.stale ?? false,
   }
 }

@@ -20,8 +20,8 @@ export const comparisonQuerySchema = z.object({
   statePoint: idSchema,
 })
 
-/** Where a term has data: at the state point, only at other ones, or nowhere. */
-export const coverageSchema = z.enum(['here', 'elsewhere', 'missing']).meta({ id: 'Coverage' })
+/** Where a term has data: at the state point, only at other ones, or nowhere; or data here that no longer fit the mapping. */
+export const coverageSchema = z.enum(['here', 'elsewhere', 'missing', 'unfit']).meta({ id: 'Coverage' })
 export type Coverage = z.infer<typeof coverageSchema>
 
 /** A term in use. Findings are null where nothing is known; internal units (nm, rad). */
@@ -34,6 +34,8 @@ export const comparedTermSchema = z
     /** How often it stands in each repeat unit. */
     multiplicity: z.number().int(),
     coverage: coverageSchema,
+    /** Why the data here do not fit the mapping; null where they do. */
+    unfit: z.string().nullable(),
     /** The other state points where it has data. */
     elsewhere: z.array(idSchema),
     /** Basins deeper than `depth` in kT. */

@@ -221,12 +221,14 @@ export const pairSchema = z
     jointDistributionId: idSchema.nullable(),
     numbers: verdictNumbersSchema.nullable(),
     decision: decisionChoiceSchema.nullable(),
+    /** Why the data do not fit the mapping any more; null where they do or there are none. */
+    unfit: z.string().nullable().optional(),
   })
   .meta({ id: 'Pair' })
 export type Pair = z.infer<typeof pairSchema>
 
 /**
- * GET /api/mappings/:mappingId/pairs?statePoint=: pairs of terms that share a bead, bonds with angles first; `leftOut` counts
+ * GET /api/mappings/:mappingId/pairs?statePoint=: pairs of terms in use that share a bead, bonds with angles first; `leftOut` counts
  * pairs without data that a long list was cut by.
  */
 export const pairListSchema = z

@@ -122,10 +122,21 @@ export const mappingSchema = z
     revision: revisionSchema,
     /** A frozen state of the beads, from 1: the next one is made when they change while data stand on the mapping. */
     version: versionSchema,
+    /** Distributions were brought in for it, so that a change of its beads makes a new version. */
+    hasData: z.boolean(),
     savedAt: timestampSchema,
     savedBy: personSchema.nullable(),
-    /** Terms of this mapping, and how many of them have data at any state point. */
-    counts: z.object({ beads: z.number().int(), terms: z.number().int(), termsWithData: z.number().int() }),
+    /**
+     * Terms in use, how many of them have data that fit at any state point, how many only such as no longer fit; and terms left
+     * out of the set.
+     */
+    counts: z.object({
+      beads: z.number().int(),
+      terms: z.number().int(),
+      leftOut: z.number().int(),
+      termsWithData: z.number().int(),
+      termsUnfit: z.number().int(),
+    }),
   })
   .meta({ id: 'Mapping' })
 export type Mapping = z.infer<typeof mappingSchema>
@@ -156,7 +167,10 @@ export const termSchema = z
     current: z.boolean(),
     standing: standingSchema,
     silhouette: silhouetteSchema.nullable(),
+    /** Also of data that no longer fit. */
     distributionId: idSchema.nullable(),
+    /** Why its data here no longer fit the mapping; the standing is then that of a term without data. */
+    unfit: z.string().nullable().optional(),
     /** An inversion is saved, but its input has changed since: the standing is that of the data. */
     stale: z.boolean().optional(),
   })

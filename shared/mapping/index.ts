@@ -30,6 +30,8 @@ export {
   type TermChoice,
   type TermPooling,
 } from './mapping-document'
+export { sameMakeUp, termMakeUp, type PlacedTerm } from './make-up'
+export { makeUpChange } from './make-up-change'
 export { mappingNumbers, type MappingNumbers } from './mapping-numbers'
 export type { MappingProblem, MappingProblemCode } from './mapping-problem'
 export { placeFlags, type PlaceFlag } from './place-flags'
@@ -49,4 +51,4 @@ export { multiplicity, placeKey, termName, type BeadPlace, type DerivedTerm, typ
 export { hasTooManyPlaces, MAX_TERM_PLACES } from './term-limit'
 export { rankTerms, type RankedTerm, type TermEvidence, WELL_SAMPLED_SHARE } from './term-preference'
 export { termUse, type TermUse } from './term-use'
-export { usedTerms } from './used-terms'
+export { choiceOf, usedTerms } from './used-terms'

@@ -184,7 +184,9 @@ describe('the terms of a mapping', () => {
     const settings = { statePointId: job.statePointId, settings: BOND_SETTINGS }
     const added = await client.upload(`/api/terms/${ringBond}/distributions`, settings, bondFile())
     expect(added.status).toBe(201)
-    expect((await save(oneBead, 1)).body).toMatchObject({ counts: { beads: 1, terms: 3, termsWithData: 1 } })
+    expect((await save(oneBead, 1)).body).toMatchObject({
+      counts: { beads: 1, terms: 3, termsWithData: 0, termsUnfit: 1 },
+    })
     const without = await terms(job.statePointId)
     expect(without.map(({ name, current }) => [name, current])).toEqual([
       ['A–A', true],

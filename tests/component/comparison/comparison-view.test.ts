@@ -18,6 +18,7 @@ const term = (name: string, change: Partial<ComparedTerm> = {}): ComparedTerm =>
     types,
     multiplicity: 1,
     coverage: 'here',
+    unfit: null,
     elsewhere: [],
     basins: { count: 1, depth: 0.5 },
     deviation: 0.0123,

@@ -21,9 +21,10 @@ const mappingOf = (document: MappingDocument): Mapping => ({
   document,
   revision: 1,
   version: 1,
+  hasData: false,
   savedAt: '2026-01-05T10:00:00.000Z',
   savedBy: null,
-  counts: { beads: 3, terms: 10, termsWithData: 0 },
+  counts: { beads: 3, terms: 10, leftOut: 0, termsWithData: 0, termsUnfit: 0 },
 })
 
 let sent: SentRequest[]
@@ -51,9 +52,14 @@ const target = (name: RegExp): SVGElement => {
   if (!found) throw new Error(`No atom is called ${String(name)}`)
   return found
 }
+/** What follows from a stroke takes some frames. */
+const frames = async (): Promise<void> => {
+  await flushPromises()
+  await vi.advanceTimersByTimeAsync(100)
+}
 const pointer = async (on: Element, type: string, init: PointerEventInit = {}): Promise<void> => {
   on.dispatchEvent(new PointerEvent(type, { button: 0, bubbles: true, cancelable: true, ...init }))
-  await flushPromises()
+  await frames()
 }
 const press = async (name: RegExp, init: PointerEventInit = {}): Promise<void> => {
   // Its name changes with what holds it.
@@ -63,12 +69,12 @@ const press = async (name: RegExp, init: PointerEventInit = {}): Promise<void> =
 }
 const key = async (on: Element, name: string, shiftKey = false): Promise<void> => {
   on.dispatchEvent(new KeyboardEvent('keydown', { key: name, shiftKey, bubbles: true, cancelable: true }))
-  await flushPromises()
+  await frames()
 }
 const drawing = (): SVGSVGElement => document.querySelector('.canvas > svg') as SVGSVGElement
 
 beforeEach(() => {
-  vi.useFakeTimers({ toFake: ['setTimeout', 'clearTimeout'] })
+  vi.useFakeTimers({ toFake: ['setTimeout', 'clearTimeout', 'requestAnimationFrame', 'cancelAnimationFrame'] })
 })
 afterEach(() => {
   vi.useRealTimers()

@@ -52,7 +52,9 @@ const mapping = {
   },
   savedAt: '2026-11-30T10:00:00.000Z',
   savedBy: null,
-  counts: { beads: 1, terms: 10, termsWithData: 9 },
+  version: 1,
+  hasData: true,
+  counts: { beads: 1, terms: 10, leftOut: 0, termsWithData: 9, termsUnfit: 0 },
 }
 const answers = {
   'GET /api/polymers/p': { body: polymer },

@@ -21,6 +21,9 @@ export const scienceSamples: RouteSamples = {
   }),
   'get /api/mappings/:mappingId': () => ({}),
   'put /api/mappings/:mappingId': () => ({ body: { revision: 1, name: 'Saved', document: DOCUMENT } }),
+  'get /api/mappings/:mappingId/coverage': () => ({}),
+  'get /api/mappings/:mappingId/versions': () => ({}),
+  'post /api/mappings/:mappingId/fit': () => ({ body: { document: DOCUMENT } }),
   'delete /api/mappings/:mappingId': () => ({}),
   'get /api/mappings/:mappingId/terms': ({ job: { statePointId } }) => ({
     query: `statePoint=${statePointId}`,

@@ -18,9 +18,10 @@ const stored = (document: MappingDocument, revision: number): Mapping => ({
   document,
   revision,
   version: 1,
+  hasData: false,
   savedAt: '2026-01-02T03:04:05.000Z',
   savedBy: { id, name: 'Bo' },
-  counts: { beads: document.beads.length, terms: 0, termsWithData: 0 },
+  counts: { beads: document.beads.length, terms: 0, leftOut: 0, termsWithData: 0, termsUnfit: 0 },
 })
 
 const save = vi.spyOn(mappings, 'saveMapping')

@@ -7,6 +7,17 @@ const TAKEN: Readonly<Record<string, { readonly message: string; readonly field:
   UQ_user_email: { message: 'Someone has an account with this e-mail address already.', field: 'email' },
 }
 
+const HANDED_OVER =
+  'A hand-over stands on this. Delete the draft first; what was released stays for the record, with all it was made from.'
+
+/** Records that stay because others stand on them, by the constraint that holds them. */
+const STAYS: Readonly<Record<string, string>> = {
+  FK_hand_over_polymer: HANDED_OVER,
+  FK_hand_over_mapping: HANDED_OVER,
+  FK_hand_over_state_point: HANDED_OVER,
+  hand_over_immutable: 'A released hand-over never changes.',
+}
+
 const UNREACHABLE = new Set(['ECONNREFUSED', 'ECONNRESET', 'ENOTFOUND', 'ETIMEDOUT', 'EPIPE'])
 
 const SAVED_MEANWHILE = 'Someone else changed this at the same moment. Load it again and repeat your change.'
@@ -23,6 +34,8 @@ export function translatePostgresError(error: unknown): HttpError | null {
     if (taken) return new HttpError('NAME_TAKEN', taken.message, { field: taken.field })
     return new HttpError('CONFLICT', SAVED_MEANWHILE)
   }
+  const kept = STAYS[constraint ?? '']
+  if (kept) return new HttpError('IN_USE', kept)
   // A record that this one points to went away while it was being written.
   if (code === '23503') return new HttpError('CONFLICT', SAVED_MEANWHILE)
   if (code === '40001' || code === '40P01' || code === '55P03')

@@ -7,6 +7,9 @@ import { groupRoutes } from './group.routes'
 import { handOverReleaseRoutes } from './hand-over-release.routes'
 import { handOverReviewRoutes } from './hand-over-review.routes'
 import { handOverRoutes } from './hand-over.routes'
+import { handOverReleaseRoutes } from './hand-over-release.routes'
+import { handOverReviewRoutes } from './hand-over-review.routes'
+import { handOverRoutes } from './hand-over.routes'
 import { healthRoutes } from './health.routes'
 import { jointDistributionRoutes } from './joint-distribution.routes'
 import { keyRoutes } from './key.routes'
@@ -46,6 +49,9 @@ export const routes: readonly AnyRoute[] = [
   ...distributionRoutes,
   ...jointDistributionRoutes,
   ...potentialRoutes,
+  ...handOverRoutes,
+  ...handOverReviewRoutes,
+  ...handOverReleaseRoutes,
   ...handOverRoutes,
   ...handOverReviewRoutes,
   ...handOverReleaseRoutes,

@@ -11,6 +11,9 @@ import { GroupService } from './group.service'
 import { HandOverReleaseService } from './hand-over-release.service'
 import { HandOverReviewService } from './hand-over-review.service'
 import { HandOverService } from './hand-over.service'
+import { HandOverReleaseService } from './hand-over-release.service'
+import { HandOverReviewService } from './hand-over-review.service'
+import { HandOverService } from './hand-over.service'
 import { HealthService } from './health.service'
 import { HistoryService } from './history.service'
 import { InvitationService } from './invitation.service'
@@ -34,6 +37,8 @@ import { StatePointService } from './state-point.service'
 import { TableService } from './table.service'
 import { TermService } from './term.service'
 import { TrayService } from './tray.service'
+import { WaitingService } from './waiting.service'
+import { WarningAnswerService } from './warning-answer.service'
 import { WaitingService } from './waiting.service'
 import { WarningAnswerService } from './warning-answer.service'
 
@@ -69,6 +74,7 @@ export function createServices(dataSource: DataSource, { demo, version, tray, li
     invitations: new InvitationService(dataSource, linkTo),
     joining: new JoinService(dataSource),
     handOvers: new HandOverService(dataSource),
+    handOvers: new HandOverService(dataSource),
     health: new HealthService(dataSource, version),
     jointDistributions: new JointDistributionService(dataSource),
     jointTables: new JointTableService(dataSource),
@@ -84,6 +90,8 @@ export function createServices(dataSource: DataSource, { demo, version, tray, li
     potentials: new PotentialService(dataSource),
     releases: new HandOverReleaseService(dataSource),
     reviews: new HandOverReviewService(dataSource, linkTo),
+    releases: new HandOverReleaseService(dataSource),
+    reviews: new HandOverReviewService(dataSource, linkTo),
     sessions,
     settings: new SettingService(dataSource),
     setUp: new SetUpService(dataSource, groups),
@@ -91,6 +99,8 @@ export function createServices(dataSource: DataSource, { demo, version, tray, li
     tables: new TableService(dataSource),
     terms: new TermService(dataSource),
     tray: new TrayService(dataSource, tray),
+    waiting: new WaitingService(dataSource),
+    warningAnswers: new WarningAnswerService(dataSource),
     waiting: new WaitingService(dataSource),
     warningAnswers: new WarningAnswerService(dataSource),
   }

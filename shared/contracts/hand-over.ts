@@ -169,6 +169,8 @@ export const frozenTableMetaSchema = z
     input: z.object({ name: z.string(), sha256: z.string() }),
     /** Comment lines of the table as they were written, without the comment sign. */
     comments: z.array(z.string()),
+    /** What `tableComments` was given but for units and checksum, so that another layout can state it in its own units. */
+    commentInput: z.unknown(),
     savedBy: z.string().nullable(),
     savedOn: z.string().nullable(),
     /** Why two terms share a joint table. */

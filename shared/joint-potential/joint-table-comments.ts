@@ -16,6 +16,8 @@ export interface JointTableCommentInput {
   /** Anything else that names the state point, e.g. '1 bar, pure melt'. */
   readonly statePoint: string | null
   readonly units: JointTableUnits
+  /** Sentences on coordinates and units for a layout that counts or scales in its own way; left out for those of `units`. */
+  readonly wording?: { readonly x: string; readonly y: string; readonly units: string }
   readonly potential: Pick<
     JointPotential,
     'kinds' | 'temperature' | 'settings' | 'smoothing' | 'independentSamples' | 'warnings' | 'surface'
@@ -43,14 +45,14 @@ export function jointTableComments(input: JointTableCommentInput): string[] {
       'joint potential',
       terms && `${terms[0]} (x) with ${terms[1]} (y); it takes the place of both terms`,
     ),
-    line('x', coordinateSentence(kinds[0])),
-    line('y', coordinateSentence(kinds[1])),
+    line('x', input.wording?.x ?? coordinateSentence(kinds[0])),
+    line('y', input.wording?.y ?? coordinateSentence(kinds[1])),
     line('bead order', beadOrders && `x ${beadOrders[0]}; y ${beadOrders[1]}`),
     line(
       'state point',
       `${formatNumber(temperature)} K${input.statePoint === null ? '' : `, ${input.statePoint}`}`,
     ),
-    line('units', unitSentence(input.units)),
+    line('units', input.wording?.units ?? unitSentence(input.units)),
     line('Jacobian', jacobians(potential)),
     line('smoothing', smoothingSentence(potential)),
     line('measured', measuredSentence(input)),

@@ -1,5 +1,6 @@
-import { type CoordinateKind, unitWord } from '../units'
-import { kindLayout, type Layout } from './layout'
+import type { Table } from '../tables'
+import { unitWords } from './column-names'
+import type { Layout } from './layout'
 import { plainNumbers } from './layout-cells'
 import type { LayoutFields } from './layout-fields'
 import type { LayoutValues } from './layout-values'
@@ -11,24 +12,20 @@ export const TABLE_JSON_VERSION = 1
 
 /** A table as one JSON object: what it is, its units and conventions, and its rows, one per line. */
 export function layoutJson(
-  kind: CoordinateKind,
+  { kind, temperature }: Table,
   layout: Layout,
   values: LayoutValues,
   fields: LayoutFields,
 ): string {
-  const { coordinateUnit, energyUnit, force } = kindLayout(layout, kind)
   const { comments, types, warnings, ...about } = fields
   const head = {
     format: TABLE_JSON_FORMAT,
     version: TABLE_JSON_VERSION,
     kind,
+    temperature,
     ...about,
     types,
-    units: {
-      coordinate: unitWord(coordinateUnit),
-      energy: unitWord(energyUnit),
-      force: `${unitWord(force.energyUnit)}/${unitWord(force.per)}`,
-    },
+    units: unitWords(layout, kind),
     ...(kind === 'angle' ? { angle: layout.angle.reading } : {}),
     ...(kind === 'dihedral' ? { zero: layout.dihedral.zero, range: layout.dihedral.range } : {}),
     comments,

@@ -9,7 +9,7 @@ import type { LayoutValues } from './layout-values'
 import { oneLine, type TemplateView } from './render-template'
 
 /** How numbers that have no column are written. */
-const SHORT = { style: 'shortest', digits: 7, width: 0 } as const
+export const SHORT = { style: 'shortest', digits: 7, width: 0 } as const
 
 /** Fields of the templates that do not depend on whether a table has one coordinate or two. */
 export function commonView(layout: Layout, fields: LayoutFields): TemplateView {

@@ -21,8 +21,8 @@ export interface TableCurve {
   /** True for a dihedral over a whole turn, which can be read in any turn. */
   readonly periodic: boolean
   /** Whether there are rows on both sides of a coordinate, or one at it; a dihedral may lie in any turn. */
-  covers(coordinate: number): boolean
-  at(coordinate: number): CurvePoint
+  readonly covers: (coordinate: number) => boolean
+  readonly at: (coordinate: number) => CurvePoint
 }
 
 /**

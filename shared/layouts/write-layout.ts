@@ -30,7 +30,7 @@ export function writeLayout(
   const values = layoutValues(table, layout, beyond)
   const view = tableView(table, layout, values, fields)
   if (layout.writing === 'json')
-    return withLineEnds(layoutJson(table.kind, layout, values, fields), layout.lineEnd)
+    return withLineEnds(layoutJson(table, layout, values, fields), layout.lineEnd)
   const text = [
     closedText(renderTemplate(layout.header, view)),
     rowsText(layout, values, view),

@@ -3,6 +3,7 @@ import express, { type Express } from 'express'
 import type { Pool } from 'pg'
 import type { Logger } from 'pino'
 import { serveClient } from './middleware/client'
+import { serveApiDocs } from './docs/api-docs'
 import { createErrorAnswer, nothingHere } from './middleware/error-answer'
 import { createRequestLog } from './middleware/request-log'
 import { createLimits } from './middleware/limits'
@@ -44,6 +45,7 @@ export function createApp(dependencies: AppDependencies): App {
   app.use(compression())
   const limits = createLimits(services.attempts, logger)
   mountRoutes(app, routes, { services, sessions: sessions.handler, limits })
+  app.use('/api/docs', serveApiDocs())
   app.use('/api', nothingHere)
   if (clientFolder !== null) app.use(serveClient(clientFolder))
   app.use(nothingHere)

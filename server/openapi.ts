@@ -10,12 +10,10 @@ import { MAX_BLOCKS } from '../shared/contracts/distribution'
 import { type ApiCode, errorSchema } from '../shared/contracts/error'
 import { statusOf } from './errors/http-error'
 import { SESSION_COOKIE } from './middleware/session'
-import type { AnyRoute } from './routes/route'
-
-const DESCRIPTION = `Numbers are in internal units: nm, rad, kJ/mol, K, g/mol. null stands for "no data".
-
-Sign in with POST /api/session and keep the cookie. Every write carries the header X-CSRF-Token with the token that
-GET /api/session gives; signing in changes it. Whoever is not in the group of a record gets 404 for it.`
+import { BODY_EXAMPLES } from './openapi-examples'
+import { API_DESCRIPTION, TAGS } from './openapi-texts'
+import { keyScopeOf } from './routes/key-scope'
+import { type AnyRoute, ROLES_FOR } from './routes/route'
 
 /** The description of the API, from the same declarations that serve it. */
 export function openApiDocument(routes: readonly AnyRoute[]) {
@@ -24,16 +22,24 @@ export function openApiDocument(routes: readonly AnyRoute[]) {
     type: 'apiKey',
     in: 'cookie',
     name: SESSION_COOKIE,
+    description: 'The cookie of someone signed in',
   })
   registry.registerComponent('securitySchemes', 'token', {
     type: 'apiKey',
     in: 'header',
     name: 'X-CSRF-Token',
+    description: 'The token of the session, from GET /api/session; for writes with a cookie',
+  })
+  registry.registerComponent('securitySchemes', 'key', {
+    type: 'http',
+    scheme: 'bearer',
+    description: 'An API key, made on the account page',
   })
   for (const route of routes) registry.registerPath(pathOf(route))
   return new OpenApiGeneratorV31(registry.definitions).generateDocument({
     openapi: '3.1.0',
-    info: { title: 'Beadwright', version: '1', description: DESCRIPTION },
+    info: { title: 'Beadwright API', version: '1', description: API_DESCRIPTION },
+    tags: [...TAGS],
   })
 }
 
@@ -46,8 +52,9 @@ function pathOf(route: AnyRoute): RouteConfig {
     method: route.method,
     path: route.path.replace(/:(\w+)/g, '{$1}'),
     summary: route.summary,
+    description: descriptionOf(route),
     tags: [route.path.split('/')[2]],
-    ...(route.access === 'anyone' ? {} : { security: [security(route)] }),
+    ...(route.access === 'anyone' ? {} : { security: security(route) }),
     request: {
       ...(names.length > 0 ? { params } : {}),
       ...(route.query ? { query: route.query as z.ZodObject } : {}),
@@ -57,12 +64,32 @@ function pathOf(route: AnyRoute): RouteConfig {
   }
 }
 
-function security({ method }: AnyRoute): Record<string, string[]> {
-  return method === 'get' ? { session: [] } : { session: [], token: [] }
+/** Who may call it, and with what key. */
+function descriptionOf(route: AnyRoute): string {
+  const { access, description } = route
+  const scope = keyScopeOf(route)
+  const roles = typeof access === 'object' ? [`Roles: ${ROLES_FOR[access.may].join(', ')}.`] : []
+  const key = {
+    anyone: 'Open to everyone.',
+    key: 'Any key.',
+    visitor: 'Not open to keys.',
+    person: 'Not open to keys.',
+  }
+  const keys =
+    typeof access === 'string' ? key[access] : scope ? `Key scope: \`${scope}\`.` : 'Not open to keys.'
+  return [description, ...roles, keys].filter((each) => each !== undefined).join(' ')
 }
 
-function bodyOf({ upload }: AnyRoute, schema: z.ZodType) {
-  if (!upload) return { 'application/json': { schema } }
+/** Any one of these is enough. */
+function security(route: AnyRoute): Record<string, string[]>[] {
+  const byKey = route.access === 'key' || keyScopeOf(route) !== null ? [{ key: [] }] : []
+  if (route.access === 'key') return byKey
+  return [...byKey, route.method === 'get' ? { session: [] } : { session: [], token: [] }]
+}
+
+function bodyOf({ upload, method, path }: AnyRoute, schema: z.ZodType) {
+  const given = BODY_EXAMPLES[`${method} ${path}`]
+  if (!upload) return { 'application/json': { schema, ...(given && { example: given }) } }
   const file = z.string().meta({ format: 'binary', description: 'The file, 20 MB at most' })
   const blocks = z
     .array(z.string().meta({ format: 'binary' }))
@@ -73,7 +100,11 @@ function bodyOf({ upload }: AnyRoute, schema: z.ZodType) {
       ? z.object({ file, settings: schema })
       : z.object({ file, blocks, chains: blocks, settings: schema })
   return {
-    'multipart/form-data': { schema: parts, encoding: { settings: { contentType: 'application/json' } } },
+    'multipart/form-data': {
+      schema: parts,
+      encoding: { settings: { contentType: 'application/json' } },
+      ...(given && { example: { file: '(the file)', settings: given } }),
+    },
   }
 }
 
@@ -90,11 +121,18 @@ function success({ answer, summary }: AnyRoute): Record<string, ResponseConfig> 
   return answers
 }
 
+const KEY_FAILURES = ['KEY_INVALID', 'KEY_EXPIRED', 'KEY_REVOKED'] as const
+
 /** By status: the codes that follow from access and form, and those the route names itself. */
 function failures(route: AnyRoute): Record<string, ResponseConfig> {
   const codes = new Set<ApiCode>(route.errors)
   if (typeof route.access === 'object') ['NOT_SIGNED_IN', 'FORBIDDEN', 'NOT_FOUND'].forEach(add)
-  if (route.method !== 'get') add('CSRF_TOKEN_INVALID')
+  if (route.access === 'person' || route.access === 'key') add('NOT_SIGNED_IN')
+  if (route.access !== 'anyone') KEY_FAILURES.forEach(add)
+  if (keyScopeOf(route) !== null) add('KEY_SCOPE_MISSING')
+  else if (route.access !== 'anyone' && route.access !== 'key') add('KEY_NOT_ALLOWED')
+  if (route.method !== 'get' && route.access !== 'anyone') add('CSRF_TOKEN_INVALID')
+  if (route.limited) add('TOO_MANY_ATTEMPTS')
   if (route.body ?? route.query) add('VALIDATION_FAILED')
   if (route.body) add('PAYLOAD_TOO_LARGE')
   if (!route.answer.statusFor && route.path !== '/api/openapi.json') add('UNAVAILABLE')

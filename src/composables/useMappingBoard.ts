@@ -1,19 +1,14 @@
-import { computed, shallowRef, type ComputedRef, type Ref, type ShallowRef } from 'vue'
-import type { RepeatUnit } from '@shared/chemistry'
+import { computed, shallowRef, type ComputedRef, type ShallowRef } from 'vue'
 import {
   addBead,
   type Bead,
   type BeadChange,
   changeBead,
-  checkMapping,
   type AtomPlace,
-  type DerivedTerm,
-  deriveTerms,
   freeAtoms,
   giveAtomAcross,
   giveAtoms,
   type MappingDocument,
-  type MappingProblem,
   removeBead,
   renewBeadIds,
   setShare,
@@ -21,14 +16,12 @@ import {
 } from '@shared/mapping'
 import { useHistory, type History } from './useHistory'
 
-/** A mapping while it is painted: the document with its history, the bead in hand, and what follows. */
+/** A mapping while it is painted: the document with its history, and the bead in hand. */
 export interface MappingBoard {
   readonly document: ComputedRef<MappingDocument>
   readonly history: History<MappingDocument>
   readonly selected: ComputedRef<Bead | null>
   readonly select: (beadId: string) => void
-  readonly problems: ComputedRef<readonly MappingProblem[]>
-  readonly terms: ComputedRef<readonly DerivedTerm[]>
   /** The document as it looks during a stroke; null between strokes. */
   readonly stroke: ShallowRef<MappingDocument | null>
   /** Begins a stroke on an atom: it paints, or takes away when the atom is in the bead in hand already. */
@@ -54,8 +47,8 @@ export interface MappingBoard {
   readonly adopt: (from: MappingDocument) => void
 }
 
-/** The state of the mapping board. Strokes and changes are steps of the history; what follows from them is derived live. */
-export function useMappingBoard(unit: Ref<RepeatUnit>, first: MappingDocument): MappingBoard {
+/** The state of the mapping board. Strokes and changes are steps of the history. */
+export function useMappingBoard(first: MappingDocument): MappingBoard {
   const history = useHistory(first)
   const stroke = shallowRef<MappingDocument | null>(null)
   const chosen = shallowRef<string | null>(first.beads[0]?.id ?? null)
@@ -64,13 +57,6 @@ export function useMappingBoard(unit: Ref<RepeatUnit>, first: MappingDocument): 
   const document = computed(() => stroke.value ?? history.value.value)
   const selected = computed(
     () => document.value.beads.find(({ id }) => id === chosen.value) ?? document.value.beads[0] ?? null,
-  )
-  const problems = computed(() => checkMapping(unit.value, document.value))
-  // With too many places there are no terms to list; the problem above says so.
-  const terms = computed(() =>
-    problems.value.some(({ code }) => code === 'TERMS_TOO_MANY')
-      ? []
-      : deriveTerms(unit.value, document.value),
   )
 
   const select = (beadId: string): void => {
@@ -138,8 +124,6 @@ export function useMappingBoard(unit: Ref<RepeatUnit>, first: MappingDocument): 
     history,
     selected,
     select,
-    problems,
-    terms,
     stroke,
     begin,
     paintOver,

@@ -2,9 +2,10 @@ import { describe, expect, it } from 'vitest'
 import { ref } from 'vue'
 import { parseRepeatUnit } from '@shared/chemistry'
 import { useMappingBoard } from '@/composables/useMappingBoard'
+import { useMappingConsequences } from '@/composables/useMappingConsequences'
 
 const unit = await parseRepeatUnit('*CC(*)OC(C)=O')
-const open = () => useMappingBoard(ref(unit), { version: 1, beads: [] })
+const open = () => useMappingBoard({ version: 1, beads: [] })
 const atomsOf = (board: ReturnType<typeof open>) =>
   board.document.value.beads.map(({ atoms }) => atoms.map(({ atom }) => atom))
 
@@ -53,8 +54,9 @@ describe('useMappingBoard', () => {
       [0, 1],
       [2, 3, 4, 5],
     ])
-    expect(board.terms.value).toHaveLength(7)
-    expect(board.problems.value).toEqual([])
+    const { terms, problems } = useMappingConsequences(ref(unit), board.document, () => false)
+    expect(terms.value.terms).toHaveLength(7)
+    expect(problems.value).toEqual([])
   })
 
   it('never gives a new bead the id of one that stood before', () => {

@@ -74,7 +74,9 @@ const key = async (on: Element, name: string, shiftKey = false): Promise<void> =
 const drawing = (): SVGSVGElement => document.querySelector('.canvas > svg') as SVGSVGElement
 
 beforeEach(() => {
-  vi.useFakeTimers({ toFake: ['setTimeout', 'clearTimeout', 'requestAnimationFrame', 'cancelAnimationFrame'] })
+  vi.useFakeTimers({
+    toFake: ['setTimeout', 'clearTimeout', 'requestAnimationFrame', 'cancelAnimationFrame'],
+  })
 })
 afterEach(() => {
   vi.useRealTimers()

@@ -11,6 +11,7 @@ const AREAS: Partial<Record<Resource, 'data' | 'hand-overs'>> = {
   distribution: 'data',
   jointDistribution: 'data',
   potential: 'data',
+  handOver: 'hand-overs',
 }
 
 /** Decisions of people about people and work: never by a script. */
@@ -18,17 +19,18 @@ const ALWAYS_IN_PERSON: readonly string[] = ['manage', 'review']
 
 /**
  * The scope that a key needs for a route: null when no key opens it. A route may name it; else reading asks for read, and
- * writing for the scope of what is written.
+ * writing for the scope of what is written; a hand-over made under a polymer is a hand-over.
  */
 export function keyScopeOf({
   access,
   scope,
   method,
-}: Pick<AnyRoute, 'access' | 'scope' | 'method'>): KeyScope | null {
+  path,
+}: Pick<AnyRoute, 'access' | 'scope' | 'method' | 'path'>): KeyScope | null {
   if (typeof access !== 'object' || ALWAYS_IN_PERSON.includes(access.may)) return null
   if (scope !== undefined) return scope
   const area = AREAS[access.at]
   if (area === undefined) return null
   if (method === 'get') return 'read'
-  return area === 'hand-overs' ? 'hand-overs' : 'write'
+  return area === 'hand-overs' || path.endsWith('/hand-overs') ? 'hand-overs' : 'write'
 }

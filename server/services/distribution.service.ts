@@ -21,6 +21,7 @@ import {
 } from './distribution-blocks'
 import { contentSha256, histogramOf } from './histograms'
 import type { Download, Member, UploadedFile } from './member'
+import { recordTerms } from './record-work'
 import { measuredSilhouette } from './silhouette'
 import { fileBody, packFile, textOf, unpackFile } from './source-files'
 import { findStatePoint, findTerm, lockTerm } from './term-context'
@@ -37,12 +38,13 @@ export class DistributionService {
    * @throws {HttpError} NOT_FOUND; TERM_GONE; VALIDATION_FAILED when the settings are for another kind of term
    */
   async add(
-    { groupId, userId }: Member,
+    member: Member,
     termId: string,
     { statePointId, settings, firstOf = null }: DistributionUpload,
     file: UploadedFile,
     blockFiles: UploadedBlocks = NO_UPLOADED_BLOCKS,
   ): Promise<DistributionBody> {
+    const { groupId, userId } = member
     const { kind } = await findTerm(this.dataSource.manager, groupId, termId)
     if (settings.kind !== kind) {
       throw new HttpError(
@@ -91,6 +93,8 @@ export class DistributionService {
       const { id } = await manager.save(Distribution, { ...place, ...reading, ...upload })
       await manager.insert(SourceFile, { groupId, distributionId: id, jointDistributionId: null, ...packed })
       await storeBlocks(manager, groupId, id, packedBlocks)
+      const work = { termIds: [termId], statePointId, details: { file: file.name } }
+      await recordTerms(manager, member, 'data brought in', work)
       return readDistribution(manager, groupId, { id })
     })
   }
@@ -110,10 +114,11 @@ export class DistributionService {
    * @throws {InvalidInputError} SETTING_INVALID when there are fewer counts than that
    */
   async update(
-    { groupId }: Member,
+    member: Member,
     distributionId: string,
     { independentSamples }: DistributionUpdate,
   ): Promise<DistributionBody> {
+    const { groupId } = member
     return this.dataSource.transaction(async (manager) => {
       const where = { id: distributionId, groupId }
       const distribution = await manager.findOne(Distribution, { where, lock: { mode: 'pessimistic_write' } })
@@ -125,6 +130,9 @@ export class DistributionService {
       const { sha256 } = await manager.findOneByOrFail(SourceFile, { groupId, distributionId })
       const settings = { ...distribution.settings, independentSamples }
       await manager.update(Distribution, where, { settings, ...recordOf(histogram, sha256) })
+      const { termId, statePointId } = distribution
+      const details = { what: 'independent samples', new: independentSamples }
+      await recordTerms(manager, member, 'data changed', { termIds: [termId], statePointId, details })
       return readDistribution(manager, groupId, where)
     })
   }
@@ -133,12 +141,14 @@ export class DistributionService {
    * Deletes the data of a term at a state point: the current distribution with those it superseded, their files and the
    * potential that rests on them. One that was superseded goes alone.
    */
-  async remove({ groupId }: Member, distributionId: string): Promise<void> {
+  async remove(member: Member, distributionId: string): Promise<void> {
+    const { groupId } = member
     await this.dataSource.transaction(async (manager) => {
       const where = { id: distributionId, groupId }
       const distribution = await manager.findOne(Distribution, { where, lock: { mode: 'pessimistic_write' } })
       if (!distribution) throw notFound('distribution')
       const { termId, statePointId, supersededAt } = distribution
+      await recordTerms(manager, member, 'data deleted', { termIds: [termId], statePointId })
       if (supersededAt !== null) return void (await manager.delete(Distribution, where))
       await manager.delete(Potential, { groupId, termId, statePointId })
       await manager.delete(Distribution, { groupId, termId, statePointId })

@@ -13,6 +13,7 @@ import type { Term } from '../entities/term.entity'
 import { HttpError, notFound } from '../errors/http-error'
 import type { Download, Member, UploadedFile } from './member'
 import { personOf } from './people'
+import { recordTerms } from './record-work'
 import { fileBody, packFile, textOf, unpackFile } from './source-files'
 import { findStatePoint, findTerm, lockTerm } from './term-context'
 import { verdictNumbers } from './verdict-numbers'
@@ -29,11 +30,12 @@ export class JointDistributionService {
    * @throws {HttpError} NOT_FOUND; TERM_GONE; VALIDATION_FAILED when the terms do not go with the settings
    */
   async add(
-    { groupId, userId }: Member,
+    member: Member,
     mappingId: string,
     upload: JointDistributionUpload,
     file: UploadedFile,
   ): Promise<JointDistributionBody> {
+    const { groupId, userId } = member
     const { firstTermId, secondTermId, statePointId, settings } = upload
     await this.checkTerms(groupId, mappingId, upload)
     const { histogram, notes } = readJointHistogram(textOf(file.bytes), settings)
@@ -74,6 +76,8 @@ export class JointDistributionService {
         supersededAt: null,
       })
       await manager.insert(SourceFile, { groupId, distributionId: null, jointDistributionId: id, ...packed })
+      const work = { termIds: [firstTermId, secondTermId], statePointId, details: { file: file.name } }
+      await recordTerms(manager, member, 'data brought in', work)
       return readJoint(manager, groupId, id)
     })
   }
@@ -85,10 +89,11 @@ export class JointDistributionService {
 
   /** Records what a person decides, beside the verdict's numbers as the server worked them out. */
   async decide(
-    { groupId, userId }: Member,
+    member: Member,
     jointDistributionId: string,
     { choice, reason }: DecisionWrite,
   ): Promise<JointDistributionBody> {
+    const { groupId, userId } = member
     return this.dataSource.transaction(async (manager) => {
       const joint = await manager.findOne(JointDistribution, {
         where: { id: jointDistributionId, groupId },
@@ -100,16 +105,20 @@ export class JointDistributionService {
       const { numbers } = joint
       const by = { decidedAt: now, decidedById: userId, supersededAt: null }
       await manager.insert(Decision, { groupId, jointDistributionId, choice, reason, numbers, ...by })
+      const work = { ...pairOf(joint), details: { choice, reason } }
+      await recordTerms(manager, member, 'decision recorded', work)
       return readJoint(manager, groupId, jointDistributionId)
     })
   }
 
   /** Deletes the joint data of two terms at a state point, those they superseded, their files and decisions. */
-  async remove({ groupId }: Member, jointDistributionId: string): Promise<void> {
+  async remove(member: Member, jointDistributionId: string): Promise<void> {
+    const { groupId } = member
     await this.dataSource.transaction(async (manager) => {
       const where = { id: jointDistributionId, groupId }
       const joint = await manager.findOne(JointDistribution, { where, lock: { mode: 'pessimistic_write' } })
       if (!joint) throw notFound('joint distribution')
+      await recordTerms(manager, member, 'data deleted', pairOf(joint))
       if (joint.supersededAt !== null) return void (await manager.delete(JointDistribution, where))
       const { firstTermId, secondTermId, statePointId } = joint
       await manager.delete(JointDistribution, { firstTermId, secondTermId, statePointId })
@@ -153,6 +162,10 @@ export class JointDistributionService {
       )
     }
   }
+}
+
+function pairOf({ firstTermId, secondTermId, statePointId }: JointDistribution) {
+  return { termIds: [firstTermId, secondTermId], statePointId }
 }
 
 async function readJoint(

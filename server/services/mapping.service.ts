@@ -13,6 +13,7 @@ import { mappingBody, readMapping } from './mapping-body'
 import { hasData } from './mapping-data'
 import { freezeVersion } from './mapping-versions'
 import type { Member } from './member'
+import { recordMapping } from './record-work'
 import { syncTerms } from './sync-terms'
 
 const NO_BEADS = { version: 1, beads: [] } as const satisfies MappingBody['document']
@@ -42,10 +43,11 @@ export class MappingService {
    * @throws {HttpError} NAME_TAKEN (by the database's constraint)
    */
   async create(
-    { groupId, userId }: Member,
+    member: Member,
     polymerId: string,
     { name, document }: z.output<typeof mappingCreateSchema>,
   ): Promise<MappingBody> {
+    const { groupId, userId } = member
     return this.dataSource.transaction(async (manager) => {
       // A shared lock on the polymer keeps its SMILES as it is while beads are counted on it.
       const polymer = await manager.findOne(Polymer, {
@@ -56,6 +58,7 @@ export class MappingService {
       const record = { groupId, polymerId, name, document, revision: 1, version: 1, savedAt: new Date() }
       const mapping = await manager.save(Mapping, { ...record, savedById: userId })
       await syncTerms(manager, { mapping, smiles: polymer.smiles, before: NO_BEADS, after: document })
+      await recordMapping(manager, member, 'mapping added', mapping)
       return readMapping(manager, groupId, mapping.id)
     })
   }
@@ -68,10 +71,11 @@ export class MappingService {
    * @throws {InvalidInputError} when the document does not fit the repeat unit
    */
   async update(
-    { groupId, userId }: Member,
+    member: Member,
     mappingId: string,
     { revision, name, document }: MappingUpdate,
   ): Promise<MappingBody> {
+    const { groupId, userId } = member
     return this.dataSource.transaction(async (manager) => {
       const where = { id: mappingId, groupId }
       const mapping = await manager.findOne(Mapping, { where, lock: { mode: 'pessimistic_write' } })
@@ -92,13 +96,20 @@ export class MappingService {
       const version = mapping.version + (makesVersion ? 1 : 0)
       const saved = { revision: revision + 1, version, savedAt: new Date(), savedById: userId }
       await manager.update(Mapping, where, { name, document, ...saved })
+      const details = { version, ...(name === mapping.name ? {} : { old: mapping.name }) }
+      await recordMapping(manager, member, 'mapping changed', { ...mapping, name }, details)
       return readMapping(manager, groupId, mappingId)
     })
   }
 
   /** Deletes the mapping with everything that stands on it: terms, distributions, files, potentials, decisions. */
-  async remove({ groupId }: Member, mappingId: string): Promise<void> {
-    const { affected } = await this.dataSource.manager.delete(Mapping, { id: mappingId, groupId })
-    if (affected !== 1) throw notFound('mapping')
+  async remove(member: Member, mappingId: string): Promise<void> {
+    await this.dataSource.transaction(async (manager) => {
+      const where = { id: mappingId, groupId: member.groupId }
+      const mapping = await manager.findOne(Mapping, { where, lock: { mode: 'pessimistic_write' } })
+      if (!mapping) throw notFound('mapping')
+      await recordMapping(manager, member, 'mapping deleted', mapping)
+      await manager.delete(Mapping, where)
+    })
   }
 }

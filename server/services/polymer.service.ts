@@ -10,6 +10,7 @@ import { Mapping } from '../entities/mapping.entity'
 import { Polymer } from '../entities/polymer.entity'
 import { HttpError, notFound } from '../errors/http-error'
 import type { Member } from './member'
+import { recordPolymer } from './record-work'
 
 /** `distributions` and `potentials` count what is current, over all mappings and state points. */
 const WITH_COUNTS = `
@@ -53,15 +54,19 @@ export class PolymerService {
     const chemistry = await readChemistry(input.smiles)
     const { name, notes } = input
     const record = { groupId: member.groupId, name, notes, ...chemistry, revision: 1 }
-    const polymer = await this.dataSource.manager.save(Polymer, record)
-    return this.get(member, polymer.id)
+    return this.dataSource.transaction(async (manager) => {
+      const polymer = await manager.save(Polymer, record)
+      await recordPolymer(manager, member, 'polymer added', polymer)
+      return readPolymer(manager, member.groupId, polymer.id)
+    })
   }
 
   /**
    * @throws {HttpError} CONFLICT with the current polymer when someone saved in between; IN_USE when the SMILES would
    *   change under a mapping
    */
-  async update({ groupId }: Member, polymerId: string, input: PolymerUpdate): Promise<PolymerBody> {
+  async update(member: Member, polymerId: string, input: PolymerUpdate): Promise<PolymerBody> {
+    const { groupId } = member
     const { revision, smiles, ...changes } = input
     return this.dataSource.transaction(async (manager) => {
       const where = { id: polymerId, groupId }
@@ -85,14 +90,22 @@ export class PolymerService {
         )
       }
       await manager.update(Polymer, where, { ...changes, ...chemistry, revision: revision + 1 })
+      const { name = polymer.name } = changes
+      const renamed = name === polymer.name ? {} : { old: polymer.name }
+      await recordPolymer(manager, member, 'polymer changed', { id: polymerId, name }, renamed)
       return readPolymer(manager, groupId, polymerId)
     })
   }
 
   /** Deletes the polymer with everything that stands on it: state points, mappings, distributions, files, potentials. */
-  async remove({ groupId }: Member, polymerId: string): Promise<void> {
-    const { affected } = await this.dataSource.manager.delete(Polymer, { id: polymerId, groupId })
-    if (affected !== 1) throw notFound('polymer')
+  async remove(member: Member, polymerId: string): Promise<void> {
+    await this.dataSource.transaction(async (manager) => {
+      const where = { id: polymerId, groupId: member.groupId }
+      const polymer = await manager.findOne(Polymer, { where, lock: { mode: 'pessimistic_write' } })
+      if (!polymer) throw notFound('polymer')
+      await recordPolymer(manager, member, 'polymer deleted', polymer)
+      await manager.delete(Polymer, where)
+    })
   }
 }
 

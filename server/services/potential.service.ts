@@ -13,6 +13,7 @@ import { HttpError, notFound } from '../errors/http-error'
 import { findInversionInput } from './inversion-input'
 import type { Member } from './member'
 import { personOf } from './people'
+import { recordTerms } from './record-work'
 import { derivedSilhouette } from './silhouette'
 import { findStatePoint, findTerm, lockTerm, mappingOf } from './term-context'
 
@@ -37,7 +38,8 @@ export class PotentialService {
    * @throws {HttpError} CONFLICT with the stored potential when someone saved in between; NOT_FOUND without data; TERM_GONE
    * @throws {InvalidInputError} when the distribution cannot be inverted with these settings; nothing is saved then
    */
-  async save({ groupId, userId }: Member, termId: string, save: PotentialSave): Promise<StoredPotential> {
+  async save(member: Member, termId: string, save: PotentialSave): Promise<StoredPotential> {
+    const { groupId, userId } = member
     const { statePointId, revision, settings } = save
     return this.dataSource.transaction(async (manager) => {
       const { mapping, term } = await lockTerm(manager, groupId, termId)
@@ -72,6 +74,7 @@ export class PotentialService {
         savedById: userId,
       }
       await manager.upsert(Potential, record, ['termId', 'statePointId'])
+      await recordTerms(manager, member, 'potential saved', { termIds: [termId], statePointId })
       const saved = await readPotential(manager, term, statePoint)
       if (!saved) throw notFound('potential')
       return saved
@@ -79,9 +82,15 @@ export class PotentialService {
   }
 
   /** Forgets the saved inversion; the data stay. */
-  async remove({ groupId }: Member, potentialId: string): Promise<void> {
-    const { affected } = await this.dataSource.manager.delete(Potential, { id: potentialId, groupId })
-    if (affected !== 1) throw notFound('potential')
+  async remove(member: Member, potentialId: string): Promise<void> {
+    await this.dataSource.transaction(async (manager) => {
+      const where = { id: potentialId, groupId: member.groupId }
+      const potential = await manager.findOne(Potential, { where, lock: { mode: 'pessimistic_write' } })
+      if (!potential) throw notFound('potential')
+      const { termId, statePointId } = potential
+      await recordTerms(manager, member, 'potential deleted', { termIds: [termId], statePointId })
+      await manager.delete(Potential, where)
+    })
   }
 }
 

@@ -10,6 +10,7 @@ import { JointDistribution } from '../entities/joint-distribution.entity'
 import { StatePoint } from '../entities/state-point.entity'
 import { HttpError, notFound } from '../errors/http-error'
 import type { Member } from './member'
+import { recordStatePoint } from './record-work'
 
 /** State points of a polymer. */
 export class StatePointService {
@@ -26,22 +27,24 @@ export class StatePointService {
 
   /** @param input as the contract gives it out, with its defaults */
   async create(
-    { groupId }: Member,
+    member: Member,
     polymerId: string,
     input: z.output<typeof statePointCreateSchema>,
   ): Promise<StatePointBody> {
-    const { manager } = this.dataSource
-    return statePointBody(
-      manager,
-      await manager.save(StatePoint, { groupId, polymerId, ...input, revision: 1 }),
-    )
+    const { groupId } = member
+    return this.dataSource.transaction(async (manager) => {
+      const point = await manager.save(StatePoint, { groupId, polymerId, ...input, revision: 1 })
+      await recordStatePoint(manager, member, 'state point added', point)
+      return statePointBody(manager, point)
+    })
   }
 
   /**
    * @throws {HttpError} CONFLICT with the current state point when someone saved in between; IN_USE when the temperature
    *   would change under data
    */
-  async update({ groupId }: Member, statePointId: string, input: StatePointUpdate): Promise<StatePointBody> {
+  async update(member: Member, statePointId: string, input: StatePointUpdate): Promise<StatePointBody> {
+    const { groupId } = member
     const { revision, ...changes } = input
     return this.dataSource.transaction(async (manager) => {
       const where = { id: statePointId, groupId }
@@ -63,19 +66,21 @@ export class StatePointService {
         )
       }
       const saved = await manager.save(StatePoint, { ...point, ...changes, revision: revision + 1 })
+      await recordStatePoint(manager, member, 'state point changed', saved)
       return statePointBody(manager, saved)
     })
   }
 
   /** @throws {HttpError} IN_USE while data stand on it */
-  async remove({ groupId }: Member, statePointId: string): Promise<void> {
+  async remove(member: Member, statePointId: string): Promise<void> {
     await this.dataSource.transaction(async (manager) => {
-      const where = { id: statePointId, groupId }
+      const where = { id: statePointId, groupId: member.groupId }
       const point = await manager.findOne(StatePoint, { where, lock: { mode: 'pessimistic_write' } })
       if (!point) throw notFound('state point')
       if (await hasData(manager, statePointId)) {
         throw new HttpError('IN_USE', 'Data stand on this state point. Delete them first.')
       }
+      await recordStatePoint(manager, member, 'state point deleted', point)
       await manager.delete(StatePoint, where)
     })
   }

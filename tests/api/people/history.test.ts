@@ -3,6 +3,7 @@ import type { HistoryEvent, HistoryPage } from '@shared/contracts/history'
 import { recordEvent } from '../../../server/services/record-event'
 import { type ApiServer, openApiServer } from '../../support/api-server'
 import { buildGroup, type TestGroup } from '../../support/group-builder'
+import { buildJob } from '../../support/job-builder'
 
 let server: ApiServer
 let group: TestGroup
@@ -115,5 +116,56 @@ describe('the history of a group', () => {
       `The modeller,,polymer changed,polymer,'=1+1,"what: notes, count: 3"`,
     ])
     expect(lines).toHaveLength((await ask('action=polymer%20changed')).events.length === 50 ? 125 : 0)
+  })
+})
+
+describe('the work of a group', () => {
+  it('is recorded as it is done, with its subject as it was called then', async () => {
+    const other = await buildGroup(server)
+    const { member } = other.modeller
+    const job = await buildJob(server.services, member)
+    await server.services.jointDistributions.decide(member, job.jointDistributionId, {
+      choice: 'separate',
+      reason: 'They move on their own.',
+    })
+    await server.services.potentials.remove(member, job.potentialId)
+    await server.services.distributions.update(member, job.distributionId, { independentSamples: 100 })
+    await server.services.distributions.remove(member, job.distributionId)
+    await server.services.jointDistributions.remove(member, job.jointDistributionId)
+    await server.services.mappings.remove(member, job.mappingId)
+    await server.services.statePoints.remove(member, job.statePointId)
+    await server.services.polymers.remove(member, job.polymerId)
+    const response = await other.reviewer.client.get(`/api/groups/${other.groupId}/history`)
+    const { events } = response.body as HistoryPage
+    expect(events.map(({ action }) => action).reverse()).toEqual([
+      'group founded',
+      'polymer added',
+      'state point added',
+      'mapping added',
+      'data brought in',
+      'potential saved',
+      'data brought in',
+      'decision recorded',
+      'potential deleted',
+      'data changed',
+      'data deleted',
+      'data deleted',
+      'mapping deleted',
+      'state point deleted',
+      'polymer deleted',
+    ])
+    const saved = events.find(({ action }) => action === 'potential saved')
+    expect(saved).toMatchObject({ person: { name: 'The modeller' }, subject: { kind: 'term' } })
+    expect(saved?.details.temperature).toMatch(/^\d+ K$/)
+  })
+
+  it('is not recorded when it is refused', async () => {
+    const other = await buildGroup(server)
+    const { client } = other.modeller
+    const polymers = `/api/groups/${other.groupId}/polymers`
+    expect((await client.post(polymers, { name: 'One', smiles: '*CC*' })).status).toBe(201)
+    expect((await client.post(polymers, { name: 'One', smiles: '*CC*' })).status).toBe(409)
+    const response = await client.get(`/api/groups/${other.groupId}/history?action=polymer%20added`)
+    expect((response.body as HistoryPage).events).toHaveLength(1)
   })
 })

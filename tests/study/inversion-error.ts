@@ -1,8 +1,8 @@
 import {
   bandCoverage,
-  type Criterion,
   CRITERIA,
   inversionErrors,
+  pooledCoverage,
   type StudyErrors,
 } from '../support/inversion-study'
 import { STUDY_DENSITIES } from '../support/study-densities'
@@ -12,6 +12,7 @@ const ERROR_REPEATS = 200
 const BAND_REPEATS = 500
 const SEED = 20_261_201
 
+const percent = (share: number): string => `${(100 * share).toFixed(1)} %`
 const grouped = (value: number): string => value.toLocaleString('en-US')
 const row = (cells: readonly string[]): string => `| ${cells.join(' | ')} |`
 const rule = (columns: number): string => `|${' --- |'.repeat(columns)}`
@@ -31,12 +32,15 @@ function study(): void {
     ...SAMPLES.flatMap((samples) => CRITERIA.map((name) => `${name}, ${grouped(samples)}`)),
   ]
   lines.push('', row(bandHead), rule(bandHead.length))
-  for (const density of STUDY_DENSITIES) {
-    const coverage = (samples: number, criterion: Criterion) =>
-      `${(100 * bandCoverage(density, samples, BAND_REPEATS, SEED, criterion)).toFixed(1)} %`
-    const cells = SAMPLES.flatMap((samples) => CRITERIA.map((criterion) => coverage(samples, criterion)))
-    lines.push(row([density.name, ...cells]))
-  }
+  const columns = SAMPLES.flatMap((samples) => CRITERIA.map((criterion) => ({ samples, criterion })))
+  const coverages = STUDY_DENSITIES.map((density) =>
+    columns.map(({ samples, criterion }) => bandCoverage(density, samples, BAND_REPEATS, SEED, criterion)),
+  )
+  STUDY_DENSITIES.forEach(({ name }, index) => {
+    lines.push(row([name, ...coverages[index].map((coverage) => percent(pooledCoverage([coverage])))]))
+  })
+  const pooled = columns.map((_, column) => percent(pooledCoverage(coverages.map((cells) => cells[column]))))
+  lines.push(row(['All six', ...pooled]))
   process.stdout.write(`${lines.join('\n')}\n`)
 }
 

@@ -68,6 +68,18 @@ export function inversionErrors(
   }
 }
 
+/** At how many points the truth lay within the band. */
+export interface Coverage {
+  readonly held: number
+  readonly points: number
+}
+
+/** The share of points held, pooled over all that are given. */
+export function pooledCoverage(all: readonly Coverage[]): number {
+  const total = (count: (each: Coverage) => number): number => all.reduce((sum, each) => sum + count(each), 0)
+  return total(({ held }) => held) / total(({ points }) => points)
+}
+
 /**
  * Share of points at which the 95 % band of the automatic inversion holds the truth, pooled over bins with at least 20
  * counts and over `repeats` histograms: of U(q) − U(q_min) at bin midpoints, with q_min the bin of least fitted energy.
@@ -78,9 +90,9 @@ export function bandCoverage(
   repeats: number,
   seed: number,
   criterion: Criterion = 'likelihood',
-): number {
+): Coverage {
   const random = createRandom(seed)
-  let [held, all] = [0, 0]
+  let [held, points] = [0, 0]
   for (let repeat = 0; repeat < repeats; repeat++) {
     const { bins, potential } = inverted(drawn(density, samples, random), { mode: 'auto', criterion })
     const deviations = bins.deviations ?? bins.weights.map(() => NaN)
@@ -91,10 +103,10 @@ export function bandCoverage(
       const truth = density.energy(bins.midpoints[bin]) - density.energy(bins.midpoints[mode])
       const miss = Math.abs(fitted[bin] - fitted[mode] - truth)
       held += miss <= (BAND * deviations[bin]) / KT ? 1 : 0
-      all += 1
+      points += 1
     }
   }
-  return held / all
+  return { held, points }
 }
 
 /** Poisson counts about the exact bin probabilities. */

@@ -28,6 +28,8 @@ export interface MappingBoard {
   readonly begin: (atom: number) => void
   readonly paintOver: (atom: number) => void
   readonly end: () => void
+  /** Ends a stroke as if it had not begun. */
+  readonly drop: () => void
   readonly add: () => void
   readonly change: (beadId: string, change: BeadChange) => void
   readonly remove: (beadId: string) => void
@@ -128,6 +130,9 @@ export function useMappingBoard(first: MappingDocument): MappingBoard {
     begin,
     paintOver,
     end,
+    drop: () => {
+      stroke.value = null
+    },
     add: () => history.push(newBead(document.value)),
     change: (beadId, change) => history.push(changeBead(document.value, beadId, change)),
     remove: (beadId) => history.push(removeBead(document.value, beadId)),

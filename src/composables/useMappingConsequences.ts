@@ -24,7 +24,9 @@ export interface MappingConsequences {
   /** As the bead table shows it. */
   readonly beads: ShallowRef<MappingDocument>
   readonly problems: ComputedRef<readonly MappingProblem[]>
-  readonly terms: ComputedRef<MappingTerms & { readonly flags: readonly PlaceFlag[] }>
+  readonly terms: ComputedRef<MappingTerms>
+  /** Sequences at places that differ. */
+  readonly flags: ComputedRef<readonly PlaceFlag[]>
   readonly groups: ComputedRef<MappingTerms>
   readonly chain: ShallowRef<MappingDocument>
 }
@@ -35,17 +37,17 @@ export function useMappingConsequences(
   document: Readonly<Ref<MappingDocument>>,
   isPainting: () => boolean,
 ): MappingConsequences {
-  const [beads, ofTerms, ofGroups, chain] = useFollowing(document, 4, isPainting)
+  const [beads, ofTerms, ofFlags, ofGroups, chain] = useFollowing(document, 5, isPainting)
   const problems = computed(() => checkMapping(unit.value, beads.value))
-  const terms = computed(() => {
-    const listed = termsOf(unit.value, ofTerms.value)
-    return { ...listed, flags: listed.terms.length === 0 ? [] : placeFlags(unit.value, listed.document) }
-  })
+  const terms = computed(() => termsOf(unit.value, ofTerms.value))
+  const flags = computed(() =>
+    hasTooManyPlaces(unit.value, ofFlags.value) ? [] : placeFlags(unit.value, ofFlags.value),
+  )
   // The same mapping has its terms derived once.
   const groups = computed(() =>
     ofGroups.value === terms.value.document ? terms.value : termsOf(unit.value, ofGroups.value),
   )
-  return { beads, problems, terms, groups, chain }
+  return { beads, problems, terms, flags, groups, chain }
 }
 
 function termsOf(unit: RepeatUnit, document: MappingDocument): MappingTerms {

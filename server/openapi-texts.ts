@@ -31,4 +31,13 @@ export const TAGS: readonly { readonly name: string; readonly description: strin
   { name: 'distributions', description: 'Histograms as they came' },
   { name: 'potentials', description: 'Saved inversions' },
   { name: 'joint-distributions', description: 'Two terms measured together' },
+  { name: 'hand-overs', description: 'Numbered sets of tables: checklist, review, release, files' },
+  { name: 'session', description: 'Signing in and out' },
+  { name: 'account', description: 'One’s own name, password and current group' },
+  { name: 'keys', description: 'One’s own API keys' },
+  { name: 'invitations', description: 'Invitations into a group' },
+  { name: 'join', description: 'Taking up an invitation' },
+  { name: 'password-resets', description: 'A new password by e-mail' },
+  { name: 'set-up', description: 'The first group and its owner' },
+  { name: 'health', description: 'Whether the server can do its work' },
 ]

@@ -39,6 +39,7 @@ body { margin: 0; background: var(--ground); color: var(--ink); font: 400 14px/2
 .swagger-ui .info .title small pre, .swagger-ui .info .title small.version-stamp { background: none; color: var(--ink2); }
 .swagger-ui .info .title small.version-stamp, .swagger-ui .info .base-url { display: none; }
 .swagger-ui .info a, .swagger-ui a.nostyle:hover { color: var(--action); }
+.swagger-ui :is(.markdown, .renderedMarkdown) code { background: none; color: var(--ink); padding: 0; font-weight: 400; }
 .swagger-ui .scheme-container { background: none; box-shadow: none; padding: 12px 0; border-top: 1px solid var(--rule); }
 .swagger-ui .opblock-tag { font-size: 18px; font-weight: 500; border-bottom: 1px solid var(--edge); }
 .swagger-ui .opblock-tag small, .swagger-ui .opblock .opblock-summary-description { color: var(--ink2); }

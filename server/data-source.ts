@@ -6,6 +6,7 @@ import { Foundation1764547200000 } from './migrations/1764547200000-foundation'
 import { Blocks1764633600000 } from './migrations/1764633600000-blocks'
 import { People1764720000000 } from './migrations/1764720000000-people'
 import { ApiKeys1764806400000 } from './migrations/1764806400000-api-keys'
+import { Layouts1764892800000 } from './migrations/1764892800000-layouts'
 import { HandOvers1764979200000 } from './migrations/1764979200000-hand-overs'
 import { MappingVersions1765152000000 } from './migrations/1765152000000-mapping-versions'
 
@@ -15,6 +16,7 @@ const migrations = [
   Blocks1764633600000,
   People1764720000000,
   ApiKeys1764806400000,
+  Layouts1764892800000,
   HandOvers1764979200000,
   MappingVersions1765152000000,
 ]

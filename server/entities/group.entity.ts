@@ -18,6 +18,10 @@ export class Group {
   @Column('jsonb', { default: {} })
   defaults!: Partial<GroupDefaults>
 
+  /** Key of a layout of the house, or id of one of the group; null: the house's own. */
+  @Column('text', { name: 'default_layout', nullable: true })
+  defaultLayout!: string | null
+
   /** Of the defaults. */
   @Column('integer', { default: 1 })
   revision!: number

@@ -14,6 +14,8 @@ import { HandOverTable } from './hand-over-table.entity'
 import { HandOver } from './hand-over.entity'
 import { Invitation } from './invitation.entity'
 import { JointDistribution } from './joint-distribution.entity'
+import { LayoutVersion } from './layout-version.entity'
+import { Layout } from './layout.entity'
 import { Mail } from './mail.entity'
 import { MappingVersion } from './mapping-version.entity'
 import { Mapping } from './mapping.entity'
@@ -48,6 +50,8 @@ export const entities = [
   HandOverTable,
   Invitation,
   JointDistribution,
+  Layout,
+  LayoutVersion,
   Mail,
   Mapping,
   MappingVersion,

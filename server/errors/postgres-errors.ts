@@ -4,6 +4,7 @@ import { HttpError } from './http-error'
 const TAKEN: Readonly<Record<string, { readonly message: string; readonly field: string }>> = {
   UQ_polymer_name: { message: 'The group has a polymer of this name already.', field: 'name' },
   UQ_mapping_name: { message: 'The polymer has a mapping of this name already.', field: 'name' },
+  UQ_layout_name: { message: 'The group has a layout of this name already.', field: 'name' },
   UQ_user_email: { message: 'Someone has an account with this e-mail address already.', field: 'email' },
 }
 

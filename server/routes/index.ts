@@ -7,14 +7,12 @@ import { groupRoutes } from './group.routes'
 import { handOverReleaseRoutes } from './hand-over-release.routes'
 import { handOverReviewRoutes } from './hand-over-review.routes'
 import { handOverRoutes } from './hand-over.routes'
-import { handOverReleaseRoutes } from './hand-over-release.routes'
-import { handOverReviewRoutes } from './hand-over-review.routes'
-import { handOverRoutes } from './hand-over.routes'
 import { healthRoutes } from './health.routes'
 import { jointDistributionRoutes } from './joint-distribution.routes'
 import { keyRoutes } from './key.routes'
 import { historyRoutes } from './history.routes'
 import { joinRoutes } from './join.routes'
+import { layoutRoutes } from './layout.routes'
 import { mappingRoutes } from './mapping.routes'
 import { polymerRoutes } from './polymer.routes'
 import { potentialRoutes } from './potential.routes'
@@ -49,9 +47,7 @@ export const routes: readonly AnyRoute[] = [
   ...distributionRoutes,
   ...jointDistributionRoutes,
   ...potentialRoutes,
-  ...handOverRoutes,
-  ...handOverReviewRoutes,
-  ...handOverReleaseRoutes,
+  ...layoutRoutes,
   ...handOverRoutes,
   ...handOverReviewRoutes,
   ...handOverReleaseRoutes,

@@ -11,6 +11,7 @@ const AREAS: Partial<Record<Resource, 'data' | 'hand-overs'>> = {
   distribution: 'data',
   jointDistribution: 'data',
   potential: 'data',
+  layout: 'data',
   handOver: 'hand-overs',
 }
 

@@ -35,11 +35,12 @@ export const potentialRoutes = [
   route({
     method: 'get',
     path: '/api/terms/:termId/table',
-    summary: 'The table of a saved inversion as text: coordinate, energy, force',
+    summary: 'The table of a saved inversion as text, in a layout',
     access: { may: 'read', at: 'term' },
     query: tableQuerySchema,
     answer: { status: 200, download: 'text/plain; charset=utf-8' },
     errors: ['CONFLICT'],
+    readsContent: true,
     handle: ({ services, member, params, query: { statePoint, ...units } }) =>
       services.tables.forTerm(member, params.termId, statePoint, units),
   }),
@@ -50,6 +51,7 @@ export const potentialRoutes = [
     access: { may: 'read', at: 'mapping' },
     query: tableQuerySchema,
     answer: { status: 200, download: 'application/zip' },
+    readsContent: true,
     handle: ({ services, member, params, query: { statePoint, ...units } }) =>
       services.tables.archive(member, params.mappingId, statePoint, units),
   }),

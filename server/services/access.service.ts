@@ -14,6 +14,7 @@ export const RESOURCES = {
   potential: 'potential',
   invitation: 'invitation',
   handOver: 'hand_over',
+  layout: 'layout',
 } as const
 export type Resource = keyof typeof RESOURCES
 

@@ -5,12 +5,8 @@ import { AccountService } from './account.service'
 import { AttemptService } from './attempt.service'
 import { ComparisonService } from './comparison.service'
 import { CoverageService } from './coverage.service'
-import { CoverageService } from './coverage.service'
 import { DistributionService } from './distribution.service'
 import { GroupService } from './group.service'
-import { HandOverReleaseService } from './hand-over-release.service'
-import { HandOverReviewService } from './hand-over-review.service'
-import { HandOverService } from './hand-over.service'
 import { HandOverReleaseService } from './hand-over-release.service'
 import { HandOverReviewService } from './hand-over-review.service'
 import { HandOverService } from './hand-over.service'
@@ -23,7 +19,8 @@ import { JointTableService } from './joint-table.service'
 import { KeyService } from './key.service'
 import { MappingVersionService } from './mapping-version.service'
 import { MailService } from './mail.service'
-import { MappingVersionService } from './mapping-version.service'
+import { LayoutPreviewService } from './layout-preview.service'
+import { LayoutService } from './layout.service'
 import { MappingService } from './mapping.service'
 import { MemberService } from './member.service'
 import { PairService } from './pair.service'
@@ -37,8 +34,6 @@ import { StatePointService } from './state-point.service'
 import { TableService } from './table.service'
 import { TermService } from './term.service'
 import { TrayService } from './tray.service'
-import { WaitingService } from './waiting.service'
-import { WarningAnswerService } from './warning-answer.service'
 import { WaitingService } from './waiting.service'
 import { WarningAnswerService } from './warning-answer.service'
 
@@ -61,12 +56,12 @@ export interface ServiceOptions {
 export function createServices(dataSource: DataSource, { demo, version, tray, linkTo }: ServiceOptions) {
   const groups = new GroupService(dataSource)
   const sessions = new SessionService(dataSource, demo)
+  const tables = new TableService(dataSource)
   return {
     access: new AccessService(dataSource),
     accounts: new AccountService(dataSource),
     attempts: new AttemptService(dataSource),
     comparisons: new ComparisonService(dataSource),
-    coverages: new CoverageService(dataSource),
     coverages: new CoverageService(dataSource),
     distributions: new DistributionService(dataSource),
     groups,
@@ -74,33 +69,29 @@ export function createServices(dataSource: DataSource, { demo, version, tray, li
     invitations: new InvitationService(dataSource, linkTo),
     joining: new JoinService(dataSource),
     handOvers: new HandOverService(dataSource),
-    handOvers: new HandOverService(dataSource),
     health: new HealthService(dataSource, version),
     jointDistributions: new JointDistributionService(dataSource),
     jointTables: new JointTableService(dataSource),
     keys: new KeyService(dataSource, sessions, demo),
+    layoutPreviews: new LayoutPreviewService(tables),
+    layouts: new LayoutService(dataSource),
     mappings: new MappingService(dataSource),
     mappingVersions: new MappingVersionService(dataSource),
     mails: new MailService(dataSource),
     members: new MemberService(dataSource),
-    mappingVersions: new MappingVersionService(dataSource),
     pairs: new PairService(dataSource),
     passwordResets: new PasswordResetService(dataSource, linkTo),
     polymers: new PolymerService(dataSource),
     potentials: new PotentialService(dataSource),
     releases: new HandOverReleaseService(dataSource),
     reviews: new HandOverReviewService(dataSource, linkTo),
-    releases: new HandOverReleaseService(dataSource),
-    reviews: new HandOverReviewService(dataSource, linkTo),
     sessions,
     settings: new SettingService(dataSource),
     setUp: new SetUpService(dataSource, groups),
     statePoints: new StatePointService(dataSource),
-    tables: new TableService(dataSource),
+    tables,
     terms: new TermService(dataSource),
     tray: new TrayService(dataSource, tray),
-    waiting: new WaitingService(dataSource),
-    warningAnswers: new WarningAnswerService(dataSource),
     waiting: new WaitingService(dataSource),
     warningAnswers: new WarningAnswerService(dataSource),
   }

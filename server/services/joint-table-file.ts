@@ -1,14 +1,18 @@
-import type { JointTableQuery } from '../../shared/contracts/potential'
+import type { z } from 'zod'
+import type { jointTableQuerySchema } from '../../shared/contracts/potential'
 import {
   DEFAULT_JOINT_SETTINGS,
   DEFAULT_JOINT_TABLE,
-  formatJointRows,
-  formatJointTable,
   jointPotential,
   jointTable,
-  jointTableComments,
-  type JointTableUnits,
 } from '../../shared/joint-potential'
+import {
+  builtInLayout,
+  DEFAULT_BUILT_IN,
+  type JointAbout,
+  type Layout,
+  writeJointTableInLayout,
+} from '../../shared/layouts'
 import { termName } from '../../shared/mapping'
 import type { JointDistribution } from '../entities/joint-distribution.entity'
 import type { SourceFile } from '../entities/source-file.entity'
@@ -19,7 +23,10 @@ import { beadOrder, statePointText, type TableSource } from './table-file'
 import type { PlaceNumbers } from './table-names'
 
 /** The units a user asked for at download. */
-export type JointTableFileUnits = Required<JointTableQuery>
+export type JointTableFileUnits = Pick<JointTableWriting, 'length' | 'angle' | 'energy'>
+
+/** Units, and the layout asked for: the house's own three columns in those units when left out. */
+export type JointTableWriting = z.output<typeof jointTableQuerySchema>
 
 /** Everything a joint table rests on. */
 export interface JointTableSource extends Pick<
@@ -40,28 +47,30 @@ export interface JointTableFile {
 }
 
 /**
- * Writes the table of the smoothed joint potential of two terms: the same source and units give the same text.
+ * Writes the table of the smoothed joint potential of two terms: the same source and layout give the same text.
  *
- * @throws {InvalidInputError} as `jointPotential`, among them SAMPLE_SIZE_UNKNOWN
+ * @param units of the layout of the house that is taken without `layout`
+ * @throws {InvalidInputError} as `jointPotential`, among them SAMPLE_SIZE_UNKNOWN; as `writeJointTableInLayout`
  */
-export function writeJointTableFile(source: JointTableSource, units: JointTableFileUnits): JointTableFile {
+export function writeJointTableFile(
+  source: JointTableSource,
+  units: JointTableFileUnits,
+  layout: Layout = builtInLayout(DEFAULT_BUILT_IN, units),
+): JointTableFile {
   const { polymer, mapping, statePoint, terms, joint } = source
   const potential = jointPotential(jointHistogramOf(joint), statePoint.temperature, DEFAULT_JOINT_SETTINGS)
   const table = jointTable(potential.surface, DEFAULT_JOINT_TABLE)
-  const [xUnit, yUnit] = terms.map(({ kind }) => (kind === 'bond' ? units.length : units.angle))
-  const tableUnits: JointTableUnits = { coordinateUnits: [xUnit, yUnit], energyUnit: units.energy }
   const [x, y] = terms
-  const comments = jointTableComments({
+  const comments: JointAbout['comments'] = {
     invented: source.invented,
     polymer: `${polymer.name}, ${polymer.smiles}`,
     mapping: `${mapping.name}, revision ${mapping.revision}`,
     terms: [termName(x.types, source.placeNumbers?.[0]), termName(y.types, source.placeNumbers?.[1])],
     beadOrders: [beadOrder(mapping, x), beadOrder(mapping, y)],
     statePoint: statePointText(statePoint),
-    units: tableUnits,
     potential,
     input: source.file,
-    rowsSha256: sha256(formatJointRows(table, tableUnits)),
-  })
-  return { text: formatJointTable(table, tableUnits, comments), warnings: potential.warnings.length }
+  }
+  const about = { comments, repeatUnit: polymer.smiles, types: [x.types, y.types], handOver: null }
+  return { text: writeJointTableInLayout(table, layout, about, sha256), warnings: potential.warnings.length }
 }

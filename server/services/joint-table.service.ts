@@ -1,5 +1,6 @@
 import { type DataSource, type EntityManager, In, IsNull } from 'typeorm'
 import { InvalidInputError } from '../../shared/errors'
+import type { Layout } from '../../shared/layouts'
 import { Decision } from '../entities/decision.entity'
 import { Group } from '../entities/group.entity'
 import { JointDistribution } from '../entities/joint-distribution.entity'
@@ -7,9 +8,11 @@ import { Polymer } from '../entities/polymer.entity'
 import { SourceFile } from '../entities/source-file.entity'
 import { Term } from '../entities/term.entity'
 import { HttpError, notFound } from '../errors/http-error'
+import { layoutFor } from './find-layout'
 import {
   type JointTableFile,
   type JointTableFileUnits,
+  type JointTableWriting,
   type JointTableSource,
   writeJointTableFile,
 } from './joint-table-file'
@@ -17,7 +20,7 @@ import { type Fit, pairReason, readFit, UNFIT_DATA } from './mapping-fit'
 import type { Download, Member } from './member'
 import { placeNumber } from './stored-term-name'
 import type { TableSource } from './table-file'
-import { jointTableFileName } from './table-names'
+import { jointTableFileName, nameInLayout } from './table-names'
 import { findStatePoint, findTerm, mappingOf } from './term-context'
 
 type Background = Pick<TableSource, 'polymer' | 'mapping' | 'statePoint' | 'invented'>
@@ -35,9 +38,10 @@ export class JointTableService {
   async forPair(
     { groupId }: Member,
     jointDistributionId: string,
-    units: JointTableFileUnits,
+    writing: JointTableWriting,
   ): Promise<Download> {
     const { manager } = this.dataSource
+    const { document } = await layoutFor(manager, groupId, writing)
     const joint = await manager.findOneBy(JointDistribution, { id: jointDistributionId, groupId })
     if (!joint) throw notFound('joint distribution')
     const terms = await termsOf(manager, joint)
@@ -54,8 +58,8 @@ export class JointTableService {
     const placeNumbers = await placeNumbersOf(manager, terms)
     const source = { polymer, mapping, statePoint, invented: demo, terms, placeNumbers, joint, file }
     return {
-      fileName: jointTableName(source),
-      bytes: Buffer.from(writeJointTableFile(source, units).text),
+      fileName: nameInLayout(jointTableName(source), document),
+      bytes: Buffer.from(writeJointTableFile(source, writing, document).text),
     }
   }
 }
@@ -79,6 +83,7 @@ export async function jointOutcomes(
   manager: EntityManager,
   background: Background,
   units: JointTableFileUnits,
+  layout: Layout,
 ): Promise<JointOutcome[]> {
   const decided = await decidedPairs(manager, background)
   const sources = await Promise.all(
@@ -92,17 +97,21 @@ export async function jointOutcomes(
   return sources
     .filter(({ terms }) => terms.every(({ current }) => current))
     .sort((one, other) => placeOf(one, 0) - placeOf(other, 0) || placeOf(one, 1) - placeOf(other, 1))
-    .map((source) => outcomeOf(source, units, fit))
+    .map((source) => outcomeOf(source, fit, (each) => writeJointTableFile(each, units, layout)))
 }
 
 const placeOf = ({ terms }: JointTableSource, axis: 0 | 1): number => terms[axis].position
 
 /** One pair that the core refuses must not hold back the tables of all others. */
-function outcomeOf(source: JointTableSource, units: JointTableFileUnits, fit: Fit): JointOutcome {
+function outcomeOf(
+  source: JointTableSource,
+  fit: Fit,
+  write: (source: JointTableSource) => JointTableFile,
+): JointOutcome {
   const unfit = pairReason(fit, idsOf(source.joint), source.joint.mappingVersion)
   if (unfit !== null) return { source, file: null, reason: `${UNFIT_DATA} ${unfit}` }
   try {
-    return { source, file: writeJointTableFile(source, units), reason: null }
+    return { source, file: write(source), reason: null }
   } catch (error) {
     if (!(error instanceof InvalidInputError)) throw error
     return { source, file: null, reason: error.message }

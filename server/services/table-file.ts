@@ -1,15 +1,17 @@
-import type { TableQuery } from '../../shared/contracts/potential'
+import type { z } from 'zod'
+import type { TableQuery, tableQuerySchema } from '../../shared/contracts/potential'
 import { derivePotential } from '../../shared/forms'
 import type { Inversion, InversionSettings } from '../../shared/inversion'
-import { termName } from '../../shared/mapping'
 import {
-  formatNumber,
-  formatRows,
-  formatTable,
-  makeTable,
-  tableComments,
-  type TableUnits,
-} from '../../shared/tables'
+  type BeyondTable,
+  builtInLayout,
+  DEFAULT_BUILT_IN,
+  type Layout,
+  type TableAbout,
+  writeTableInLayout,
+} from '../../shared/layouts'
+import { termName } from '../../shared/mapping'
+import { formatNumber, makeTable, type Table, tablePoint } from '../../shared/tables'
 import type { Mapping } from '../entities/mapping.entity'
 import type { Polymer } from '../entities/polymer.entity'
 import type { StatePoint } from '../entities/state-point.entity'
@@ -19,6 +21,10 @@ import { sha256 } from './hashes'
 
 /** The units a user asked for at download. */
 export type TableFileUnits = Required<Pick<TableQuery, 'length' | 'angle' | 'energy'>>
+
+/** Units, and the layout asked for: the house's own three columns in those units when left out. */
+export type TableWriting = TableFileUnits &
+  Pick<z.output<typeof tableQuerySchema>, 'layout' | 'layoutVersion'>
 
 /** Everything the table of a term rests on. */
 export interface TableSource {
@@ -41,16 +47,36 @@ export interface TableFile {
   readonly inversion: Inversion
 }
 
-/** Writes the table of a saved inversion: the same source and units give the same text. */
-export function writeTableFile(source: TableSource, units: TableFileUnits): TableFile {
+/**
+ * Writes the table of a saved inversion: the same source and layout give the same text.
+ *
+ * @param units of the layout of the house that is taken without `layout`
+ * @throws {InvalidInputError} as `writeTableInLayout`
+ */
+export function writeTableFile(
+  source: TableSource,
+  units: TableFileUnits,
+  layout: Layout = builtInLayout(DEFAULT_BUILT_IN, units),
+): TableFile {
+  const { table, about, beyond, inversion } = tableOf(source)
+  return { text: writeTableInLayout(table, layout, about, sha256, beyond), inversion }
+}
+
+/** The numbers of the table of a saved inversion, and all that is known of it, whichever layout it is written in. */
+export interface TableContent {
+  readonly table: Table
+  readonly about: TableAbout
+  /** What the potential says beyond the table. */
+  readonly beyond: BeyondTable
+  readonly inversion: Inversion
+}
+
+/** Makes the table of a saved inversion. */
+export function tableOf(source: TableSource): TableContent {
   const { polymer, mapping, statePoint, term, input, settings } = source
   const { inversion, form } = derivePotential(input.histogram, statePoint.temperature, settings)
-  const table = makeTable(inversion.potential, settings.table)
-  const tableUnits: TableUnits = {
-    coordinateUnit: term.kind === 'bond' ? units.length : units.angle,
-    energyUnit: units.energy,
-  }
-  const comments = tableComments({
+  const { potential } = inversion
+  const comments: TableAbout['comments'] = {
     invented: source.invented,
     polymer: `${polymer.name}, ${polymer.smiles}`,
     mapping: `${mapping.name}, revision ${mapping.revision}`,
@@ -59,7 +85,6 @@ export function writeTableFile(source: TableSource, units: TableFileUnits): Tabl
     beadOrder: beadOrder(mapping, term),
     temperature: statePoint.temperature,
     statePoint: statePointText(statePoint),
-    units: tableUnits,
     settings,
     smoothing: inversion.smoothing,
     form,
@@ -67,10 +92,14 @@ export function writeTableFile(source: TableSource, units: TableFileUnits): Tabl
     inefficiency: inversion.inefficiency,
     warnings: inversion.warnings,
     input: input.file,
-    rowsSha256: sha256(formatRows(table, tableUnits)),
     savedOn: source.savedAt.toISOString().slice(0, 10),
-  })
-  return { text: formatTable(table, tableUnits, comments), inversion }
+  }
+  return {
+    table: makeTable(potential, settings.table),
+    about: { comments, repeatUnit: polymer.smiles, types: term.types, handOver: null },
+    beyond: (coordinate) => tablePoint(potential, settings.table.cap, coordinate),
+    inversion,
+  }
 }
 
 /** The beads of the term with their unit along the chain, at each place where it stands. */

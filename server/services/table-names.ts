@@ -1,4 +1,5 @@
 import type { CoordinateKind } from '../../shared/units'
+import type { Layout } from '../../shared/layouts'
 import { formatNumber } from '../../shared/tables'
 
 /** What the name of a table file says. */
@@ -46,10 +47,15 @@ export function namesInOneFolder(names: readonly string[]): string[] {
   const taken = new Set<string>()
   return names.map((name) => {
     let free = name
-    for (let copy = 2; taken.has(free.toLowerCase()); copy++) free = name.replace(/\.txt$/, `_${copy}.txt`)
+    for (let copy = 2; taken.has(free.toLowerCase()); copy++) free = name.replace(/(?=\.\w+$)/, `_${copy}`)
     taken.add(free.toLowerCase())
     return free
   })
+}
+
+/** The name that a table file has in a layout: JSON ends in .json, all else in .txt. */
+export function nameInLayout(name: string, { writing }: Pick<Layout, 'writing'>): string {
+  return writing === 'json' ? name.replace(/\.txt$/, '.json') : name
 }
 
 /** Part of a file name made of a name people gave: letters, digits, dots and hyphens stay, the rest becomes a hyphen. */

@@ -1,7 +1,9 @@
+import { DEFAULT_BUILT_IN, layoutSentences } from '../../shared/layouts'
 import { choiceOf, type MappingDocument } from '../../shared/mapping'
 import { formatNumber } from '../../shared/tables'
 import { unitWord } from '../../shared/units'
 import type { Term } from '../entities/term.entity'
+import { builtInName, type FoundLayout } from './find-layout'
 import { statePointText, type TableFileUnits, type TableSource } from './table-file'
 
 /** What the README of an archive tells. */
@@ -10,6 +12,7 @@ export interface ReadmeInput {
   /** The name of a term among those of the mapping. */
   readonly nameOf: (term: Term) => string
   readonly units: TableFileUnits
+  readonly layout: FoundLayout
   readonly files: readonly { readonly name: string; readonly term: Term; readonly warnings: number }[]
   /** Tables of two terms together. */
   readonly joint: readonly {
@@ -27,10 +30,9 @@ export interface ReadmeInput {
 
 /** The text that lies beside the tables of an archive and explains them to whoever did not make them. */
 export function writeReadme(input: ReadmeInput): string {
-  const { source, nameOf, units, files, joint, missing } = input
+  const { source, nameOf, files, joint, missing } = input
   const { polymer, mapping, statePoint } = source
   const rest = statePointText(statePoint)
-  const [length, angle, energy] = [unitWord(units.length), unitWord(units.angle), unitWord(units.energy)]
   return [
     `Tables of bonded potentials: ${polymer.name}, mapping ${mapping.name}`,
     '',
@@ -75,6 +77,28 @@ export function writeReadme(input: ReadmeInput): string {
           '',
         ]
       : []),
+    ...columnLines(input),
+    ...(usesKT(input)
+      ? [`  kT is taken at ${formatNumber(statePoint.temperature)} K, the temperature of the state point.`]
+      : []),
+    '',
+    'What they are good for',
+    '  Each table is a Boltzmann inversion of one measured distribution, divided by the Jacobian unless its comments say',
+    '  otherwise. It is valid at this one state point. Terms that are correlated, and terms that meet at one bead, may count the',
+    '  same preference twice: run a chain on the tables and compare its distributions with the measured ones before you rely',
+    '  on them.',
+    '',
+    '  The checksum in each file is the SHA-256 of its rows, without the comment lines.',
+    '',
+  ].join('\n')
+}
+
+/** What the columns are: of the house's own three, or of the layout asked for. */
+function columnLines(input: ReadmeInput): string[] {
+  const { units, joint, layout } = input
+  if (!isHouseLayout(layout)) return layoutLines(input)
+  const [length, angle, energy] = [unitWord(units.length), unitWord(units.angle), unitWord(units.energy)]
+  return [
     'Columns',
     '  The file of a term has three columns, separated by blanks: coordinate, energy, force. Lines that start with # are comments.',
     ...(joint.length > 0
@@ -90,19 +114,34 @@ export function writeReadme(input: ReadmeInput): string {
     `  Energies are in ${energy}; the least energy of each curve is 0.`,
     `  A force is minus the derivative of the energy by the coordinate: in ${energy} per ${length} for a bond, in ${energy} per`,
     `  ${angle} for an angle or a dihedral. Check which angle unit your program expects the force to be per.`,
-    ...(units.energy === 'kT'
-      ? [`  kT is taken at ${formatNumber(statePoint.temperature)} K, the temperature of the state point.`]
+  ]
+}
+
+function layoutLines({ layout: { name, version, document }, files, joint }: ReadmeInput): string[] {
+  const kinds = (['bond', 'angle', 'dihedral'] as const).filter(
+    (kind) =>
+      files.some(({ term }) => term.kind === kind) ||
+      joint.some(({ terms }) => terms.some((term) => term.kind === kind)),
+  )
+  return [
+    `Layout: ${name}${version === null ? '' : `, version ${version}`}`,
+    ...layoutSentences(document, kinds).map((line) => `  ${line}`),
+    ...(joint.length > 0
+      ? [
+          `  A joint file has ${document.joint.columns.join(', ')}. It is the smoothed joint potential at one state point: use it in place`,
+          '  of both single tables, not beside them, and validate it first.',
+        ]
       : []),
-    '',
-    'What they are good for',
-    '  Each table is a Boltzmann inversion of one measured distribution, divided by the Jacobian unless its comments say',
-    '  otherwise. It is valid at this one state point. Terms that are correlated, and terms that meet at one bead, may count the',
-    '  same preference twice: run a chain on the tables and compare its distributions with the measured ones before you rely',
-    '  on them.',
-    '',
-    '  The checksum in each file is the SHA-256 of its rows, without the comment lines.',
-    '',
-  ].join('\n')
+  ]
+}
+
+function isHouseLayout({ name, version }: FoundLayout): boolean {
+  return version === null && name === builtInName(DEFAULT_BUILT_IN)
+}
+
+function usesKT({ units, layout: { version, document } }: ReadmeInput): boolean {
+  if (version === null) return units.energy === 'kT'
+  return [document.bond, document.angle, document.dihedral].some(({ energyUnit }) => energyUnit === 'kT')
 }
 
 /** Why the mapping leaves a term out, in the words of who did. */

@@ -12,12 +12,13 @@ import type { StatePoint } from '../entities/state-point.entity'
 import { Term } from '../entities/term.entity'
 import { HttpError, notFound } from '../errors/http-error'
 import { findInversionInput, type InversionInput } from './inversion-input'
+import { type FoundLayout, layoutFor } from './find-layout'
 import { type JointOutcome, jointOutcomes, jointTableName } from './joint-table.service'
 import { type Fit, readFit, UNFIT_DATA } from './mapping-fit'
 import type { Download, Member } from './member'
 import { placeNumber, storedTermName } from './stored-term-name'
-import { type TableFileUnits, type TableSource, writeTableFile } from './table-file'
-import { fileNamePart, namesInOneFolder, tableFileName } from './table-names'
+import { type TableFileUnits, type TableSource, type TableWriting, writeTableFile } from './table-file'
+import { fileNamePart, nameInLayout, namesInOneFolder, tableFileName } from './table-names'
 import { leaveOutReason, writeReadme } from './table-readme'
 import { findStatePoint, findTerm } from './term-context'
 
@@ -44,14 +45,27 @@ export class TableService {
   /**
    * The table of one term.
    *
-   * @throws {HttpError} NOT_FOUND without data or saved potential; CONFLICT when the potential is stale
+   * @throws {HttpError} NOT_FOUND without data or saved potential, or layout; CONFLICT when the potential is stale
+   * @throws {InvalidInputError} LAYOUT_INVALID when the layout does not fit the table
    */
   async forTerm(
-    { groupId }: Member,
+    member: Member,
     termId: string,
     statePointId: string,
-    units: TableFileUnits,
+    writing: TableWriting,
   ): Promise<Download> {
+    const { document } = await layoutFor(this.dataSource.manager, member.groupId, writing)
+    const source = await this.source(member, termId, statePointId)
+    const { text } = writeTableFile(source, writing, document)
+    return { fileName: nameInLayout(sourceName(source), document), bytes: Buffer.from(text) }
+  }
+
+  /**
+   * What the table of one term is made from.
+   *
+   * @throws {HttpError} as `forTerm`
+   */
+  async source({ groupId }: Member, termId: string, statePointId: string): Promise<TableSource> {
     const term = await findTerm(this.dataSource.manager, groupId, termId)
     const background = await this.background(groupId, term.mappingId, statePointId)
     const { manager } = this.dataSource
@@ -69,25 +83,24 @@ export class TableService {
     const siblings = await currentTerms(manager, term.mappingId)
     const own = siblings.find(({ id }) => id === termId)
     const number = own && placeNumber(own, siblings)
-    const { text } = writeTableFile({ ...background, ...outcome, term, placeNumber: number }, units)
-    const { temperature } = background.statePoint
-    const fileName = tableFileName({ ...term, temperature, placeNumber: number })
-    return { fileName, bytes: Buffer.from(text) }
+    return { ...background, ...outcome, term, placeNumber: number }
   }
 
   /**
    * All tables of the terms in use of a mapping at a state point as a zip archive, joint ones where that was decided, with a README.
    *
-   * @throws {HttpError} NOT_FOUND when no term has a table
+   * @throws {HttpError} NOT_FOUND when no term has a table, or for the layout
+   * @throws {InvalidInputError} LAYOUT_INVALID when the layout does not fit a table
    */
   async archive(
     { groupId }: Member,
     mappingId: string,
     statePointId: string,
-    units: TableFileUnits,
+    writing: TableWriting,
   ): Promise<Download> {
     const background = await this.background(groupId, mappingId, statePointId)
     const { manager } = this.dataSource
+    const layout = await layoutFor(manager, groupId, writing)
     const terms = await currentTerms(manager, mappingId)
     const fit = await readFit(manager, background.mapping)
     const sources: TableSource[] = []
@@ -99,12 +112,12 @@ export class TableService {
         sources.push({ ...background, ...outcome, term, placeNumber: placeNumber(term, terms) })
       } else missing.push({ term, reason: outcome.reason })
     }
-    const joint = await jointOutcomes(manager, background, units)
+    const joint = await jointOutcomes(manager, background, writing, layout.document)
     if (sources.length === 0 && joint.every(({ file }) => file === null)) {
       throw new HttpError('NOT_FOUND', 'No term has a table yet: save a potential on the bench first.')
     }
     const leftOut = terms.filter((term) => !used.includes(term))
-    return pack({ background, terms, sources, joint, missing, leftOut }, units)
+    return pack({ background, terms, sources, joint, missing, leftOut }, writing, layout)
   }
 
   private async background(groupId: string, mappingId: string, statePointId: string): Promise<Background> {
@@ -146,29 +159,30 @@ interface Contents {
   readonly leftOut: readonly Term[]
 }
 
-function pack(contents: Contents, units: TableFileUnits): Download {
+function pack(contents: Contents, units: TableFileUnits, layout: FoundLayout): Download {
   const { background, terms, sources, joint, missing, leftOut } = contents
   const { polymer, mapping, statePoint } = background
   const { temperature } = statePoint
   const tables = sources.map((source) => {
-    const { text, inversion } = writeTableFile(source, units)
-    const { term, placeNumber: number, savedAt } = source
-    return { text, time: savedAt, term, placeNumber: number, warnings: inversion.warnings.length }
+    const { text, inversion } = writeTableFile(source, units, layout.document)
+    const { term, savedAt } = source
+    return { text, time: savedAt, source, term, warnings: inversion.warnings.length }
   })
   const jointTables = joint.flatMap(({ source, file }) =>
     file === null ? [] : [{ ...file, time: source.joint.uploadedAt, source, terms: source.terms }],
   )
   const all = [...tables, ...jointTables]
-  const names = namesInOneFolder([
-    ...tables.map(({ term, placeNumber: number }) =>
-      tableFileName({ ...term, temperature, placeNumber: number }),
-    ),
-    ...jointTables.map(({ source }) => jointTableName(source)),
-  ])
+  const names = namesInOneFolder(
+    [
+      ...tables.map(({ source }) => sourceName(source)),
+      ...jointTables.map(({ source }) => jointTableName(source)),
+    ].map((name) => nameInLayout(name, layout.document)),
+  )
   const readme = writeReadme({
     source: background,
     nameOf: (term) => nameAmong(term, terms),
     units,
+    layout,
     files: tables.map((table, index) => ({ ...table, name: names[index] })),
     joint: jointTables.map((table, index) => ({ ...table, name: names[tables.length + index] })),
     missing,
@@ -187,6 +201,11 @@ function pack(contents: Contents, units: TableFileUnits): Download {
     fileName: `${parts.join('_')}_tables.zip`,
     bytes: zipSync(archive),
   }
+}
+
+/** As in bond_B-E_400K.txt. */
+function sourceName({ term, placeNumber: number, statePoint }: TableSource): string {
+  return tableFileName({ ...term, temperature: statePoint.temperature, placeNumber: number })
 }
 
 /** Joint terms are read by themselves: among the others they are found by their ids. */

@@ -196,8 +196,6 @@ export const layoutPreviewSchema = z
     head: z.array(z.string()),
     /** Empty where the head holds all. */
     tail: z.array(z.string()),
-    /** Number of the first line that is a row, from 1. */
-    firstRowLine: z.number().int(),
     checks: z.array(layoutCheckSchema),
   })
   .meta({ id: 'LayoutPreview' })

@@ -9,6 +9,7 @@ import {
   revisionSchema,
   timestampSchema,
 } from './common'
+import { layoutRefSchema } from './layout'
 
 const { log10Lambda, inefficiency, tailStiffness, rows } = SETTING_LIMITS
 /** Longest name of a form. */
@@ -89,6 +90,10 @@ export const tableQuerySchema = z
     length: lengthUnitSchema.default('nm'),
     angle: angleUnitSchema.default('degree'),
     energy: energyUnitSchema.default('kJ/mol'),
+    /** A layout of the house, in these units, or one of the group, which has its own; three columns when left out. */
+    layout: layoutRefSchema.optional(),
+    /** Of a layout of the group: an older version than its newest. */
+    layoutVersion: z.coerce.number<number>().int().positive().optional(),
   })
   .meta({ id: 'TableQuery' })
 export type TableQuery = z.input<typeof tableQuerySchema>

@@ -1,5 +1,5 @@
-import type { z } from 'zod'
-import { filePath, type MappingFileError } from './mapping-file-error'
+import { issueErrors } from './file-issues'
+import type { MappingFileError } from './mapping-file-error'
 import {
   MAPPING_FILE_FORMAT,
   MAPPING_FILE_VERSION,
@@ -47,27 +47,4 @@ export function readMappingFile(text: string): MappingFileReading {
 
 function refused(code: MappingFileError['code'], message: string, path: string): MappingFileReading {
   return { ok: false, errors: [{ code, message, path }] }
-}
-
-function issueErrors(issue: z.core.$ZodIssue, value: unknown): MappingFileError[] {
-  const path = filePath(issue.path)
-  if (issue.code === 'unrecognized_keys') {
-    return issue.keys.map((key) => ({
-      code: 'FIELD_UNKNOWN',
-      message: `The format has no field “${key}” there.`,
-      path: filePath([...issue.path, key]),
-    }))
-  }
-  if (valueAt(value, issue.path) === undefined) {
-    return [{ code: 'FIELD_MISSING', message: `“${path}” is missing.`, path }]
-  }
-  return [{ code: 'FIELD_INVALID', message: `“${path}” cannot be used: ${issue.message}`, path }]
-}
-
-function valueAt(value: unknown, keys: readonly PropertyKey[]): unknown {
-  return keys.reduce<unknown>(
-    (inner, key) =>
-      typeof inner === 'object' && inner !== null ? (inner as Record<PropertyKey, unknown>)[key] : undefined,
-    value,
-  )
 }

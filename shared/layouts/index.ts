@@ -22,6 +22,7 @@ export {
 export { type LayoutFields, NO_FIELDS } from './layout-fields'
 export { JOINT_JSON_FORMAT } from './joint-json'
 export { TABLE_JSON_FORMAT, TABLE_JSON_VERSION } from './layout-json'
+export { layoutSentences } from './layout-sentences'
 export {
   jointLayoutWording,
   type JointLayoutWording,

@@ -56,7 +56,7 @@ export function jointLayoutWording(
 }
 
 /** What a coordinate is and how the layout counts it. */
-function readingSentence({ angle, dihedral }: Layout, kind: CoordinateKind): string {
+export function readingSentence({ angle, dihedral }: Layout, kind: CoordinateKind): string {
   if (kind === 'angle' && angle.reading === 'supplement') {
     return 'bond angle: supplement of the internal angle at the middle bead, 0 is straight; formulas below count the internal angle'
   }

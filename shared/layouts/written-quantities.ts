@@ -15,10 +15,14 @@ export function writtenJointQuantities({ writing, joint }: Layout): readonly Joi
 
 /** Names of all tags of a checked template, in sections as well. */
 function namesIn(template: string): readonly string[] {
-  const walk = (tokens: readonly unknown[][]): string[] =>
-    tokens.flatMap(([type, name, , , inner]) => [
-      ...(type === 'text' || type === '!' ? [] : [name]),
-      ...(Array.isArray(inner) ? walk(inner as unknown[][]) : []),
-    ])
-  return walk(Mustache.parse(template) as unknown[][])
+  return namesOf(Mustache.parse(template) as readonly Token[])
+}
+
+type Token = readonly [type: string, name: string, start: number, end: number, inner?: unknown]
+
+function namesOf(tokens: readonly Token[]): string[] {
+  return tokens.flatMap(([type, name, , , inner]) => [
+    ...(type === 'text' || type === '!' ? [] : [name]),
+    ...(Array.isArray(inner) ? namesOf(inner as Token[]) : []),
+  ])
 }

@@ -8,8 +8,9 @@ import { readTable } from '@/api/tables'
 import { useWorkbenchStore } from '@/stores/workbench'
 import { usePairs } from './usePairs'
 
-/** A state point and the units of the files. */
-export type TableUnitQuery = Required<TableQuery>
+/** A state point, the units of the files, and their layout. */
+export type TableUnitQuery = Required<Pick<TableQuery, 'statePoint' | 'length' | 'angle' | 'energy'>> &
+  Pick<TableQuery, 'layout' | 'layoutVersion'>
 
 /** A table as its file has it: the numbers on the screen are read from the very text that is downloaded. */
 export interface TableFile {
@@ -63,7 +64,7 @@ export function useTableFiles(query: () => TableUnitQuery | null): {
   const missing = computed(() =>
     workbench.usedTerms.filter(({ standing, current }) => current && standing !== 'inverted'),
   )
-  const joint = computed(() => pairs.value.filter(({ decision }) => decision === 'joint'))
+  const joint = computed(() => pairs.value.filter(({ decision, unfit }) => decision === 'joint' && !unfit))
 
   const load = async (asked: TableUnitQuery): Promise<void> => {
     leaving.abort()

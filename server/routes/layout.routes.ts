@@ -1,0 +1,127 @@
+import { z } from 'zod'
+import {
+  defaultLayoutSchema,
+  layoutCopySchema,
+  layoutCreateSchema,
+  layoutListSchema,
+  layoutPreviewAskSchema,
+  layoutPreviewSchema,
+  layoutSaveSchema,
+  layoutSchema,
+  layoutVersionsSchema,
+} from '../../shared/contracts/layout'
+import { route } from './route'
+
+const atVersion = z.object({ version: z.coerce.number<number>().int().positive().optional() })
+
+/** How tables are written: the layouts of a group. */
+export const layoutRoutes = [
+  route({
+    method: 'get',
+    path: '/api/groups/:groupId/layouts',
+    summary: 'Layouts of the house and of the group, and which one is taken where nobody chooses',
+    access: { may: 'read', at: 'group' },
+    scope: 'read',
+    answer: { status: 200, body: layoutListSchema },
+    handle: ({ services, member }) => services.layouts.list(member),
+  }),
+  route({
+    method: 'post',
+    path: '/api/groups/:groupId/layouts',
+    summary: 'Add a layout; its templates are checked',
+    access: { may: 'write', at: 'group' },
+    scope: 'write',
+    body: layoutCreateSchema,
+    answer: { status: 201, body: layoutSchema },
+    errors: ['NAME_TAKEN'],
+    readsContent: true,
+    handle: ({ services, member, body }) => services.layouts.create(member, body),
+  }),
+  route({
+    method: 'put',
+    path: '/api/groups/:groupId/default-layout',
+    summary: 'Say which layout the group takes where nobody chooses',
+    access: { may: 'manage', at: 'group' },
+    body: defaultLayoutSchema,
+    answer: { status: 200, body: layoutListSchema },
+    handle: ({ services, member, body }) => services.layouts.setDefault(member, body.layout),
+  }),
+  route({
+    method: 'get',
+    path: '/api/layouts/:layoutId',
+    summary: 'A layout with its document, in its newest version or in the one given',
+    access: { may: 'read', at: 'layout' },
+    query: atVersion,
+    answer: { status: 200, body: layoutSchema },
+    handle: ({ services, member, params, query }) =>
+      services.layouts.get(member, params.layoutId, query.version),
+  }),
+  route({
+    method: 'get',
+    path: '/api/layouts/:layoutId/versions',
+    summary: 'Every version of a layout, the newest first',
+    access: { may: 'read', at: 'layout' },
+    answer: { status: 200, body: layoutVersionsSchema },
+    handle: ({ services, member, params }) => services.layouts.versions(member, params.layoutId),
+  }),
+  route({
+    method: 'get',
+    path: '/api/layouts/:layoutId/file',
+    summary: 'A layout as a file that another group can bring in',
+    access: { may: 'read', at: 'layout' },
+    query: atVersion,
+    answer: { status: 200, download: 'application/json; charset=utf-8' },
+    handle: ({ services, member, params, query }) =>
+      services.layouts.file(member, params.layoutId, query.version),
+  }),
+  route({
+    method: 'put',
+    path: '/api/layouts/:layoutId',
+    summary: 'Save a layout as its next version, over the version one started from',
+    access: { may: 'write', at: 'layout' },
+    body: layoutSaveSchema,
+    answer: { status: 200, body: layoutSchema },
+    errors: ['CONFLICT', 'NAME_TAKEN'],
+    readsContent: true,
+    handle: ({ services, member, params, body }) => services.layouts.save(member, params.layoutId, body),
+  }),
+  route({
+    method: 'post',
+    path: '/api/layouts/:layoutId/copy',
+    summary: 'Add a layout that begins as another',
+    access: { may: 'write', at: 'layout' },
+    body: layoutCopySchema,
+    answer: { status: 201, body: layoutSchema },
+    errors: ['NAME_TAKEN'],
+    handle: ({ services, member, params, body }) => services.layouts.copy(member, params.layoutId, body.name),
+  }),
+  route({
+    method: 'post',
+    path: '/api/layouts/:layoutId/archive',
+    summary: 'Offer a layout no longer; what was written with it can be written again',
+    access: { may: 'write', at: 'layout' },
+    answer: { status: 200, body: layoutSchema },
+    handle: ({ services, member, params }) => services.layouts.setArchived(member, params.layoutId, true),
+  }),
+  route({
+    method: 'post',
+    path: '/api/layouts/:layoutId/restore',
+    summary: 'Offer an archived layout again',
+    access: { may: 'write', at: 'layout' },
+    answer: { status: 200, body: layoutSchema },
+    handle: ({ services, member, params }) => services.layouts.setArchived(member, params.layoutId, false),
+  }),
+  route({
+    method: 'post',
+    path: '/api/terms/:termId/layout-preview',
+    summary: 'The first and last lines of the file that a layout makes of a table, and what was found in it',
+    access: { may: 'read', at: 'term' },
+    scope: 'read',
+    body: layoutPreviewAskSchema,
+    answer: { status: 200, body: layoutPreviewSchema },
+    errors: ['CONFLICT'],
+    readsContent: true,
+    handle: ({ services, member, params, body }) =>
+      services.layoutPreviews.preview(member, params.termId, body),
+  }),
+]

@@ -24,3 +24,16 @@ export function csvCell(value: number | string | null): string {
   const words = (RUNS.test(value) ? `'${value}` : value).replace(RUNS_AFTER_SEPARATOR, "$1'")
   return /[",;\t\r\n]/.test(words) ? `"${words.replaceAll('"', '""')}"` : words
 }
+
+/** A formula behind whatever may part cells. */
+const RUNS_AFTER_ANY = new RegExp(`([,;\\t]\\s*"*)(?=${FORMULA_START})`, 'gu')
+
+/**
+ * Words for a text file that may be opened as comma-separated values although it is not made of quoted cells: an apostrophe
+ * stands before everything that would begin a formula, at the start and behind commas, semicolons and tabs.
+ *
+ * @example plainWords('bulk, =1+1') // "bulk, '=1+1"
+ */
+export function plainWords(words: string): string {
+  return (RUNS.test(words) ? `'${words}` : words).replace(RUNS_AFTER_ANY, "$1'")
+}

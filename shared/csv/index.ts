@@ -1,2 +1,2 @@
-export { csvCell } from './csv-cell'
+export { csvCell, plainWords } from './csv-cell'
 export { csvText, type CsvColumn } from './csv-text'

@@ -1,3 +1,4 @@
+import { plainWords } from '../csv'
 import type { Table } from '../tables'
 import { energyScale, thermalEnergy } from '../units'
 import { columnName, columnWidth, headLine, unitWords } from './column-names'
@@ -13,6 +14,9 @@ export const SHORT = { style: 'shortest', digits: 7, width: 0 } as const
 
 /** Fields of the templates that do not depend on whether a table has one coordinate or two. */
 export function commonView(layout: Layout, fields: LayoutFields): TemplateView {
+  // A file with commas is opened in spreadsheets: no name may become a formula there.
+  const parted = layout.separator === 'comma' || layout.separator === 'semicolon'
+  const words = (text: string | null): string => (parted ? plainWords(oneLine(text)) : oneLine(text))
   const names = [
     'polymer',
     'repeatUnit',
@@ -23,20 +27,20 @@ export function commonView(layout: Layout, fields: LayoutFields): TemplateView {
     'savedOn',
     'handOver',
   ] as const
-  const types = fields.types.map(oneLine)
+  const types = fields.types.map(words)
   return {
-    ...Object.fromEntries(names.map((name) => [name, oneLine(fields[name])])),
+    ...Object.fromEntries(names.map((name) => [name, words(fields[name])])),
     types,
     ...Object.fromEntries([1, 2, 3, 4].map((place) => [`type${place}`, types[place - 1] ?? ''])),
-    inputName: oneLine(fields.input?.name ?? null),
-    inputSha256: oneLine(fields.input?.sha256 ?? null),
+    inputName: words(fields.input?.name ?? null),
+    inputSha256: words(fields.input?.sha256 ?? null),
     invented: fields.invented,
     comment: layout.comment,
     // Without a comment sign these lines would be read as rows.
-    comments: layout.comment === '' ? [] : fields.comments.map(oneLine),
+    comments: layout.comment === '' ? [] : fields.comments.map(words),
     warnings: fields.warnings.map(({ code, message }) => ({
-      code: oneLine(code),
-      message: oneLine(message),
+      code: words(code),
+      message: words(message),
     })),
   }
 }

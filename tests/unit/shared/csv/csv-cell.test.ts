@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { csvCell } from '@shared/csv'
+import { csvCell, plainWords } from '@shared/csv'
 
 describe('csvCell', () => {
   it('gives numbers seven significant digits at most, with a point and a plain minus', () => {
@@ -46,5 +46,13 @@ describe('csvCell', () => {
     expect(csvCell('a,b')).toBe('"a,b"')
     expect(csvCell('he said "r"')).toBe('"he said ""r"""')
     expect(csvCell('=HYPERLINK("x","y")')).toBe('"\'=HYPERLINK(""x"",""y"")"')
+  })
+})
+
+describe('plainWords', () => {
+  it('runs nothing at the start or behind what may part cells, and quotes nothing', () => {
+    expect(plainWords('=1+1')).toBe("'=1+1")
+    expect(plainWords('bulk, =1+1; @x,-2')).toBe("bulk, '=1+1; '@x,'-2")
+    expect(plainWords('U = 0, poly(A)')).toBe('U = 0, poly(A)')
   })
 })

@@ -13,6 +13,7 @@ import {
   mappingFitSchema,
   mappingVersionListSchema,
 } from '../../shared/contracts/mapping-version'
+import { termEvidenceSchema } from '../../shared/contracts/term-evidence'
 import { atStatePoint } from './queries'
 import { route } from './route'
 
@@ -85,6 +86,17 @@ export const mappingRoutes = [
     answer: { status: 200, body: pairListSchema },
     handle: ({ services, member, params, query }) =>
       services.pairs.list(member, params.mappingId, query.statePoint),
+  }),
+  route({
+    method: 'get',
+    path: '/api/mappings/:mappingId/evidence',
+    summary:
+      'What data say about which of several terms of one motion to use: samples and couplings at a state point',
+    access: { may: 'read', at: 'mapping' },
+    query: atStatePoint,
+    answer: { status: 200, body: termEvidenceSchema },
+    handle: ({ services, member, params, query }) =>
+      services.termEvidence.of(member, params.mappingId, query.statePoint),
   }),
   route({
     method: 'get',

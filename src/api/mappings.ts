@@ -1,4 +1,7 @@
-import type { Mapping, MappingCreate, MappingUpdate, Term } from '@shared/contracts/mapping'
+import type { Mapping, MappingCreate, MappingDocument, MappingUpdate, Term } from '@shared/contracts/mapping'
+import type { MappingCoverage } from '@shared/contracts/mapping-coverage'
+import type { MappingFit, MappingVersion } from '@shared/contracts/mapping-version'
+import type { TermEvidence } from '@shared/contracts/term-evidence'
 import { http } from './http'
 
 export const listMappings = async (polymerId: string): Promise<Mapping[]> =>
@@ -19,3 +22,19 @@ export const deleteMapping = (mappingId: string): Promise<undefined> => http.del
 export const listTerms = async (mappingId: string, statePointId: string | null): Promise<Term[]> =>
   (await http.get<{ terms: Term[] }>(`/mappings/${mappingId}/terms`, { query: { statePoint: statePointId } }))
     .terms
+
+/** Which terms have data at which state points. */
+export const getCoverage = (mappingId: string): Promise<MappingCoverage> =>
+  http.get(`/mappings/${mappingId}/coverage`)
+
+/** The earlier versions, the newest first. */
+export const listVersions = async (mappingId: string): Promise<MappingVersion[]> =>
+  (await http.get<{ versions: MappingVersion[] }>(`/mappings/${mappingId}/versions`)).versions
+
+/** What saving a document would do to the data; nothing is saved. */
+export const previewFit = (mappingId: string, document: MappingDocument): Promise<MappingFit> =>
+  http.post(`/mappings/${mappingId}/fit`, { json: { document } })
+
+/** What data say about which terms to use. */
+export const getEvidence = (mappingId: string, statePoint: string): Promise<TermEvidence> =>
+  http.get(`/mappings/${mappingId}/evidence`, { query: { statePoint } })

@@ -1,3 +1,4 @@
+import { ref, type Ref } from 'vue'
 import { onBeforeRouteLeave, onBeforeRouteUpdate, useRouter } from 'vue-router'
 import { useEventListener } from '@vueuse/core'
 import type { Mapping } from '@shared/contracts/mapping'
@@ -10,6 +11,10 @@ import { type MappingSaving, useSaveMapping } from './useSaveMapping'
 export interface BoardSaving {
   readonly saving: MappingSaving
   readonly takeTheirs: () => void
+  /** Puts the mapping as it was last saved back on screen; what was painted stays one Undo away. */
+  readonly takeBack: () => void
+  /** How often someone wanted to leave while a new version waits to be saved. */
+  readonly leaving: Ref<number>
   readonly keepMine: () => Promise<void>
 }
 
@@ -35,10 +40,18 @@ export function useBoardSaving(mapping: Mapping, history: History<MappingDocumen
     }
   }
 
-  onBeforeRouteLeave(() => saving.flush())
-  onBeforeRouteUpdate((to, from) => to.params['mappingId'] === from.params['mappingId'] || saving.flush())
+  const takeBack = (): void => history.push(saving.stored.value.document)
+
+  const leaving = ref(0)
+  const leave = async (): Promise<boolean> => {
+    const done = await saving.flush()
+    if (!done && saving.held.value) leaving.value += 1
+    return done
+  }
+  onBeforeRouteLeave(leave)
+  onBeforeRouteUpdate((to, from) => to.params['mappingId'] === from.params['mappingId'] || leave())
   useEventListener(window, 'beforeunload', (event: BeforeUnloadEvent) => {
     if (saving.unsaved.value) event.preventDefault()
   })
-  return { saving, takeTheirs, keepMine }
+  return { saving, takeTheirs, takeBack, keepMine, leaving }
 }

@@ -2,6 +2,7 @@ import { computed, ref, shallowRef, watch, type ComputedRef, type Ref, type Shal
 import { useDebounceFn } from '@vueuse/core'
 import { mappingSchema, type Mapping } from '@shared/contracts/mapping'
 import type { MappingDocument } from '@shared/mapping'
+import { sameMakeUp } from '@shared/mapping/make-up'
 import { ApiError } from '@/api/http'
 import { createMapping, saveMapping } from '@/api/mappings'
 
@@ -17,6 +18,15 @@ export interface MappingSaving {
   readonly error: ShallowRef<ApiError | null>
   /** Since when changes could not be saved. */
   readonly failedAt: ShallowRef<Date | null>
+  /**
+   * Data stand on the mapping and the beads on screen are not those they were measured on: a save would make a new version. Nothing
+   * is saved until a person says so.
+   */
+  readonly held: ComputedRef<boolean>
+  /** The mapping as it was last saved. */
+  readonly stored: ComputedRef<Mapping>
+  /** Saves what is held as a new version. */
+  readonly saveVersion: () => Promise<boolean>
   /** Saves now what is not saved. True when nothing is left to save. */
   readonly flush: () => Promise<boolean>
   /** Takes the other person's version as the one to go on from; returns its document. */
@@ -27,7 +37,7 @@ export interface MappingSaving {
 
 /**
  * Saves the document of a mapping whenever painting pauses, with the revision it started from. When someone else saved in
- * between nothing is overwritten: their version is put into `conflict`.
+ * between nothing is overwritten: their version is put into `conflict`. What would make a new version waits for a person.
  *
  * @param opened the mapping as it was opened
  * @param document what is on screen
@@ -46,6 +56,10 @@ export function useSaveMapping(
   const error = shallowRef<ApiError | null>(null)
   const failedAt = shallowRef<Date | null>(null)
   const unsaved = computed(() => document.value !== saved.value.document)
+  const stored = computed(() => saved.value.mapping)
+  const held = computed(
+    () => unsaved.value && stored.value.hasData && !sameMakeUp(stored.value.document, document.value),
+  )
   let running: Promise<void> = Promise.resolve()
 
   const fail = (failure: unknown): void => {
@@ -59,8 +73,8 @@ export function useSaveMapping(
     failedAt.value ??= new Date()
   }
 
-  const saveOnce = async (): Promise<void> => {
-    if (!unsaved.value || conflict.value !== null) return
+  const saveOnce = async (asVersion: boolean): Promise<void> => {
+    if (!unsaved.value || conflict.value !== null || (held.value && !asVersion)) return
     const sent = document.value
     const { id, name, revision } = saved.value.mapping
     saving.value = true
@@ -77,11 +91,13 @@ export function useSaveMapping(
     }
   }
   /** One save after the other: each goes out with the revision that the one before returned. */
-  const flush = async (): Promise<boolean> => {
-    running = running.then(saveOnce)
+  const inTurn = async (asVersion: boolean): Promise<boolean> => {
+    running = running.then(() => saveOnce(asVersion))
     await running
     return !unsaved.value
   }
+  const flush = (): Promise<boolean> => inTurn(false)
+  const saveVersion = (): Promise<boolean> => inTurn(true)
   const saveSoon = useDebounceFn(() => void flush(), PAUSE)
   watch(unsaved, (waits) => waits && void saveSoon())
   watch(document, () => unsaved.value && void saveSoon())
@@ -112,5 +128,17 @@ export function useSaveMapping(
     }
   }
 
-  return { unsaved, saving, conflict, error, failedAt, flush, takeTheirs, keepMine }
+  return {
+    unsaved,
+    saving,
+    conflict,
+    error,
+    failedAt,
+    held,
+    stored,
+    flush,
+    saveVersion,
+    takeTheirs,
+    keepMine,
+  }
 }

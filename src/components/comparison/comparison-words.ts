@@ -67,6 +67,7 @@ export function termCounts({ terms, leftOut }: ComparedMapping): string {
 
 /** Whether a term has one peak, as far as anybody counted. */
 export function peaksText({ kind, basins, coverage }: ComparedTerm): string {
+  if (coverage === 'unfit') return 'no longer fits'
   if (coverage !== 'here') return coverage === 'elsewhere' ? 'only elsewhere' : 'no data'
   if (basins === null) return 'not counted'
   if (basins.count <= 1) return kind === 'dihedral' ? '1 basin' : 'single-peaked'

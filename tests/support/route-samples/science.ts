@@ -22,6 +22,9 @@ export const scienceSamples: RouteSamples = {
   'get /api/mappings/:mappingId': () => ({}),
   'put /api/mappings/:mappingId': () => ({ body: { revision: 1, name: 'Saved', document: DOCUMENT } }),
   'get /api/mappings/:mappingId/coverage': () => ({}),
+  'get /api/mappings/:mappingId/evidence': ({ job: { statePointId } }) => ({
+    query: `statePoint=${statePointId}`,
+  }),
   'get /api/mappings/:mappingId/versions': () => ({}),
   'post /api/mappings/:mappingId/fit': () => ({ body: { document: DOCUMENT } }),
   'delete /api/mappings/:mappingId': () => ({}),

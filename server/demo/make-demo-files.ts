@@ -40,6 +40,46 @@ export const COUPLED_PAIR: DemoPair = { bond: ['E', 'H'], angle: ['B', 'E', 'H']
 /** The ester bond knows nothing of the side chain: two tables. */
 export const SEPARABLE_PAIR: DemoPair = { bond: ['B', 'E'], angle: ['B', 'E', 'H'], bondWidth: 0.004 }
 
+/** Each bond of the 5-to-1 mapping with each angle that it is a side of. */
+export const FIVE_TO_ONE_PAIRS: readonly DemoPair[] = [
+  [
+    ['B', 'B'],
+    ['B', 'B', 'B'],
+  ],
+  [
+    ['B', 'B'],
+    ['B', 'B', 'E'],
+  ],
+  [
+    ['B', 'E'],
+    ['B', 'B', 'E'],
+  ],
+  [
+    ['B', 'E'],
+    ['B', 'E', 'S1'],
+  ],
+  [
+    ['E', 'S1'],
+    ['B', 'E', 'S1'],
+  ],
+  [
+    ['E', 'S1'],
+    ['E', 'S1', 'S2'],
+  ],
+  [
+    ['S1', 'S2'],
+    ['E', 'S1', 'S2'],
+  ],
+  [
+    ['S1', 'S2'],
+    ['S1', 'S2', 'S3'],
+  ],
+  [
+    ['S2', 'S3'],
+    ['S1', 'S2', 'S3'],
+  ],
+].map(([bond, angle]) => ({ bond, angle, bondWidth: 0.006 }))
+
 /** One seed for all: the same chains are seen by every mapping, as in a real study. */
 const SEED = 20_260
 

@@ -6,6 +6,7 @@ import { DEMO_POLYMER, FIVE_TO_ONE, THREE_TO_ONE, type DemoMapping } from './dem
 import { DEMO_FOUNDING } from './demo-people'
 import {
   COUPLED_PAIR,
+  FIVE_TO_ONE_PAIRS,
   findTerm,
   makeDemoFiles,
   SEPARABLE_PAIR,
@@ -14,9 +15,14 @@ import {
 } from './make-demo-files'
 
 const STATE_POINTS = [
-  { temperature: 400, pairs: [COUPLED_PAIR, SEPARABLE_PAIR] },
-  { temperature: 450, pairs: [] },
+  { temperature: 400, withPairs: true },
+  { temperature: 450, withPairs: false },
 ] as const
+
+const PAIRS: ReadonlyMap<DemoMapping, readonly DemoPair[]> = new Map([
+  [THREE_TO_ONE, [COUPLED_PAIR, SEPARABLE_PAIR]],
+  [FIVE_TO_ONE, FIVE_TO_ONE_PAIRS],
+])
 
 /** What the modeller has inverted so far: at the first state point, by mapping; the rest waits as data. */
 const INVERTED = [
@@ -58,7 +64,7 @@ export async function writeDemo(services: Services): Promise<void> {
     const { id } = await services.mappings.create(modeller, polymer.id, { name, document })
     stored.push({ id, mapping, terms: await services.terms.list(modeller, id, null) })
   }
-  for (const [index, { temperature, pairs }] of STATE_POINTS.entries()) {
+  for (const [index, { temperature, withPairs }] of STATE_POINTS.entries()) {
     const statePoint = await services.statePoints.create(modeller, polymer.id, {
       temperature,
       pressure: 1,
@@ -66,8 +72,8 @@ export async function writeDemo(services: Services): Promise<void> {
       composition: '',
       notes: 'Invented demonstration.',
     })
-    const wanted = (mapping: DemoMapping) => (mapping === THREE_TO_ONE ? pairs : [])
-    const requests = stored.map(({ mapping, terms }) => ({ mapping, terms, pairs: wanted(mapping) }))
+    const pairsOf = (mapping: DemoMapping) => (withPairs && PAIRS.get(mapping)) || []
+    const requests = stored.map(({ mapping, terms }) => ({ mapping, terms, pairs: pairsOf(mapping) }))
     for (const [at, files] of makeDemoFiles(requests, temperature).entries()) {
       await addFiles(services, modeller, stored[at], files, requests[at].pairs, statePoint.id)
     }

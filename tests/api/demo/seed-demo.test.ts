@@ -102,6 +102,13 @@ describe('seedDemo', () => {
     expect(summary).toHaveLength(1)
     expect(summary[0]).toMatch(/In 3-to-1 the bond E–H has \d+ basins deeper than 0\.5 kT/)
     expect(summary[0]).toContain('5-to-1 costs 2 beads more per unit')
+    // The joint potential of the hexyl bond is what the finer mapping does without.
+    expect([coarse.pairs.length, fine.pairs.length]).toEqual([2, 9])
+    expect(coarse.coupling).toBeGreaterThan(0.3)
+    expect(fine.coupling).toBeLessThan(0.05)
+    expect(summary[0]).toMatch(
+      /Correlation left behind: 0\.\d+ nats over 2 pairs in 3-to-1, [\d.e-]+ nats over 9 pairs in 5-to-1\./,
+    )
     // (5/3)² pairs per step, at one density.
     expect([coarse.cost, fine.cost]).toEqual([1, (5 / 3) ** 2])
     expect(mappings.flatMap(({ terms }) => terms.map(({ coverage }) => coverage))).not.toContain('missing')

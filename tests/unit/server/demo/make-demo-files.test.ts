@@ -11,6 +11,7 @@ import {
 } from '../../../../server/demo/demo-mappings'
 import {
   COUPLED_PAIR,
+  FIVE_TO_ONE_PAIRS,
   findTerm,
   makeDemoFiles,
   SEPARABLE_PAIR,
@@ -28,7 +29,7 @@ beforeAll(async () => {
     terms: deriveTerms(unit, mapping.document),
     pairs,
   })
-  requests = [request(THREE_TO_ONE, [COUPLED_PAIR, SEPARABLE_PAIR]), request(FIVE_TO_ONE, [])]
+  requests = [request(THREE_TO_ONE, [COUPLED_PAIR, SEPARABLE_PAIR]), request(FIVE_TO_ONE, FIVE_TO_ONE_PAIRS)]
   files = makeDemoFiles(requests, 400)
 })
 
@@ -130,5 +131,19 @@ describe('makeDemoFiles', () => {
     expect(coupled.mutualInformationCorrected).toBeGreaterThan(0.3)
     expect(separable.verdict).toBe('separable')
     expect(separable.pValue).toBeGreaterThan(0.05)
+  })
+
+  it('leaves hardly any correlation to the finer mapping, in every bond with every angle it is a side of', () => {
+    const { terms } = requests[1]
+    const angles = terms.filter(({ kind }) => kind === 'angle')
+    // B–E–S1 and the like have two sides that differ; B–B–B has one.
+    const sides = angles.flatMap(
+      ({ types: [a, b, c] }) => new Set([[a, b].sort().join(), [b, c].sort().join()]).size,
+    )
+    expect(files[1].joints).toHaveLength(sides.reduce((sum, count) => sum + count, 0))
+    const correlations = files[1].joints.map(({ text, settings }) =>
+      correlate(readJointHistogram(text, settings).histogram),
+    )
+    expect(correlations.map(({ verdict }) => verdict)).toEqual(correlations.map(() => 'separable'))
   })
 })

@@ -23,7 +23,7 @@ export interface Mailer {
  * @param from sender, as in "Beadwright <beads@example.org>"
  */
 export function createMailer(smtpUrl: string, from: string): Mailer {
-  const transport = createTransport(smtpUrl, PATIENCE)
+  const transport = createTransport({ url: smtpUrl, ...PATIENCE })
   return {
     async send({ id, to, subject, text, createdAt }) {
       await transport.sendMail({

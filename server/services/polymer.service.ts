@@ -6,6 +6,7 @@ import type {
   polymerCreateSchema,
   PolymerUpdate,
 } from '../../shared/contracts/polymer'
+import type { HistoryDetails } from '../../shared/contracts/history'
 import { Mapping } from '../entities/mapping.entity'
 import { Polymer } from '../entities/polymer.entity'
 import { HttpError, notFound } from '../errors/http-error'
@@ -91,7 +92,7 @@ export class PolymerService {
       }
       await manager.update(Polymer, where, { ...changes, ...chemistry, revision: revision + 1 })
       const { name = polymer.name } = changes
-      const renamed = name === polymer.name ? {} : { old: polymer.name }
+      const renamed: HistoryDetails = name === polymer.name ? {} : { old: polymer.name }
       await recordPolymer(manager, member, 'polymer changed', { id: polymerId, name }, renamed)
       return readPolymer(manager, groupId, polymerId)
     })

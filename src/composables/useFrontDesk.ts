@@ -60,7 +60,7 @@ export const waitingFor = ({ polymer, mappings }: DeskPolymer): Waiting[] => {
   return found
 }
 
-/** The front desk: the polymers of the person's groups with their mappings, and what waits for someone who writes. */
+/** The front desk: the polymers of the current group with their mappings, and what waits for someone who writes. */
 export function useFrontDesk(): {
   groups: ShallowRef<readonly DeskGroup[]>
   waiting: ComputedRef<Waiting[]>
@@ -80,9 +80,10 @@ export function useFrontDesk(): {
 
   const load = async (): Promise<void> => {
     failure.value = null
+    const shown = session.readableGroups.filter(({ groupId }) => groupId === session.currentGroup?.groupId)
     try {
       groups.value = await Promise.all(
-        session.readableGroups.map(async ({ groupId, groupName }) => {
+        shown.map(async ({ groupId, groupName }) => {
           const polymers = await Promise.all((await listPolymers(groupId)).map(withMappings))
           return { groupId, groupName, polymers }
         }),

@@ -75,6 +75,30 @@ const routes: RouteRecordRaw[] = [
     meta: { title: 'Set up', open: true },
   },
   {
+    path: '/join/:token',
+    name: 'join',
+    component: () => import('@/views/JoinView.vue'),
+    meta: { title: 'Join', open: true },
+  },
+  {
+    path: '/forgot',
+    name: 'forgot',
+    component: () => import('@/views/ForgotView.vue'),
+    meta: { title: 'Forgotten password', open: true },
+  },
+  {
+    path: '/reset/:token',
+    name: 'reset',
+    component: () => import('@/views/ResetView.vue'),
+    meta: { title: 'New password', open: true },
+  },
+  {
+    path: '/tray',
+    name: 'tray',
+    component: () => import('@/views/TrayView.vue'),
+    meta: { title: 'Tray', open: true },
+  },
+  {
     path: '/polymers/new',
     name: 'polymer-new',
     component: () => import('@/views/PolymerNewView.vue'),
@@ -85,6 +109,18 @@ const routes: RouteRecordRaw[] = [
     name: 'polymer',
     component: () => import('@/views/PolymerView.vue'),
     meta: { title: 'Polymer' },
+  },
+  {
+    path: '/polymers/:polymerId/hand-overs',
+    name: 'hand-overs',
+    component: () => import('@/views/HandOversView.vue'),
+    meta: { title: 'Hand-overs' },
+  },
+  {
+    path: '/hand-overs/:handOverId',
+    name: 'hand-over',
+    component: () => import('@/views/HandOverView.vue'),
+    meta: { title: 'Hand-over' },
   },
   {
     path: '/polymers/:polymerId/comparison',

@@ -16,6 +16,15 @@ const ADDRESSES: Readonly<Record<string, string>> = {
   'sign-in': '/sign-in',
   account: '/account',
   'set-up': '/set-up/:token',
+  join: '/join/:token',
+  forgot: '/forgot',
+  reset: '/reset/:token',
+  tray: '/tray',
+  group: '/groups/:groupId',
+  'group-members': '/groups/:groupId/members',
+  'group-invitations': '/groups/:groupId/invitations',
+  'group-defaults': '/groups/:groupId/defaults',
+  'group-history': '/groups/:groupId/history',
   'polymer-new': '/polymers/new',
   polymer: '/polymers/:polymerId',
   comparison: '/polymers/:polymerId/comparison',
@@ -41,7 +50,13 @@ export const freshStores = (role: Role | null = 'modeller'): Pinia => {
   session.loaded = true
   if (role !== null) {
     const memberships = [{ groupId: 'group', groupName: 'Adhesives group', role, demo: false }]
-    session.user = { id: 'me', name: 'Mo Modeller', email: 'mo@example.org', memberships }
+    session.user = {
+      id: 'me',
+      name: 'Mo Modeller',
+      email: 'mo@example.org',
+      memberships,
+      currentGroupId: 'group',
+    }
   }
   return pinia
 }

@@ -57,7 +57,13 @@ const open = async (
   painted: Mapping['document'] = mappingDocument,
 ) => {
   const membership = { groupId: 'group', groupName: 'Adhesives', role, demo: false }
-  useSessionStore().user = { id: 'me', name: 'Mo', email: 'mo@example.org', memberships: [membership] }
+  useSessionStore().user = {
+    id: 'me',
+    name: 'Mo',
+    email: 'mo@example.org',
+    memberships: [membership],
+    currentGroupId: 'group',
+  }
   const workbench = useWorkbenchStore()
   workbench.polymer = { id: 'polymer', groupId: 'group' } as Polymer
   workbench.mapping = { id: 'mapping', document: painted } as Mapping

@@ -21,7 +21,7 @@ const guarded = () => {
   installGuards(router)
   return router
 }
-const person = { id: 'me', name: 'Mo', email: 'mo@example.org', memberships: [] }
+const person = { id: 'me', name: 'Mo', email: 'mo@example.org', memberships: [], currentGroupId: null }
 
 describe('safeReturnPath', () => {
   it.each([

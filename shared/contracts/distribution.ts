@@ -50,7 +50,11 @@ export const intakeSettingsSchema = z
       .nullable()
       .optional(),
   })
-  .meta({ id: 'IntakeSettings' })
+  .meta({
+    id: 'IntakeSettings',
+    description:
+      'How a text file is read: columns count from 0; the unit is that of the file; low and high name the same column unless the layout is edges; independentSamples null takes every count as independent',
+  })
 
 /** How a text file is read as the joint distribution of two terms (document version 1). */
 export const jointIntakeSettingsSchema = z
@@ -63,7 +67,11 @@ export const jointIntakeSettingsSchema = z
     columns: z.object({ x: columnSchema, y: columnSchema, value: columnSchema }),
     independentSamples: samplesSchema,
   })
-  .meta({ id: 'JointIntakeSettings' })
+  .meta({
+    id: 'JointIntakeSettings',
+    description:
+      'How a text file of two coordinates is read; columns count from 0, units are those of the file',
+  })
 
 /**
  * POST /api/terms/:termId/distributions, multipart: `file`; any number of files `blocks` (stretches of time, in their order)
@@ -135,7 +143,10 @@ export const distributionSchema = z
     file: sourceFileSchema,
     demo: z.boolean(),
   })
-  .meta({ id: 'Distribution' })
+  .meta({
+    id: 'Distribution',
+    description: 'A histogram in internal units, nm or rad, as it was read from its file',
+  })
 export type Distribution = z.infer<typeof distributionSchema>
 
 /** POST /api/mappings/:mappingId/joint-distributions, multipart: file, and this as the JSON field `settings`. */

@@ -12,7 +12,10 @@ export const smilesSchema = z
 /** POST /api/groups/:groupId/polymers */
 export const polymerCreateSchema = z
   .object({ name: nameSchema, smiles: smilesSchema, notes: z.string().max(4000).default('') })
-  .meta({ id: 'PolymerCreate' })
+  .meta({
+    id: 'PolymerCreate',
+    description: 'A repeat unit: SMILES with two *, which are the bonds to its neighbours',
+  })
 export type PolymerCreate = z.input<typeof polymerCreateSchema>
 
 /** PATCH /api/polymers/:polymerId. The SMILES is fixed once a mapping stands on it. */
@@ -47,7 +50,10 @@ export const polymerSchema = z
       potentials: z.number().int(),
     }),
   })
-  .meta({ id: 'Polymer' })
+  .meta({
+    id: 'Polymer',
+    description: 'A repeat unit; mass in g/mol per unit, formula in Hill order, counts of what is current',
+  })
 export type Polymer = z.infer<typeof polymerSchema>
 
 const statePointFields = {
@@ -72,7 +78,10 @@ export const statePointCreateSchema = z
     composition: statePointFields.composition.default(''),
     notes: statePointFields.notes.default(''),
   })
-  .meta({ id: 'StatePointCreate' })
+  .meta({
+    id: 'StatePointCreate',
+    description: 'Temperature in K, pressure in bar; null or empty where nothing is stated',
+  })
 export type StatePointCreate = z.input<typeof statePointCreateSchema>
 
 /** PATCH /api/state-points/:statePointId. The temperature is fixed once data stand on it. */
@@ -92,5 +101,8 @@ export const statePointSchema = z
     distributions: z.number().int(),
     createdAt: timestampSchema,
   })
-  .meta({ id: 'StatePoint' })
+  .meta({
+    id: 'StatePoint',
+    description: 'Temperature in K, pressure in bar; it sets kT of every potential made there',
+  })
 export type StatePoint = z.infer<typeof statePointSchema>

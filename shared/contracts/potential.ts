@@ -53,7 +53,11 @@ export const inversionSettingsSchema = z
       cap: z.number().positive().nullable(),
     }),
   })
-  .meta({ id: 'InversionSettings' })
+  .meta({
+    id: 'InversionSettings',
+    description:
+      'How counts become a potential. Limits of the table in nm or rad, its cap in kJ/mol; null takes the default of the kind',
+  })
 
 /**
  * PUT /api/terms/:termId/potential. `revision` is null for the first save and the current revision after; 409 CONFLICT with
@@ -80,7 +84,10 @@ export const potentialSchema = z
     savedBy: personSchema.nullable(),
     savedAt: timestampSchema,
   })
-  .meta({ id: 'StoredPotential' })
+  .meta({
+    id: 'StoredPotential',
+    description: 'A saved inversion: its settings and the SHA-256 of its input; the numbers follow from them',
+  })
 export type StoredPotential = z.infer<typeof potentialSchema>
 
 /** Query of the table downloads: GET /api/terms/:termId/table and GET /api/mappings/:mappingId/tables.zip. */
@@ -95,7 +102,7 @@ export const tableQuerySchema = z
     /** Of a layout of the group: an older version than its newest. */
     layoutVersion: z.coerce.number<number>().int().positive().optional(),
   })
-  .meta({ id: 'TableQuery' })
+  .meta({ id: 'TableQuery', description: 'Units of the file: force is −dU/dq in the units asked for' })
 export type TableQuery = z.input<typeof tableQuerySchema>
 
 /** Query of GET /api/joint-distributions/:jointDistributionId/table, whose state point is that of the data. */

@@ -149,8 +149,11 @@ async function findReleased(manager: EntityManager, groupId: string, id: string)
 /** The next number of the group. Two releases at the same time come one after the other. */
 async function nextNumber(manager: EntityManager, groupId: string): Promise<number> {
   await manager.query(`select 1 from "group" where "id" = $1 for no key update`, [groupId])
-  const last = await manager.maximum(HandOver, 'number', { groupId })
-  return (last ?? 0) + 1
+  const [{ last }]: { last: number }[] = await manager.query(
+    `select coalesce(max("number"), 0) as "last" from "hand_over" where "group_id" = $1`,
+    [groupId],
+  )
+  return last + 1
 }
 
 /** The one that this takes the place of: the last released one of the same mapping and state point, withdrawn or not. */
@@ -176,7 +179,7 @@ async function storeContent(
 ): Promise<void> {
   const numbers = (column: Float64Array | null): number[] | null => column && Array.from(column)
   for (const [position, { text: _, silhouette, kinds, ...table }] of tables.entries()) {
-    await manager.insert(HandOverTable, {
+    await manager.save(HandOverTable, {
       ...table,
       groupId,
       handOverId,

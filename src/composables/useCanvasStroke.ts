@@ -63,6 +63,8 @@ export function useCanvasStroke(acts: StrokeActs, readonly: () => boolean): Canv
       }
     }
     last = placeOf(event)
+    // A stroke goes on over what lies on the drawing, and when it leaves it for a moment.
+    ;(event.currentTarget as Element).setPointerCapture(event.pointerId)
     if (event.button === 1 || (event.button === 0 && readonly())) {
       event.preventDefault()
       stroke = 'pull'

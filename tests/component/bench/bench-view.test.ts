@@ -100,6 +100,16 @@ describe('BenchView', () => {
     expect(wrapper.find('h1').text()).toBe('B–E')
   })
 
+  it('waits with that until the address names the state point, which another change of address would undo', async () => {
+    const { router } = await open(bond)
+    await router.push('/bench')
+    await flushPromises()
+    expect(router.currentRoute.value.params['termId']).toBe('')
+    await router.replace('/bench?statePoint=hot')
+    await vi.waitFor(() => expect(router.currentRoute.value.params['termId']).toBe(bond.id))
+    expect(router.currentRoute.value.query).toEqual({ statePoint: 'hot' })
+  })
+
   it('keeps terms that the mapping leaves out off the rail, and says so at their address', async () => {
     const { types } = bond
     const termChoices = [{ types, placeKey: '', use: 'left out' as const, reason: 'why' }]

@@ -1,6 +1,15 @@
 import { compositionMass, formulaText, type RepeatUnit } from '../chemistry'
 import { beadComposition, type MappingDocument } from '../mapping'
-import { brokenLines, italic, lightTokens, type Picture, type Svg, svgElement, svgEscape } from '../picture'
+import {
+  brokenLines,
+  italic,
+  lightTokens,
+  type Picture,
+  type Svg,
+  svgElement,
+  svgEscape,
+  svgFormula,
+} from '../picture'
 import { chemicalNameParts } from '../chemistry/chemical-name'
 import type { BoardLayout } from './board-layout'
 import { beadDisc, cross, drawingLayers } from './drawing-layers'
@@ -32,6 +41,7 @@ export function mappingPicture(
   const legendTop = MARGIN + box.height + ROW / 2
   const captionTop = legendTop + (document.beads.length + 1) * ROW
   const lines = brokenLines(captionText(unit, document, caption), width - 2 * MARGIN, SIZE)
+  const asFormula = (line: string): Svg => textWithFormula(line, unit.formula)
   return {
     width,
     height: Math.ceil(captionTop + lines.length * LINE_HEIGHT + MARGIN),
@@ -43,30 +53,33 @@ export function mappingPicture(
         drawingLayers(unit, board, document),
       ),
       legend(unit, document, legendTop),
-      ...lines.map((line, index) => textLine(line, captionTop + SIZE + index * LINE_HEIGHT)),
+      ...lines.map((line, index) => textLine(asFormula(line), captionTop + SIZE + index * LINE_HEIGHT)),
     ].join(''),
   }
 }
 
 /** A row for each bead (letters, type, word, formula, mass), and what the cross means. */
 function legend(unit: RepeatUnit, { beads }: MappingDocument, top: number): Svg {
-  const words = (text: string, row: number): Svg =>
+  const words = (row: number, ...parts: readonly Svg[]): Svg =>
     svgElement(
       'text',
       { x: MARGIN + 34, y: top + row * ROW + 4.5, 'font-size': SIZE, fill: lightTokens.ink },
-      svgEscape(text),
+      ...parts,
     )
   const middle = (row: number) => ({ x: MARGIN + 12, y: top + row * ROW })
   return [
     ...beads.map((bead, row) => {
       const counts = beadComposition(unit, bead)
       const named = [bead.type, bead.label].filter((word) => word !== '').join(', ')
-      const holds = bead.atoms.length === 0 ? 'no atoms' : formulaText(counts)
+      const holds = bead.atoms.length === 0 ? 'no atoms' : svgFormula(formulaText(counts), SIZE)
       const mass = `${compositionMass(counts).toFixed(3)} g/mol`
-      return beadDisc(bead.name, bead.colour, middle(row)) + words(`${named}: ${holds}, ${mass}`, row)
+      return (
+        beadDisc(bead.name, bead.colour, middle(row)) +
+        words(row, svgEscape(`${named}: `), holds, svgEscape(`, ${mass}`))
+      )
     }),
     cross(middle(beads.length)),
-    words('site of the bead', beads.length),
+    words(beads.length, 'site of the bead'),
   ].join('')
 }
 
@@ -77,10 +90,20 @@ function captionText(unit: RepeatUnit, { beads }: MappingDocument, caption: Mapp
   return `${caption.polymer}, mapping ${caption.mapping}: ${count}.${invented}`
 }
 
-function textLine(line: string, y: number): Svg {
-  return svgElement(
-    'text',
-    { x: MARGIN, y, 'font-size': SIZE, fill: lightTokens.ink2 },
-    ...chemicalNameParts(line).map(({ text, italic: slanted }) => (slanted ? italic(text) : svgEscape(text))),
-  )
+function textLine(line: Svg, y: number): Svg {
+  return svgElement('text', { x: MARGIN, y, 'font-size': SIZE, fill: lightTokens.ink2 }, line)
+}
+
+/** A line of the caption, names in their type and the formula of the unit with its subscripts. */
+function textWithFormula(line: string, formula: string): Svg {
+  return chemicalNameParts(line)
+    .map(({ text, italic: slanted }) =>
+      slanted
+        ? italic(text)
+        : text
+            .split(new RegExp(`\\b(${formula})(?=,)`))
+            .map((part) => (part === formula ? svgFormula(part, SIZE) : svgEscape(part)))
+            .join(''),
+    )
+    .join('')
 }

@@ -33,6 +33,12 @@ describe('the colours of beads in a picture', () => {
   })
 })
 
+/** What a person reads. */
+const plain = (text: string): string =>
+  [...new DOMParser().parseFromString(text, 'image/svg+xml').querySelectorAll('text')]
+    .map((each) => (each.textContent ?? '').replace(/\u200b/g, ''))
+    .join(' ')
+
 describe('the picture of a mapping', () => {
   const read = (document = coloured) => {
     const picture = mappingPicture(unit, board, document, caption)
@@ -49,11 +55,24 @@ describe('the picture of a mapping', () => {
 
   it('has a legend that says what each bead is, and a caption', () => {
     const { text } = read()
-    expect(text).toContain('E, word 1: CO2, 44.009 g/mol')
+    expect(plain(text)).toContain('E, word 1: CO2, 44.009 g/mol')
     expect(text).toContain('site of the bead')
-    const words = text.replace(/<[^>]*>/g, ' ').replace(/\s+/g, ' ')
-    expect(words).toContain('3 beads for one repeat unit C9H16O2')
-    expect(words).toContain('Invented (demonstration).')
+    expect(plain(text)).toContain('3 beads for one repeat unit C9H16O2')
+    expect(plain(text)).toContain('Invented (demonstration).')
+  })
+
+  it('sets the numbers of formulas lower and smaller, and comes back to the line behind them', () => {
+    const { parsed } = read()
+    const row = [...parsed.querySelectorAll('text')].find((each) => each.textContent?.startsWith('H, word 2'))
+    const runs = [...(row?.querySelectorAll('tspan') ?? [])].map((each) => ({
+      text: each.textContent,
+      shift: Number(each.getAttribute('dy') ?? 0),
+      small: each.hasAttribute('font-size'),
+    }))
+    expect(runs.map(({ text }) => text)).toEqual(['C', '6', 'H', '13', '\u200b'])
+    expect(runs.map(({ small }) => small)).toEqual([false, true, false, true, false])
+    const heights = runs.map((_, end) => runs.slice(0, end + 1).reduce((sum, { shift }) => sum + shift, 0))
+    expect(heights).toEqual([0, 2.86, 0, 2.86, 0])
   })
 
   it('is drawn in light colours only, and asks for nothing from the page', () => {

@@ -89,11 +89,17 @@ describe('a key', () => {
     })
   })
 
-  it('needs no token of a session, and remembers when it was used', async () => {
+  it('needs no token of a session, is named in the history, and remembers when it was used', async () => {
     const { key, made } = await madeBy({ scopes: ['write'] })
     const script = new KeyClient(server.app, key)
     const response = await script.send('post', polymers, { name: 'By a script', smiles: '*CC*' })
     expect(response.status, response.text).toBe(201)
+    const { id } = response.body as { id: string }
+    const events: object[] = await server.dataSource.query(
+      'select "user_id" as "userId", "by" from "event" where "subject_id" = $1',
+      [id],
+    )
+    expect(events).toEqual([{ userId: group.modeller.member.userId, by: 'upload' }])
     const list = (await group.modeller.client.get('/api/keys')).body as { keys: ApiKey[] }
     const lastUsedAt = list.keys.find(({ id }) => id === made.id)?.lastUsedAt
     expect(Math.abs(Date.parse(lastUsedAt ?? '') - Date.now())).toBeLessThan(60_000)

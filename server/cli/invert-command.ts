@@ -8,7 +8,15 @@ import {
   type SmoothingSettings,
   type StraightAngle,
 } from '../../shared/inversion'
-import { formatRows, formatTable, makeTable, tableComments, type TableUnits } from '../../shared/tables'
+import { type BeyondTable, type Layout, type TableAbout, writeTableInLayout } from '../../shared/layouts'
+import {
+  formatRows,
+  formatTable,
+  makeTable,
+  tableComments,
+  tablePoint,
+  type TableUnits,
+} from '../../shared/tables'
 import { coordinateToInternal, type CoordinateUnit, energyScale } from '../../shared/units'
 import {
   distributionCommand,
@@ -20,7 +28,9 @@ import { inversionJson } from './inversion-json'
 import type { Output } from './output'
 import { number, numberWithin, oneOf, positiveNumber, smoothing, wholeNumber } from './parse-options'
 import { type Input, readInput } from './read-input'
+import { readLayout } from './read-layout'
 import { withFileName } from './refused-file'
+import { UsageError } from './usage-error'
 
 interface InvertOptions extends DistributionOptions {
   readonly jacobian: 'on' | 'off'
@@ -34,6 +44,7 @@ interface InvertOptions extends DistributionOptions {
   readonly from?: number
   readonly to?: number
   readonly json?: boolean
+  readonly layout?: string
 }
 
 /** `beadwright invert`: from the histogram of one coordinate to a table. */
@@ -78,13 +89,18 @@ export function invertCommand(output: Output): Command {
     .option('--rows <n>', 'rows of the table', wholeNumber(SETTING_LIMITS.rows.low), table.rows)
     .option('--from <x>', 'first coordinate of the table, in --unit', number)
     .option('--to <x>', 'last coordinate of the table, in --unit', number)
+    .option('--layout <file>', 'write the table as a layout file says, in its units (docs/layouts.md)')
     .option('--json', 'print JSON instead of the table')
     .action((file: string, options: InvertOptions) => {
-      withFileName(file, () => output.print(inverted(readInput(file), options, output)))
+      if (options.layout !== undefined && options.json) {
+        throw new UsageError('Choose one of --layout and --json: a layout may write JSON of its own.')
+      }
+      const layout = options.layout === undefined ? null : readLayout(options.layout)
+      withFileName(file, () => output.print(inverted(readInput(file), layout, options, output)))
     })
 }
 
-function inverted(input: Input, options: InvertOptions, output: Output): string {
+function inverted(input: Input, layout: Layout | null, options: InvertOptions, output: Output): string {
   const { histogram, sampleInefficiency, unit } = readDistribution(input, options, output)
   const settings = inversionSettings(options, unit)
   const { inversion, form } = derivePotential(histogram, options.temperature, settings)
@@ -96,7 +112,7 @@ function inverted(input: Input, options: InvertOptions, output: Output): string 
     const evidence = { histogram, sampleInefficiency, form, input }
     return `${JSON.stringify(inversionJson(inversion, evidence, table, units), null, 2)}\n`
   }
-  const comments = tableComments({
+  const about: TableAbout['comments'] = {
     invented: false,
     polymer: null,
     mapping: null,
@@ -105,7 +121,6 @@ function inverted(input: Input, options: InvertOptions, output: Output): string 
     beadOrder: null,
     temperature: options.temperature,
     statePoint: null,
-    units,
     settings,
     smoothing: inversion.smoothing,
     form,
@@ -113,11 +128,23 @@ function inverted(input: Input, options: InvertOptions, output: Output): string 
     inefficiency: inversion.inefficiency,
     warnings: inversion.warnings,
     input,
-    rowsSha256: createHash('sha256').update(formatRows(table, units)).digest('hex'),
     savedOn: null,
-  })
+  }
+  if (layout !== null) {
+    const beyond: BeyondTable = (coordinate) =>
+      tablePoint(inversion.potential, settings.table.cap, coordinate)
+    const content = { comments: about, repeatUnit: null, types: [], handOver: null }
+    let text = ''
+    withFileName(options.layout ?? '', () => {
+      text = writeTableInLayout(table, layout, content, sha256, beyond)
+    })
+    return text
+  }
+  const comments = tableComments({ ...about, units, rowsSha256: sha256(formatRows(table, units)) })
   return formatTable(table, units, comments)
 }
+
+const sha256 = (text: string): string => createHash('sha256').update(text).digest('hex')
 
 function inversionSettings(options: InvertOptions, unit: CoordinateUnit): InversionSettings {
   const bound = (value: number | undefined) =>

@@ -3,6 +3,7 @@ import {
   defaultLayoutSchema,
   layoutCopySchema,
   layoutCreateSchema,
+  layoutExamplesSchema,
   layoutListSchema,
   layoutPreviewAskSchema,
   layoutPreviewSchema,
@@ -36,6 +37,15 @@ export const layoutRoutes = [
     errors: ['NAME_TAKEN'],
     readsContent: true,
     handle: ({ services, member, body }) => services.layouts.create(member, body),
+  }),
+  route({
+    method: 'get',
+    path: '/api/groups/:groupId/layout-examples',
+    summary: 'Saved potentials that a layout can be tried on',
+    access: { may: 'read', at: 'group' },
+    scope: 'read',
+    answer: { status: 200, body: layoutExamplesSchema },
+    handle: async ({ services, member }) => ({ examples: await services.layoutPreviews.examples(member) }),
   }),
   route({
     method: 'put',

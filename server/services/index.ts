@@ -27,12 +27,15 @@ import { PairService } from './pair.service'
 import { PasswordResetService } from './password-reset.service'
 import { PolymerService } from './polymer.service'
 import { PotentialService } from './potential.service'
+import { QuestionService } from './question.service'
+import { ReceivedService } from './received.service'
+import { RecipientService } from './recipient.service'
+import { ReturnedFileService } from './returned-file.service'
 import { SessionService } from './session.service'
 import { SetUpService } from './set-up.service'
 import { SettingService } from './setting.service'
 import { StatePointService } from './state-point.service'
 import { TableService } from './table.service'
-import { TermEvidenceService } from './term-evidence.service'
 import { TermService } from './term.service'
 import { TrayService } from './tray.service'
 import { WaitingService } from './waiting.service'
@@ -74,7 +77,7 @@ export function createServices(dataSource: DataSource, { demo, version, tray, li
     jointDistributions: new JointDistributionService(dataSource),
     jointTables: new JointTableService(dataSource),
     keys: new KeyService(dataSource, sessions, demo),
-    layoutPreviews: new LayoutPreviewService(tables),
+    layoutPreviews: new LayoutPreviewService(dataSource, tables),
     layouts: new LayoutService(dataSource),
     mappings: new MappingService(dataSource),
     mappingVersions: new MappingVersionService(dataSource),
@@ -84,14 +87,17 @@ export function createServices(dataSource: DataSource, { demo, version, tray, li
     passwordResets: new PasswordResetService(dataSource, linkTo),
     polymers: new PolymerService(dataSource),
     potentials: new PotentialService(dataSource),
+    questions: new QuestionService(dataSource, linkTo),
+    received: new ReceivedService(dataSource, linkTo),
+    recipients: new RecipientService(dataSource, linkTo),
     releases: new HandOverReleaseService(dataSource),
     reviews: new HandOverReviewService(dataSource, linkTo),
+    returnedFiles: new ReturnedFileService(dataSource, linkTo),
     sessions,
     settings: new SettingService(dataSource),
     setUp: new SetUpService(dataSource, groups),
     statePoints: new StatePointService(dataSource),
     tables,
-    termEvidence: new TermEvidenceService(dataSource),
     terms: new TermService(dataSource),
     tray: new TrayService(dataSource, tray),
     waiting: new WaitingService(dataSource),

@@ -175,6 +175,25 @@ export const layoutCopySchema = z.object({ name: nameSchema }).meta({ id: 'Layou
 /** PUT /api/groups/:groupId/default-layout. */
 export const defaultLayoutSchema = z.object({ layout: layoutRefSchema }).meta({ id: 'DefaultLayout' })
 
+/** GET /api/groups/:groupId/layout-examples: saved potentials that a layout can be tried on. */
+export const layoutExamplesSchema = z
+  .object({
+    examples: z.array(
+      z.object({
+        termId: idSchema,
+        statePointId: idSchema,
+        kind: coordinateKindSchema,
+        term: z.string(),
+        mapping: z.string(),
+        polymer: z.string(),
+        /** K */
+        temperature: z.number(),
+      }),
+    ),
+  })
+  .meta({ id: 'LayoutExamples' })
+export type LayoutExample = z.infer<typeof layoutExamplesSchema>['examples'][number]
+
 /** POST /api/terms/:termId/layout-preview. */
 export const layoutPreviewAskSchema = z
   .object({ statePointId: idSchema, document: layoutDocumentSchema })

@@ -210,6 +210,15 @@ describe('tables in a layout', () => {
 })
 
 describe('the preview of a layout', () => {
+  it('can be made of any saved potential of the group', async () => {
+    const { body } = await reviewer.get(`${groupPath()}/layout-examples`)
+    expect(body).toMatchObject({
+      examples: expect.arrayContaining([
+        expect.objectContaining({ termId: job.bondId, statePointId: job.statePointId, kind: 'bond' }),
+      ]) as unknown,
+    })
+  })
+
   const preview = (changes: LayoutChanges) =>
     reviewer.post(`/api/terms/${job.bondId}/layout-preview`, {
       statePointId: job.statePointId,

@@ -14,6 +14,7 @@ async function layoutId({ server, group }: SampleWorld): Promise<{ layoutId: str
 export const layoutSamples: RouteSamples = {
   'get /api/groups/:groupId/layouts': () => ({}),
   'post /api/groups/:groupId/layouts': () => ({ body: { name: `Layout ${randomUUID()}`, document } }),
+  'get /api/groups/:groupId/layout-examples': () => ({}),
   'put /api/groups/:groupId/default-layout': () => ({ body: { layout: 'three-columns' } }),
   'get /api/layouts/:layoutId': async (world) => ({ ids: await layoutId(world) }),
   'get /api/layouts/:layoutId/versions': async (world) => ({ ids: await layoutId(world) }),

@@ -30,6 +30,12 @@ const workbenchRooms: RouteRecordRaw[] = [
     meta: { title: 'Mapping' },
   },
   {
+    path: 'mapping/print',
+    name: 'mapping-print',
+    component: () => import('@/views/MappingPrintView.vue'),
+    meta: { title: 'Mapping on paper' },
+  },
+  {
     path: 'intake',
     name: 'intake',
     component: () => import('@/views/IntakeView.vue'),

@@ -21,6 +21,7 @@ const ROOMS = [
   ['account', '/account', 'API keys'],
   ['new polymer', '/polymers/new', 'How a repeat unit is written'],
   ['mapping', '/polymers/P/mappings/M/mapping', 'Terms that follow'],
+  ['mapping print', '/polymers/P/mappings/M/mapping/print', 'How far it goes'],
   ['intake', '/polymers/P/mappings/M/intake', 'Choose files'],
   ['bench', '/polymers/P/mappings/M/bench', 'Effective dimension'],
   ['correlation', '/polymers/P/mappings/M/correlation', 'Independent samples'],

@@ -29,6 +29,7 @@ const ADDRESSES: Readonly<Record<string, string>> = {
   polymer: '/polymers/:polymerId',
   comparison: '/polymers/:polymerId/comparison',
   mapping: '/polymers/:polymerId/mappings/:mappingId/mapping',
+  'mapping-print': '/polymers/:polymerId/mappings/:mappingId/mapping/print',
   intake: '/polymers/:polymerId/mappings/:mappingId/intake',
   bench: '/polymers/:polymerId/mappings/:mappingId/bench/:termId?',
   correlation: '/polymers/:polymerId/mappings/:mappingId/correlation/:pair?',

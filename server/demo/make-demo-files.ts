@@ -78,7 +78,7 @@ export const FIVE_TO_ONE_PAIRS: readonly DemoPair[] = [
     ['S2', 'S3'],
     ['S1', 'S2', 'S3'],
   ],
-].map(([bond, angle]) => ({ bond, angle, bondWidth: 0.006 }))
+].map(([bond, angle]) => ({ bond, angle, bondWidth: 0.008 }))
 
 /** One seed for all: the same chains are seen by every mapping, as in a real study. */
 const SEED = 20_260

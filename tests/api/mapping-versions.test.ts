@@ -4,6 +4,7 @@ import type { PairList } from '@shared/contracts/distribution'
 import type { Mapping, MappingDocument, Term } from '@shared/contracts/mapping'
 import type { MappingCoverage } from '@shared/contracts/mapping-coverage'
 import type { MappingFit, MappingVersion } from '@shared/contracts/mapping-version'
+import type { TermEvidence } from '@shared/contracts/term-evidence'
 import { changeBead, giveAtoms, setTermUse } from '@shared/mapping'
 import type { ApiClient } from '../support/api-client'
 import { type ApiServer, openApiServer } from '../support/api-server'
@@ -245,5 +246,25 @@ describe('the coverage of a mapping', () => {
     expect(
       pairs.some(({ firstTermId, secondTermId }) => [firstTermId, secondTermId].includes(job.bondId)),
     ).toBe(false)
+  })
+})
+
+describe('what decides between terms of one motion', () => {
+  it('is how well data sample each and how they are coupled, as long as the data fit', async () => {
+    const query = `?statePoint=${job.statePointId}`
+    const { samples, couplings } = await get<TermEvidence>(`/evidence${query}`)
+    // The counts of the files stand for themselves; the two were made to know nothing of one another.
+    expect(samples.map(({ name }) => name)).toEqual(['A–A'])
+    expect(samples[0].samples).toBeCloseTo(1e6, -2)
+    expect(couplings).toMatchObject([{ first: 'A–A', second: 'A–A–A' }])
+    expect(couplings[0].nats).toBeLessThan(0.02)
+    await save(MOVED)
+    expect(await get<TermEvidence>(`/evidence${query}`)).toEqual({ samples: [], couplings: [] })
+  })
+
+  it('is known of terms that are left out, since the choice may change', async () => {
+    await save(setTermUse(DOCUMENT, { types: ['A', 'A'], placeKey: '' }, 'left out'))
+    const { samples } = await get<TermEvidence>(`/evidence?statePoint=${job.statePointId}`)
+    expect(samples.map(({ name }) => name)).toEqual(['A–A'])
   })
 })

@@ -14,6 +14,18 @@ describe('names of table files', () => {
     expect(tableFileName(table(['B', 'E'], 298.15))).toBe('bond_B-E_298.15K.txt')
   })
 
+  it('say which place a term is where its sequence is split', () => {
+    expect(tableFileName({ ...table(['B', 'B', 'E']), placeNumber: 2 })).toBe('bond_B-B-E_place2_400K.txt')
+    const types = [
+      ['B', 'E'],
+      ['B', 'B', 'E'],
+    ] as const
+    const placeNumbers = [undefined, 1] as const
+    expect(jointTableFileName({ types, temperature: 400, placeNumbers })).toBe(
+      'joint_B-E_B-B-E_place1_400K.txt',
+    )
+  })
+
   it('of two terms together say both', () => {
     const types = [
       ['B', 'E'],
@@ -24,7 +36,9 @@ describe('names of table files', () => {
 
   it('stay apart where capitals do not count', () => {
     const names = namesInOneFolder(
-      [table(['B', 'E']), table(['b', 'E']), table(['b', 'e']), table(['X', 'Y'])].map(tableFileName),
+      [table(['B', 'E']), table(['b', 'E']), table(['b', 'e']), table(['X', 'Y'])].map((each) =>
+        tableFileName(each),
+      ),
     )
     expect(names).toEqual([
       'bond_B-E_400K.txt',

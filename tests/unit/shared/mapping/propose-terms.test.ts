@@ -1,3 +1,4 @@
+import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { parseRepeatUnit, type RepeatUnit } from '@shared/chemistry'
 import {
@@ -112,6 +113,28 @@ describe('data', () => {
     const [, backbone] = proposals(acrylate, THREE_TO_ONE, evidence)
     expect(backbone.used.map(({ name }) => name)).toEqual(['B–B–B–E'])
     expect(backbone.sentence).toContain('0.05 nats')
+    expect(backbone.sentence).toContain('900 independent samples')
+  })
+
+  it('change nothing where there are none, and leave ties to the rule', () => {
+    const names = deriveTerms(acrylate, THREE_TO_ONE).map(({ name }) => name)
+    const byRule = proposals(acrylate, THREE_TO_ONE)
+    expect(proposals(acrylate, THREE_TO_ONE, { samples: new Map(), couplings: [] })).toEqual(byRule)
+    fc.assert(
+      fc.property(
+        fc.integer({ min: 1, max: 1e6 }),
+        fc.double({ min: 0, max: 2, noNaN: true }),
+        (count, nats) => {
+          // The same samples for all, and the same coupling of each to the one bond that is in no group.
+          const alike = {
+            samples: new Map(names.map((name) => [name, count])),
+            couplings: names.map((name) => ({ first: 'B–E', second: name, nats })),
+          }
+          expect(words(proposals(acrylate, THREE_TO_ONE, alike))).toEqual(words(byRule))
+        },
+      ),
+      { numRuns: 25 },
+    )
   })
 })
 

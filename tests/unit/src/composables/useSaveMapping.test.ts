@@ -2,7 +2,7 @@ import { flushPromises } from '@vue/test-utils'
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest'
 import { effectScope, shallowRef } from 'vue'
 import type { Mapping } from '@shared/contracts/mapping'
-import { addBead, type MappingDocument } from '@shared/mapping'
+import { addBead, changeBead, giveAtoms, type MappingDocument } from '@shared/mapping'
 import { ApiError } from '@/api/http'
 import * as mappings from '@/api/mappings'
 import { useSaveMapping } from '@/composables/useSaveMapping'
@@ -105,5 +105,30 @@ describe('useSaveMapping', () => {
     expect(await saving.flush()).toBe(true)
     expect(saving.failedAt.value).toBeNull()
     await flushPromises()
+  })
+
+  it('keeps what would make a new version from being saved until a person says so', async () => {
+    const document = shallowRef(first)
+    const measured = { ...stored(first, 1), hasData: true }
+    const saving = scope.run(() => useSaveMapping(measured, document, onSaved))
+    if (saving === undefined) throw new Error('The scope is alive.')
+    document.value = giveAtoms(mine, 'mine', [0])
+    await vi.advanceTimersByTimeAsync(5000)
+    expect([saving.held.value, await saving.flush()]).toEqual([true, false])
+    expect(save).not.toHaveBeenCalled()
+    expect(await saving.saveVersion()).toBe(true)
+    expect(save).toHaveBeenCalledTimes(1)
+    expect(saving.held.value).toBe(false)
+  })
+
+  it('saves names and labels of a mapping with data as ever', async () => {
+    const painted = giveAtoms(mine, 'mine', [0])
+    const document = shallowRef(painted)
+    const measured = { ...stored(painted, 1), hasData: true }
+    const saving = scope.run(() => useSaveMapping(measured, document, onSaved))
+    document.value = changeBead(painted, 'mine', { label: 'backbone', type: 'X' })
+    await vi.advanceTimersByTimeAsync(2000)
+    expect(saving?.held.value).toBe(false)
+    expect(save).toHaveBeenCalledTimes(1)
   })
 })

@@ -13,8 +13,9 @@ import { detailBody } from './hand-over/detail-body'
 import { findHandOverBodies, readHandOverBody } from './hand-over/hand-over-body'
 import { findHandOver, lockHandOver } from './hand-over/hand-over-context'
 import { handOverSubject } from './hand-over/hand-over-name'
-import { layoutName } from './hand-over/layout-of'
+import { frozenLayout, heldLayout } from './hand-over/layout-of'
 import { previewText } from './hand-over/preview-text'
+import { defaultOf } from './layout.service'
 import type { Member } from './member'
 import { recordEvent } from './record-event'
 
@@ -66,7 +67,14 @@ export class HandOverService {
         title,
         notes,
         selection: EVERYTHING,
-        layout: { layoutId: null, ...HOUSE_DEFAULTS.units, ...group.defaults.units },
+        layout: await heldLayout(manager, {
+          groupId,
+          layout: {
+            layoutId: await defaultOf(manager, groupId),
+            ...HOUSE_DEFAULTS.units,
+            ...group.defaults.units,
+          },
+        }),
         standing: 'draft',
         revision: 1,
         changedAt: new Date(),
@@ -95,7 +103,7 @@ export class HandOverService {
         revision: revision + 1,
         changedAt: new Date(),
       })
-      if ((await layoutName(manager, handOver)) === null) throw notFound('layout', 'layout.layoutId')
+      if (changes.layout) handOver.layout = await heldLayout(manager, handOver)
       await manager.save(HandOver, handOver)
       await recordEvent(manager, member, { action: 'hand-over changed', subject: handOverSubject(handOver) })
       return this.detail(manager, member, handOverId)
@@ -121,7 +129,8 @@ export class HandOverService {
   async preview({ groupId }: Member, handOverId: string, name: string): Promise<{ text: string }> {
     const { manager } = this.dataSource
     const handOver = await findHandOver(manager, groupId, handOverId)
-    return { text: previewText(handOver, await readContent(manager, handOver), name) }
+    const options = await frozenLayout(manager, handOver)
+    return { text: previewText(await readContent(manager, handOver), options, name) }
   }
 
   private async detail(manager: EntityManager, member: Member, id: string): Promise<HandOverDetail> {

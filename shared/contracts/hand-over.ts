@@ -10,6 +10,7 @@ import {
   revisionSchema,
   timestampSchema,
 } from './common'
+import { layoutRefSchema } from './layout'
 import { mappingDocumentSchema } from './mapping'
 
 /** How far a hand-over is. From `released` on it has a number and never changes; `withdrawn` keeps its files for the record. */
@@ -44,10 +45,14 @@ export type HandOverSelection = z.infer<typeof handOverSelectionSchema>
 /** A hand-over of all that the mapping asks for. */
 export const EVERYTHING: HandOverSelection = { version: 1, leftOut: [], apart: [] }
 
-/** How the files are written: the group's layout of that id, or the house's own for null, and the units. */
+/**
+ * How the files are written: a layout of the house in the units given, three columns for null; or one of the group in the version
+ * given, with the units it has itself.
+ */
 export const handOverLayoutSchema = z
   .object({
-    layoutId: idSchema.nullable(),
+    layoutId: layoutRefSchema.nullable(),
+    layoutVersion: z.number().int().positive().nullable().optional(),
     length: lengthUnitSchema,
     angle: angleUnitSchema,
     energy: energyUnitSchema,

@@ -76,7 +76,7 @@ function wholeChanges(before: ComparedHandOver, after: ComparedHandOver): HandOv
   )
   if (oldUnits !== newUnits) lines.push(whole('Units', `${newUnits}; before ${oldUnits}.`))
   if (from.name !== to.name) lines.push(whole('Layout', `${to.name}; before ${from.name}.`))
-  else if (JSON.stringify(from.document) !== JSON.stringify(to.document)) {
+  else if (oldUnits === newUnits && sorted(from.document) !== sorted(to.document)) {
     lines.push(whole('Layout', `${to.name} was changed.`))
   }
   const [old, now] = [before.mapping, after.mapping]
@@ -143,8 +143,17 @@ function unchanged(
   if (numbers.length === 0) return [line(about, 'Byte for byte the same.')]
   if (byte.length === 0) return [line(about, 'The same numbers, written anew.')]
   const names = listWords(numbers.map(({ after }) => listed(after.name)))
-  return [line(names, 'The same numbers, written anew.'), line(about, 'Byte for byte the same.')]
+  return [line(names, 'The same numbers, written anew.'), line('All others', 'Byte for byte the same.')]
 }
 
 /** Both names of a joint table, as in E–H, B–E–H. */
 const listed = (name: string): string => namesIn(name).join(', ')
+
+/** JSON with the keys of objects in order: one of the two comes from a database, which has an order of its own. */
+function sorted(value: unknown): string {
+  return JSON.stringify(value, (_key, part: unknown) =>
+    typeof part === 'object' && part !== null && !Array.isArray(part)
+      ? Object.fromEntries(Object.entries(part).sort(([one], [other]) => (one < other ? -1 : 1)))
+      : part,
+  )
+}

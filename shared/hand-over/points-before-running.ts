@@ -12,6 +12,8 @@ export interface PointsInput {
   }[]
   /** K */
   readonly temperature: number
+  /** What a layout of its own conventions writes, in sentences; null for the house's: internal angles, cis at 0, forces −dU/dq. */
+  readonly readings?: readonly string[] | null
 }
 
 /** What whoever runs the tables must know before they do, each with a word to find it by. */
@@ -19,19 +21,11 @@ export function pointsBeforeRunning({
   layout,
   tables,
   temperature,
+  readings = null,
 }: PointsInput): { title: string; text: string }[] {
-  const has = (kind: CoordinateKind): boolean => tables.some(({ kinds }) => kinds.includes(kind))
   const joint = tables.filter(({ kinds }) => kinds.length === 2)
-  const turns = has('angle') || has('dihedral')
-  const per = turns
-    ? ` per ${unitSymbol(layout.length)} for bonds, per ${layout.angle} for angles and dihedrals`
-    : ''
-  const factor =
-    layout.angle === 'degree'
-      ? `Multiply by ${DEGREES_PER_RADIAN.toFixed(4)} if your engine reads radians.`
-      : `Divide by ${DEGREES_PER_RADIAN.toFixed(4)} if your engine reads degrees.`
   return [
-    { title: 'Forces', text: `Forces are −dU/dq${per}.${turns ? ` ${factor}` : ''}` },
+    ...(readings === null ? conventions(tables, layout) : [{ title: 'Layout', text: readings.join(' ') }]),
     ...(layout.energy === 'kT'
       ? [
           {
@@ -41,22 +35,6 @@ export function pointsBeforeRunning({
         ]
       : []),
     ...forms(tables),
-    ...(has('angle')
-      ? [
-          {
-            title: 'Angles',
-            text: `An angle is the internal angle at the middle bead: ${layout.angle === 'degree' ? '180°' : 'π'} is straight.`,
-          },
-        ]
-      : []),
-    ...(has('dihedral')
-      ? [
-          {
-            title: 'Dihedral zero',
-            text: `0 is cis, the sign follows the right-hand rule, the range is ${layout.angle === 'degree' ? '−180° to 180°' : '−π to π'}.`,
-          },
-        ]
-      : []),
     ...(joint.length > 0
       ? [
           {
@@ -69,6 +47,43 @@ export function pointsBeforeRunning({
       title: 'State point',
       text: 'The tables hold at this one state point and for bonded terms only. Run a chain on them and compare its distributions before you rely on them.',
     },
+  ]
+}
+
+/** How forces and coordinates of the house's own layouts are meant. */
+function conventions(
+  tables: PointsInput['tables'],
+  layout: PointsInput['layout'],
+): { title: string; text: string }[] {
+  const has = (kind: CoordinateKind): boolean => tables.some(({ kinds }) => kinds.includes(kind))
+  const turns = has('angle') || has('dihedral')
+  const per = turns
+    ? ` per ${unitSymbol(layout.length)} for bonds, per ${layout.angle} for angles and dihedrals`
+    : ''
+  const factor =
+    layout.angle === 'degree'
+      ? `Multiply by ${DEGREES_PER_RADIAN.toFixed(4)} if your engine reads radians.`
+      : `Divide by ${DEGREES_PER_RADIAN.toFixed(4)} if your engine reads degrees.`
+  const straight = layout.angle === 'degree' ? '180°' : 'π'
+  const range = layout.angle === 'degree' ? '−180° to 180°' : '−π to π'
+  return [
+    { title: 'Forces', text: `Forces are −dU/dq${per}.${turns ? ` ${factor}` : ''}` },
+    ...(has('angle')
+      ? [
+          {
+            title: 'Angles',
+            text: `An angle is the internal angle at the middle bead: ${straight} is straight.`,
+          },
+        ]
+      : []),
+    ...(has('dihedral')
+      ? [
+          {
+            title: 'Dihedral zero',
+            text: `0 is cis, the sign follows the right-hand rule, the range is ${range}.`,
+          },
+        ]
+      : []),
   ]
 }
 

@@ -1,3 +1,4 @@
+export { anglesOf } from './angles-of'
 export { backboneBeads } from './backbone-beads'
 export { beadComposition, beadMass } from './bead-composition'
 export { beadGraph, type BeadGraph } from './bead-graph'

@@ -1,11 +1,14 @@
 import { computed, ref, shallowRef, type ComputedRef, type Ref, type ShallowRef } from 'vue'
 import type { RouteLocationRaw } from 'vue-router'
+import type { Waiting as WaitingHandOvers } from '@shared/contracts/hand-over-desk'
 import type { Mapping } from '@shared/contracts/mapping'
 import type { Polymer } from '@shared/contracts/polymer'
+import { getWaiting } from '@/api/hand-overs'
 import { ApiError } from '@/api/http'
 import { listMappings } from '@/api/mappings'
 import { listPolymers } from '@/api/polymers'
 import { countOf, formatCount } from '@/format/numbers'
+import { statePointName } from '@/format/state-point'
 import { useSessionStore } from '@/stores/session'
 
 export interface DeskPolymer {
@@ -17,9 +20,10 @@ export interface DeskGroup {
   readonly groupId: string
   readonly groupName: string
   readonly polymers: readonly DeskPolymer[]
+  readonly handOvers: Omit<WaitingHandOvers, 'gaps'>
 }
 
-/** Something that cannot go on without a modeller: what, about which polymer, and where to do it. */
+/** Something that cannot go on without the person: what, about which polymer, and where to do it. */
 export interface Waiting {
   readonly key: string
   readonly text: string
@@ -60,6 +64,22 @@ export const waitingFor = ({ polymer, mappings }: DeskPolymer): Waiting[] => {
   return found
 }
 
+/** Hand-overs that wait for the person: to be reviewed, to be mended, to be released. */
+export const handOversWaiting = ({ reviews, sentBack, toRelease }: DeskGroup['handOvers']): Waiting[] => {
+  const items = (handOvers: WaitingHandOvers['reviews'], text: (author: string) => string): Waiting[] =>
+    handOvers.map(({ id, title, author, mapping, statePoint }) => ({
+      key: `hand-over-${id}`,
+      text: text(author?.name ?? 'someone who left'),
+      about: `${title}: ${mapping}, ${statePointName(statePoint)}`,
+      to: { name: 'hand-over', params: { handOverId: id } },
+    }))
+  return [
+    ...items(reviews, (author) => `Review asked by ${author}`),
+    ...items(sentBack, () => 'Sent back to you'),
+    ...items(toRelease, () => 'Signed off, to be released'),
+  ]
+}
+
 /** The front desk: the polymers of the current group with their mappings, and what waits for someone who writes. */
 export function useFrontDesk(): {
   groups: ShallowRef<readonly DeskGroup[]>
@@ -84,8 +104,11 @@ export function useFrontDesk(): {
     try {
       groups.value = await Promise.all(
         shown.map(async ({ groupId, groupName }) => {
-          const polymers = await Promise.all((await listPolymers(groupId)).map(withMappings))
-          return { groupId, groupName, polymers }
+          const [polymers, handOvers] = await Promise.all([
+            listPolymers(groupId).then((found) => Promise.all(found.map(withMappings))),
+            getWaiting(groupId),
+          ])
+          return { groupId, groupName, polymers, handOvers }
         }),
       )
       loaded.value = true
@@ -95,11 +118,12 @@ export function useFrontDesk(): {
     }
   }
 
-  const waiting = computed(() =>
-    groups.value
+  const waiting = computed(() => [
+    ...groups.value.flatMap(({ handOvers }) => handOversWaiting(handOvers)),
+    ...groups.value
       .filter(({ groupId }) => session.canWrite(groupId))
       .flatMap(({ polymers }) => polymers.flatMap(waitingFor)),
-  )
+  ])
 
   return { groups, waiting, loaded, failure, load }
 }

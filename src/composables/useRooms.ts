@@ -12,7 +12,7 @@ const ROOMS: readonly { name: RoomName; text: string }[] = [
 ]
 
 export interface Room {
-  name: RoomName
+  name: RoomName | 'hand-overs'
   text: string
   to: RouteLocationRaw
   current: boolean
@@ -26,6 +26,19 @@ export function useRooms(): ComputedRef<Room[]> {
 
   return computed(() => {
     if (!('mappingId' in route.params) || !workbench.mapping) return []
-    return ROOMS.map(({ name, text }) => ({ name, text, to: roomLink(name), current: route.name === name }))
+    const { polymer, mapping, statePoint } = workbench
+    return [
+      ...ROOMS.map(({ name, text }) => ({ name, text, to: roomLink(name), current: route.name === name })),
+      {
+        name: 'hand-overs',
+        text: 'Hand-over',
+        to: {
+          name: 'hand-overs',
+          params: { polymerId: polymer?.id ?? '' },
+          query: { mapping: mapping.id, ...(statePoint ? { statePoint: statePoint.id } : {}) },
+        },
+        current: false,
+      },
+    ]
   })
 }

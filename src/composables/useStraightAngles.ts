@@ -2,6 +2,7 @@ import { computed, shallowRef, watch, type ComputedRef } from 'vue'
 import type { Distribution } from '@shared/contracts/distribution'
 import type { Term } from '@shared/contracts/mapping'
 import { straightAngleWarnings, type Warning } from '@shared/inversion'
+import { anglesOf } from '@shared/mapping/angles-of'
 import { findDistribution } from '@/api/distributions'
 import { ApiError } from '@/api/http'
 
@@ -57,27 +58,4 @@ async function loaded(termId: string, statePointId: string): Promise<Distributio
     if (!(failure instanceof ApiError)) throw failure
     return null
   }
-}
-
-/**
- * The angle terms a dihedral is made of: those that stand on its first or its last three beads somewhere along the chain, in
- * either direction; each once.
- */
-export function anglesOf(dihedral: Term, terms: readonly Term[]): Term[] {
-  if (dihedral.kind !== 'dihedral') return []
-  const wanted = new Set(
-    dihedral.places.flatMap((place) => [placeKey(place.slice(0, 3)), placeKey(place.slice(1))]),
-  )
-  return terms.filter(
-    ({ kind, places }) => kind === 'angle' && places.some((place) => wanted.has(placeKey(place))),
-  )
-}
-
-/** A row of beads wherever it starts along the chain and from whichever end it is read. */
-function placeKey(place: Term['places'][number]): string {
-  const from = (beads: Term['places'][number]) => {
-    const least = Math.min(...beads.map(({ unit }) => unit))
-    return beads.map(({ bead, unit }) => `${bead} ${unit - least}`).join(', ')
-  }
-  return [from(place), from([...place].reverse())].sort()[0]
 }

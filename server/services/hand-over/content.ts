@@ -14,7 +14,7 @@ import { StatePoint } from '../../entities/state-point.entity'
 import { Term } from '../../entities/term.entity'
 import { WarningAnswer } from '../../entities/warning-answer.entity'
 import { findInversionInput, type InversionInput } from '../inversion-input'
-import { storedTermName } from '../stored-term-name'
+import { placeNumber, storedTermName } from '../stored-term-name'
 import type { TableSource } from '../table-file'
 import { leaveOutReason } from '../table-readme'
 import { answerBasis, contentSha256, jointBasis, potentialBasis } from './content-hash'
@@ -23,6 +23,8 @@ import { answerBasis, contentSha256, jointBasis, potentialBasis } from './conten
 export interface ContentTerm {
   readonly term: Term
   readonly name: string
+  /** Which term of its sequence it is, where the sequence is split by its places. */
+  readonly placeNumber: number | undefined
   /** Why it has no table: left out by the mapping, or here; null for one that is handed over. */
   readonly leftOut: { readonly by: 'mapping' | 'hand-over'; readonly reason: string } | null
   /** Its current data. */
@@ -91,6 +93,7 @@ export async function readContent(manager: EntityManager, handOver: HandOver): P
     terms.push({
       term,
       name: storedTermName(term, stored),
+      placeNumber: placeNumber(term, stored),
       leftOut,
       input,
       potential,

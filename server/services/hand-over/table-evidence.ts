@@ -8,6 +8,8 @@ import {
   jointPotential,
   jointTable,
 } from '../../../shared/joint-potential'
+import { straightAngleWarnings, type Warning } from '../../../shared/inversion'
+import { anglesOf } from '../../../shared/mapping'
 import { makeTable } from '../../../shared/tables'
 import type { StatePoint } from '../../entities/state-point.entity'
 import type { WarningAnswer } from '../../entities/warning-answer.entity'
@@ -80,7 +82,19 @@ export function evidenceOfPair(pair: ContentPair, { statePoint }: HandOverConten
 export function warningsOfTerm(term: ContentTerm, content: HandOverContent): AnsweredWarning[] {
   const evidence = evidenceOfTerm(term, content)
   const version = term.input?.distribution.mappingVersion ?? null
-  return answered([...(evidence?.warnings ?? []), ...olderData(version, content)], term.answers)
+  const own = evidence?.warnings ?? []
+  return answered([...own, ...nearStraight(term, content), ...olderData(version, content)], term.answers)
+}
+
+/** A dihedral is in doubt where the angles it is made of are often straight, whether they are handed over or not. */
+function nearStraight({ term }: ContentTerm, { terms }: HandOverContent): Warning[] {
+  const angles = anglesOf(
+    term,
+    terms.map((each) => each.term),
+  )
+  return straightAngleWarnings(
+    terms.flatMap(({ term: other, input }) => (input && angles.includes(other) ? [input.histogram] : [])),
+  )
 }
 
 /** Warnings of a joint table with their answers. */

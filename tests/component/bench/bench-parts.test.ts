@@ -189,7 +189,14 @@ describe('BenchSmoothing', () => {
 })
 
 describe('BenchWarnings', () => {
-  const given = { distribution: storedDistribution(angleCounts()), smooth: true, readonly: false }
+  const given = {
+    distribution: storedDistribution(angleCounts()),
+    smooth: true,
+    readonly: false,
+    answers: [],
+    keepable: false,
+    answerError: '',
+  }
   const warning = { code: 'SAMPLE_SIZE_UNKNOWN', message: 'Nobody said.', action: 'State it.' } as const
 
   it('says what is wrong, why, and what to do, with the way to do it', async () => {
@@ -221,6 +228,29 @@ describe('BenchWarnings', () => {
     expect(wrapper.emitted('levelSlope')).toHaveLength(1)
     await wrapper.setProps({ smooth: false })
     expect(wrapper.find('button').exists()).toBe(false)
+  })
+
+  it('keeps a warning with its reason once the potential is saved, and shows the reason from then on', async () => {
+    const wrapper = mount(BenchWarnings, { props: { ...given, warnings: [warning], stale: null } })
+    const keep = () => wrapper.findAll('button').find((button) => button.text() === 'Keep, with reason')
+    expect(keep()).toBeUndefined()
+    await wrapper.setProps({ keepable: true })
+    await keep()?.trigger('click')
+    await wrapper.find('input').setValue(' ')
+    await wrapper.find('form').trigger('submit')
+    expect(wrapper.emitted('keep')).toBeUndefined()
+    await wrapper.find('input').setValue('The other file has it.')
+    await wrapper.find('form').trigger('submit')
+    expect(wrapper.emitted('keep')).toEqual([['SAMPLE_SIZE_UNKNOWN', 'The other file has it.']])
+    const answer = {
+      code: warning.code,
+      reason: 'The other file has it.',
+      by: null,
+      at: '2026-06-12T12:00:00Z',
+    }
+    await wrapper.setProps({ answers: [answer] })
+    expect(wrapper.text()).toContain('Kept: The other file has it.')
+    expect(keep()).toBeUndefined()
   })
 
   it('offers no act to someone who only reads, and nothing at all without warnings', () => {

@@ -8,6 +8,7 @@ import { People1764720000000 } from './migrations/1764720000000-people'
 import { ApiKeys1764806400000 } from './migrations/1764806400000-api-keys'
 import { Layouts1764892800000 } from './migrations/1764892800000-layouts'
 import { HandOvers1764979200000 } from './migrations/1764979200000-hand-overs'
+import { Deliveries1765065600000 } from './migrations/1765065600000-deliveries'
 import { MappingVersions1765152000000 } from './migrations/1765152000000-mapping-versions'
 
 /** In the order of their time stamps. */
@@ -18,6 +19,7 @@ const migrations = [
   ApiKeys1764806400000,
   Layouts1764892800000,
   HandOvers1764979200000,
+  Deliveries1765065600000,
   MappingVersions1765152000000,
 ]
 

@@ -54,7 +54,7 @@ function pathOf(route: AnyRoute): RouteConfig {
     summary: route.summary,
     description: descriptionOf(route),
     tags: [route.path.split('/')[2]],
-    ...(route.access === 'anyone' ? {} : { security: security(route) }),
+    ...(route.access === 'anyone' || route.access === 'link' ? {} : { security: security(route) }),
     request: {
       ...(names.length > 0 ? { params } : {}),
       ...(route.query ? { query: route.query as z.ZodObject } : {}),
@@ -74,6 +74,8 @@ function descriptionOf(route: AnyRoute): string {
     key: 'Any key.',
     visitor: 'Not open to keys.',
     person: 'Not open to keys.',
+    link: 'Open to whoever holds the link: the token in the path is the credential, no cookie is looked at.',
+    recipient: 'Open to whom the hand-over was sent. Not open to keys.',
   }
   const keys =
     typeof access === 'string' ? key[access] : scope ? `Key scope: \`${scope}\`.` : 'Not open to keys.'
@@ -126,12 +128,15 @@ const KEY_FAILURES = ['KEY_INVALID', 'KEY_EXPIRED', 'KEY_REVOKED'] as const
 /** By status: the codes that follow from access and form, and those the route names itself. */
 function failures(route: AnyRoute): Record<string, ResponseConfig> {
   const codes = new Set<ApiCode>(route.errors)
+  const isOpen = route.access === 'anyone' || route.access === 'link'
   if (typeof route.access === 'object') ['NOT_SIGNED_IN', 'FORBIDDEN', 'NOT_FOUND'].forEach(add)
+  if (route.access === 'link') add('LINK_INVALID')
+  if (route.access === 'recipient') ['NOT_SIGNED_IN', 'NOT_FOUND'].forEach(add)
   if (route.access === 'person' || route.access === 'key') add('NOT_SIGNED_IN')
-  if (route.access !== 'anyone') KEY_FAILURES.forEach(add)
+  if (!isOpen) KEY_FAILURES.forEach(add)
   if (keyScopeOf(route) !== null) add('KEY_SCOPE_MISSING')
-  else if (route.access !== 'anyone' && route.access !== 'key') add('KEY_NOT_ALLOWED')
-  if (route.method !== 'get' && route.access !== 'anyone') add('CSRF_TOKEN_INVALID')
+  else if (!isOpen && route.access !== 'key') add('KEY_NOT_ALLOWED')
+  if (route.method !== 'get' && !isOpen) add('CSRF_TOKEN_INVALID')
   if (route.limited) add('TOO_MANY_ATTEMPTS')
   if (route.body ?? route.query) add('VALIDATION_FAILED')
   if (route.body) add('PAYLOAD_TOO_LARGE')

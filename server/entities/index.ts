@@ -2,6 +2,7 @@ import { ApiKey } from './api-key.entity'
 import { Attempt } from './attempt.entity'
 import { CaughtMail } from './caught-mail.entity'
 import { Decision } from './decision.entity'
+import { DeliveryDownload } from './delivery-download.entity'
 import { DistributionBlock } from './distribution-block.entity'
 import { Distribution } from './distribution.entity'
 import { Event } from './event.entity'
@@ -23,6 +24,9 @@ import { Membership } from './membership.entity'
 import { PasswordReset } from './password-reset.entity'
 import { Polymer } from './polymer.entity'
 import { Potential } from './potential.entity'
+import { Question } from './question.entity'
+import { Recipient } from './recipient.entity'
+import { ReturnedFile } from './returned-file.entity'
 import { SessionRecord } from './session-record.entity'
 import { SetUpLink } from './set-up-link.entity'
 import { Setting } from './setting.entity'
@@ -38,6 +42,7 @@ export const entities = [
   Attempt,
   CaughtMail,
   Decision,
+  DeliveryDownload,
   Distribution,
   DistributionBlock,
   Event,
@@ -59,6 +64,9 @@ export const entities = [
   PasswordReset,
   Polymer,
   Potential,
+  Question,
+  Recipient,
+  ReturnedFile,
   SessionRecord,
   SetUpLink,
   Setting,

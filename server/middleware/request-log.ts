@@ -33,7 +33,7 @@ export function createRequestLog(logger: Logger): RequestHandler {
   })
 }
 
-/** A set-up link is a secret that stands in a path. */
+/** A link is a secret that stands in a path. */
 function withoutSecrets(url: string): string {
-  return url.replace(/(\/set-up\/)[^/?#]+/, '$1[token]')
+  return url.replace(/(\/(?:set-up|join|reset|password-resets|received)\/)[^/?#]+/, '$1[token]')
 }

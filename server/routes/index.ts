@@ -1,6 +1,7 @@
 import { z } from 'zod'
 import { openApiDocument } from '../openapi'
 import { comparisonRoutes } from './comparison.routes'
+import { deliveryRoutes } from './delivery.routes'
 import { distributionRoutes } from './distribution.routes'
 import { accountRoutes } from './account.routes'
 import { groupRoutes } from './group.routes'
@@ -16,6 +17,7 @@ import { layoutRoutes } from './layout.routes'
 import { mappingRoutes } from './mapping.routes'
 import { polymerRoutes } from './polymer.routes'
 import { potentialRoutes } from './potential.routes'
+import { receivedRoutes } from './received.routes'
 import { type AnyRoute, route } from './route'
 import { sessionRoutes } from './session.routes'
 import { trayRoutes } from './tray.routes'
@@ -51,5 +53,7 @@ export const routes: readonly AnyRoute[] = [
   ...handOverRoutes,
   ...handOverReviewRoutes,
   ...handOverReleaseRoutes,
+  ...deliveryRoutes,
+  ...receivedRoutes,
   ...trayRoutes,
 ]

@@ -13,6 +13,9 @@ const AREAS: Partial<Record<Resource, 'data' | 'hand-overs'>> = {
   potential: 'data',
   layout: 'data',
   handOver: 'hand-overs',
+  recipient: 'hand-overs',
+  question: 'hand-overs',
+  returnedFile: 'hand-overs',
 }
 
 /** Decisions of people about people and work: never by a script. */

@@ -9,6 +9,7 @@ import { readUpload, uploadedFiles } from '../middleware/upload'
 import { visitorOf } from '../middleware/visitor'
 import type { Download, Member, Services } from '../services'
 import { RESOURCES } from '../services/access.service'
+import type { ReceivingParty } from '../services/delivery/party'
 import { keyScopeOf } from './key-scope'
 import { type AnyRoute, type MemberAccess, ROLES_FOR } from './route'
 
@@ -30,22 +31,24 @@ export interface MountOptions {
 /**
  * Mounts routes. Each request passes, in this order: key or else session and token of a write, scope of the key, membership and
  * role, body, limits; only then is its content parsed and its handler called. So nobody who may not write can make the server
- * read an upload.
+ * read an upload. A link is a key of its own: neither cookie nor token are looked at, and its limit comes before it is.
  */
 export function mountRoutes(router: Router, routes: readonly AnyRoute[], options: MountOptions): void {
   for (const route of routes) {
     const steps: RequestHandler[] = []
     if (route.access === 'key') steps.push(readKey(options.services), requireKey)
+    else if (route.access === 'link') steps.push(...options.limits.link, requireLink(options.services))
     else if (route.access !== 'anyone') {
       steps.push(readKey(options.services), unlessKey(options.sessions))
       if (route.method !== 'get') steps.push(unlessKey(requireCsrfToken))
       steps.push(requireScope(keyScopeOf(route)))
     }
     if (route.access === 'person') steps.push(requirePerson)
+    if (route.access === 'recipient') steps.push(requireRecipient(options.services))
     if (typeof route.access === 'object') steps.push(requireMember(route.access, options.services))
     if (route.upload) steps.push(readUpload(route.upload))
     else if (route.body) steps.push(readJson)
-    if (route.limited) steps.push(...options.limits[route.limited])
+    if (route.limited && route.access !== 'link') steps.push(...options.limits[route.limited])
     router[route.method](route.path, ...steps, answerWith(route, options.services))
   }
 }
@@ -62,6 +65,25 @@ function requireMember({ may, at }: MemberAccess, { access }: Services): Request
       throw new HttpError('FORBIDDEN', `A ${member.role} may not ${REFUSED[may]} this.`)
     }
     response.locals.member = key ? { ...member, by: key.name } : member
+    next()
+  }
+}
+
+/** Whoever holds the link of a delivery. */
+function requireLink({ received }: Services): RequestHandler {
+  return async (request, response, next) => {
+    response.locals.recipient = await received.byToken(String(request.params.token))
+    next()
+  }
+}
+
+/** Someone signed in whom the hand-over was sent to; to all others it is not there, whatever their role. */
+function requireRecipient({ received }: Services): RequestHandler {
+  return async (request, response, next) => {
+    const userId = signedIn(request)
+    const id = idSchema.safeParse(request.params.handOverId)
+    response.locals.recipient = id.success ? await received.byAccount(id.data, userId) : null
+    if (response.locals.recipient === null) throw notFound('hand-over')
     next()
   }
 }
@@ -94,6 +116,7 @@ function answerWith(route: AnyRoute, services: Services): RequestHandler {
       userId: response.locals.userId as string | undefined,
       key: keyOf(response),
       member: response.locals.member as Member | undefined,
+      recipient: response.locals.recipient as ReceivingParty | undefined,
     }
     // The declaration has fitted the handler to its own schemas; here all routes look alike.
     const result = await route.handle(context as never)

@@ -6,6 +6,7 @@ import type { LimitKind } from '../middleware/limits'
 import type { Visitor } from '../middleware/visitor'
 import type { Download, Member, Services, UploadedBlocks, UploadedFile } from '../services'
 import type { Resource } from '../services/access.service'
+import type { ReceivingParty } from '../services/delivery/party'
 import type { ActingKey } from '../services/key.service'
 
 /** What a route asks of a member, and the roles that may do it. Nobody reviews what is their own: services see to that. */
@@ -31,9 +32,10 @@ export interface MemberAccess {
 
 /**
  * Who may ask: anyone without a session, anyone with one, someone signed in about what is their own, a script about its key,
- * or members of a group.
+ * whoever holds the link in the path's :token, someone signed in whom the hand-over in :handOverId was sent to, or members of a
+ * group.
  */
-export type Access = 'anyone' | 'visitor' | 'person' | 'key' | MemberAccess
+export type Access = 'anyone' | 'visitor' | 'person' | 'key' | 'link' | 'recipient' | MemberAccess
 
 type ParameterNames<Path extends string> = Path extends `${string}:${infer Name}/${infer Rest}`
   ? Name | ParameterNames<Rest>
@@ -54,7 +56,8 @@ export type Context<Path extends string, Query, Body, Who extends Access> = {
 } & (Who extends MemberAccess ? { readonly member: Member } : object) &
   (Who extends 'visitor' ? { readonly visitor: Visitor } : object) &
   (Who extends 'person' ? { readonly visitor: Visitor; readonly userId: string } : object) &
-  (Who extends 'key' ? { readonly key: ActingKey } : object)
+  (Who extends 'key' ? { readonly key: ActingKey } : object) &
+  (Who extends 'link' | 'recipient' ? { readonly recipient: ReceivingParty } : object)
 
 /** What a route answers when all goes well. */
 export type Answer<Result> =
@@ -88,7 +91,7 @@ export interface Route<
   readonly body?: z.ZodType<Body>
   /** The body comes as multipart: one file, or one with files of its parts, and the rest as JSON in the field `settings`. */
   readonly upload?: 'single' | 'parted'
-  readonly limited?: LimitKind
+  readonly limited?: LimitKind | undefined
   readonly answer: Answer<Result>
   /** Codes beyond those that follow from access and form. */
   readonly errors?: readonly ApiCode[]

@@ -14,6 +14,9 @@ export const RESOURCES = {
   potential: 'potential',
   invitation: 'invitation',
   handOver: 'hand_over',
+  recipient: 'recipient',
+  question: 'question',
+  returnedFile: 'returned_file',
   layout: 'layout',
 } as const
 export type Resource = keyof typeof RESOURCES

@@ -7,10 +7,12 @@ import { HandOverTable } from '../entities/hand-over-table.entity'
 import { HandOver } from '../entities/hand-over.entity'
 import { User } from '../entities/user.entity'
 import { notFound } from '../errors/http-error'
+import { tellRecipients } from './delivery/tell-recipients'
 import { checkComplete, contentChanged, lapse, step } from './hand-over-review.service'
-import { packFiles, type ReleasedHandOver, releasedFiles } from './hand-over/archive'
+import { packFiles, releasedFiles } from './hand-over/archive'
 import { comparedNow, comparedThen } from './hand-over/compared'
 import { freezeFiles, freezeHead, writeTables } from './hand-over/freeze'
+import { findReleased } from './hand-over/find-released'
 import { readHandOverBody } from './hand-over/hand-over-body'
 import { lockContent, lockHandOver } from './hand-over/hand-over-context'
 import { handOverSubject } from './hand-over/hand-over-name'
@@ -131,19 +133,10 @@ export class HandOverReleaseService {
       await step(manager, handOver, { standing: 'withdrawn', ...withdrawal }, now)
       const details = { reason }
       await recordEvent(manager, member, { action: 'withdrawn', subject: handOverSubject(handOver), details })
+      await tellRecipients(manager, handOver, reason)
     })
     return this.get(member, handOverId)
   }
-}
-
-/** @throws {HttpError} NOT_FOUND for one of another group, and for one that is not released */
-async function findReleased(manager: EntityManager, groupId: string, id: string): Promise<ReleasedHandOver> {
-  const handOver = await manager.findOne(HandOver, {
-    where: { id, groupId, standing: In(['released', 'withdrawn']) },
-    relations: { withdrawnBy: true },
-  })
-  if (!handOver?.frozen || !handOver.releasedAt) throw notFound('released hand-over')
-  return handOver as ReleasedHandOver
 }
 
 /** The next number of the group. Two releases at the same time come one after the other. */

@@ -56,6 +56,9 @@ export const historyActionSchema = z
     'file sent back',
     'link revoked',
     'link sent again',
+    'link extended',
+    'file taken',
+    'file set aside',
     'key made',
     'key revoked',
   ])

@@ -1,6 +1,7 @@
 import { coordinateSentence, formatNumber, jacobianSentence } from '../tables'
 import { coordinateFromInternal, unitWord } from '../units'
 import type { JointPotential } from './joint-potential'
+import type { JointSurface } from './joint-surface'
 import type { JointTableUnits } from './joint-table'
 
 /** What the comment lines of a joint table state; null leaves a line out. All of it comes in as an argument. */
@@ -20,8 +21,11 @@ export interface JointTableCommentInput {
   readonly wording?: { readonly x: string; readonly y: string; readonly units: string }
   readonly potential: Pick<
     JointPotential,
-    'kinds' | 'temperature' | 'settings' | 'smoothing' | 'independentSamples' | 'warnings' | 'surface'
-  >
+    'kinds' | 'temperature' | 'settings' | 'smoothing' | 'independentSamples' | 'warnings'
+  > & {
+    /** Where samples were seen along each axis, nm or rad. */
+    readonly surface: { readonly axes: readonly Pick<JointSurface['axes'][number], 'populated'>[] }
+  }
   /** Name and SHA-256 of the file the joint distribution came from. */
   readonly input: { readonly name: string; readonly sha256: string } | null
   /** SHA-256 of the rows as `formatJointRows` gives them. */

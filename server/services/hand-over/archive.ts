@@ -52,7 +52,7 @@ export async function releasedFiles(
   }
   const missing = [...listed.keys()].find((path) => !stored.some((file) => file.path === path))
   if (!sums || missing !== undefined) throw damaged(handOver, missing ?? SUMS_PATH)
-  return handOver.withdrawnAt === null ? stored : withdrawnFiles(manager, handOver, stored)
+  return withdrawnFiles(manager, handOver, stored)
 }
 
 /** The archive of checked files: the same files give the same bytes. */
@@ -70,17 +70,21 @@ export function packFiles({ frozen, releasedAt }: ReleasedHandOver, files: reado
   return { fileName: `${parts.join('_')}_hand-over-${number}.zip`, bytes: zipSync(archive) }
 }
 
+/** The withdrawal of a hand-over as its files tell of it; null while it stands. */
+export function withdrawalOf(handOver: ReleasedHandOver): Withdrawal | null {
+  const { withdrawnAt, withdrawnReason, withdrawnBy } = handOver
+  if (withdrawnAt === null) return null
+  return { at: withdrawnAt.toISOString(), by: withdrawnBy?.name ?? null, reason: withdrawnReason ?? '' }
+}
+
 async function withdrawnFiles(
   manager: EntityManager,
   handOver: ReleasedHandOver,
   stored: readonly ListedFile[],
 ): Promise<ListedFile[]> {
-  const { id, frozen, withdrawnAt, withdrawnReason, withdrawnBy } = handOver
-  const withdrawal: Withdrawal = {
-    at: withdrawnAt?.toISOString() ?? '',
-    by: withdrawnBy?.name ?? null,
-    reason: withdrawnReason ?? '',
-  }
+  const { id, frozen } = handOver
+  const withdrawal = withdrawalOf(handOver)
+  if (withdrawal === null) return [...stored]
   const tables = await manager.find(HandOverTable, {
     where: { handOverId: id },
     order: { position: 'ASC' },

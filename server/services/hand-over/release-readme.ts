@@ -1,10 +1,10 @@
 import type { FrozenHandOver } from '../../../shared/contracts/hand-over'
 import { formatNumber } from '../../../shared/tables'
 import { unitWord } from '../../../shared/units'
-import type { WrittenTable } from './written-table'
+import type { ManifestTable } from './manifest'
 
 /** The text that lies beside the tables and explains them to whoever did not make them. */
-export function writeReleaseReadme(frozen: FrozenHandOver, tables: readonly WrittenTable[]): string {
+export function writeReleaseReadme(frozen: FrozenHandOver, tables: readonly ManifestTable[]): string {
   const { number, title, polymer, mapping, layout } = frozen
   const units = [layout.length, layout.angle, layout.energy].map(unitWord).join(', ')
   return [

@@ -60,7 +60,7 @@ export async function mailDecision(
 }
 
 /** A title may hold signs that no line of a header may. */
-function oneLine(text: string): string {
+export function oneLine(text: string): string {
   return text.replace(/[\p{Cc}\u2028\u2029]+/gu, ' ')
 }
 

@@ -2,7 +2,6 @@ import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest'
 import { flushPromises } from '@vue/test-utils'
 import { h } from 'vue'
 import { layoutRepeatUnit, parseRepeatUnit } from '@shared/chemistry'
-import type { Bead } from '@shared/mapping'
 import { boardLayout } from '@shared/mapping-drawing'
 import MappingCanvas from '@/components/mapping/MappingCanvas.vue'
 import { HEXYL_ACRYLATE, THREE_TO_ONE } from '../../unit/shared/mapping/hexyl-acrylate'
@@ -26,7 +25,7 @@ const open = async (readonly = false): Promise<void> => {
       board,
       document: THREE_TO_ONE,
       offered: null,
-      selected: THREE_TO_ONE.beads[0] as Bead,
+      selected: THREE_TO_ONE.beads[0],
       loose: null,
       painting: false,
       sharing: false,

@@ -12,7 +12,10 @@ import { usePairs } from './usePairs'
 export type TableUnitQuery = Required<Pick<TableQuery, 'statePoint' | 'length' | 'angle' | 'energy'>> &
   Pick<TableQuery, 'layout' | 'layoutVersion'>
 
-/** A table as its file has it: the numbers on the screen are read from the very text that is downloaded. */
+/**
+ * A table and its file. The numbers on the screen are those of the plain table in the units one reads in; the text is the very
+ * one that is downloaded, in whichever layout.
+ */
 export interface TableFile {
   readonly name: string
   readonly text: string
@@ -75,8 +78,12 @@ export function useTableFiles(query: () => TableUnitQuery | null): {
     await Promise.all(
       ready.value.map(async ({ id, kind }) => {
         try {
-          const { name, text } = await readTable(id, asked, signal)
-          found.set(id, tableFileOf(name, text, kind === 'bond' ? asked.length : asked.angle))
+          const { layout, layoutVersion, ...plain } = asked
+          const { name, text } = await readTable(id, plain, signal)
+          const facts = tableFileOf(name, text, kind === 'bond' ? asked.length : asked.angle)
+          const file =
+            layout === undefined ? {} : await readTable(id, { ...plain, layout, layoutVersion }, signal)
+          found.set(id, { ...facts, ...file })
         } catch (error) {
           if (error instanceof ApiError) failed.set(id, error.message)
           else if (!signal.aborted) throw error

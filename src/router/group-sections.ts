@@ -37,6 +37,13 @@ export const GROUP_SECTIONS: readonly GroupSection[] = [
     component: () => import('@/views/GroupDefaultsView.vue'),
   },
   {
+    path: 'layouts/:layoutId?',
+    name: 'group-layouts',
+    text: 'Layouts',
+    roles: READERS,
+    component: () => import('@/views/GroupLayoutsView.vue'),
+  },
+  {
     path: 'history',
     name: 'group-history',
     text: 'History',

@@ -26,6 +26,16 @@ const answers = {
   [at('nm')]: table('nm'),
   [at('angstrom')]: table('angstrom'),
   'GET /api/mappings/mapping/pairs': { body: { pairs: [] } },
+  'GET /api/groups/group/layouts': {
+    body: {
+      builtIns: [
+        { key: 'three-columns', name: 'Three columns', about: 'coordinate, energy, force' },
+        { key: 'json', name: 'JSON', about: 'one object' },
+      ],
+      layouts: [],
+      default: 'three-columns',
+    },
+  },
 }
 const open = async (terms: Term[], more: Parameters<typeof fakeApi>[0] = {}) => {
   const sent = fakeApi({ ...answers, ...more })
@@ -52,6 +62,22 @@ describe('TablesView', () => {
     )
     const link = control('Download bond_B-E_400K.txt')
     expect(`GET ${link.getAttribute('href')}`).toBe(at('nm'))
+  })
+
+  it('writes files in the default layout of the group, and still reads the numbers off the plain table', async () => {
+    const list = { builtIns: [{ key: 'json', name: 'JSON', about: '' }], layouts: [], default: 'json' }
+    await open([bond], {
+      'GET /api/groups/group/layouts': { body: list },
+      [`${at('nm')}&layout=json`]: {
+        text: '{ "rows": [] }',
+        headers: { 'Content-Disposition': 'attachment; filename="bond_B-E_400K.json"' },
+      },
+    })
+    await here('First lines of bond_B-E_400K.json')
+    expect(pageText()).toContain('0.2 to 0.3 nm')
+    expect(document.querySelector('pre')?.textContent).toContain('{ "rows": [] }')
+    const link = control('Download bond_B-E_400K.json')
+    expect(link.getAttribute('href')).toContain('layout=json')
   })
 
   it('writes the files and the archive in the units that are chosen', async () => {

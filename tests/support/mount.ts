@@ -25,6 +25,7 @@ const ADDRESSES: Readonly<Record<string, string>> = {
   'group-invitations': '/groups/:groupId/invitations',
   'group-defaults': '/groups/:groupId/defaults',
   'group-history': '/groups/:groupId/history',
+  'group-layouts': '/groups/:groupId/layouts/:layoutId?',
   'polymer-new': '/polymers/new',
   polymer: '/polymers/:polymerId',
   comparison: '/polymers/:polymerId/comparison',

@@ -13,6 +13,7 @@ import type { StatePoint } from '../entities/state-point.entity'
 import { notFound } from '../errors/http-error'
 import { type CoveredTerm, readEvidence, type StoredEvidence } from './comparison-evidence'
 import { coverageOf } from './coverage.service'
+import { thresholdsOf } from './group.service'
 import { histogramOf } from './histograms'
 import type { Member } from './member'
 import { findStatePoint } from './term-context'
@@ -73,15 +74,19 @@ export class ComparisonService {
   }
 
   /** One inversion after the other, with room for other requests between them. */
-  private async findings(terms: readonly CoveredTerm[], { temperature }: StatePoint): Promise<Findings> {
+  private async findings(
+    terms: readonly CoveredTerm[],
+    { groupId, temperature }: StatePoint,
+  ): Promise<Findings> {
+    const { flatBelow } = await thresholdsOf(this.dataSource.manager, groupId)
     const findings = new Map<string, StoredFinding>()
     for (const { term, name, used, distribution, inefficiency } of terms) {
       if (!used || distribution === null) continue
-      const key = `${distribution.contentSha256} ${temperature} ${inefficiency}`
+      const key = `${distribution.contentSha256} ${temperature} ${inefficiency} ${flatBelow}`
       let finding = this.kept.get(key)
       if (finding === undefined) {
         await setImmediate()
-        finding = termFinding(histogramOf(term.kind, distribution), temperature, inefficiency)
+        finding = termFinding(histogramOf(term.kind, distribution), temperature, inefficiency, flatBelow)
         this.keep(key, finding)
       }
       findings.set(name, finding)

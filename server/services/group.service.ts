@@ -132,7 +132,7 @@ async function readGroup(manager: EntityManager, groupId: string): Promise<Group
 }
 
 /** What a group has set, and for the rest what holds in the house. */
-function defaultsOf({ defaults }: Group): GroupDefaults {
+export function defaultsOf({ defaults }: Group): GroupDefaults {
   return {
     units: { ...HOUSE_DEFAULTS.units, ...defaults.units },
     thresholds: { ...HOUSE_DEFAULTS.thresholds, ...defaults.thresholds },

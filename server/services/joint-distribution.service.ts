@@ -11,12 +11,13 @@ import { JointDistribution } from '../entities/joint-distribution.entity'
 import { SourceFile } from '../entities/source-file.entity'
 import type { Term } from '../entities/term.entity'
 import { HttpError, notFound } from '../errors/http-error'
+import { thresholdsOf } from './group.service'
 import type { Download, Member, UploadedFile } from './member'
 import { personOf } from './people'
 import { recordTerms } from './record-work'
 import { fileBody, packFile, textOf, unpackFile } from './source-files'
 import { findStatePoint, findTerm, lockTerm } from './term-context'
-import { verdictNumbers } from './verdict-numbers'
+import { verdictAt, verdictNumbers } from './verdict-numbers'
 
 /** Joint distributions of two terms, and what was decided about them. */
 export class JointDistributionService {
@@ -39,7 +40,7 @@ export class JointDistributionService {
     const { firstTermId, secondTermId, statePointId, settings } = upload
     await this.checkTerms(groupId, mappingId, upload)
     const { histogram, notes } = readJointHistogram(textOf(file.bytes), settings)
-    const numbers = verdictNumbers(histogram)
+    const numbers = verdictNumbers(histogram, await thresholdsOf(this.dataSource.manager, groupId))
     const packed = await packFile(file)
     return this.dataSource.transaction(async (manager) => {
       // Always in the same order, so that two uploads of one pair cannot lock each other out.
@@ -102,7 +103,7 @@ export class JointDistributionService {
       if (!joint) throw notFound('joint distribution')
       const now = new Date()
       await manager.update(Decision, { jointDistributionId, supersededAt: IsNull() }, { supersededAt: now })
-      const { numbers } = joint
+      const numbers = verdictAt(joint.numbers, await thresholdsOf(manager, groupId))
       const by = { decidedAt: now, decidedById: userId, supersededAt: null }
       await manager.insert(Decision, { groupId, jointDistributionId, choice, reason, numbers, ...by })
       const work = { ...pairOf(joint), details: { choice, reason } }

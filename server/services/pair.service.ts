@@ -6,11 +6,13 @@ import { JointDistribution } from '../entities/joint-distribution.entity'
 import { Mapping } from '../entities/mapping.entity'
 import { Term } from '../entities/term.entity'
 import { notFound } from '../errors/http-error'
+import { thresholdsOf } from './group.service'
 import { pairReason, readFit } from './mapping-fit'
 import type { Member } from './member'
 import { storedTermName } from './stored-term-name'
 import { findStatePoint } from './term-context'
 import { termPairs } from './term-pairs'
+import { verdictAt } from './verdict-numbers'
 
 /** Most pairs that one answer lists: our limit. A branched mapping of 40 beads would have a hundred thousand. */
 export const MOST_PAIRS = 500
@@ -32,6 +34,7 @@ export class PairService {
       where: { mappingId, current: true },
       order: { position: 'ASC' },
     })
+    const thresholds = await thresholdsOf(manager, groupId)
     const fit = await readFit(manager, mapping)
     const joints = await manager.find(JointDistribution, {
       where: { mappingId, statePointId, supersededAt: IsNull() },
@@ -51,7 +54,7 @@ export class PairService {
         secondTermId: joint?.secondTermId ?? second.id,
         name: `${storedTermName(first, terms)} · ${storedTermName(second, terms)}`,
         jointDistributionId: joint?.id ?? null,
-        numbers: joint?.numbers ?? null,
+        numbers: joint ? verdictAt(joint.numbers, thresholds) : null,
         decision: decision?.choice ?? null,
         unfit: joint ? pairReason(fit, [first.id, second.id], joint.mappingVersion) : null,
       }

@@ -1,8 +1,10 @@
 import type { DataSource } from 'typeorm'
+import { HOUSE_DEFAULTS } from '../../shared/contracts/group'
 import type { DemoUser, Membership as MembershipBody, SignedInUser } from '../../shared/contracts/session'
 import { Membership } from '../entities/membership.entity'
 import { User } from '../entities/user.entity'
 import { HttpError, notFound } from '../errors/http-error'
+import { defaultsOf } from './group.service'
 import { verifyPassword } from './passwords'
 
 /** Who signs in, and what a browser may know about it. */
@@ -77,5 +79,6 @@ export class SessionService {
 }
 
 function membershipBody({ group, groupId, role }: Membership): MembershipBody {
-  return { groupId, groupName: group?.name ?? '', role, demo: group?.demo ?? false }
+  const { name = '', demo = false } = group ?? {}
+  return { groupId, groupName: name, role, demo, defaults: group ? defaultsOf(group) : HOUSE_DEFAULTS }
 }

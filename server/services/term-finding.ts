@@ -20,17 +20,19 @@ const SAMPLES_UNKNOWN =
  *
  * @param temperature K
  * @param inefficiency what counts are divided by, as someone stated it; null takes what the distribution says
+ * @param flatBelow of the group: a dihedral that rises by less may be dropped, in kT
  */
 export function termFinding(
   histogram: Histogram,
   temperature: number,
   inefficiency: number | null,
+  flatBelow: number,
 ): StoredFinding {
   const width = histogramDeviation(histogram)
   const deviation = Number.isFinite(width) ? width : null
   try {
     const inversion = invert(histogram, temperature, { ...DEFAULT_INVERSION_SETTINGS, inefficiency })
-    const flatness = histogram.kind === 'dihedral' ? dihedralFlatness(inversion).verdict : null
+    const flatness = histogram.kind === 'dihedral' ? dihedralFlatness(inversion, flatBelow).verdict : null
     if (inversion.independentSamples === null) {
       return { basins: null, deviation, flatness, problem: SAMPLES_UNKNOWN }
     }

@@ -176,6 +176,9 @@ export const verdictNumbersSchema = z
     nullMean: z.number().nullable(),
     pValue: z.number().nullable(),
     independentSamples: z.number().nullable(),
+    /** With them the verdict follows at other thresholds; missing in what was recorded before they were kept. */
+    nullPercentile99: z.number().nullable().optional(),
+    basinsBeyondProduct: z.number().int().nullable().optional(),
   })
   .meta({ id: 'VerdictNumbers' })
 export type VerdictNumbers = z.infer<typeof verdictNumbersSchema>

@@ -12,8 +12,8 @@ import {
 
 /** Ranges in which a group may set its thresholds; ends included. Mutual information in nats, amplitude in kT. */
 export const THRESHOLD_LIMITS = {
-  separableBelow: { low: 0.001, high: 1 },
-  jointAbove: { low: 0.001, high: 3 },
+  separableBelow: { low: 0.001, high: 0.5 },
+  jointAbove: { low: 0.002, high: 1 },
   flatBelow: { low: 0.05, high: 5 },
 } as const
 

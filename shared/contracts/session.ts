@@ -1,5 +1,6 @@
 import { z } from 'zod'
 import { idSchema, nameSchema, roleSchema } from './common'
+import { groupDefaultsSchema } from './group'
 
 export const MIN_PASSWORD_LENGTH = 10
 
@@ -15,7 +16,13 @@ export const passwordSchema = z
   .max(256, 'Use at most 256 characters.')
 
 export const membershipSchema = z
-  .object({ groupId: idSchema, groupName: z.string(), role: roleSchema, demo: z.boolean() })
+  .object({
+    groupId: idSchema,
+    groupName: z.string(),
+    role: roleSchema,
+    demo: z.boolean(),
+    defaults: groupDefaultsSchema,
+  })
   .meta({ id: 'Membership' })
 export type Membership = z.infer<typeof membershipSchema>
 

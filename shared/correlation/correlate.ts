@@ -4,7 +4,7 @@ import { binMidpoints, binVolumes } from '../histogram'
 import type { JointHistogram } from '../histogram/joint-histogram'
 import { binRanks, pearsonCoefficient } from './coefficients'
 import { conditionalMeans } from './conditional-mean'
-import type { Correlation } from './correlation'
+import { type Correlation, DEFAULT_THRESHOLDS, type VerdictThresholds } from './correlation'
 import { correlationBasins } from './correlation-basins'
 import { correlationWarnings } from './correlation-warnings'
 import { couplingMap, largestCoupling } from './coupling-map'
@@ -35,6 +35,8 @@ export interface CorrelateOptions {
   readonly independentSamples?: number | null
   /** When a basin counts. */
   readonly basinThreshold?: BasinThreshold
+  /** From which mutual information on the verdict speaks. */
+  readonly thresholds?: VerdictThresholds
 }
 
 /**
@@ -52,6 +54,7 @@ export function correlate(joint: JointHistogram, options: CorrelateOptions = {})
   const samples = content === 'count' ? total : null
   const independentSamples = options.independentSamples ?? joint.independentSamples ?? samples
   checkSampleSize(independentSamples, samples)
+  const thresholds = options.thresholds ?? DEFAULT_THRESHOLDS
   const masses = joint.weights.map((weight) => weight / total)
   const marginals = marginalsOf(masses, ny)
   const verdictGrid = mergedForVerdict(joint, masses, marginals, independentSamples)
@@ -71,7 +74,8 @@ export function correlate(joint: JointHistogram, options: CorrelateOptions = {})
           independentSamples,
           options.basinThreshold ?? DEFAULT_BASIN_THRESHOLD,
         )
-  const verdict = chance === null ? 'undecided' : verdictOf(measured, chance, basins?.mapOnly ?? 0)
+  const verdict =
+    chance === null ? 'undecided' : verdictOf(measured, chance, basins?.mapOnly ?? 0, thresholds)
   const coupling = couplingMap(masses, marginals, xEdges, yEdges, independentSamples)
   const ordered = !kinds.includes('dihedral')
   return {
@@ -100,7 +104,8 @@ export function correlate(joint: JointHistogram, options: CorrelateOptions = {})
     spearman: ordered ? pearsonCoefficient(masses, binRanks(marginals.x), binRanks(marginals.y)) : null,
     basins,
     verdict,
-    warnings: correlationWarnings(kinds, independentSamples, verdict, chance, basins),
+    thresholds,
+    warnings: correlationWarnings(kinds, independentSamples, verdict, chance, basins, thresholds),
   }
 }
 

@@ -1,6 +1,5 @@
 import type { CoordinateKind } from '../histogram/histogram'
-import type { CorrelationVerdict, CorrelationWarning } from './correlation'
-import { JOINT_ABOVE, SEPARABLE_BELOW } from './correlation'
+import type { CorrelationVerdict, CorrelationWarning, VerdictThresholds } from './correlation'
 import type { CorrelationBasins } from './correlation-basins'
 import type { NullDistribution } from './null-tables'
 
@@ -11,6 +10,7 @@ export function correlationWarnings(
   verdict: CorrelationVerdict,
   chance: NullDistribution | null,
   basins: CorrelationBasins | null,
+  { separableBelow, jointAbove }: VerdictThresholds,
 ): CorrelationWarning[] {
   const warnings: CorrelationWarning[] = []
   if (chance === null) {
@@ -26,7 +26,7 @@ export function correlationWarnings(
     warnings.push({
       code: 'TOO_FEW_SAMPLES',
       message:
-        `With ${count} independent samples chance alone reaches ${hidden} nats, more than the ${SEPARABLE_BELOW} that ` +
+        `With ${count} independent samples chance alone reaches ${hidden} nats, more than the ${separableBelow} that ` +
         'would still be separable.',
       action: 'Sample longer, or pool chains, before deciding.',
     })
@@ -38,7 +38,7 @@ export function correlationWarnings(
       message:
         `At a depth of ${depth} kT the map has ${mapOnly === 1 ? 'a basin' : `${mapOnly} basins`} that unrelated terms ` +
         `with these distributions would lack: two separate potentials cannot make ${mapOnly === 1 ? 'it' : 'them'}, even ` +
-        `where the mutual information stays below ${JOINT_ABOVE} nats.`,
+        `where the mutual information stays below ${jointAbove} nats.`,
       action: 'Use a joint potential, or look whether another mapping parts the basins.',
     })
   }

@@ -12,6 +12,20 @@ export const SEPARABLE_BELOW = 0.02
 /** Our default: from this mutual information on, in nats, a joint potential is advised. */
 export const JOINT_ABOVE = 0.1
 
+/** From which mutual information on a verdict speaks, in nats. */
+export interface VerdictThresholds {
+  /** Below it two terms are separable. */
+  readonly separableBelow: number
+  /** From it on a joint potential is advised; above `separableBelow`. */
+  readonly jointAbove: number
+}
+
+/** Our defaults; a group may set its own. */
+export const DEFAULT_THRESHOLDS: VerdictThresholds = {
+  separableBelow: SEPARABLE_BELOW,
+  jointAbove: JOINT_ABOVE,
+}
+
 /** Share of null tables that may reach the measured mutual information before it counts as chance. */
 export const SIGNIFICANCE = 0.01
 
@@ -119,5 +133,7 @@ export interface Correlation {
   /** Null when the sample size is unknown, or one coordinate has data in too few bins for a smooth curve. */
   readonly basins: CorrelationBasins | null
   readonly verdict: CorrelationVerdict
+  /** The verdict was reached at. */
+  readonly thresholds: VerdictThresholds
   readonly warnings: readonly CorrelationWarning[]
 }

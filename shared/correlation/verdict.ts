@@ -1,5 +1,5 @@
-import type { CorrelationVerdict } from './correlation'
-import { JOINT_ABOVE, SEPARABLE_BELOW, SIGNIFICANCE } from './correlation'
+import type { CorrelationVerdict, VerdictThresholds } from './correlation'
+import { SIGNIFICANCE } from './correlation'
 import type { NullDistribution } from './null-tables'
 
 /**
@@ -10,13 +10,18 @@ import type { NullDistribution } from './null-tables'
  * @param measured plug-in value on the verdict grid, in nats
  * @param mapOnly number of basins of the map that the product lacks
  */
-export function verdictOf(measured: number, chance: NullDistribution, mapOnly: number): CorrelationVerdict {
+export function verdictOf(
+  measured: number,
+  chance: Pick<NullDistribution, 'mean' | 'percentile99' | 'pValue'>,
+  mapOnly: number,
+  { separableBelow, jointAbove }: VerdictThresholds,
+): CorrelationVerdict {
   const corrected = measured - chance.mean
   const significant = chance.pValue < SIGNIFICANCE && measured > chance.percentile99
   if (significant) {
-    if (corrected >= JOINT_ABOVE || mapOnly > 0) return 'joint'
-    return corrected >= SEPARABLE_BELOW ? 'borderline' : 'separable'
+    if (corrected >= jointAbove || mapOnly > 0) return 'joint'
+    return corrected >= separableBelow ? 'borderline' : 'separable'
   }
   const couldHide = chance.percentile99 - chance.mean
-  return couldHide < SEPARABLE_BELOW && corrected < SEPARABLE_BELOW ? 'separable' : 'undecided'
+  return couldHide < separableBelow && corrected < separableBelow ? 'separable' : 'undecided'
 }

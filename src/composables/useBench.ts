@@ -11,6 +11,7 @@ import { useBenchReading } from './useBenchReading'
 import { useBenchTerm, type BenchPlace } from './useBenchTerm'
 import { useDelayed } from './useDelayed'
 import { useFormRanking } from './useFormRanking'
+import { useGroupDefaults } from './useGroupDefaults'
 import { useInversion } from './useInversion'
 import { useInversionDrafts } from './useInversionDrafts'
 import { useSavePotential } from './useSavePotential'
@@ -49,6 +50,7 @@ export function useBench(term: () => Term | null, statePoint: () => StatePoint |
   })
   /** A way of looking, not a setting: it changes no table. */
   const basinDepth = ref(LEAST_BASIN_DEPTH)
+  const defaults = useGroupDefaults()
   const task = computed<InversionTask | null>(() => {
     const temperature = statePoint()?.temperature
     if (histogram.value === null || temperature === undefined) return null
@@ -57,6 +59,7 @@ export function useBench(term: () => Term | null, statePoint: () => StatePoint |
       temperature,
       settings: draft.settings.value,
       basinDepth: basinDepth.value,
+      flatBelow: defaults.value.thresholds.flatBelow,
     }
   })
   const { answer, automatic, error } = useInversion(() => task.value)

@@ -1,6 +1,6 @@
 import { onScopeDispose, shallowRef, watch, type ShallowRef } from 'vue'
 import type { JointDistribution } from '@shared/contracts/distribution'
-import type { Correlation } from '@shared/correlation'
+import type { Correlation, VerdictThresholds } from '@shared/correlation'
 import type { JointHistogram } from '@shared/histogram'
 import { getJointDistribution } from '@/api/joint-distributions'
 import { startCorrelationWorker, type CorrelationWorker } from '@/workers/correlation'
@@ -21,6 +21,7 @@ export interface CorrelationState {
  */
 export function useCorrelation(
   id: () => string | null,
+  thresholds: () => VerdictThresholds,
   start: () => CorrelationWorker = startCorrelationWorker,
 ): CorrelationState {
   const joint = shallowRef<JointDistribution | null>(null)
@@ -43,7 +44,7 @@ export function useCorrelation(
     try {
       const loaded = await getJointDistribution(wanted)
       if (question !== asked) return
-      const found = await worker.runCorrelation(histogramOf(loaded))
+      const found = await worker.runCorrelation(histogramOf(loaded), thresholds())
       if (question !== asked) return
       joint.value = loaded
       correlation.value = found

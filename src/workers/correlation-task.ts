@@ -1,4 +1,4 @@
-import { correlate, type Correlation } from '@shared/correlation'
+import { correlate, type Correlation, type VerdictThresholds } from '@shared/correlation'
 import { InvalidInputError, type InputPlace, type InvalidInputCode } from '@shared/errors'
 import type { JointHistogram } from '@shared/histogram'
 
@@ -15,9 +15,9 @@ export type CorrelationOutcome =
     }
 
 /** Works out what a joint histogram says, as the server does. */
-export function runCorrelation(joint: JointHistogram): CorrelationOutcome {
+export function runCorrelation(joint: JointHistogram, thresholds: VerdictThresholds): CorrelationOutcome {
   try {
-    return { correlation: correlate(joint), refusal: null }
+    return { correlation: correlate(joint, { thresholds }), refusal: null }
   } catch (error) {
     if (!(error instanceof InvalidInputError)) throw error
     const { code, message, place } = error

@@ -1,12 +1,12 @@
 import { releaseProxy, wrap } from 'comlink'
-import type { Correlation } from '@shared/correlation'
+import type { Correlation, VerdictThresholds } from '@shared/correlation'
 import { InvalidInputError } from '@shared/errors'
 import type { JointHistogram } from '@shared/histogram'
 import type * as correlationTask from './correlation-task'
 
 /** Correlations off the main thread. Input the core refuses rejects with InvalidInputError. */
 export interface CorrelationWorker {
-  runCorrelation(joint: JointHistogram): Promise<Correlation>
+  runCorrelation(joint: JointHistogram, thresholds: VerdictThresholds): Promise<Correlation>
   stop(): void
 }
 
@@ -22,8 +22,8 @@ export const startCorrelationWorker = (): CorrelationWorker => {
   // Without a question under way nobody waits for this.
   broken.catch(() => undefined)
   return {
-    runCorrelation: async (joint) => {
-      const { correlation, refusal } = await Promise.race([remote.runCorrelation(joint), broken])
+    runCorrelation: async (joint, thresholds) => {
+      const { correlation, refusal } = await Promise.race([remote.runCorrelation(joint, thresholds), broken])
       if (refusal === null) return correlation
       throw new InvalidInputError(refusal.code, refusal.message, refusal.place)
     },

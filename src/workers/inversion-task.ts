@@ -22,6 +22,8 @@ export interface InversionTask {
   readonly settings: InversionSettings
   /** Basins are asked for from this depth on, in kT. */
   readonly basinDepth: number
+  /** A dihedral whose potential rises by less than this may be dropped, in kT. */
+  readonly flatBelow: number
 }
 
 /** What the table is written from, the table, and the evidence that rests on the smooth curve. */
@@ -52,7 +54,7 @@ export type Outcome<Answer> =
 /** Inverts, puts the chosen form in its place, and makes the table. */
 export function runInversion(task: InversionTask): Outcome<InversionAnswer> {
   return outcomeOf(() => {
-    const { histogram, temperature, settings, basinDepth } = task
+    const { histogram, temperature, settings, basinDepth, flatBelow } = task
     const derived = withForm(invert(histogram, temperature, settings), chosenForm(task))
     const { inversion, smooth } = derived
     const threshold = { ...DEFAULT_BASIN_THRESHOLD, depth: basinDepth }
@@ -60,7 +62,7 @@ export function runInversion(task: InversionTask): Outcome<InversionAnswer> {
       ...derived,
       table: makeTable(inversion.potential, settings.table),
       basins: curveBasins(smooth.potential, threshold, smooth.jacobian),
-      flatness: smooth.kind === 'dihedral' ? dihedralFlatness(smooth) : null,
+      flatness: smooth.kind === 'dihedral' ? dihedralFlatness(smooth, flatBelow) : null,
     }
   })
 }

@@ -80,6 +80,8 @@ describe('a joint distribution', () => {
       nullMean: expected.nullMean,
       pValue: expected.pValue,
       independentSamples: expected.independentSamples,
+      nullPercentile99: expected.nullPercentile99,
+      basinsBeyondProduct: expected.basins?.mapOnly ?? null,
     })
   })
 

@@ -26,6 +26,8 @@ const ROOMS = [
   ['bench', '/polymers/P/mappings/M/bench', 'Effective dimension'],
   ['correlation', '/polymers/P/mappings/M/correlation', 'Independent samples'],
   ['tables', '/polymers/P/mappings/M/tables', 'First lines of'],
+  ['layouts', '/groups/G/layouts', 'Four columns'],
+  ['layout', '/groups/G/layouts/new', 'Preview of'],
 ] as const
 
 let browser: Browser
@@ -65,9 +67,9 @@ describe.each(VIEWS)('the rooms in $theme at $width px', ({ width, theme }) => {
     await picture('room-sign-in')
     await page.getByRole('button', { name: /modeller/ }).click()
     await page.getByRole('heading', { name: /^Adhesives/ }).waitFor()
-    const { polymer, mapping, statePoint } = await demoAddresses(page)
+    const { group, polymer, mapping, statePoint } = await demoAddresses(page)
     for (const [room, path, words] of ROOMS) {
-      const address = path.replace('P', polymer).replace('M', mapping)
+      const address = path.replace('G', group).replace('P', polymer).replace('M', mapping)
       await page.goto(path.includes('M') ? `${address}?statePoint=${statePoint}` : address)
       await page.getByText(words).first().waitFor()
       findings.push(...(await examine(page, room)))
@@ -96,13 +98,12 @@ async function examine(page: Page, room: string): Promise<string[]> {
 async function demoAddresses(page: Page) {
   const get = async <Answer>(path: string) => (await (await page.request.get(path)).json()) as Answer
   const { user } = await get<Session>('/api/session')
-  const { polymers } = await get<{ polymers: Polymer[] }>(
-    `/api/groups/${user?.memberships[0].groupId}/polymers`,
-  )
+  const group = user?.memberships[0].groupId ?? ''
+  const { polymers } = await get<{ polymers: Polymer[] }>(`/api/groups/${group}/polymers`)
   const polymer = polymers[0].id
   const { mappings } = await get<{ mappings: Mapping[] }>(`/api/polymers/${polymer}/mappings`)
   const { statePoints } = await get<{ statePoints: StatePoint[] }>(`/api/polymers/${polymer}/state-points`)
   const mapping = mappings.find(({ name }) => name === '3-to-1')?.id ?? ''
   const statePoint = statePoints.find(({ temperature }) => temperature === 400)?.id ?? ''
-  return { polymer, mapping, statePoint }
+  return { group, polymer, mapping, statePoint }
 }

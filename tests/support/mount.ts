@@ -5,6 +5,7 @@ import { h, type Component } from 'vue'
 import { createMemoryHistory, createRouter, RouterView, type Router } from 'vue-router'
 import { VApp } from 'vuetify/components'
 import type { Role } from '@shared/contracts/common'
+import { HOUSE_DEFAULTS } from '@shared/contracts/group'
 import { createBeadwrightVuetify } from '@/plugins/vuetify'
 import { useSessionStore } from '@/stores/session'
 
@@ -51,7 +52,9 @@ export const freshStores = (role: Role | null = 'modeller'): Pinia => {
   const session = useSessionStore()
   session.loaded = true
   if (role !== null) {
-    const memberships = [{ groupId: 'group', groupName: 'Adhesives group', role, demo: false }]
+    const memberships = [
+      { groupId: 'group', groupName: 'Adhesives group', role, demo: false, defaults: HOUSE_DEFAULTS },
+    ]
     session.user = {
       id: 'me',
       name: 'Mo Modeller',

@@ -23,6 +23,7 @@ const rankingOf = (histogram = angleCounts()) =>
     temperature: TEMPERATURE,
     settings: DEFAULT_INVERSION_SETTINGS,
     basinDepth: 0.5,
+    flatBelow: 0.5,
   }).answer!
 const words = (text: string): string => text.replace(/\s+/g, ' ').trim()
 

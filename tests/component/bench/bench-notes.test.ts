@@ -24,6 +24,7 @@ const answer = runInversion({
   temperature: TEMPERATURE,
   settings: DEFAULT_INVERSION_SETTINGS,
   basinDepth: 0.5,
+  flatBelow: 0.5,
 }).answer!
 const { inversion, table } = answer
 
@@ -143,6 +144,7 @@ describe('BenchEvidence', () => {
       temperature: TEMPERATURE,
       settings: DEFAULT_INVERSION_SETTINGS,
       basinDepth: 0.5,
+      flatBelow: 0.5,
     }).answer
     const text = evidence({ distribution: storedDistribution(unstated), answer: found }).text()
     expect(text).toContain('1.00, taken as independent')

@@ -3,6 +3,7 @@ import { enableAutoUnmount, flushPromises, mount } from '@vue/test-utils'
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest'
 import { createMemoryHistory, createRouter } from 'vue-router'
 import { createVuetify } from 'vuetify'
+import { HOUSE_DEFAULTS } from '@shared/contracts/group'
 import type { Mapping, Term } from '@shared/contracts/mapping'
 import type { Polymer, StatePoint } from '@shared/contracts/polymer'
 import * as distributions from '@/api/distributions'
@@ -56,7 +57,7 @@ const open = async (
   role: 'modeller' | 'reviewer' = 'modeller',
   painted: Mapping['document'] = mappingDocument,
 ) => {
-  const membership = { groupId: 'group', groupName: 'Adhesives', role, demo: false }
+  const membership = { groupId: 'group', groupName: 'Adhesives', role, demo: false, defaults: HOUSE_DEFAULTS }
   useSessionStore().user = {
     id: 'me',
     name: 'Mo',

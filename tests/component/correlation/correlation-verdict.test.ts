@@ -33,7 +33,7 @@ describe('CorrelationVerdict', () => {
     ]) {
       expect(text).toContain(evidence)
     }
-    expect(text).toContain('are our defaults')
+    expect(text).toContain('are the thresholds of the group')
   })
 
   it('says what each number is, in a sentence tied to it', () => {

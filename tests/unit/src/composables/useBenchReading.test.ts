@@ -13,6 +13,7 @@ const answerTo = (histogram: Histogram): InversionAnswer =>
     temperature: TEMPERATURE,
     settings: DEFAULT_INVERSION_SETTINGS,
     basinDepth: 0.5,
+    flatBelow: 0.5,
   }).answer!
 
 const set = () => {

@@ -2,7 +2,7 @@ import { flushPromises } from '@vue/test-utils'
 import { afterEach, describe, expect, it, vi } from 'vitest'
 import { effectScope, nextTick, ref } from 'vue'
 import type { JointDistribution, Pair } from '@shared/contracts/distribution'
-import type { Correlation } from '@shared/correlation'
+import { DEFAULT_THRESHOLDS, type Correlation } from '@shared/correlation'
 import * as api from '@/api/joint-distributions'
 import { useCorrelation } from '@/composables/useCorrelation'
 import { pairKey, useCorrelationPairs } from '@/composables/useCorrelationPairs'
@@ -42,6 +42,7 @@ describe('useCorrelation', () => {
     const state = scope.run(() =>
       useCorrelation(
         () => id.value,
+        () => DEFAULT_THRESHOLDS,
         () => worker,
       ),
     )!
@@ -65,6 +66,7 @@ describe('useCorrelation', () => {
     const state = scope.run(() =>
       useCorrelation(
         () => 'only',
+        () => DEFAULT_THRESHOLDS,
         () => worker,
       ),
     )!
@@ -87,6 +89,7 @@ describe('useCorrelation', () => {
     const state = scope.run(() =>
       useCorrelation(
         () => 'only',
+        () => DEFAULT_THRESHOLDS,
         () => worker,
       ),
     )!

@@ -23,6 +23,7 @@ const set = () => {
     temperature: TEMPERATURE,
     settings: DEFAULT_INVERSION_SETTINGS,
     basinDepth: 0.5,
+    flatBelow: 0.5,
   })
   const scope = effectScope()
   const state = scope.run(() =>

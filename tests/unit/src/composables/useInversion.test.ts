@@ -30,6 +30,7 @@ const set = (settings: Partial<InversionSettings> = {}) => {
     histogram: angleCounts(),
     temperature: TEMPERATURE,
     basinDepth: 0.5,
+    flatBelow: 0.5,
     settings: { ...DEFAULT_INVERSION_SETTINGS, ...settings },
   })
   const scope = effectScope()

@@ -16,6 +16,7 @@ const task = {
   temperature: TEMPERATURE,
   settings: DEFAULT_INVERSION_SETTINGS,
   basinDepth: 0.5,
+  flatBelow: 0.5,
 }
 
 describe('runInversion', () => {

@@ -11,6 +11,7 @@ const task = {
   temperature: TEMPERATURE,
   settings: DEFAULT_INVERSION_SETTINGS,
   basinDepth: 0.5,
+  flatBelow: 0.5,
 }
 
 /** A worker as the page sees it, its far end in the same thread: everything still crosses by structured clone. */

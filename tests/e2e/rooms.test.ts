@@ -26,6 +26,11 @@ const ROOMS = [
   ['bench', '/polymers/P/mappings/M/bench', 'Effective dimension'],
   ['correlation', '/polymers/P/mappings/M/correlation', 'Independent samples'],
   ['tables', '/polymers/P/mappings/M/tables', 'First lines of'],
+  ['members', '/groups/G/members', 'in the group since'],
+  ['defaults', '/groups/G/defaults', 'Dihedral flat below'],
+  ['history', '/groups/G/history', 'Export as CSV'],
+  ['tray', '/tray', 'There is no tray here'],
+  ['forgotten password', '/forgot', 'Send the link'],
   ['layouts', '/groups/G/layouts', 'Four columns'],
   ['layout', '/groups/G/layouts/new', 'Preview of'],
 ] as const

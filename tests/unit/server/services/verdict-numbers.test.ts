@@ -17,7 +17,7 @@ describe('verdictAt', () => {
   it.each([
     [{ separableBelow: 0.02, jointAbove: 0.1 }, 'borderline'],
     [{ separableBelow: 0.06, jointAbove: 0.1 }, 'separable'],
-    [{ separableBelow: 0.02, jointAbove: 0.05 }, 'joint'],
+    [{ separableBelow: 0.02, jointAbove: 0.045 }, 'joint'],
   ])('gives the verdict of stored numbers at thresholds set since: %o', (thresholds, verdict) => {
     expect(verdictAt(NUMBERS, thresholds)).toEqual({ ...NUMBERS, verdict })
   })

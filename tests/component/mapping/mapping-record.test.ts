@@ -29,6 +29,7 @@ const point = (id: string, temperature: number): StatePoint => ({
   composition: '',
   notes: '',
   revision: 1,
+  createdAt: '2026-01-05T09:00:00.000Z',
   distributions: 0,
 })
 const POINTS = [point('cold', 300), point('hot', 400)]
@@ -42,6 +43,7 @@ const POLYMER: Polymer = {
   mass: 156.225,
   heavyAtoms: 11,
   revision: 1,
+  createdAt: '2026-01-05T09:00:00.000Z',
   demo: false,
   counts: { statePoints: 2, mappings: 1, distributions: 1, potentials: 0 },
 }

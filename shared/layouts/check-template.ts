@@ -91,10 +91,10 @@ function lineAt(template: string, offset: number): number {
   return template.slice(0, offset).split('\n').length
 }
 
-/** As in 'row template' for rowTemplate, 'header of joint tables' for joint.header. */
+/** As in 'text before the rows' for header, 'row of joint tables' for joint.rowTemplate: the words of the form. */
 function words(field: string): string {
   const [last, ...owners] = field.split('.').reverse()
-  const name = last === 'rowTemplate' ? 'row template' : last
+  const name = { header: 'text before the rows', footer: 'text after the rows' }[last] ?? 'row'
   return owners.includes('joint') ? `${name} of joint tables` : name
 }
 

@@ -211,8 +211,8 @@ describe('tables in a layout', () => {
 
 describe('the preview of a layout', () => {
   it('can be made of any saved potential of the group', async () => {
-    const { body } = await reviewer.get(`${groupPath()}/layout-examples`)
-    expect(body).toMatchObject({
+    const response = await reviewer.get(`${groupPath()}/layout-examples`)
+    expect(response.body).toMatchObject({
       examples: expect.arrayContaining([
         expect.objectContaining({ termId: job.bondId, statePointId: job.statePointId, kind: 'bond' }),
       ]) as unknown,

@@ -13,6 +13,7 @@ import {
   type DemoFiles,
   type DemoPair,
 } from './make-demo-files'
+import { writeHandOvers } from './write-hand-overs'
 
 const STATE_POINTS = [
   { temperature: 400, withPairs: true },
@@ -77,7 +78,11 @@ export async function writeDemo(services: Services): Promise<void> {
     for (const [at, files] of makeDemoFiles(requests, temperature).entries()) {
       await addFiles(services, modeller, stored[at], files, requests[at].pairs, statePoint.id)
     }
-    if (index === 0) await invertSome(services, modeller, stored, statePoint.id)
+    if (index > 0) continue
+    await invertSome(services, modeller, stored, statePoint.id)
+    const reviewer = members.find(({ role }) => role === 'reviewer')!
+    const place = { polymerId: polymer.id, mappingId: stored[0].id, statePointId: statePoint.id }
+    await writeHandOvers(services, { ...place, modeller, reviewer })
   }
 }
 

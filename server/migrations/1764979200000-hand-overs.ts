@@ -167,6 +167,10 @@ const GUARDS = [
      IF OLD."number" IS NULL THEN
        RETURN CASE WHEN TG_OP = 'DELETE' THEN OLD ELSE NEW END;
      END IF;
+     -- Only when its whole group is taken away does it go with it.
+     IF TG_OP = 'DELETE' AND NOT EXISTS (SELECT 1 FROM "group" g WHERE g."id" = OLD."group_id") THEN
+       RETURN OLD;
+     END IF;
      IF TG_OP = 'DELETE' THEN
        RAISE EXCEPTION 'a released hand-over is kept' USING ERRCODE = 'restrict_violation', CONSTRAINT = 'hand_over_immutable';
      END IF;
@@ -187,6 +191,9 @@ const GUARDS = [
      IF TG_OP = 'INSERT' AND NOT EXISTS (
        SELECT 1 FROM "hand_over" h WHERE h."id" = NEW."hand_over_id" AND h."number" IS NOT NULL) THEN
        RETURN NEW;
+     END IF;
+     IF TG_OP = 'DELETE' AND NOT EXISTS (SELECT 1 FROM "hand_over" h WHERE h."id" = OLD."hand_over_id") THEN
+       RETURN OLD;
      END IF;
      RAISE EXCEPTION 'the content of a hand-over never changes' USING ERRCODE = 'restrict_violation', CONSTRAINT = 'hand_over_immutable';
    END $$`,

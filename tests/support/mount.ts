@@ -30,6 +30,8 @@ const ADDRESSES: Readonly<Record<string, string>> = {
   'polymer-new': '/polymers/new',
   polymer: '/polymers/:polymerId',
   comparison: '/polymers/:polymerId/comparison',
+  'hand-overs': '/polymers/:polymerId/hand-overs',
+  'hand-over': '/hand-overs/:handOverId',
   mapping: '/polymers/:polymerId/mappings/:mappingId/mapping',
   'mapping-print': '/polymers/:polymerId/mappings/:mappingId/mapping/print',
   intake: '/polymers/:polymerId/mappings/:mappingId/intake',

@@ -137,4 +137,17 @@ describe('seedDemo', () => {
     await services.groups.found({ name: 'Real', demo: false, people: [owner] })
     expect(await seedDemo(dataSource, services)).toBe('groups there')
   })
+
+  it('shows one hand-over that is out and one that waits for its reviewer', async () => {
+    const member = await demoMember()
+    const [polymer] = await services.polymers.list(member)
+    const handOvers = await services.handOvers.list(member, polymer.id)
+    expect(handOvers.map(({ standing, number }) => [standing, number])).toEqual([
+      ['in review', null],
+      ['released', 1],
+    ])
+    const review = await services.handOvers.get(member, handOvers[0].id)
+    expect(review.changed).toBe(false)
+    expect(review.checklist.filter(({ met }) => !met)).toEqual([])
+  })
 })

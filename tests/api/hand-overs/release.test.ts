@@ -230,6 +230,17 @@ describe('released content', () => {
     }
   })
 
+  it('goes only with its whole group', async () => {
+    const gone = await buildGroup(server)
+    const { handOver } = await buildReleased(server.services, gone)
+    await server.dataSource.query(`delete from "group" where "id" = $1`, [gone.groupId])
+    const left: unknown[] = await server.dataSource.query(
+      `select "id" from "hand_over_file" where "hand_over_id" = $1`,
+      [handOver.id],
+    )
+    expect(left).toEqual([])
+  })
+
   it('is not given out once it is damaged, and the damage is logged', async () => {
     const { handOver } = await buildReleased(server.services, group)
     const { id } = handOver
@@ -284,6 +295,28 @@ describe('a withdrawal', () => {
     const again = { revision: handOver.revision + 1, reason }
     const second = await group.owner.client.post(`/api/hand-overs/${id}/withdrawal`, again)
     expect(second.body).toMatchObject({ code: 'CONFLICT' })
+  })
+
+  it('stays when the group changes its layout: the files are as they were', async () => {
+    const { handOver, job } = await buildReleased(server.services, group)
+    const before = await archiveOf(handOver.id)
+    const draft = await server.services.handOvers.create(group.modeller.member, job.polymerId, {
+      mappingId: job.mappingId,
+      statePointId: job.statePointId,
+      title: 'In commas',
+      notes: '',
+    })
+    const layout = { ...draft.layout, layoutId: 'three-columns-comma' as const }
+    const { revision } = draft
+    const changed = await server.services.handOvers.update(group.modeller.member, draft.id, {
+      revision,
+      layout,
+    })
+    expect(changed.layout.name).toBe('Three columns, commas')
+    const preview = await server.services.handOvers.preview(group.modeller.member, draft.id, 'A–A')
+    const row = preview.text.split('\n').find((line) => /^\s*[\d.]+,/.test(line))
+    expect(row?.split(',')).toHaveLength(3)
+    expect(await archiveOf(handOver.id)).toEqual(before)
   })
 
   it('needs a reason', async () => {

@@ -8,6 +8,7 @@ import BenchReading from '@/components/bench/BenchReading.vue'
 import BenchReadingPill from '@/components/bench/BenchReadingPill.vue'
 import BenchSmoothing from '@/components/bench/BenchSmoothing.vue'
 import BenchWarnings from '@/components/bench/BenchWarnings.vue'
+import { createVuetify } from 'vuetify'
 import { coordinateNames, type DisplayUnits } from '@/components/figure/coordinate-names'
 import type { Reading } from '@/components/bench/figure/reading'
 import { angleCounts } from '../../unit/src/components/bench/distributions'
@@ -231,7 +232,10 @@ describe('BenchWarnings', () => {
   })
 
   it('keeps a warning with its reason once the potential is saved, and shows the reason from then on', async () => {
-    const wrapper = mount(BenchWarnings, { props: { ...given, warnings: [warning], stale: null } })
+    const wrapper = mount(BenchWarnings, {
+      props: { ...given, warnings: [warning], stale: null },
+      global: { plugins: [createVuetify()] },
+    })
     const keep = () => wrapper.findAll('button').find((button) => button.text() === 'Keep, with reason')
     expect(keep()).toBeUndefined()
     await wrapper.setProps({ keepable: true })

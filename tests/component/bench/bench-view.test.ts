@@ -20,6 +20,7 @@ import { mappingDocument, term } from '../../unit/src/components/bench/bench-ter
 import { angleCounts, bondCounts } from '../../unit/src/components/bench/distributions'
 import { storedDistribution, storedPotential } from '../../unit/src/components/bench/stored-records'
 
+vi.mock('@/api/hand-overs', () => ({ listAnswers: () => Promise.resolve([]), keepWarning: vi.fn() }))
 vi.mock('@/workers', () => ({
   startInversionWorker: (): InversionWorker => ({
     runInversion: (task) => Promise.resolve(runInversion(task).answer!),

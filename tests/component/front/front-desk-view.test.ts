@@ -18,7 +18,10 @@ const polymer = {
   counts: { statePoints: 1, mappings: 1, distributions: 1, potentials: 1 },
 }
 const mapping = { id: 'm', name: '1-to-1', counts: { beads: 1, terms: 3, termsWithData: 1 } }
+const nothing = { reviews: [], sentBack: [], toRelease: [], gaps: [] }
+const nobodyAsks = { 'GET /api/groups/group/waiting': { body: nothing } }
 const answers = {
+  ...nobodyAsks,
   'GET /api/groups/group/polymers': { body: { polymers: [polymer] } },
   'GET /api/polymers/p/mappings': { body: { mappings: [mapping] } },
 }
@@ -39,8 +42,24 @@ describe('FrontDeskView', () => {
     fakeApi(answers)
     await open('reviewer')
     await here('polyethylene')
-    expect(pageText()).not.toContain('What waits for you')
+    expect(pageText()).not.toContain('without data')
     expect(() => control('New polymer')).toThrow()
+  })
+
+  it('leads a reviewer to the review that was asked for, and an author to what came back', async () => {
+    const handOver = {
+      id: 'h',
+      title: 'Melt tables',
+      author: { id: 'a', name: 'Milo' },
+      mapping: '3-to-1',
+      statePoint: { temperature: 400, phase: 'melt' },
+    }
+    const waiting = { ...nothing, reviews: [handOver], sentBack: [{ ...handOver, id: 'back' }] }
+    fakeApi({ ...answers, 'GET /api/groups/group/waiting': { body: waiting } })
+    await open('reviewer')
+    await here('Melt tables: 3-to-1, 400 K, melt')
+    expect(control('Review asked by Milo').getAttribute('href')).toBe('/hand-overs/h')
+    expect(control('Sent back to you').getAttribute('href')).toBe('/hand-overs/back')
   })
 
   it('tells a collaborator that nothing was handed over, and asks the server for nothing', async () => {
@@ -51,7 +70,7 @@ describe('FrontDeskView', () => {
   })
 
   it('leads an empty group to its first repeat unit', async () => {
-    fakeApi({ 'GET /api/groups/group/polymers': { body: { polymers: [] } } })
+    fakeApi({ ...nobodyAsks, 'GET /api/groups/group/polymers': { body: { polymers: [] } } })
     await open()
     await here('No polymer yet')
     expect(control('Draw the first repeat unit').getAttribute('href')).toBe('/polymers/new?group=group')

@@ -8,7 +8,6 @@ import { HandOver } from '../entities/hand-over.entity'
 import { User } from '../entities/user.entity'
 import { notFound } from '../errors/http-error'
 import { tellRecipients } from './delivery/tell-recipients'
-import { checkComplete, contentChanged, lapse, step } from './hand-over-review.service'
 import { packFiles, releasedFiles } from './hand-over/archive'
 import { comparedNow, comparedThen } from './hand-over/compared'
 import { freezeFiles, freezeHead, writeTables } from './hand-over/freeze'
@@ -19,6 +18,7 @@ import { handOverSubject } from './hand-over/hand-over-name'
 import { frozenLayout } from './hand-over/layout-of'
 import type { ListedFile } from './hand-over/manifest'
 import { releaseBody } from './hand-over/release-body'
+import { checkComplete, contentChanged, lapse, step } from './hand-over/review-steps'
 import type { WrittenTable } from './hand-over/written-table'
 import { sha256 } from './hashes'
 import type { Download, Member } from './member'
@@ -68,7 +68,7 @@ export class HandOverReleaseService {
       const before = previous && (await comparedThen(manager, previous))
       const differences = before ? compareHandOvers(before, comparedNow(head, tables)) : []
       const frozen: FrozenHandOver = { ...head, differences }
-      await storeContent(manager, handOver, tables, await freezeFiles(frozen, tables))
+      await storeContent(manager, handOver, tables, await freezeFiles(frozen, tables, content))
       await step(
         manager,
         handOver,

@@ -2,7 +2,6 @@ import { type DataSource, type EntityManager, IsNull } from 'typeorm'
 import type { z } from 'zod'
 import type {
   commentWriteSchema,
-  HandOverReview as HandOverReviewBody,
   markWriteSchema,
   reviewAskSchema,
   reviewDecisionSchema,
@@ -12,18 +11,24 @@ import type { LinkTo } from '../mail/links'
 import { HandOverComment } from '../entities/hand-over-comment.entity'
 import { HandOverMark } from '../entities/hand-over-mark.entity'
 import { HandOverReview } from '../entities/hand-over-review.entity'
-import { HandOver } from '../entities/hand-over.entity'
 import { Membership } from '../entities/membership.entity'
 import { HttpError, notFound } from '../errors/http-error'
-import { checklistOf } from './hand-over/checklist-of'
-import { type HandOverContent, readContent } from './hand-over/content'
+import { readContent } from './hand-over/content'
 import { detailBody } from './hand-over/detail-body'
 import { readHandOverBody } from './hand-over/hand-over-body'
 import { findHandOver, lockContent, lockHandOver } from './hand-over/hand-over-context'
 import { handOverSubject } from './hand-over/hand-over-name'
-import { layoutName } from './hand-over/layout-of'
 import { mailDecision, mailReviewAsked } from './hand-over/review-mails'
 import { isOwnWork, REVIEWING_ROLES } from './hand-over/review-rules'
+import {
+  checkComplete,
+  checkMarks,
+  closeReview,
+  contentChanged,
+  lapse,
+  ownWork,
+  step,
+} from './hand-over/review-steps'
 import type { Member } from './member'
 import { recordEvent } from './record-event'
 
@@ -213,89 +218,4 @@ export class HandOverReviewService {
     const handOver = await findHandOver(manager, member.groupId, id)
     return detailBody(manager, member, handOver, await readHandOverBody(manager, member.groupId, id))
   }
-}
-
-/** @throws {HttpError} CHECKLIST_OPEN with the open lines as issues */
-export async function checkComplete(
-  manager: EntityManager,
-  handOver: HandOver,
-  content: HandOverContent,
-): Promise<void> {
-  const items = checklistOf(handOver, content, await layoutName(manager, handOver))
-  const open = items.filter(({ met }) => !met)
-  if (open.length === 0) return
-  const issues = open.flatMap(({ code, lines }) =>
-    lines.filter((line) => line.open).map(({ text }) => ({ field: code, message: text })),
-  )
-  throw new HttpError('CHECKLIST_OPEN', `The checklist is not met: ${issues[0].message}.`, { issues })
-}
-
-/** What was reviewed has changed: the hand-over goes back to its author, and a new review is needed. */
-export async function lapse(
-  manager: EntityManager,
-  member: Member,
-  handOver: HandOver,
-  now: Date,
-): Promise<void> {
-  await closeReview(manager, handOver, { outcome: 'lapsed', note: '', by: member.userId }, now)
-  await step(manager, handOver, { standing: 'sent back', signedOffById: null, signedOffAt: null }, now)
-  const details = { note: 'its content changed after review was asked for' }
-  await recordEvent(manager, member, { action: 'sent back', subject: handOverSubject(handOver), details })
-}
-
-/** The refusal that goes with `lapse`. */
-export function contentChanged(what: 'signed off' | 'released'): HttpError {
-  return new HttpError(
-    'CONTENT_CHANGED',
-    `Data, potentials or choices changed after review was asked for, so nothing was ${what}. The hand-over is back with its author: look at what changed and ask again.`,
-  )
-}
-
-function ownWork(): HttpError {
-  return new HttpError('OWN_WORK', 'Nobody decides on a hand-over that they made or asked review for.')
-}
-
-async function checkMarks(
-  manager: EntityManager,
-  { id }: HandOver,
-  { terms }: HandOverContent,
-): Promise<void> {
-  const questioned = await manager.findBy(HandOverMark, { handOverId: id, mark: 'questioned' })
-  const term = terms.find((each) =>
-    questioned.some(({ termId, contentSha256 }) => termId === each.term.id && contentSha256 === each.basis),
-  )
-  if (!term) return
-  throw new HttpError(
-    'TERM_QUESTIONED',
-    `${term.name} is questioned: accept it, or send the hand-over back.`,
-    { field: 'outcome' },
-  )
-}
-
-interface Outcome {
-  readonly outcome: NonNullable<HandOverReviewBody['outcome']>
-  readonly note: string
-  readonly by: string
-}
-
-/** Ends the open review; one that was signed off already stays as it is on record. */
-async function closeReview(
-  manager: EntityManager,
-  { id }: HandOver,
-  { outcome, note, by }: Outcome,
-  now: Date,
-): Promise<void> {
-  const changes = { outcome, note, decidedById: by, decidedAt: now }
-  await manager.update(HandOverReview, { handOverId: id, outcome: IsNull() }, changes)
-}
-
-/** Takes the hand-over into another standing. */
-export async function step(
-  manager: EntityManager,
-  handOver: HandOver,
-  changes: Partial<HandOver>,
-  now: Date,
-): Promise<void> {
-  Object.assign(handOver, changes, { revision: handOver.revision + 1, changedAt: now })
-  await manager.save(HandOver, handOver)
 }

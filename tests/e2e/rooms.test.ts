@@ -18,6 +18,7 @@ const ROOMS = [
   ['front desk', '/', 'poly('],
   ['polymer', '/polymers/P', 'State points'],
   ['comparison', '/polymers/P/comparison', 'Correlation left behind'],
+  ['hand-overs', '/polymers/P/hand-overs', 'New hand-over'],
   ['account', '/account', 'API keys'],
   ['new polymer', '/polymers/new', 'How a repeat unit is written'],
   ['mapping', '/polymers/P/mappings/M/mapping', 'Terms that follow'],

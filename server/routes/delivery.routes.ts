@@ -54,8 +54,8 @@ export const deliveryRoutes = [
       services.recipients.extend(member, params.recipientId, body.days),
   }),
   route({
-    method: 'delete',
-    path: '/api/recipients/:recipientId',
+    method: 'post',
+    path: '/api/recipients/:recipientId/revoke',
     summary: 'End a link, and what the account sees; what was taken stays on record',
     access: { may: 'write', at: 'recipient' },
     answer: deliveries,

@@ -1,5 +1,6 @@
 import type { DataSource } from 'typeorm'
 import type { Waiting } from '../../shared/contracts/hand-over-desk'
+import { openQuestions, openReturns } from './delivery/open-from-recipients'
 import { findHandOverBodies } from './hand-over/hand-over-body'
 import type { Member } from './member'
 
@@ -16,6 +17,8 @@ export class WaitingService {
       reviews: await find(manager, { groupId, standing: 'in review', reviewerId: userId }),
       sentBack: await find(manager, { groupId, standing: 'sent back', authorId: userId }),
       toRelease: await find(manager, { groupId, standing: 'signed off', authorId: userId }),
+      questions: writes ? await openQuestions(manager, { groupId, userId }) : [],
+      returned: writes ? await openReturns(manager, { groupId, userId }) : [],
       gaps: writes ? await this.gaps(groupId) : [],
     }
   }

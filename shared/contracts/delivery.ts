@@ -2,6 +2,7 @@ import { z } from 'zod'
 import { idSchema, nameSchema, personSchema, timestampSchema } from './common'
 import { handOverReleaseSchema } from './hand-over-desk'
 import { reasonSchema } from './hand-over'
+import { layoutDocumentSchema } from './layout'
 import { emailSchema } from './session'
 
 /** How long a link to a hand-over works unless the sender says otherwise, and at most, in days. */
@@ -181,8 +182,8 @@ export const receivedSchema = sheetSchema
     withdrawn: z.object({ at: timestampSchema, reason: z.string() }).nullable(),
     /** A later hand-over took its place; `sent` says whether this recipient has it too, `id` names it where the account shows it. */
     replacedBy: z.object({ number: z.number().int(), sent: z.boolean(), id: idSchema.nullable() }).nullable(),
-    /** Layouts of the house by key and of the group by id; those of the group have their own units. */
-    layouts: z.array(z.object({ layout: z.string(), name: z.string(), ownUnits: z.boolean() })),
+    /** Layouts of the group that are on offer, by value; those of the house are known everywhere. */
+    layouts: z.array(z.object({ id: idSchema, name: z.string(), document: layoutDocumentSchema })),
     questions: z.array(questionSchema),
     /** What this recipient sent back. */
     returned: z.array(returnedFileSchema.omit({ settledBy: true })),

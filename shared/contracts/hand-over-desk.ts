@@ -203,6 +203,14 @@ export const handOverReleaseSchema = handOverSchema
   .meta({ id: 'HandOverRelease' })
 export type HandOverRelease = z.infer<typeof handOverReleaseSchema>
 
+const fromRecipientSchema = z.object({
+  id: idSchema,
+  handOverId: idSchema,
+  number: z.number().int(),
+  /** Name of the table; null is about the whole hand-over. */
+  table: z.string().nullable(),
+})
+
 /** GET /api/groups/:groupId/waiting: what waits for the one who asks. */
 export const waitingSchema = z
   .object({
@@ -212,6 +220,10 @@ export const waitingSchema = z
     sentBack: z.array(handOverSchema),
     /** Mine, signed off and not released yet. */
     toRelease: z.array(handOverSchema),
+    /** On tables of mine, without an answer. */
+    questions: z.array(fromRecipientSchema.extend({ text: z.string() })),
+    /** Measured with tables of mine and sent back, not looked at yet. */
+    returned: z.array(fromRecipientSchema.extend({ name: z.string() })),
     /** Mappings with terms in use that have no data at a state point where others have. */
     gaps: z.array(
       z.object({

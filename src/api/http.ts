@@ -152,6 +152,11 @@ export const http = {
     const [, quoted, bare] = /filename=(?:"([^"]+)"|([^;\s]+))/.exec(disposition) ?? []
     return { name: quoted ?? bare ?? '', text: await response.text() }
   },
+
+  /** What the API writes for something that is sent to it, as bytes. */
+  async written(path: string, json: unknown): Promise<Blob> {
+    return (await send('POST', path, { json })).blob()
+  },
 }
 
 /** A multipart body: the file, the rest as one JSON field, and any number of further files in fields of their own. */

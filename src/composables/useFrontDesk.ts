@@ -1,12 +1,15 @@
 import { computed, ref, shallowRef, type ComputedRef, type Ref, type ShallowRef } from 'vue'
 import type { RouteLocationRaw } from 'vue-router'
+import type { ReceivedEntry } from '@shared/contracts/delivery'
 import type { Waiting as WaitingHandOvers } from '@shared/contracts/hand-over-desk'
 import type { Mapping } from '@shared/contracts/mapping'
 import type { Polymer } from '@shared/contracts/polymer'
+import { listReceived } from '@/api/deliveries'
 import { getWaiting } from '@/api/hand-overs'
 import { ApiError } from '@/api/http'
 import { listMappings } from '@/api/mappings'
 import { listPolymers } from '@/api/polymers'
+import { tableWords } from '@/components/delivery/delivery-words'
 import { countOf, formatCount } from '@/format/numbers'
 import { statePointName } from '@/format/state-point'
 import { useSessionStore } from '@/stores/session'
@@ -65,7 +68,13 @@ export const waitingFor = ({ polymer, mappings }: DeskPolymer): Waiting[] => {
 }
 
 /** Hand-overs that wait for the person: to be reviewed, to be mended, to be released. */
-export const handOversWaiting = ({ reviews, sentBack, toRelease }: DeskGroup['handOvers']): Waiting[] => {
+export const handOversWaiting = ({
+  reviews,
+  sentBack,
+  toRelease,
+  questions,
+  returned,
+}: DeskGroup['handOvers']): Waiting[] => {
   const items = (handOvers: WaitingHandOvers['reviews'], text: (author: string) => string): Waiting[] =>
     handOvers.map(({ id, title, author, mapping, statePoint }) => ({
       key: `hand-over-${id}`,
@@ -77,19 +86,36 @@ export const handOversWaiting = ({ reviews, sentBack, toRelease }: DeskGroup['ha
     ...items(reviews, (author) => `Review asked by ${author}`),
     ...items(sentBack, () => 'Sent back to you'),
     ...items(toRelease, () => 'Signed off, to be released'),
+    ...questions.map(({ id, handOverId, number, table, text }) => ({
+      key: `question-${id}`,
+      text: `Question on ${table === null ? `hand-over ${number}` : tableWords(table)}`,
+      about: `Hand-over ${number}: ${shortened(text)}`,
+      to: { name: 'hand-over', params: { handOverId }, hash: '#questions' },
+    })),
+    ...returned.map(({ id, handOverId, number, table, name }) => ({
+      key: `returned-${id}`,
+      text: `File sent back for ${tableWords(table)}`,
+      about: `Hand-over ${number}: ${name}`,
+      to: { name: 'hand-over', params: { handOverId }, hash: '#returned' },
+    })),
   ]
 }
+
+const shortened = (text: string): string => (text.length > 80 ? `${text.slice(0, 79)}…` : text)
 
 /** The front desk: the polymers of the current group with their mappings, and what waits for someone who writes. */
 export function useFrontDesk(): {
   groups: ShallowRef<readonly DeskGroup[]>
   waiting: ComputedRef<Waiting[]>
+  /** Hand-overs that were sent to the person, by whichever group. */
+  received: ShallowRef<readonly ReceivedEntry[]>
   loaded: Ref<boolean>
   failure: ShallowRef<ApiError | null>
   load: () => Promise<void>
 } {
   const session = useSessionStore()
   const groups = shallowRef<readonly DeskGroup[]>([])
+  const received = shallowRef<readonly ReceivedEntry[]>([])
   const loaded = ref(false)
   const failure = shallowRef<ApiError | null>(null)
 
@@ -102,6 +128,7 @@ export function useFrontDesk(): {
     failure.value = null
     const shown = session.readableGroups.filter(({ groupId }) => groupId === session.currentGroup?.groupId)
     try {
+      received.value = await listReceived()
       groups.value = await Promise.all(
         shown.map(async ({ groupId, groupName }) => {
           const [polymers, handOvers] = await Promise.all([
@@ -125,5 +152,5 @@ export function useFrontDesk(): {
       .flatMap(({ polymers }) => polymers.flatMap(waitingFor)),
   ])
 
-  return { groups, waiting, loaded, failure, load }
+  return { groups, waiting, received, loaded, failure, load }
 }

@@ -99,6 +99,12 @@ const routes: RouteRecordRaw[] = [
     meta: { title: 'New password', open: true },
   },
   {
+    path: '/received/:token',
+    name: 'received',
+    component: () => import('@/views/ReceivedView.vue'),
+    meta: { title: 'Hand-over', open: true },
+  },
+  {
     path: '/tray',
     name: 'tray',
     component: () => import('@/views/TrayView.vue'),

@@ -21,6 +21,7 @@ const ADDRESSES: Readonly<Record<string, string>> = {
   forgot: '/forgot',
   reset: '/reset/:token',
   tray: '/tray',
+  received: '/received/:token',
   group: '/groups/:groupId',
   'group-members': '/groups/:groupId/members',
   'group-invitations': '/groups/:groupId/invitations',

@@ -1,9 +1,9 @@
 import { type EntityManager, IsNull } from 'typeorm'
 import type { Received } from '../../../shared/contracts/delivery'
-import { BUILT_IN_LAYOUTS } from '../../../shared/layouts'
 import { Layout } from '../../entities/layout.entity'
 import { Recipient } from '../../entities/recipient.entity'
 import { ReturnedFile } from '../../entities/returned-file.entity'
+import { documentOf, findVersion } from '../find-layout'
 import type { ReleasedHandOver } from '../hand-over/archive'
 import { readHandOverBody } from '../hand-over/hand-over-body'
 import { releaseBody } from '../hand-over/release-body'
@@ -76,9 +76,14 @@ async function replacementOf(
 }
 
 async function layoutsFor(manager: EntityManager, groupId: string): Promise<Received['layouts']> {
-  const own = await manager.find(Layout, { where: { groupId, archivedAt: IsNull() }, order: { name: 'ASC' } })
-  return [
-    ...BUILT_IN_LAYOUTS.map(({ key, name }) => ({ layout: key, name, ownUnits: false })),
-    ...own.map(({ id, name }) => ({ layout: id, name, ownUnits: true })),
-  ]
+  const layouts = await manager.find(Layout, {
+    where: { groupId, archivedAt: IsNull() },
+    order: { name: 'ASC' },
+  })
+  const found = []
+  for (const layout of layouts) {
+    const { id, name } = layout
+    found.push({ id, name, document: documentOf(await findVersion(manager, layout, layout.version)) })
+  }
+  return found
 }

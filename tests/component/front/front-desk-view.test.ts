@@ -18,8 +18,11 @@ const polymer = {
   counts: { statePoints: 1, mappings: 1, distributions: 1, potentials: 1 },
 }
 const mapping = { id: 'm', name: '1-to-1', counts: { beads: 1, terms: 3, termsWithData: 1 } }
-const nothing = { reviews: [], sentBack: [], toRelease: [], gaps: [] }
-const nobodyAsks = { 'GET /api/groups/group/waiting': { body: nothing } }
+const nothing = { reviews: [], sentBack: [], toRelease: [], questions: [], returned: [], gaps: [] }
+const nobodyAsks = {
+  'GET /api/groups/group/waiting': { body: nothing },
+  'GET /api/received': { body: { handOvers: [] } },
+}
 const answers = {
   ...nobodyAsks,
   'GET /api/groups/group/polymers': { body: { polymers: [polymer] } },
@@ -62,11 +65,43 @@ describe('FrontDeskView', () => {
     expect(control('Sent back to you').getAttribute('href')).toBe('/hand-overs/back')
   })
 
-  it('tells a collaborator that nothing was handed over, and asks the server for nothing', async () => {
-    const sent = fakeApi({})
+  it('tells a collaborator that nothing was handed over, and asks the server for nothing of the group', async () => {
+    const sent = fakeApi({ 'GET /api/received': { body: { handOvers: [] } } })
     await open('collaborator')
     await here('Nothing was handed over to you yet')
-    expect(sent).toEqual([])
+    expect(sent.map(({ path }) => path)).toEqual(['/api/received'])
+  })
+
+  it('lists to a collaborator what was handed over to them, with where it stands', async () => {
+    const handOver = {
+      id: 'h',
+      number: 2,
+      title: 'Melt tables',
+      group: 'Adhesives group',
+      polymer: 'polyethylene',
+      sentAt: '2026-06-12T12:00:00Z',
+      acknowledgedAt: null,
+      withdrawn: false,
+      replacedBy: 3,
+    }
+    fakeApi({ 'GET /api/received': { body: { handOvers: [handOver] } } })
+    await open('collaborator')
+    await here('replaced by hand-over 3')
+    expect(control('Hand-over 2, Melt tables').getAttribute('href')).toBe('/hand-overs/h')
+  })
+
+  it('leads to questions on one’s tables and to files that came back', async () => {
+    const at = { handOverId: 'h', number: 2, table: 'B–E' }
+    const waiting = {
+      ...nothing,
+      questions: [{ ...at, id: 'q', text: 'At 0?' }],
+      returned: [{ ...at, id: 'f', name: 'run.txt' }],
+    }
+    fakeApi({ ...answers, 'GET /api/groups/group/waiting': { body: waiting } })
+    await open()
+    await here('Hand-over 2: At 0?')
+    expect(control('Question on B–E').getAttribute('href')).toBe('/hand-overs/h#questions')
+    expect(control('File sent back for B–E').getAttribute('href')).toBe('/hand-overs/h#returned')
   })
 
   it('leads an empty group to its first repeat unit', async () => {

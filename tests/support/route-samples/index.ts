@@ -1,3 +1,4 @@
+import { deliverySamples } from './deliveries'
 import { handOverSamples } from './hand-overs'
 import { layoutSamples } from './layouts'
 import { peopleSamples } from './people'
@@ -8,6 +9,7 @@ export type { Sample, SampleWorld } from './sample'
 
 /** One valid request for every route that asks for membership; the access test fails for a route without one. */
 export const ROUTE_SAMPLES: RouteSamples = {
+  ...deliverySamples,
   ...handOverSamples,
   ...layoutSamples,
   ...peopleSamples,

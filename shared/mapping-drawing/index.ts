@@ -12,6 +12,7 @@ export {
   positionsIn,
 } from './board-layout'
 export { bondLines, type BondLine } from './bond-lines'
+export { beadDisc, drawingLayers } from './drawing-layers'
 export { letterPlace, notePlace } from './free-places'
 export { beadPath, haloPath, sitePoint } from './halo-path'
 export { type MappingCaption, mappingPicture } from './mapping-picture'

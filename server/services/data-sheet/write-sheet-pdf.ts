@@ -1,0 +1,27 @@
+import { readFileSync } from 'node:fs'
+import type { DataSheet } from '../../../shared/contracts/data-sheet'
+import { sheetDocument } from './sheet-document'
+import { MONO_FONT, SHEET_FONT_FILES, SHEET_FONTS } from './sheet-fonts'
+import { unpackWoff } from './unpack-woff'
+
+/** What pdfmake keeps files in that are on no disk; its types leave it out. */
+interface WithFiles {
+  readonly virtualfs: {
+    existsSync(path: string): boolean
+    writeFileSync(path: string, content: Buffer): void
+  }
+}
+
+/** The data sheet as a PDF with its fonts embedded. The same sheet gives the same bytes. */
+export async function writeSheetPdf(sheet: DataSheet): Promise<Buffer> {
+  // Loaded when the first sheet is made: a server that starts has no need of it.
+  const { default: pdfmake } = await import('pdfmake')
+  const { virtualfs } = pdfmake as typeof pdfmake & WithFiles
+  if (!virtualfs.existsSync(MONO_FONT.name)) {
+    virtualfs.writeFileSync(MONO_FONT.name, unpackWoff(readFileSync(MONO_FONT.packed)))
+  }
+  pdfmake.setFonts(SHEET_FONTS)
+  pdfmake.setUrlAccessPolicy(() => false)
+  pdfmake.setLocalAccessPolicy((path) => SHEET_FONT_FILES.has(path))
+  return pdfmake.createPdf(sheetDocument(sheet)).getBuffer()
+}

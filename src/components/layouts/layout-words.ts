@@ -2,9 +2,13 @@ import type { LayoutDocument } from '@shared/contracts/layout'
 
 type Choice<Value> = { readonly value: Value; readonly title: string; readonly subtitle?: string }
 
+/** The values that have words, in their order. */
+export const valuesOf = <Value extends string>(words: Readonly<Record<Value, string>>): Value[] =>
+  Object.keys(words) as Value[]
+
 /** A list of choices out of the words for each value. */
 const choices = <Value extends string>(words: Readonly<Record<Value, string>>): Choice<Value>[] =>
-  (Object.keys(words) as Value[]).map((value) => ({ value, title: words[value] }))
+  valuesOf(words).map((value) => ({ value, title: words[value] }))
 
 export const QUANTITY_WORDS: Readonly<Record<LayoutDocument['columns'][number], string>> = {
   row: 'row number',

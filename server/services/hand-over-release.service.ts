@@ -171,19 +171,23 @@ async function storeContent(
   files: readonly ListedFile[],
 ): Promise<void> {
   const numbers = (column: Float64Array | null): number[] | null => column && Array.from(column)
-  for (const [position, { text: _, silhouette, kinds, ...table }] of tables.entries()) {
+  for (const [position, table] of tables.entries()) {
+    const { name, path, temperature, meta } = table
     await manager.save(HandOverTable, {
-      ...table,
       groupId,
       handOverId,
       position,
-      kinds: [...kinds],
+      name,
+      path,
+      temperature,
+      meta,
+      kinds: [...table.kinds],
       coordinates: Array.from(table.coordinates),
       secondCoordinates: numbers(table.secondCoordinates),
       energies: Array.from(table.energies),
       forces: Array.from(table.forces),
       secondForces: numbers(table.secondForces),
-      silhouette: [...silhouette],
+      silhouette: [...table.silhouette],
     })
   }
   for (const [position, { path, mediaType, bytes }] of files.entries()) {

@@ -7,12 +7,13 @@ import {
   jointPotential,
   jointTable,
 } from '../../../shared/joint-potential'
+import type { Layout } from '../../../shared/layouts'
 import { formatNumber, makeTable } from '../../../shared/tables'
 import type { CoordinateKind } from '../../../shared/units'
 import { jointHistogramOf } from '../histograms'
 import { writeJointTableFile } from '../joint-table-file'
 import { beadOrder, writeTableFile } from '../table-file'
-import { jointTableFileName, tableFileName } from '../table-names'
+import { jointTableFileName, nameInLayout, tableFileName } from '../table-names'
 import { type ContentPair, type ContentTerm, type HandOverContent, joinedTerms } from './content'
 import { warningsOfPair, warningsOfTerm } from './table-evidence'
 import { curveSilhouette, gridSilhouette } from './table-silhouette'
@@ -34,8 +35,10 @@ export interface WrittenTable {
   readonly silhouette: readonly number[]
 }
 
-/** How the tables are written. */
-export type WritingOptions = Pick<HandOverLayout, 'length' | 'angle' | 'energy'>
+/** How the tables are written: the layout, and the units that forms are stated in beside them. */
+export interface WritingOptions extends Pick<HandOverLayout, 'length' | 'angle' | 'energy'> {
+  readonly document: Layout
+}
 
 /** The names of all tables that a hand-over holds now, single ones in the order of terms, then joint ones. */
 export function tableNames(content: HandOverContent): string[] {
@@ -87,15 +90,19 @@ function writeTerm(each: ContentTerm, content: HandOverContent, options: Writing
     throw new Error('A table needs a saved potential.')
   const { polymer, mapping, statePoint, invented } = content
   const { savedAt } = potential
-  const source = { polymer, mapping, statePoint, invented, term, input, settings, savedAt }
-  const { text } = writeTableFile(source, options)
+  const { placeNumber } = each
+  const source = { polymer, mapping, statePoint, invented, term, placeNumber, input, settings, savedAt }
+  const { text } = writeTableFile(source, options, options.document)
   const { inversion, form } = derivePotential(input.histogram, statePoint.temperature, settings)
   const table = makeTable(inversion.potential, settings.table)
   const { independentSamples } = inversion
   const { savedBy } = potential
   return {
     name: each.name,
-    path: tableFileName({ ...term, temperature: statePoint.temperature }),
+    path: nameInLayout(
+      tableFileName({ ...term, temperature: statePoint.temperature, placeNumber }),
+      options.document,
+    ),
     text,
     kinds: [term.kind],
     temperature: statePoint.temperature,
@@ -136,13 +143,17 @@ function writePair(pair: ContentPair, content: HandOverContent, options: Writing
   const { joint, file, decision } = pair
   const { polymer, mapping, statePoint, invented } = content
   const [x, y] = pair.terms.map(({ term }) => term)
-  const source = { polymer, mapping, statePoint, invented, terms: [x, y] as const, joint, file }
-  const { text } = writeJointTableFile(source, options)
+  const placeNumbers = [pair.terms[0].placeNumber, pair.terms[1].placeNumber] as const
+  const source = { polymer, mapping, statePoint, invented, terms: [x, y] as const, placeNumbers, joint, file }
+  const { text } = writeJointTableFile(source, options, options.document)
   const potential = jointPotential(jointHistogramOf(joint), statePoint.temperature, DEFAULT_JOINT_SETTINGS)
   const table = jointTable(potential.surface, DEFAULT_JOINT_TABLE)
   return {
     name: pairName(pair),
-    path: jointTableFileName({ types: [x.types, y.types], temperature: statePoint.temperature }),
+    path: nameInLayout(
+      jointTableFileName({ types: [x.types, y.types], temperature: statePoint.temperature, placeNumbers }),
+      options.document,
+    ),
     text,
     kinds: [x.kind, y.kind],
     temperature: statePoint.temperature,

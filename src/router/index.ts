@@ -105,6 +105,12 @@ const routes: RouteRecordRaw[] = [
     meta: { title: 'Hand-over', open: true },
   },
   {
+    path: '/received/:token/sheet',
+    name: 'received-sheet',
+    component: () => import('@/views/DataSheetView.vue'),
+    meta: { title: 'Data sheet', open: true },
+  },
+  {
     path: '/tray',
     name: 'tray',
     component: () => import('@/views/TrayView.vue'),
@@ -133,6 +139,12 @@ const routes: RouteRecordRaw[] = [
     name: 'hand-over',
     component: () => import('@/views/HandOverView.vue'),
     meta: { title: 'Hand-over' },
+  },
+  {
+    path: '/hand-overs/:handOverId/sheet',
+    name: 'data-sheet',
+    component: () => import('@/views/DataSheetView.vue'),
+    meta: { title: 'Data sheet' },
   },
   {
     path: '/polymers/:polymerId/comparison',

@@ -33,6 +33,8 @@ const ADDRESSES: Readonly<Record<string, string>> = {
   comparison: '/polymers/:polymerId/comparison',
   'hand-overs': '/polymers/:polymerId/hand-overs',
   'hand-over': '/hand-overs/:handOverId',
+  'data-sheet': '/hand-overs/:handOverId/sheet',
+  'received-sheet': '/received/:token/sheet',
   mapping: '/polymers/:polymerId/mappings/:mappingId/mapping',
   'mapping-print': '/polymers/:polymerId/mappings/:mappingId/mapping/print',
   intake: '/polymers/:polymerId/mappings/:mappingId/intake',

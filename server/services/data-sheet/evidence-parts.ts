@@ -83,7 +83,7 @@ function warningPart(warnings: DataSheet['warnings']): Content {
     sentence(answer),
   ])
   return {
-    ...headedTable('Warnings and their answers', [78, '*', 150], heads, rows, 2.6),
+    ...headedTable('Warnings and their answers', [72, '*', 196], heads, rows, 2.6),
     fontSize: SIZE.small,
   }
 }

@@ -120,7 +120,7 @@ export function tablePart({ tables, leftOut }: DataSheet): Content {
   ])
   return headedTable(
     'Tables',
-    [84, 62, 74, 78, 66, '*'],
+    [84, 58, 74, 72, 58, '*'],
     heads.map((text) => columnHead(text)),
     [...rows, ...gone],
     3,

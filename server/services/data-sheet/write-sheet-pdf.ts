@@ -1,10 +1,10 @@
 import { readFileSync } from 'node:fs'
 import type { DataSheet } from '../../../shared/contracts/data-sheet'
+import { leanFont } from './lean-font'
 import { sheetDocument } from './sheet-document'
-import { MONO_FONT, SHEET_FONT_FILES, SHEET_FONTS } from './sheet-fonts'
-import { unpackWoff } from './unpack-woff'
+import { LEAN_FONTS, SHEET_FONT_FILES, SHEET_FONTS } from './sheet-fonts'
 
-/** What pdfmake keeps files in that are on no disk; its types leave it out. */
+/** Where pdfmake looks for a file before it looks on disk; its types leave it out. */
 interface WithFiles {
   readonly virtualfs: {
     existsSync(path: string): boolean
@@ -17,8 +17,8 @@ export async function writeSheetPdf(sheet: DataSheet): Promise<Buffer> {
   // Loaded when the first sheet is made: a server that starts has no need of it.
   const { default: pdfmake } = await import('pdfmake')
   const { virtualfs } = pdfmake as typeof pdfmake & WithFiles
-  if (!virtualfs.existsSync(MONO_FONT.name)) {
-    virtualfs.writeFileSync(MONO_FONT.name, unpackWoff(readFileSync(MONO_FONT.packed)))
+  for (const { path, without } of LEAN_FONTS) {
+    if (!virtualfs.existsSync(path)) virtualfs.writeFileSync(path, leanFont(readFileSync(path), without))
   }
   pdfmake.setFonts(SHEET_FONTS)
   pdfmake.setUrlAccessPolicy(() => false)

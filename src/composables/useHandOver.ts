@@ -34,8 +34,12 @@ export interface HandOverRoom {
   readonly take: (step: () => Promise<HandOverDetail | HandOverRelease>) => Promise<boolean>
 }
 
-/** Loads a hand-over and takes steps on it. */
-export function useHandOver(id: Ref<string>): HandOverRoom {
+/**
+ * Loads a hand-over and takes steps on it.
+ *
+ * @param reads whether the person reads the work of a group at all; nothing is fetched for one who does not
+ */
+export function useHandOver(id: Ref<string>, reads: () => boolean = () => true): HandOverRoom {
   const detail = shallowRef<HandOverDetail | null>(null)
   const release = shallowRef<HandOverRelease | null>(null)
   const mapping = shallowRef<Mapping | null>(null)
@@ -90,7 +94,13 @@ export function useHandOver(id: Ref<string>): HandOverRoom {
     }
   }
 
-  watch(id, load, { immediate: true })
+  watch(
+    id,
+    () => {
+      if (reads()) void load()
+    },
+    { immediate: true },
+  )
   const open = computed(() => detail.value?.checklist.filter(({ met }) => !met).length ?? 0)
   return { detail, release, mapping, polymer, failure, busy, refusal, open, load, take }
 }

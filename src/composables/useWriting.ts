@@ -2,8 +2,8 @@ import { computed, reactive, ref, shallowRef, watch, type ComputedRef, type Ref,
 import { watchDebounced } from '@vueuse/core'
 import type { Received } from '@shared/contracts/delivery'
 import type { OwnLayout, Written, WritingQuery } from '@shared/contracts/delivery-writing'
-import { builtInKeySchema, type LayoutDocument, type LayoutRef } from '@shared/contracts/layout'
-import type { LayoutUnits } from '@shared/layouts/built-in-layouts'
+import { builtInKeySchema, type LayoutDocument } from '@shared/contracts/layout'
+import { BUILT_IN_LAYOUTS, DEFAULT_BUILT_IN, type LayoutUnits } from '@shared/layouts/built-in-layouts'
 import type { Receiving } from '@/api/deliveries'
 import { ApiError } from '@/api/http'
 import { saveFile } from '@/components/figure/save-file'
@@ -39,10 +39,17 @@ export function useWriting(api: () => Receiving, page: () => Received): Writing 
   const written = shallowRef<Written | null>(null)
   const refusal = shallowRef<ApiError | null>(null)
 
+  /** Which layout of the house the release is written in; null for one of the group. */
+  const releasedIn = computed(() => {
+    const { layoutId } = page().frozen.layout
+    return layoutId === null
+      ? DEFAULT_BUILT_IN
+      : (BUILT_IN_LAYOUTS.find(({ key }) => key === layoutId)?.key ?? null)
+  })
   const isHouse = computed(() => builtInKeySchema.safeParse(chosen.value).success)
   const query = computed<WritingQuery>(() => {
     if (chosen.value === AS_RELEASED) return {}
-    const layout = chosen.value as LayoutRef
+    const layout = chosen.value
     return isHouse.value ? { layout, ...units } : { layout }
   })
   const mine = computed<OwnLayout | null>(() =>
@@ -71,6 +78,17 @@ export function useWriting(api: () => Receiving, page: () => Received): Writing 
     }
   }
   watch([chosen, () => ({ ...units })], () => void ask())
+  // As released there are the units of the release: others are another writing of the same layout.
+  watch(
+    () => ({ ...units }),
+    (now) => {
+      const others = now.length !== length || now.angle !== angle || now.energy !== energy
+      if (others && chosen.value === AS_RELEASED && releasedIn.value !== null) chosen.value = releasedIn.value
+    },
+  )
+  watch(chosen, (now) => {
+    if (now === AS_RELEASED) Object.assign(units, { length, angle, energy })
+  })
   watchDebounced(own, () => void ask(), { debounce: 400, deep: true })
 
   const taken = async (name: string, send: (layout: OwnLayout) => Promise<Blob>): Promise<void> => {
@@ -86,7 +104,7 @@ export function useWriting(api: () => Receiving, page: () => Received): Writing 
     chosen,
     units,
     own,
-    ownUnits: isHouse,
+    ownUnits: computed(() => isHouse.value || (chosen.value === AS_RELEASED && releasedIn.value !== null)),
     written,
     refusal,
     archiveUrl: computed(() => (mine.value ? null : api().archiveUrl(query.value))),

@@ -32,6 +32,7 @@ const ROOMS = [
   ['history', '/groups/G/history', 'Export as CSV'],
   ['tray', '/tray', 'There is no tray here'],
   ['forgotten password', '/forgot', 'Send the link'],
+  ['received', '/received/nothing', 'There is no such link'],
   ['layouts', '/groups/G/layouts', 'Four columns'],
   ['layout', '/groups/G/layouts/new', 'Preview of'],
 ] as const

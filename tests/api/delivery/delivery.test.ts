@@ -6,8 +6,10 @@ import request from 'supertest'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import type { Deliveries, Received } from '@shared/contracts/delivery'
 import type { Written } from '@shared/contracts/delivery-writing'
+import { layoutDocumentSchema } from '@shared/contracts/layout'
 import { builtInLayout } from '@shared/layouts'
 import { sha256 } from '../../../server/services/hashes'
+import type { ApiClient } from '../../support/api-client'
 import { type ApiServer, openApiServer } from '../../support/api-server'
 import { buildDelivery, type Delivery, receivedToken } from '../../support/delivery-builder'
 import { buildGroup, type TestGroup } from '../../support/group-builder'
@@ -33,6 +35,8 @@ afterAll(() => server.close())
 
 const page = async (token: string): Promise<Received> =>
   (await request(server.app).get(`/api/received/${token}`)).body as Received
+const deliveriesOf = async (client: ApiClient): Promise<Deliveries> =>
+  (await client.get(`/api/hand-overs/${first.handOver.id}/deliveries`)).body as Deliveries
 const zipOf = async (call: request.Test): Promise<Record<string, Uint8Array>> => {
   const response = await call.buffer(true).parse((stream, done) => {
     const chunks: Buffer[] = []
@@ -46,7 +50,9 @@ const bond = 'bond_A-A_400K.txt'
 const own = (changes: object = {}) => ({
   name: 'Ours',
   document: {
-    ...builtInLayout('two-columns', { length: 'angstrom', angle: 'radian', energy: 'kcal/mol' }),
+    ...layoutDocumentSchema.parse(
+      builtInLayout('two-columns', { length: 'angstrom', angle: 'radian', energy: 'kcal/mol' }),
+    ),
     ...changes,
   },
 })
@@ -54,8 +60,7 @@ const own = (changes: object = {}) => ({
 describe('sending a released hand-over', () => {
   it('mails each recipient a link of their own, and shows the group who has it', async () => {
     const { client } = group.owner
-    const { body } = await client.get(`/api/hand-overs/${first.handOver.id}/deliveries`)
-    const [recipient] = (body as Deliveries).recipients
+    const [recipient] = (await deliveriesOf(client)).recipients
     expect(recipient).toMatchObject({ email: first.email, sent: 1, state: 'waiting', hasAccount: false })
     const days = (Date.parse(recipient.expiresAt) - Date.parse(recipient.sentAt)) / 86_400_000
     expect(Math.round(days)).toBe(90)
@@ -71,11 +76,10 @@ describe('sending a released hand-over', () => {
         { name: 'Good', email: good },
         { name: 'Bad', email },
       ]
-      const { status, body } = await group.modeller.client.post(
-        `/api/hand-overs/${first.handOver.id}/deliveries`,
-        { recipients },
-      )
-      expect([status, (body as { code: string }).code]).toEqual([400, 'VALIDATION_FAILED'])
+      const refused = await group.modeller.client.post(`/api/hand-overs/${first.handOver.id}/deliveries`, {
+        recipients,
+      })
+      expect([refused.status, refused.body]).toMatchObject([400, { code: 'VALIDATION_FAILED' }])
       expect(await mailsTo(server, good)).toEqual([])
     },
   )
@@ -205,8 +209,7 @@ describe('the page of a recipient', () => {
   })
 
   it('lets the group see who took which file in which layout', async () => {
-    const { body } = await group.reviewer.client.get(`/api/hand-overs/${first.handOver.id}/deliveries`)
-    const { downloads } = body as Deliveries
+    const { downloads } = await deliveriesOf(group.reviewer.client)
     expect(downloads.map(({ layout }) => layout)).toEqual(
       expect.arrayContaining(['Two columns', 'JSON', 'Ours']),
     )
@@ -277,8 +280,7 @@ describe('receipt, questions, and files sent back', () => {
     const { client } = group.modeller
     const waiting = await client.get(`/api/groups/${group.groupId}/waiting`)
     expect(waiting.body).toMatchObject({ returned: [{ name: 'measured.txt' }] })
-    const { body } = await client.get(`/api/hand-overs/${first.handOver.id}/deliveries`)
-    const [file] = (body as Deliveries).returned
+    const [file] = (await deliveriesOf(client)).returned
     expect(file).toMatchObject({ sha256: sha256(text), sentBy: 'Rhea Recipient', note: 'Run of 10 ns' })
     const back = await client.get(`/api/returned-files/${file.id}/file`)
     expect(Buffer.from(back.body as Buffer).toString()).toBe(text)
@@ -311,8 +313,7 @@ describe('a later hand-over, and a withdrawal', () => {
   it('tells every recipient of a withdrawal why, and the page says so', async () => {
     const reason = 'The bond was measured at 300 K.'
     const { id } = first.handOver
-    const { body } = await group.owner.client.get(`/api/hand-overs/${id}`)
-    const { revision } = body as { revision: number }
+    const { revision } = (await group.owner.client.get(`/api/hand-overs/${id}`)).body as { revision: number }
     const done = await group.owner.client.post(`/api/hand-overs/${id}/withdrawal`, { revision, reason })
     expect(done.status).toBe(200)
     const mails = await mailsTo(server, first.email)

@@ -136,8 +136,8 @@ describe('what was handed over to an account', () => {
   it('is listed for its recipient alone, and not to a collaborator whom nothing was sent to', async () => {
     const { handOver } = await buildDelivery(server, strangers, { email: strangers.collaborator.email })
     const listed = async ({ client }: { client: ApiClient }): Promise<string[]> => {
-      const { body } = await client.get('/api/received')
-      return (body as { handOvers: { id: string }[] }).handOvers.map(({ id }) => id)
+      const list = (await client.get('/api/received')).body as { handOvers: { id: string }[] }
+      return list.handOvers.map(({ id }) => id)
     }
     expect(await listed(strangers.collaborator)).toEqual([handOver.id])
     expect(await listed(strangers.owner)).toEqual([])

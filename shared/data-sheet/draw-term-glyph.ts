@@ -5,6 +5,7 @@ import { sheetSvg } from './sheet-svg'
 
 const RADIUS = 7.5
 const HALF = RADIUS + 1
+const FAINT = 0.5
 /** Step along and half the rise of the zigzag, in bead radii, for one to four beads. */
 const SHAPES: Readonly<Record<number, { step: number; rise: number }>> = {
   1: { step: 0, rise: 0 },
@@ -23,8 +24,13 @@ interface Placed {
  * it takes part.
  *
  * @param rows one or two rows of beads
+ * @param faint for a term that has no table
  */
-export function drawTermGlyph(rows: readonly (readonly SheetGlyphBead[])[], name: string): Svg {
+export function drawTermGlyph(
+  rows: readonly (readonly SheetGlyphBead[])[],
+  name: string,
+  faint = false,
+): Svg {
   const [beads, other = null] = [...rows].sort((one, two) => two.length - one.length)
   const { step, rise } = SHAPES[beads.length]
   const [width, height] = [2 * HALF + (beads.length - 1) * step * RADIUS, 2 * (HALF + rise * RADIUS)]
@@ -34,14 +40,17 @@ export function drawTermGlyph(rows: readonly (readonly SheetGlyphBead[])[], name
   }))
   const thread = { stroke: lightTokens.ink2, 'stroke-linecap': 'round', 'stroke-linejoin': 'round' }
   const shared = other === null ? [] : sharedPart(beads, other).map((index) => points[index])
-  return sheetSvg(
-    round(width),
-    round(height),
-    name,
+  const parts = [
     svgPath(through(points), { ...thread, 'stroke-width': 1.2 }),
     ...(shared.length > 1 ? [svgPath(through(shared), { ...thread, 'stroke-width': 3.6 })] : []),
     ...(beads.length === 4 ? [collar(points[1], points[2])] : []),
     ...beads.map((bead, index) => disc(bead, points[index])),
+  ]
+  return sheetSvg(
+    round(width),
+    round(height),
+    name,
+    ...(faint ? [svgElement('g', { opacity: FAINT }, ...parts)] : parts),
   )
 }
 

@@ -3,6 +3,7 @@ import type { Browser, Page } from 'playwright-core'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import type { Mapping } from '@shared/contracts/mapping'
 import type { Polymer, StatePoint } from '@shared/contracts/polymer'
+import type { HandOver } from '@shared/contracts/hand-over-desk'
 import type { Session } from '@shared/contracts/session'
 import { launchBrowser, openPage } from '../support/browser'
 
@@ -19,6 +20,7 @@ const ROOMS = [
   ['polymer', '/polymers/P', 'State points'],
   ['comparison', '/polymers/P/comparison', 'Correlation left behind'],
   ['hand-overs', '/polymers/P/hand-overs', 'New hand-over'],
+  ['data sheet', '/hand-overs/H/sheet', 'How far these tables carry'],
   ['account', '/account', 'API keys'],
   ['new polymer', '/polymers/new', 'How a repeat unit is written'],
   ['mapping', '/polymers/P/mappings/M/mapping', 'Terms that follow'],
@@ -74,9 +76,13 @@ describe.each(VIEWS)('the rooms in $theme at $width px', ({ width, theme }) => {
     await picture('room-sign-in')
     await page.getByRole('button', { name: /modeller/ }).click()
     await page.getByRole('heading', { name: /^Adhesives/ }).waitFor()
-    const { group, polymer, mapping, statePoint } = await demoAddresses(page)
+    const { group, polymer, mapping, statePoint, handOver } = await demoAddresses(page)
     for (const [room, path, words] of ROOMS) {
-      const address = path.replace('G', group).replace('P', polymer).replace('M', mapping)
+      const address = path
+        .replace('G', group)
+        .replace('P', polymer)
+        .replace('M', mapping)
+        .replace('H', handOver)
       await page.goto(path.includes('M') ? `${address}?statePoint=${statePoint}` : address)
       await page.getByText(words).first().waitFor()
       findings.push(...(await examine(page, room)))
@@ -112,5 +118,7 @@ async function demoAddresses(page: Page) {
   const { statePoints } = await get<{ statePoints: StatePoint[] }>(`/api/polymers/${polymer}/state-points`)
   const mapping = mappings.find(({ name }) => name === '3-to-1')?.id ?? ''
   const statePoint = statePoints.find(({ temperature }) => temperature === 400)?.id ?? ''
-  return { group, polymer, mapping, statePoint }
+  const { handOvers } = await get<{ handOvers: HandOver[] }>(`/api/polymers/${polymer}/hand-overs`)
+  const handOver = handOvers.find(({ standing }) => standing === 'released')?.id ?? ''
+  return { group, polymer, mapping, statePoint, handOver }
 }

@@ -106,7 +106,7 @@ export function tablePart({ tables, leftOut }: DataSheet): Content {
     },
   ])
   const gone = leftOut.map((term): TableCell[] => [
-    drawn(drawTermGlyph([term.beads], term.name), { opacity: 0.5 }),
+    drawn(drawTermGlyph([term.beads], term.name, true)),
     { stack: [{ text: printable(term.name) }, { text: term.kind, color: ink2, fontSize: SIZE.small }] },
     {
       ...sentence(`Left out on record: ${term.reason} No file.`),

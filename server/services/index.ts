@@ -36,6 +36,7 @@ import { SetUpService } from './set-up.service'
 import { SettingService } from './setting.service'
 import { StatePointService } from './state-point.service'
 import { TableService } from './table.service'
+import { TermEvidenceService } from './term-evidence.service'
 import { TermService } from './term.service'
 import { TrayService } from './tray.service'
 import { WaitingService } from './waiting.service'
@@ -98,6 +99,7 @@ export function createServices(dataSource: DataSource, { demo, version, tray, li
     setUp: new SetUpService(dataSource, groups),
     statePoints: new StatePointService(dataSource),
     tables,
+    termEvidence: new TermEvidenceService(dataSource),
     terms: new TermService(dataSource),
     tray: new TrayService(dataSource, tray),
     waiting: new WaitingService(dataSource),

@@ -6,6 +6,9 @@ import { layoutDocumentSchema, layoutRefSchema } from './layout'
 /** Rows that a recipient's own layout may ask for at most. */
 export const MAX_OWN_ROWS = 5000
 
+/** Characters of the row template of such a layout: it is written out for every row of every table. */
+export const MAX_OWN_ROW_TEMPLATE = 500
+
 /** Query of a download. Without a layout: the file as it was released, byte for byte. */
 export const writingQuerySchema = z.object({
   layout: layoutRefSchema.optional(),

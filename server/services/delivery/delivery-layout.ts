@@ -1,6 +1,10 @@
 import type { EntityManager } from 'typeorm'
-import type { WritingQuery, OwnLayout } from '../../../shared/contracts/delivery-writing'
-import { MAX_OWN_ROWS } from '../../../shared/contracts/delivery-writing'
+import {
+  MAX_OWN_ROW_TEMPLATE,
+  MAX_OWN_ROWS,
+  type OwnLayout,
+  type WritingQuery,
+} from '../../../shared/contracts/delivery-writing'
 import type { FrozenHandOver } from '../../../shared/contracts/hand-over'
 import { builtInKeySchema } from '../../../shared/contracts/layout'
 import { InvalidInputError } from '../../../shared/errors'
@@ -55,6 +59,15 @@ export function ownLayout({ name, document }: OwnLayout): DeliveryLayout {
       throw new InvalidInputError('LAYOUT_INVALID', `Ask for ${MAX_OWN_ROWS} rows at most.`, {
         field: `${kind}.rows`,
       })
+    }
+  }
+  for (const [field, template] of [
+    ['rowTemplate', document.rowTemplate],
+    ['joint.rowTemplate', document.joint.rowTemplate],
+  ]) {
+    if (template.length > MAX_OWN_ROW_TEMPLATE) {
+      const message = `Keep the row within ${MAX_OWN_ROW_TEMPLATE} characters.`
+      throw new InvalidInputError('LAYOUT_INVALID', message, { field })
     }
   }
   return { name, document, house: false }

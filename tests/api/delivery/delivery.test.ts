@@ -184,6 +184,8 @@ describe('the page of a recipient', () => {
     const { document } = own()
     const many = await post('written', own({ bond: { ...document.bond, rows: 99_999 } }))
     expect(many.body).toMatchObject({ code: 'LAYOUT_INVALID', field: 'bond.rows' })
+    const long = await post('written', own({ rowTemplate: '{{energy}}'.repeat(60) }))
+    expect(long.body).toMatchObject({ code: 'LAYOUT_INVALID', field: 'rowTemplate' })
     const beyond = await post('written', own({ bond: { ...document.bond, low: 0.01, high: 90 } }))
     expect(beyond.body).toMatchObject({ code: 'LAYOUT_BEYOND_TABLE' })
     expect((await post('written', { ...own(), document: {} })).body).toMatchObject({

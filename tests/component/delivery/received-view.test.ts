@@ -157,6 +157,21 @@ describe('ReceivedView', () => {
     await here(/replaced by ?hand-over 3/)
   })
 
+  it('keeps the reason and the line when a file that was sent back cannot be read', async () => {
+    const refused = { code: 'TEXT_NOT_A_NUMBER', message: '“six” is no number.', line: 3 }
+    fakeApi({
+      [GET]: { body: page() },
+      'POST /api/received/secret/returned-files': { status: 422, body: refused },
+    })
+    await open()
+    await here('Send back what you measured')
+    const input = document.getElementById('delivery-return-file') as HTMLInputElement
+    Object.defineProperty(input, 'files', { value: [new File(['0.1 six'], 'run.txt')] })
+    input.dispatchEvent(new Event('change'))
+    await here('run.txt was not taken')
+    expect(pageText()).toContain('“six” is no number. Line 3.')
+  })
+
   it('tries again when asked after a failure', async () => {
     const failed = { status: 503, body: { code: 'UNAVAILABLE', message: 'The database rests.' } }
     fakeApi({ [GET]: [failed, { body: page() }] })

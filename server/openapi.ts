@@ -74,7 +74,7 @@ function descriptionOf(route: AnyRoute): string {
     key: 'Any key.',
     visitor: 'Not open to keys.',
     person: 'Not open to keys.',
-    link: 'Open to whoever holds the link: the token in the path is the credential, no cookie is looked at.',
+    link: 'Open to whoever holds the link: the token in the path is the credential, neither cookie nor key is looked at.',
     recipient: 'Open to whom the hand-over was sent. Not open to keys.',
   }
   const keys =

@@ -1,33 +1,38 @@
-import { buildDelivery, type Delivery } from '../delivery-builder'
+import { buildDelivery } from '../delivery-builder'
 import { bondFile, type Job, uploaded } from '../job-builder'
 import { newAddress } from '../mail-texts'
 import type { RouteSamples, SampleWorld } from './sample'
 
-const made = new WeakMap<Job, Promise<Delivery>>()
-
-/** One delivery for each job: a job is made anew where a request changes something. */
-async function delivered({ server, group, job }: SampleWorld) {
-  const delivery = made.get(job) ?? buildDelivery(server, group, { job })
-  made.set(job, delivery)
-  const { handOver, recipientId, token } = await delivery
-  return { ids: { handOverId: handOver.id, recipientId }, token }
+/** What a sample stands on, made once for each job: a job is made anew where a request changes something. */
+function oncePerJob<Made>(make: (world: SampleWorld) => Promise<Made>) {
+  const made = new WeakMap<Job, Promise<Made>>()
+  return (world: SampleWorld): Promise<Made> => {
+    const before = made.get(world.job) ?? make(world)
+    made.set(world.job, before)
+    return before
+  }
 }
 
-async function withQuestion(world: SampleWorld) {
+const delivered = oncePerJob(async ({ server, group, job }) => {
+  const { handOver, recipientId, token } = await buildDelivery(server, group, { job })
+  return { ids: { handOverId: handOver.id, recipientId }, token }
+})
+
+const withQuestion = oncePerJob(async (world) => {
   const { ids, token } = await delivered(world)
   const { questions, received } = world.server.services
   const party = await received.byToken(token)
   const page = await questions.ask(party, { table: null, text: 'Where does it start?' })
   return { ids: { ...ids, questionId: page.questions[0].id } }
-}
+})
 
-async function withReturnedFile(world: SampleWorld) {
+const withReturnedFile = oncePerJob(async (world) => {
   const { ids, token } = await delivered(world)
   const { returnedFiles, received } = world.server.services
   const party = await received.byToken(token)
   const page = await returnedFiles.send(party, { table: 'A–A', note: '' }, uploaded(bondFile()))
   return { ids: { ...ids, returnedFileId: page.returned[0].id } }
-}
+})
 
 /** Hand-overs on their way to recipients, as the group handles them. */
 export const deliverySamples: RouteSamples = {

@@ -31,9 +31,9 @@ type Single = DerivedPotential & { readonly name: string }
 function inversionLine({ tables }: SheetSource, singles: readonly Single[], works: References): SheetLine {
   const kinds = new Set(tables.flatMap((table) => table.kinds))
   const volumes = [
-    kinds.has('bond') && '(q2³ − q1³)/3 for a bond',
-    kinds.has('angle') && 'cos q1 − cos q2 for an angle',
-    kinds.has('dihedral') && 'q2 − q1 for a dihedral',
+    kinds.has('bond') && '(q2³\u00a0−\u00a0q1³)/3 for a bond',
+    kinds.has('angle') && 'cos\u00a0q1\u00a0−\u00a0cos\u00a0q2 for an angle',
+    kinds.has('dihedral') && 'q2\u00a0−\u00a0q1 for a dihedral',
   ].filter((part) => part !== false)
   const off = singles.filter(({ inversion }) => !inversion.jacobian).map(({ name }) => name)
   const plain =

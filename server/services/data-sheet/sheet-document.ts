@@ -113,7 +113,8 @@ function referencePart(references: readonly string[]): Content {
   return { unbreakable: true, stack: [heading('References'), ...list] }
 }
 
-function signOffPart({ signOff, invented, tablesSha256 }: DataSheet): Content[] {
+function signOffPart(sheet: DataSheet): Content[] {
+  const { signOff, invented, tablesSha256 } = sheet
   const sums = {
     stack: [
       mono(tablesSha256, { fontSize: SIZE.note }),
@@ -130,10 +131,25 @@ function signOffPart({ signOff, invented, tablesSha256 }: DataSheet): Content[] 
         heading('Sign-off'),
         lineTable(signOff),
         ruledTable([TITLE_WIDTH, '*'], [[{ text: 'Tables sha-256', color: ink2 }, sums]], { open: false }),
+        ...(lacksSigns(sheet)
+          ? [
+              sentence('Signs that the fonts of this page lack stand as ?; data-sheet.json has them.', {
+                color: ink2,
+                fontSize: SIZE.small,
+                margin: [0, 5, 0, 0],
+              }),
+            ]
+          : []),
         ...(invented ? [inventedLine('Invented data, demonstration group: not for simulation')] : []),
       ],
     },
   ]
+}
+
+/** Whether some of its text cannot be printed as it is. */
+function lacksSigns(sheet: DataSheet): boolean {
+  const text = JSON.stringify({ ...sheet, beads: sheet.beads.rows })
+  return text.split('?').length !== printable(text).split('?').length
 }
 
 function inventedLine(text: string): Content {

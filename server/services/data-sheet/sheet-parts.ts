@@ -178,7 +178,7 @@ function figureKey(tables: readonly SheetTable[]): Content {
 }
 
 function nameOf({ name }: SheetTable): Content {
-  return { text: name.split(' · ').map(printable).join(' with\u00a0'), bold: true }
+  return { text: printable(name).replace(' · ', ' with\n'), bold: true }
 }
 
 function kindWords({ kinds }: SheetTable): string {

@@ -36,35 +36,43 @@ beforeAll(async () => {
 })
 
 describe('the data sheet as a PDF', () => {
-  it('is the same to the byte for the same release, and another for another', async () => {
-    const [first, second, other] = [
-      await writeSheetPdf(sheet),
-      await writeSheetPdf(structuredClone(sheet)),
-      await writeSheetPdf({ ...sheet, releasedAt: '2026-06-13T10:00:00.000Z' }),
-    ]
-    expect(first.equals(second)).toBe(true)
-    expect(first.equals(other)).toBe(false)
-  }, LOADING)
+  it(
+    'is the same to the byte for the same release, and another for another',
+    async () => {
+      const [first, second, other] = [
+        await writeSheetPdf(sheet),
+        await writeSheetPdf(structuredClone(sheet)),
+        await writeSheetPdf({ ...sheet, releasedAt: '2026-06-13T10:00:00.000Z' }),
+      ]
+      expect(first.equals(second)).toBe(true)
+      expect(first.equals(other)).toBe(false)
+    },
+    LOADING,
+  )
 
-  it('has a title, an author, its date, A4 pages and every font embedded', async () => {
-    const pdf = (await writeSheetPdf(sheet)).toString('latin1')
-    expect(pdf.startsWith('%PDF-1.7')).toBe(true)
-    expect(pdf).toContain('(Hand-over 2: Melt tables. Data sheet)')
-    expect(pdf).toContain('(Adhesives)')
-    expect(pdf).toContain('(D:20260612100000Z)')
-    const pages = pdf.match(/\/Type \/Page\n/g)?.length ?? 0
-    expect(pages).toBeGreaterThanOrEqual(4)
-    expect(pages).toBeLessThanOrEqual(8)
-    const fonts = new Set([...pdf.matchAll(/\/FontName \/[A-Z]{6}\+([\w-]+)/g)].map(([, name]) => name))
-    expect([...fonts].sort()).toEqual([
-      'FiraMono-Regular',
-      'FiraSans-Italic',
-      'FiraSans-Light',
-      'FiraSans-Medium',
-      'FiraSans-Regular',
-    ])
-    expect(pdf.match(/\/FontFile2 /g)).toHaveLength(fonts.size)
-  }, LOADING)
+  it(
+    'has a title, an author, its date, A4 pages and every font embedded',
+    async () => {
+      const pdf = (await writeSheetPdf(sheet)).toString('latin1')
+      expect(pdf.startsWith('%PDF-1.7')).toBe(true)
+      expect(pdf).toContain('(Hand-over 2: Melt tables. Data sheet)')
+      expect(pdf).toContain('(Adhesives)')
+      expect(pdf).toContain('(D:20260612100000Z)')
+      const pages = pdf.match(/\/Type \/Page\n/g)?.length ?? 0
+      expect(pages).toBeGreaterThanOrEqual(4)
+      expect(pages).toBeLessThanOrEqual(8)
+      const fonts = new Set([...pdf.matchAll(/\/FontName \/[A-Z]{6}\+([\w-]+)/g)].map(([, name]) => name))
+      expect([...fonts].sort()).toEqual([
+        'FiraMono-Regular',
+        'FiraSans-Italic',
+        'FiraSans-Light',
+        'FiraSans-Medium',
+        'FiraSans-Regular',
+      ])
+      expect(pdf.match(/\/FontFile2 /g)).toHaveLength(fonts.size)
+    },
+    LOADING,
+  )
 
   it('states every number of the sheet', () => {
     const text = bodyText(sheet)
@@ -91,6 +99,8 @@ describe('the data sheet as a PDF', () => {
     expect(
       Array.from(text).filter((sign) => !'\n\u200b'.includes(sign) && !covered.has(sign.codePointAt(0)!)),
     ).toEqual([])
+    expect(text).toContain('Signs that the fonts of this page lack')
+    expect(bodyText(sheet)).not.toContain('Signs that the fonts of this page lack')
     expect(printable(odd)).toBe('θ ψ λ ½ ± − × ≤ ≈ ∞ → ² ⁻⁵ ₂ ?R? ? ? é 1 \u00a0 “Å”')
   })
 

@@ -191,3 +191,19 @@ describe('HandOverView under review', () => {
     expect(pageText()).toContain('Data changed, nothing was signed off.')
   })
 })
+
+describe('HandOverView for somebody outside the readers of the group', () => {
+  it('asks for what was handed over to them, and says when nothing was', async () => {
+    const sent = fakeApi({})
+    await mountAt('hand-over', '/hand-overs/h', HandOverView, freshStores('collaborator'))
+    await vi.waitFor(() => expect(pageText()).toContain('it was not handed over to you'))
+    expect(sent.map(({ path }) => path)).toEqual(['/api/hand-overs/h/received'])
+  })
+
+  it('looks for a delivery where a reader of another group finds no hand-over', async () => {
+    const sent = fakeApi({})
+    await mountAt('hand-over', '/hand-overs/h', HandOverView, freshStores('modeller'))
+    await vi.waitFor(() => expect(pageText()).toContain('it was not handed over to you'))
+    expect(sent.map(({ path }) => path)).toEqual(['/api/hand-overs/h', '/api/hand-overs/h/received'])
+  })
+})

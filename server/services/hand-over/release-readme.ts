@@ -44,7 +44,8 @@ export function writeReleaseReadme(frozen: FrozenHandOver, tables: readonly Mani
     ),
     'Files',
     '  mapping.json says which atoms make which bead, mapping.svg shows it. manifest.json lists every file with its SHA-256 for',
-    '  programs; sha256sum -c SHA256SUMS checks all of them at once.',
+    '  programs; sha256sum -c SHA256SUMS checks all of them at once. data-sheet.pdf shows the tables with what they rest on, to print',
+    '  and to attach; data-sheet.json holds the same for programs.',
     '',
   ].join('\n')
 }

@@ -110,9 +110,13 @@ export const control = (name: string | RegExp): HTMLElement => {
   return found[found.length - 1]
 }
 
-/** The field under a label, anywhere on the page. */
+/** The open dialog, which holds the focus, or the page. */
+const foreground = (): Element =>
+  document.body.querySelector('.v-overlay--active[role="dialog"]') ?? document.body
+
+/** The field under a label, in the foreground. */
 export const field = (label: string | RegExp): HTMLInputElement => {
-  const labels = [...document.body.querySelectorAll('label')].filter((each) => {
+  const labels = [...foreground().querySelectorAll('label')].filter((each) => {
     const own = (each.textContent ?? '').replace(/\s+/g, ' ').trim()
     return typeof label === 'string' ? own === label : label.test(own)
   })
@@ -135,7 +139,7 @@ export const type = async (label: string | RegExp, text: string): Promise<void> 
 }
 
 export const submit = async (): Promise<void> => {
-  const forms = document.body.querySelectorAll('form')
+  const forms = foreground().querySelectorAll('form')
   forms[forms.length - 1].dispatchEvent(new Event('submit', { bubbles: true, cancelable: true }))
   await flushPromises()
 }

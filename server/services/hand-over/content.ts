@@ -14,6 +14,7 @@ import { StatePoint } from '../../entities/state-point.entity'
 import { Term } from '../../entities/term.entity'
 import { WarningAnswer } from '../../entities/warning-answer.entity'
 import { findInversionInput, type InversionInput } from '../inversion-input'
+import { type Fit, pairReason, readFit } from '../mapping-fit'
 import { placeNumber, storedTermName } from '../stored-term-name'
 import type { TableSource } from '../table-file'
 import { leaveOutReason } from '../table-readme'
@@ -33,6 +34,8 @@ export interface ContentTerm {
   readonly settings: InversionSettings | null
   /** Saved, but its data have changed since. */
   readonly stale: boolean
+  /** Why its data do not fit the mapping as it is; null where they fit. */
+  readonly unfit: string | null
   /** Hash of data and settings; null without a potential. */
   readonly basis: string | null
   /** To warnings of these data and settings, with who gave them. */
@@ -49,6 +52,8 @@ export interface ContentPair {
   readonly apart: string | null
   /** A joint table takes the place of the two single ones. */
   readonly together: boolean
+  /** Why the joint data do not fit the mapping as it is; null where they fit. */
+  readonly unfit: string | null
   readonly answers: readonly WarningAnswer[]
 }
 
@@ -79,6 +84,7 @@ export async function readContent(manager: EntityManager, handOver: HandOver): P
   })
   const answers = await answersOf(manager, 'potentialId', potentials)
   const used = new Set(usedTerms(mapping.document, stored))
+  const fit = await readFit(manager, mapping)
   const terms: ContentTerm[] = []
   for (const term of stored) {
     const here = selection.leftOut.find(({ termId }) => termId === term.id)
@@ -99,6 +105,7 @@ export async function readContent(manager: EntityManager, handOver: HandOver): P
       potential,
       settings: potential && inversionSettingsSchema.parse(potential.settings),
       stale: potential !== null && potential.inputSha256 !== input?.sha256,
+      unfit: input && fit.reason(term.id, input.distribution.mappingVersion),
       basis,
       answers: answers.filter(
         ({ potentialId, code, basisSha256 }) =>
@@ -108,7 +115,7 @@ export async function readContent(manager: EntityManager, handOver: HandOver): P
       ),
     })
   }
-  const pairs = await readPairs(manager, handOver, mapping.version, terms)
+  const pairs = await readPairs(manager, handOver, mapping.version, terms, fit)
   const invented = group.demo
   const content = { group, polymer, mapping, statePoint, invented, terms, pairs }
   return { ...content, sha256: contentSha256(handOver, content) }
@@ -119,6 +126,7 @@ async function readPairs(
   { mappingId, statePointId, selection }: HandOver,
   mappingVersion: number,
   terms: readonly ContentTerm[],
+  fit: Fit,
 ): Promise<ContentPair[]> {
   const joints = await manager.find(JointDistribution, {
     where: { mappingId, statePointId, supersededAt: IsNull() },
@@ -149,8 +157,18 @@ async function readPairs(
         jointDistributionId === joint.id &&
         basisSha256 === answerBasis(jointBasis(joint), code, mappingVersion),
     )
+    const unfit = pairReason(fit, [joint.firstTermId, joint.secondTermId], joint.mappingVersion)
     return [
-      { joint, file, terms: [first, second], decision, apart: apart?.reason ?? null, together, answers: own },
+      {
+        joint,
+        file,
+        terms: [first, second],
+        decision,
+        apart: apart?.reason ?? null,
+        together,
+        unfit,
+        answers: own,
+      },
     ]
   })
   const place = ({ terms: [first, second] }: ContentPair): number =>

@@ -78,12 +78,11 @@ export function evidenceOfPair(pair: ContentPair, { statePoint }: HandOverConten
   return ofPair(`${jointBasis(pair.joint)} ${statePoint.temperature}`, { pair, statePoint })
 }
 
-/** Warnings of a term's table with their answers, among them that the mapping changed after its data came in. */
+/** Warnings of a term's table with their answers, among them that its data do not fit the mapping. */
 export function warningsOfTerm(term: ContentTerm, content: HandOverContent): AnsweredWarning[] {
   const evidence = evidenceOfTerm(term, content)
-  const version = term.input?.distribution.mappingVersion ?? null
   const own = evidence?.warnings ?? []
-  return answered([...own, ...nearStraight(term, content), ...olderData(version, content)], term.answers)
+  return answered([...own, ...nearStraight(term, content), ...unfitData(term)], term.answers)
 }
 
 /** A dihedral is in doubt where the angles it is made of are often straight, whether they are handed over or not. */
@@ -100,7 +99,7 @@ function nearStraight({ term }: ContentTerm, { terms }: HandOverContent): Warnin
 /** Warnings of a joint table with their answers. */
 export function warningsOfPair(pair: ContentPair, content: HandOverContent): AnsweredWarning[] {
   const { warnings } = evidenceOfPair(pair, content)
-  return answered([...warnings, ...olderData(pair.joint.mappingVersion, content)], pair.answers)
+  return answered([...warnings, ...unfitData(pair)], pair.answers)
 }
 
 function answered(
@@ -113,12 +112,12 @@ function answered(
   }))
 }
 
-function olderData(version: number | null, { mapping }: HandOverContent): Omit<AnsweredWarning, 'answer'>[] {
-  if (version === null || version === mapping.version) return []
+function unfitData({ unfit }: Pick<ContentTerm, 'unfit'>): Omit<AnsweredWarning, 'answer'>[] {
+  if (unfit === null) return []
   return [
     {
       code: MAPPING_CHANGED,
-      message: `The data were measured under version ${version} of the mapping; it is at version ${mapping.version} now. Where atoms moved from one bead to another, the data belong to a bead that is no more.`,
+      message: `${unfit} The data belong to beads as they are no more.`,
       action: 'Bring in data measured on the mapping as it is, or say why these still fit.',
     },
   ]

@@ -8,7 +8,7 @@ import { formatDay } from '@/format/dates'
 
 /** What a warning is called; those that only hand-overs know beside those of the bench. */
 export function warningTitle(code: string): string {
-  if (code === 'MAPPING_CHANGED') return 'Measured under an earlier version of the mapping'
+  if (code === 'MAPPING_CHANGED') return 'Data that no longer fit the mapping'
   if (code === 'JOINT_SPARSE') return 'Few samples for two coordinates at once'
   return code in WARNING_TITLES ? WARNING_TITLES[code as WarningCode] : code
 }

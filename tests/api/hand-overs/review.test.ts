@@ -320,6 +320,18 @@ describe('a draft', () => {
     expect(after.checklist.every(({ met }) => met)).toBe(true)
   })
 
+  it('asks nothing of data whose beads stayed as they were', async () => {
+    const { handOver, job } = await buildDraft(server.services, group)
+    const { document } = await server.services.mappings.get(group.modeller.member, job.mappingId)
+    const [backbone, ring] = document.beads
+    const smaller = { ...document, beads: [backbone, { ...ring, atoms: ring.atoms.slice(1) }] }
+    const save = { revision: 1, name: 'Two beads', document: smaller }
+    const { version } = await server.services.mappings.update(group.modeller.member, job.mappingId, save)
+    expect(version).toBe(2)
+    const { checklist } = await server.services.handOvers.get(group.modeller.member, handOver.id)
+    expect(checklist.find(({ code }) => code === 'DATA_FIT_MAPPING')).toMatchObject({ met: true })
+  })
+
   it('is thrown away, and then nothing keeps its mapping', async () => {
     const { handOver, job } = await buildDraft(server.services, group)
     const { client } = group.modeller

@@ -67,7 +67,8 @@ export const handOverRoutes = [
   route({
     method: 'get',
     path: '/api/groups/:groupId/waiting',
-    summary: 'What waits for the one who asks: reviews, hand-overs that came back, questions and files of recipients, terms without data',
+    summary:
+      'What waits for the one who asks: reviews, hand-overs that came back, questions and files of recipients, terms without data',
     access: { may: 'read', at: 'group' },
     answer: { status: 200, body: waitingSchema },
     handle: ({ services, member }) => services.waiting.get(member),

@@ -123,7 +123,7 @@ describe('HandOverView of a draft', () => {
     await click('Keep, with reason: Few independent samples, B–E')
     await click('Keep')
     expect(writes(sent)).toEqual([])
-    const input = field('Reason, for the record') as HTMLInputElement
+    const input = field('Reason, for the record')
     input.value = 'The well is what matters.'
     input.dispatchEvent(new Event('input'))
     await click('Keep')

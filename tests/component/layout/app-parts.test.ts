@@ -34,7 +34,14 @@ describe('AppShell', () => {
   it('marks the room we are in, and keeps the state point on the way to the others', async () => {
     const { wrapper } = await open()
     const rooms = wrapper.findAll('nav[aria-label=Rooms] a')
-    expect(rooms.map((room) => room.text())).toEqual(['Mapping', 'Intake', 'Bench', 'Correlation', 'Tables', 'Hand-over'])
+    expect(rooms.map((room) => room.text())).toEqual([
+      'Mapping',
+      'Intake',
+      'Bench',
+      'Correlation',
+      'Tables',
+      'Hand-over',
+    ])
     expect(
       rooms.filter((room) => room.attributes('aria-current') === 'page').map((room) => room.text()),
     ).toEqual(['Bench'])

@@ -89,7 +89,9 @@ describe('data of a term after a change of its mapping', () => {
     const moved = giveAtoms(THREE_TO_ONE, 'e', [5])
     expect(changeOf(moved, 'B–B–B')).toBeNull()
     expect(changeOf(moved, 'B–E')).toBe('Bead E was CO2 and is now C2H2O2.')
-    expect(changeOf(moved, 'E–H')).toBe('Bead E was CO2 and is now C2H2O2. Bead H was C6H13 and is now C5H11.')
+    expect(changeOf(moved, 'E–H')).toBe(
+      'Bead E was CO2 and is now C2H2O2. Bead H was C6H13 and is now C5H11.',
+    )
   })
 
   it('say which atoms were exchanged where the formula stays', () => {

@@ -30,7 +30,7 @@ const choiceOf = (picker: VueWrapper) => picker.findComponent({ name: 'BaseChoic
 
 describe('the choice of a layout', () => {
   it('offers those of the group, those of the house, and one of one’s own', () => {
-    const items = choiceOf(pick('mine')).props('items') as { title: string }[]
+    const { items } = choiceOf(pick('mine')).props() as { items: { title: string }[] }
     const titles = items.map(({ title }) => title)
     expect(titles[0]).toBe('For the cluster')
     expect(titles).toContain('JSON')

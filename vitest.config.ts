@@ -7,6 +7,8 @@ export default mergeConfig(
   defineConfig({
     test: {
       reporters: ['default', './tests/support/closing-line-reporter.ts'],
+      // By default one processor would stay idle: of two, half.
+      maxWorkers: '100%',
       projects: [
         {
           extends: true,
@@ -52,6 +54,7 @@ export default mergeConfig(
             testTimeout: 120_000,
             hookTimeout: 120_000,
             fileParallelism: false,
+            sequence: { groupOrder: 1 },
           },
         },
       ],

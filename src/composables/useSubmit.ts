@@ -19,9 +19,11 @@ export const fieldMessages = (schema: z.ZodType, values: unknown): Messages => {
 /**
  * Sends a form: checks it by the contract, keeps it from being sent twice, and puts every message where it belongs, at its
  * field or, when it is about no field, above the button.
+ *
+ * @param schema the contract, or what fetches it when the form is first sent
  */
 export function useSubmit<Values>(
-  schema: z.ZodType,
+  schema: z.ZodType | (() => Promise<z.ZodType>),
   fields: readonly string[],
 ): {
   busy: Ref<boolean>
@@ -34,16 +36,18 @@ export function useSubmit<Values>(
   const messages = shallowRef<Messages>({})
   const failure = shallowRef<ApiError | null>(null)
 
-  const check = (values: Values): boolean => {
-    messages.value = fieldMessages(schema, values)
+  const fits = (contract: z.ZodType, values: Values): boolean => {
+    messages.value = fieldMessages(contract, values)
     return Object.keys(messages.value).length === 0
   }
+  const check = (values: Values): boolean => typeof schema === 'function' || fits(schema, values)
 
   const submit = async (values: Values, send: () => Promise<void>): Promise<boolean> => {
     failure.value = null
-    if (busy.value || !check(values)) return false
+    if (busy.value) return false
     busy.value = true
     try {
+      if (!fits(typeof schema === 'function' ? await schema() : schema, values)) return false
       await send()
       return true
     } catch (error) {

@@ -13,6 +13,8 @@ export const installGuards = (router: Router): void => {
     if (!session.loaded) await session.load()
     if (to.meta.open !== true && !session.user) return { name: 'sign-in', query: { next: to.fullPath } }
     if (to.name === 'sign-in' && session.user) return safeReturnPath(to.query['next'])
+    // Sign-in fetches contracts when it is sent; every other page may check by them from the start.
+    if (to.name !== 'sign-in') await import('@/plugins/zod')
     return true
   })
   router.afterEach((to) => {

@@ -29,7 +29,7 @@ const ROOMS = [
   ['bench', '/polymers/P/mappings/M/bench', 'Effective dimension'],
   ['correlation', '/polymers/P/mappings/M/correlation', 'Independent samples'],
   ['tables', '/polymers/P/mappings/M/tables', 'First lines of'],
-  ['members', '/groups/G/members', 'in the group since'],
+  ['members', '/groups/G/members', ', you'],
   ['defaults', '/groups/G/defaults', 'Dihedral flat below'],
   ['history', '/groups/G/history', 'Export as CSV'],
   ['tray', '/tray', 'There is no tray here'],

@@ -26,7 +26,7 @@ describe('SignInView', () => {
     await open()
     await type('E-mail', 'mo')
     await submit()
-    expect(pageText()).toContain('This does not look like an e-mail address.')
+    await vi.waitFor(() => expect(pageText()).toContain('This does not look like an e-mail address.'), 5_000)
     expect(pageText()).toContain('Type your password.')
     expect(sent).toEqual([])
   })
